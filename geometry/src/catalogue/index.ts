@@ -1,0 +1,2 @@
+export * from './electrical.js';
+export * from './item.js';

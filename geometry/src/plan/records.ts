@@ -1,0 +1,226 @@
+import { z } from 'zod';
+import { catalogueItemSchema, conductorSchema } from '../catalogue/index.js';
+
+/**
+ * The records of a plan. A plan is a set of these, keyed by id; every edit is one change that puts and
+ * removes whole records. Placed records hold sheet pixels: metres are derived through the sheet's
+ * calibration, so recalibrating moves nothing.
+ */
+
+export const recordIdSchema = z
+  .string()
+  .regex(/^[A-Za-z0-9_-]{1,64}$/, { error: 'A record id has 1 to 64 letters, digits, - or _.' });
+const id = recordIdSchema;
+const name = z.string().max(120);
+const number = z.number().int().min(1).max(99_999);
+const meters = z.number().min(0).max(10_000);
+
+/** Sheet pixels; a little outside of the sheet is allowed, absurdly far is not. */
+export const pointSchema = z.strictObject({
+  x: z.number().min(-100_000).max(100_000),
+  y: z.number().min(-100_000).max(100_000),
+});
+export type PlanPoint = z.infer<typeof pointSchema>;
+
+const placed = { sheetId: id, at: pointSchema };
+
+export const lengthReferenceSchema = z.strictObject({
+  id,
+  kind: z.literal('length'),
+  a: pointSchema,
+  b: pointSchema,
+  meters: z.number().positive().max(10_000),
+});
+export const rectangleReferenceSchema = z.strictObject({
+  id,
+  kind: z.literal('rectangle'),
+  /** In order around; width is corner 0 to 1, depth is corner 1 to 2. */
+  corners: z.tuple([pointSchema, pointSchema, pointSchema, pointSchema]),
+  widthMeters: z.number().positive().max(10_000),
+  depthMeters: z.number().positive().max(10_000),
+});
+export const referenceSchema = z.discriminatedUnion('kind', [
+  lengthReferenceSchema,
+  rectangleReferenceSchema,
+]);
+export type ReferenceRecord = z.infer<typeof referenceSchema>;
+
+/** A drawing the plan is made over. The image itself is the stored sheet of the same id. */
+export const sheetRecordSchema = z.strictObject({
+  kind: z.literal('sheet'),
+  id,
+  name,
+  order: z.number().int().min(0).max(9999),
+  widthPx: z.number().int().min(1).max(4096),
+  heightPx: z.number().int().min(1).max(4096),
+  view: z.enum(['plan', 'photo']),
+  /** Known for drawings rasterised from paper; null for photos and scans of unknown resolution. */
+  pixelsPerPaperMeter: z.number().positive().nullable(),
+  references: z.array(referenceSchema).max(50),
+  /** Typed drawing scale: metres of ground per metre of paper (1:100 is 100). */
+  groundMetersPerPaperMeter: z.number().positive().max(1_000_000).nullable(),
+});
+
+export const transformerRecordSchema = z.strictObject({
+  kind: z.literal('transformer'),
+  id,
+  ...placed,
+  number,
+  name,
+  itemId: id,
+  /** Line volts at its outlet; null: the plan's. */
+  lineVolts: z.number().positive().max(600).nullable(),
+  note: z.string().max(2000),
+});
+
+/** Where the feed of a transformer drawn on another sheet comes onto this one. */
+export const feedRecordSchema = z.strictObject({
+  kind: z.literal('feed'),
+  id,
+  ...placed,
+  transformerId: id,
+  name,
+});
+
+export const fixtureRecordSchema = z.strictObject({
+  kind: z.literal('fixture'),
+  id,
+  ...placed,
+  number,
+  name,
+  itemId: id,
+  /** The lamp in it, where the fixture takes one; null otherwise. */
+  lampId: id.nullable(),
+  quantity: z.number().int().min(1).max(1000),
+  /** Null: the lead that comes with the item. */
+  lead: z.strictObject({ conductor: conductorSchema, lengthMeters: meters }).nullable(),
+  note: z.string().max(2000),
+});
+
+/** A point where cables meet: a hub with its box, a buried splice, or the capped end of a cable. */
+export const junctionRecordSchema = z.strictObject({
+  kind: z.literal('junction'),
+  id,
+  ...placed,
+  style: z.enum(['hub', 'splice']),
+  number,
+  name,
+  itemId: id.nullable(),
+});
+
+/** A feed from one tap and one common of a transformer, and all cable that hangs on it. */
+export const runRecordSchema = z.strictObject({
+  kind: z.literal('run'),
+  id,
+  number,
+  name,
+  transformerId: id,
+  tapId: z.string().min(1).max(24),
+  commonId: z.string().min(1).max(24),
+});
+
+/** A length of cable between two records (transformer, feed, fixture or junction) of one sheet. */
+export const cableRecordSchema = z.strictObject({
+  kind: z.literal('cable'),
+  id,
+  sheetId: id,
+  /** The run it belongs to; null while nothing feeds it. */
+  runId: id.nullable(),
+  fromId: id,
+  toId: id,
+  /** Bends between the ends, in order. */
+  via: z.array(pointSchema).max(500),
+  itemId: id,
+  /** Length measured on site, in place of the drawn one; slack and rise still come on top. */
+  measuredMeters: meters.nullable(),
+  /** Null: the plan's setting for that kind of end. */
+  slackFromMeters: meters.nullable(),
+  slackToMeters: meters.nullable(),
+  riseMeters: meters,
+  /** Resistance of splices and terminals on it. */
+  extraOhms: z.number().min(0).max(1000),
+  /** The person drawing it confirmed marked-to-marked where it closes a loop or joins two fed ends. */
+  markedToMarked: z.boolean(),
+});
+
+export const areaUses = ['lawn', 'bed', 'paved', 'building', 'canopy', 'water', 'lot-line'] as const;
+export type AreaUse = (typeof areaUses)[number];
+export const areaRecordSchema = z.strictObject({
+  kind: z.literal('area'),
+  id,
+  sheetId: id,
+  use: z.enum(areaUses),
+  name,
+  points: z.array(pointSchema).min(3).max(2000),
+  heightMeters: meters.nullable(),
+});
+
+export const measurementRecordSchema = z.strictObject({
+  kind: z.literal('measurement'),
+  id,
+  sheetId: id,
+  points: z.array(pointSchema).min(2).max(500),
+});
+
+export const noteRecordSchema = z.strictObject({
+  kind: z.literal('note'),
+  id,
+  ...placed,
+  text: z.string().max(4000),
+});
+
+/** The plan's own copy of a catalogue item that it uses. */
+export const itemRecordSchema = z.strictObject({
+  kind: z.literal('item'),
+  id,
+  /** The catalogue entry it was copied from. */
+  sourceId: z.string().max(64).nullable(),
+  item: catalogueItemSchema,
+});
+
+export const SETTINGS_ID = 'settings';
+export const settingsRecordSchema = z.strictObject({
+  kind: z.literal('settings'),
+  id: z.literal(SETTINGS_ID),
+  lineVolts: z.number().positive().max(600),
+  conductorTemperatureC: z.number().min(-60).max(120),
+  slackAtFixtureMeters: meters,
+  slackAtTransformerMeters: meters,
+  slackAtJunctionMeters: meters,
+  /** The region's least distance of a fixture from water. */
+  waterClearanceMeters: meters,
+});
+
+export const planRecordSchema = z.discriminatedUnion('kind', [
+  sheetRecordSchema,
+  transformerRecordSchema,
+  feedRecordSchema,
+  fixtureRecordSchema,
+  junctionRecordSchema,
+  runRecordSchema,
+  cableRecordSchema,
+  areaRecordSchema,
+  measurementRecordSchema,
+  noteRecordSchema,
+  itemRecordSchema,
+  settingsRecordSchema,
+]);
+
+export type PlanRecord = z.infer<typeof planRecordSchema>;
+export type RecordKind = PlanRecord['kind'];
+export type RecordOf<K extends RecordKind> = Extract<PlanRecord, { kind: K }>;
+export type SheetRecord = RecordOf<'sheet'>;
+export type TransformerRecord = RecordOf<'transformer'>;
+export type FeedRecord = RecordOf<'feed'>;
+export type FixtureRecord = RecordOf<'fixture'>;
+export type JunctionRecord = RecordOf<'junction'>;
+export type RunRecord = RecordOf<'run'>;
+export type CableRecord = RecordOf<'cable'>;
+export type AreaRecord = RecordOf<'area'>;
+export type MeasurementRecord = RecordOf<'measurement'>;
+export type NoteRecord = RecordOf<'note'>;
+export type ItemRecord = RecordOf<'item'>;
+export type SettingsRecord = RecordOf<'settings'>;
+
+/** A plan: its records by id. Treated as immutable. */
+export type PlanDocument = ReadonlyMap<string, PlanRecord>;
