@@ -10,7 +10,7 @@ import {
   rmSync,
   writeFileSync,
 } from 'node:fs';
-import { dirname, join } from 'node:path';
+import { join } from 'node:path';
 import { say, Trouble } from './log.mjs';
 import { folderHash } from './paths.mjs';
 import { freePort } from './ports.mjs';

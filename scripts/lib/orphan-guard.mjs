@@ -1,0 +1,5 @@
+// Loaded into the processes that the commands start (node --import). When the command that started them is
+// gone without having stopped them (kill -9), the channel to it closes, and they stop by themselves.
+process.on('disconnect', () => process.kill(process.pid, 'SIGTERM'));
+// The channel alone must not keep a process alive.
+process.channel?.unref();

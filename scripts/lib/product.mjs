@@ -1,0 +1,146 @@
+import { mkdirSync } from 'node:fs';
+import { join } from 'node:path';
+import { setTimeout as sleep } from 'node:timers/promises';
+import { fakeFolders, fakesEnvironment, productEnvironment } from './local-environment.mjs';
+import { readState, writeState } from './local-state.mjs';
+import { tryLock } from './lock.mjs';
+import { say, Trouble } from './log.mjs';
+import { inRoot } from './paths.mjs';
+import { isPortFree, waitForPort } from './ports.mjs';
+import { openCluster } from './postgres.mjs';
+import { run } from './processes.mjs';
+
+/** @typedef {import('./supervisor.mjs').Supervisor} Supervisor */
+
+const readyTimeoutMs = 60_000;
+
+/**
+ * Claims a data folder for this process, until the supervisor stops.
+ * @param {string} folder
+ * @param {Supervisor} supervisor
+ * @param {string} purpose
+ * @throws {Trouble} when another process uses it
+ */
+export function claimDataFolder(folder, supervisor, purpose) {
+  const lock = tryLock(dataLock(folder), purpose);
+  if ('holder' in lock) {
+    throw new Trouble(
+      `The data folder ${folder} is in use (${lock.holder.purpose}, process ${lock.holder.pid}); stop that first or name another folder in LAMPWRIGHT_DATA.`,
+    );
+  }
+  supervisor.onStop('the lock', async () => lock.release());
+}
+
+/** @param {string} folder */
+export const dataLock = (folder) => join(folder, 'lock');
+
+/** @param {number} port @throws {Trouble} */
+export async function requirePort(port) {
+  if (await isPortFree(port)) return;
+  throw new Trouble(
+    `Port ${port} is taken by another program; stop it or choose another port, as in "PORT=${port + 1} npm start".`,
+  );
+}
+
+/**
+ * The services that everything else needs: database (migrated) and fakes, and the demo in a new database.
+ * @param {object} options
+ * @param {string} options.folder a claimed data folder
+ * @param {Supervisor} options.supervisor
+ * @param {AbortSignal} options.signal
+ * @param {number} options.port of the API
+ * @param {string} [options.publicUrl]
+ */
+export async function startGround({ folder, supervisor, signal, port, publicUrl }) {
+  const cluster = await openCluster(folder);
+  supervisor.onStop('the database', () => cluster.stop());
+  await cluster.start();
+  signal.throwIfAborted();
+  await cluster.ensureDatabase();
+  let state = await readState(folder);
+  await startFakes(folder, state, supervisor, signal);
+  const env = productEnvironment({ state, port, databaseUrl: cluster.url, publicUrl });
+  await runStep('Migrating the database', 'api/dist/database/migrate.js', env, signal);
+  if (!state.demoLoaded) {
+    say('Loading the demo company …');
+    await runStep('Loading the demo company', 'api/dist/demo/load.js', env, signal);
+    state = { ...state, demoLoaded: true };
+    writeState(folder, state);
+  }
+  return { cluster, env, state };
+}
+
+/**
+ * @param {string} folder
+ * @param {import('./local-state.mjs').LocalState} state
+ * @param {Supervisor} supervisor
+ * @param {AbortSignal} signal
+ */
+async function startFakes(folder, state, supervisor, signal) {
+  for (const path of Object.values(fakeFolders(folder))) mkdirSync(path, { recursive: true, mode: 0o700 });
+  supervisor.start({
+    name: 'The local storage and mail',
+    args: [inRoot('api/dist/ports/fakes.js')],
+    env: fakesEnvironment(folder, state),
+    logFile: join(folder, 'logs', 'fakes.log'),
+  });
+  const listening = Promise.all(Object.values(state.ports).map((port) => waitForPort(port, { signal })));
+  const up = await Promise.race([listening, supervisor.failed]);
+  if (up.includes(false)) throw new Trouble(`The local storage and mail did not start; see ${folder}/logs.`);
+}
+
+/**
+ * @param {string} what
+ * @param {string} script
+ * @param {NodeJS.ProcessEnv} env
+ * @param {AbortSignal} signal
+ */
+async function runStep(what, script, env, signal) {
+  const result = await run(process.execPath, [inRoot(script)], { cwd: inRoot(), env, signal });
+  if (result.code !== 0) throw new Trouble(`${what} failed:\n${`${result.stdout}\n${result.stderr}`.trim()}`);
+}
+
+/**
+ * Starts the built product over a claimed data folder and waits until it is ready.
+ * @param {object} options
+ * @param {string} options.folder
+ * @param {number} options.port
+ * @param {Supervisor} options.supervisor
+ * @param {AbortSignal} options.signal
+ */
+export async function startProduct({ folder, port, supervisor, signal }) {
+  const { cluster, env } = await startGround({ folder, supervisor, signal, port });
+  const url = `http://127.0.0.1:${port}`;
+  // Stopped the other way round: first no more requests, then no more work, then what both stand on.
+  for (const [name, script] of /** @type {const} */ ([
+    ['The worker', 'worker'],
+    ['The API', 'main'],
+  ])) {
+    const logFile = join(folder, 'logs', `${script === 'main' ? 'api' : script}.log`);
+    supervisor.start({ name, args: [inRoot(`api/dist/${script}.js`)], env, logFile });
+  }
+  await Promise.race([waitForHealth(url, signal), supervisor.failed]);
+  return { url, cluster, env };
+}
+
+/**
+ * @param {string} url
+ * @param {AbortSignal} signal
+ * @throws {Trouble} when it is not healthy in time
+ */
+export async function waitForHealth(url, signal) {
+  const end = performance.now() + readyTimeoutMs;
+  let last = 'no answer';
+  while (performance.now() < end) {
+    signal.throwIfAborted();
+    try {
+      const response = await fetch(`${url}/api/health`, { signal: AbortSignal.timeout(5000) });
+      if (response.ok) return;
+      last = `${response.status} ${await response.text()}`;
+    } catch (error) {
+      last = error instanceof Error ? error.message : String(error);
+    }
+    await sleep(100);
+  }
+  throw new Trouble(`The API did not become ready in ${readyTimeoutMs / 1000} s: ${last}`);
+}

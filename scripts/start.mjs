@@ -1,0 +1,48 @@
+// npm start: the whole product on this machine, over one data folder.
+import { build } from './lib/build.mjs';
+import { ensurePackages } from './lib/debian.mjs';
+import { main, report, say, Trouble } from './lib/log.mjs';
+import { ensureNodeModules } from './lib/node-modules.mjs';
+import { dataFolder } from './lib/paths.mjs';
+import { claimDataFolder, requirePort, startProduct } from './lib/product.mjs';
+import { aborted, Supervisor, stopSignal } from './lib/supervisor.mjs';
+
+await main(async () => {
+  refuseProduction();
+  const port = readPort();
+  const folder = dataFolder();
+  const signal = stopSignal();
+  const supervisor = new Supervisor();
+  let code = 0;
+  try {
+    claimDataFolder(folder, supervisor, 'npm start');
+    await requirePort(port);
+    await ensurePackages(['postgresql', 'poppler-utils'], signal);
+    await ensureNodeModules(signal);
+    await build({ signal });
+    const { url } = await startProduct({ folder, port, supervisor, signal });
+    say(`Lampwright is ready at ${url}`);
+    await Promise.race([aborted(signal), supervisor.failed]);
+  } catch (error) {
+    if (!signal.aborted) {
+      report(error);
+      code = 1;
+    }
+  }
+  await supervisor.stop();
+  return code;
+});
+
+function refuseProduction() {
+  if (process.env.LAMPWRIGHT_MODE !== 'production') return;
+  throw new Trouble(
+    '"npm start" runs Lampwright locally with a database and fakes of its own; in production run "node api/dist/main.js" and "node api/dist/worker.js" with the settings of .env.example.',
+  );
+}
+
+function readPort() {
+  const given = process.env.PORT || '3000';
+  const port = Number(given);
+  if (Number.isInteger(port) && port >= 1 && port <= 65_535) return port;
+  throw new Trouble(`PORT must be a whole number from 1 to 65535, not "${given}".`);
+}
