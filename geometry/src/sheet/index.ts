@@ -1,0 +1,2 @@
+export * from './calibration.js';
+export * from './homography.js';
