@@ -1,0 +1,39 @@
+/** Every address of the product, once. Patterns for the router; `to` fills them in for links. */
+export const paths = {
+  home: '/',
+  signIn: '/sign-in',
+  signUp: '/sign-up',
+  forgotPassword: '/forgot-password',
+  resetPassword: '/reset-password',
+  confirmEmail: '/confirm-email',
+  invitation: '/invitation',
+  jobs: '/jobs',
+  newJob: '/jobs/new',
+  job: '/jobs/:jobId',
+  siteWalk: '/jobs/:jobId/site-walk',
+  plan: '/jobs/:jobId/plan',
+  clients: '/clients',
+  client: '/clients/:clientId',
+  catalogue: '/catalogue',
+  newCatalogueItem: '/catalogue/new/:category',
+  catalogueItem: '/catalogue/items/:itemId',
+  company: '/company',
+  people: '/people',
+  account: '/account',
+} as const;
+
+const segment = encodeURIComponent;
+
+export const to = {
+  job: (jobId: string) => `/jobs/${segment(jobId)}`,
+  siteWalk: (jobId: string) => `/jobs/${segment(jobId)}/site-walk`,
+  /** The plan page, on a given sheet when one is named. */
+  plan: (jobId: string, sheetId?: string) =>
+    `/jobs/${segment(jobId)}/plan${sheetId === undefined ? '' : `?sheet=${segment(sheetId)}`}`,
+  newJobFor: (clientId: string) => `/jobs/new?client=${segment(clientId)}`,
+  client: (clientId: string) => `/clients/${segment(clientId)}`,
+  newCatalogueItem: (category: string) => `/catalogue/new/${segment(category)}`,
+  catalogueItem: (itemId: string) => `/catalogue/items/${segment(itemId)}`,
+  /** Sign-in that returns to where the person was. */
+  signIn: (back: string) => (back === '/' ? '/sign-in' : `/sign-in?to=${segment(back)}`),
+} as const;

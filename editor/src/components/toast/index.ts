@@ -1,0 +1,2 @@
+export { ToastRegion } from './toast-region';
+export { closeToast, showProblem, showToast, type ToastInput } from './toasts';

@@ -1,0 +1,87 @@
+import { queryOptions, useQuery, useSuspenseQuery } from '@tanstack/react-query';
+import { z } from 'zod';
+import { ApiProblem, get } from './api/client';
+
+export const roleSchema = z.enum(['owner', 'designer', 'crew']);
+export type Role = z.infer<typeof roleSchema>;
+
+export const unitsSchema = z.enum(['imperial', 'metric']);
+export type Units = z.infer<typeof unitsSchema>;
+export const themeSchema = z.enum(['light', 'dark', 'system']);
+export type ThemeChoice = z.infer<typeof themeSchema>;
+
+export const preferencesSchema = z.object({
+  units: unitsSchema.catch('imperial'),
+  theme: themeSchema.catch('system'),
+});
+
+export const meSchema = z.object({
+  user: z.object({
+    id: z.string(),
+    name: z.string(),
+    email: z.string(),
+    preferences: preferencesSchema,
+  }),
+  /** Null for a person who belongs to no company (any more). */
+  company: z
+    .object({
+      id: z.string(),
+      name: z.string(),
+      region: z.string(),
+      settings: z.record(z.string(), z.unknown()),
+    })
+    .nullable(),
+  role: roleSchema.nullable(),
+  companies: z.array(z.object({ id: z.string(), name: z.string(), role: roleSchema })),
+});
+export type Me = z.infer<typeof meSchema>;
+
+export const meKey = ['me'] as const;
+
+/** Who is signed in, in which company; null when nobody is. */
+export const meQuery = queryOptions({
+  queryKey: meKey,
+  queryFn: async ({ signal }): Promise<Me | null> => {
+    try {
+      return await get('/api/auth/me', meSchema, { signal });
+    } catch (error) {
+      if (error instanceof ApiProblem && error.status === 401) return null;
+      throw error;
+    }
+  },
+  staleTime: 5 * 60_000,
+});
+
+/** For pages that stand with and without a sign-in. */
+export const useMaybeMe = () => useQuery(meQuery);
+
+/** For pages behind the sign-in: the router has asked before they are shown. */
+export function useMe(): Me {
+  const { data } = useSuspenseQuery(meQuery);
+  if (data === null) throw new ApiProblem(401, 'not-signed-in', 'Please sign in.');
+  return data;
+}
+
+/** What a role may do on the screen. The server decides; this only hides what it would refuse. */
+export interface Abilities {
+  readonly editJobs: boolean;
+  readonly editCatalogue: boolean;
+  readonly editPlan: boolean;
+  readonly survey: boolean;
+  readonly editCompany: boolean;
+  readonly editMembers: boolean;
+}
+
+export function abilitiesOf(role: Role | null): Abilities {
+  const planner = role === 'owner' || role === 'designer';
+  return {
+    editJobs: planner,
+    editCatalogue: planner,
+    editPlan: planner,
+    survey: role !== null,
+    editCompany: role === 'owner',
+    editMembers: role === 'owner',
+  };
+}
+
+export const useAbilities = (): Abilities => abilitiesOf(useMe().role);
