@@ -1,13 +1,14 @@
-import { defaultServerConditions } from 'vite';
 import { defineConfig } from 'vitest/config';
 
-const conditions = ['source', ...defaultServerConditions];
+// Without the `module` condition: packages load as plain Node would load them.
+const conditions = ['source', 'node'];
 
 export default defineConfig({
   resolve: { conditions },
   ssr: { resolve: { conditions } },
   test: {
     include: ['src/**/*.spec.ts', 'test/**/*.spec.ts'],
+    globalSetup: ['test/global-setup.ts'],
     testTimeout: 30_000,
     hookTimeout: 60_000,
     retry: 0,

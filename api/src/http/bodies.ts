@@ -1,0 +1,33 @@
+import express, { type RequestHandler } from 'express';
+import { AppError } from './app-error.js';
+
+const SMALL = '256kb';
+/** Estimates and saves of a large plan. */
+const LARGE = '8mb';
+const LARGE_PATHS = [/^\/api\/estimates\/?$/, /^\/api\/jobs\/[^/]+\/plan\/changes\/?$/];
+
+const small = express.json({ limit: SMALL });
+const large = express.json({ limit: LARGE });
+
+/** The body parser's errors carry a `type`. */
+function bodyError(error: unknown): AppError {
+  const type = typeof error === 'object' && error !== null && 'type' in error ? error.type : '';
+  switch (type) {
+    case 'entity.too.large':
+      return new AppError(413, 'too-large', 'The request is larger than this address accepts.');
+    case 'encoding.unsupported':
+    case 'charset.unsupported':
+      return new AppError(415, 'wrong-encoding', 'The body must be JSON in UTF-8.');
+    case 'request.aborted':
+    case 'request.size.invalid':
+      return new AppError(400, 'aborted', 'The request was cut off.');
+    default:
+      return new AppError(400, 'not-json', 'The body could not be read as JSON.');
+  }
+}
+
+/** JSON bodies with a limit chosen by address; other kinds of body are left to the route (uploads). */
+export const jsonBodies: RequestHandler = (request, response, next) => {
+  const parse = LARGE_PATHS.some((path) => path.test(request.path)) ? large : small;
+  parse(request, response, (error?: unknown) => next(error === undefined ? undefined : bodyError(error)));
+};
