@@ -7,9 +7,10 @@ import { catalogueItemSchema, conductorSchema } from '../catalogue/index.js';
  * calibration, so recalibrating moves nothing.
  */
 
-export const recordIdSchema = z
-  .string()
-  .regex(/^[A-Za-z0-9_-]{1,64}$/, { error: 'A record id has 1 to 64 letters, digits, - or _.' });
+/** Not led by an underscore, so that no id can be the name of an object's prototype. */
+export const recordIdSchema = z.string().regex(/^[A-Za-z0-9-][A-Za-z0-9_-]{0,63}$/, {
+  error: 'A record id has 1 to 64 letters, digits, - or _, and does not begin with _.',
+});
 const id = recordIdSchema;
 const name = z.string().max(120);
 const number = z.number().int().min(1).max(99_999);

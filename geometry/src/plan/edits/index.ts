@@ -1,0 +1,13 @@
+export * from './delete.js';
+export { Draft } from './draft.js';
+export * from './draw-cable.js';
+export * from './duplicate.js';
+export * from './items.js';
+export * from './move.js';
+export * from './network.js';
+export * from './place.js';
+export * from './polyline.js';
+export * from './result.js';
+export { splitCable } from './split.js';
+export * from './terminals.js';
+export * from './update.js';
