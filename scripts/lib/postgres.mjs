@@ -5,12 +5,14 @@ import {
   existsSync,
   lstatSync,
   mkdirSync,
+  readdirSync,
   readFileSync,
   renameSync,
+  rmdirSync,
   rmSync,
   writeFileSync,
 } from 'node:fs';
-import { join } from 'node:path';
+import { dirname, join } from 'node:path';
 import { say, Trouble } from './log.mjs';
 import { folderHash } from './paths.mjs';
 import { freePort } from './ports.mjs';
@@ -258,6 +260,9 @@ export class Cluster {
   async destroy() {
     await this.stop();
     for (const path of [this.folder, this.#file]) rmSync(path, { recursive: true, force: true });
+    // The folder made for it when it could not lie beside its state holds nothing else.
+    const parent = dirname(this.folder);
+    if (parent !== dirname(this.#file) && readdirSync(parent).length === 0) rmdirSync(parent);
   }
 }
 
