@@ -67,7 +67,7 @@ function faultOfLength(reference: LengthReference): CalibrationFault | null {
   if (!isPlace(a) || !isPlace(b))
     return fault('bad-number', 'A point of this length has no place on the sheet.', id);
   if (!isReferenceLength(reference.meters)) {
-    return fault('bad-length', 'The distance must be more than nothing and less than 10 km.', id);
+    return fault('bad-length', 'The distance must be more than nothing and at most 10 km.', id);
   }
   const sigma = reference.sigmaMeters ?? 0;
   if (!(sigma >= 0 && sigma < reference.meters)) {
@@ -85,7 +85,7 @@ function faultOfRectangle(reference: RectangleReference): CalibrationFault | nul
     return fault('bad-number', 'A corner of this rectangle has no place on the sheet.', id);
   }
   if (!isReferenceLength(reference.widthMeters) || !isReferenceLength(reference.depthMeters)) {
-    return fault('bad-length', 'Both sides must be more than nothing and less than 10 km.', id);
+    return fault('bad-length', 'Both sides must be more than nothing and at most 10 km.', id);
   }
   const turns = [0, 1, 2, 3].map((i) => turnAt(corners[(i + 3) % 4]!, corners[i]!, corners[(i + 1) % 4]!));
   if (turns.some((turn) => Math.abs(turn) < LEAST_SPAN_PIXELS)) {
@@ -126,7 +126,7 @@ function isPositive(n: number): boolean {
 }
 
 function isReferenceLength(n: number): boolean {
-  return n > 0 && n < LONGEST_REFERENCE_METERS;
+  return n > 0 && n <= LONGEST_REFERENCE_METERS;
 }
 
 export function fault(code: CalibrationFaultCode, message: string, referenceId?: string): CalibrationFault {

@@ -3,6 +3,7 @@ declare const unit: unique symbol;
 export type Branded<U extends string> = number & { readonly [unit]: U };
 
 export type Meters = Branded<'meters'>;
+export type SquareMeters = Branded<'square-meters'>;
 /** Sheet pixels: the pixels of the stored sheet image, origin at its top left corner. */
 export type Pixels = Branded<'pixels'>;
 export type Volts = Branded<'volts'>;
@@ -13,6 +14,7 @@ export type VoltAmperes = Branded<'volt-amperes'>;
 export type Celsius = Branded<'celsius'>;
 
 export const meters = (n: number): Meters => n as Meters;
+export const squareMeters = (n: number): SquareMeters => n as SquareMeters;
 export const pixels = (n: number): Pixels => n as Pixels;
 export const volts = (n: number): Volts => n as Volts;
 export const amperes = (n: number): Amperes => n as Amperes;

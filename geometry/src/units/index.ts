@@ -1,1 +1,4 @@
 export * from './brand.js';
+export * from './drawing-scale.js';
+export * from './format.js';
+export * from './length.js';
