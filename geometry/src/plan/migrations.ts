@@ -66,7 +66,7 @@ function migrateChange(input: unknown, known: KnownForms): unknown {
   checkVersion(version, known);
   if (version === known.version) return input;
   const put = Object.entries(input.put).map(([id, record]) => [id, migrateRecord(version, record, known)]);
-  return { ...input, schema: known.version, put: Object.fromEntries(put) };
+  return { ...input, schema: PLAN_SCHEMA_VERSION, put: Object.fromEntries(put) };
 }
 
 function migrateRecord(version: number, record: unknown, known: KnownForms): unknown {
