@@ -1,10 +1,12 @@
 // npm start: the whole product on this machine, over one data folder.
 import { build } from './lib/build.mjs';
+import { claimDataFolder, requirePort } from './lib/data-folder.mjs';
 import { ensurePackages } from './lib/debian.mjs';
 import { main, report, say, Trouble } from './lib/log.mjs';
 import { ensureNodeModules } from './lib/node-modules.mjs';
 import { dataFolder } from './lib/paths.mjs';
-import { claimDataFolder, requirePort, startProduct } from './lib/product.mjs';
+import { readPort } from './lib/ports.mjs';
+import { startProduct } from './lib/product.mjs';
 import { aborted, Supervisor, stopSignal } from './lib/supervisor.mjs';
 
 await main(async () => {
@@ -38,11 +40,4 @@ function refuseProduction() {
   throw new Trouble(
     '"npm start" runs Lampwright locally with a database and fakes of its own; in production run "node api/dist/main.js" and "node api/dist/worker.js" with the settings of .env.example.',
   );
-}
-
-function readPort() {
-  const given = process.env.PORT || '3000';
-  const port = Number(given);
-  if (Number.isInteger(port) && port >= 1 && port <= 65_535) return port;
-  throw new Trouble(`PORT must be a whole number from 1 to 65535, not "${given}".`);
 }

@@ -1,5 +1,9 @@
 // Loaded into the processes that the commands start (node --import). When the command that started them is
 // gone without having stopped them (kill -9), the channel to it closes, and they stop by themselves.
-process.on('disconnect', () => process.kill(process.pid, 'SIGTERM'));
-// The channel alone must not keep a process alive.
-process.channel?.unref();
+// Processes that these fork in turn load this file too, but are their parent's own business.
+if (process.env.LAMPWRIGHT_SUPERVISED && process.channel) {
+  delete process.env.LAMPWRIGHT_SUPERVISED;
+  process.on('disconnect', () => process.kill(process.pid, 'SIGTERM'));
+  // The channel alone must not keep a process alive.
+  process.channel.unref();
+}

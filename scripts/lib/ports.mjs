@@ -1,5 +1,6 @@
 import { connect, createServer } from 'node:net';
 import { setTimeout as sleep } from 'node:timers/promises';
+import { Trouble } from './log.mjs';
 
 const loopback = '127.0.0.1';
 
@@ -61,4 +62,12 @@ export async function waitForPort(port, { signal, timeoutMs = 30_000 } = {}) {
     await sleep(50);
   }
   return false;
+}
+
+/** The port that the product is asked to serve on: PORT, or 3000. @throws {Trouble} */
+export function readPort() {
+  const given = process.env.PORT || '3000';
+  const port = Number(given);
+  if (Number.isInteger(port) && port >= 1 && port <= 65_535) return port;
+  throw new Trouble(`PORT must be a whole number from 1 to 65535, not "${given}".`);
 }

@@ -20,10 +20,10 @@ import { findInstallations, isRoot, runAsServer, serverIds, serverMayEnter } fro
 import { livePostmaster, quietPostmaster } from './postmaster.mjs';
 import { mustRun } from './processes.mjs';
 
-const database = 'lampwright';
 /** The superuser, for making and swapping databases; the product itself connects as an ordinary role. */
 const keeper = 'keeper';
-const role = 'lampwright';
+export const productRole = 'lampwright';
+export const productDatabase = 'lampwright';
 
 /**
  * What must be remembered about a cluster, kept readable to its owner alone.
@@ -172,7 +172,15 @@ export class Cluster {
 
   /** The product's database, as the product's own role. */
   get url() {
-    return this.#address(role, this.#state.rolePassword, database);
+    return this.urlOf(productDatabase);
+  }
+
+  /**
+   * Any database, as the product's own role.
+   * @param {string} name
+   */
+  urlOf(name) {
+    return this.#address(productRole, this.#state.rolePassword, name);
   }
 
   /**
@@ -235,12 +243,12 @@ export class Cluster {
    * @returns {Promise<void>}
    */
   async ensureDatabase() {
-    const roles = await this.sql(`select 1 from pg_roles where rolname = '${role}'`);
+    const roles = await this.sql(`select 1 from pg_roles where rolname = '${productRole}'`);
     // The password comes from this file's own generator: letters, digits, - and _ only.
     const word = roles === '' ? 'create' : 'alter';
-    await this.sql(`${word} role ${role} login password '${this.#state.rolePassword}'`);
-    if ((await this.sql(`select 1 from pg_database where datname = '${database}'`)) === '') {
-      await this.sql(`create database ${database} owner ${role}`);
+    await this.sql(`${word} role ${productRole} login password '${this.#state.rolePassword}'`);
+    if ((await this.sql(`select 1 from pg_database where datname = '${productDatabase}'`)) === '') {
+      await this.sql(`create database ${productDatabase} owner ${productRole}`);
     }
   }
 

@@ -3,44 +3,16 @@ import { join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { fakeFolders, fakesEnvironment, productEnvironment } from './local-environment.mjs';
 import { readState, writeState } from './local-state.mjs';
-import { tryLock } from './lock.mjs';
 import { say, Trouble } from './log.mjs';
 import { inRoot } from './paths.mjs';
-import { isPortFree, waitForPort } from './ports.mjs';
+import { waitForPort } from './ports.mjs';
 import { openCluster } from './postgres.mjs';
 import { run } from './processes.mjs';
+import { settleRestore } from './restore-swap.mjs';
 
 /** @typedef {import('./supervisor.mjs').Supervisor} Supervisor */
 
 const readyTimeoutMs = 60_000;
-
-/**
- * Claims a data folder for this process, until the supervisor stops.
- * @param {string} folder
- * @param {Supervisor} supervisor
- * @param {string} purpose
- * @throws {Trouble} when another process uses it
- */
-export function claimDataFolder(folder, supervisor, purpose) {
-  const lock = tryLock(dataLock(folder), purpose);
-  if ('holder' in lock) {
-    throw new Trouble(
-      `The data folder ${folder} is in use (${lock.holder.purpose}, process ${lock.holder.pid}); stop that first or name another folder in LAMPWRIGHT_DATA.`,
-    );
-  }
-  supervisor.onStop('the lock', async () => lock.release());
-}
-
-/** @param {string} folder */
-export const dataLock = (folder) => join(folder, 'lock');
-
-/** @param {number} port @throws {Trouble} */
-export async function requirePort(port) {
-  if (await isPortFree(port)) return;
-  throw new Trouble(
-    `Port ${port} is taken by another program; stop it or choose another port, as in "PORT=${port + 1} npm start".`,
-  );
-}
 
 /**
  * The services that everything else needs: database (migrated) and fakes, and the demo in a new database.
@@ -57,6 +29,7 @@ export async function startGround({ folder, supervisor, signal, port, publicUrl 
   await cluster.start();
   signal.throwIfAborted();
   await cluster.ensureDatabase();
+  await settleRestore(folder, cluster);
   let state = await readState(folder);
   await startFakes(folder, state, supervisor, signal);
   const env = productEnvironment({ state, port, databaseUrl: cluster.url, publicUrl });

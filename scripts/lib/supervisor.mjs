@@ -56,13 +56,14 @@ export class Supervisor {
    * @param {NodeJS.ProcessEnv} service.env
    * @param {string} [service.cwd]
    * @param {string} [service.logFile] its output goes here, else to the terminal
+   * @param {boolean} [service.tool] a development tool with processes of its own, all to be stopped at once
    * @returns {Service}
    */
-  start({ name, args, env, cwd = inRoot(), logFile }) {
+  start({ name, args, env, cwd = inRoot(), logFile, tool = false }) {
     const output = logFile ? openLog(logFile) : 'inherit';
     const child = spawn(process.execPath, ['--import', guard, ...args], {
       cwd,
-      env,
+      env: { ...env, LAMPWRIGHT_SUPERVISED: '1' },
       stdio: ['ignore', output, output, 'ipc'],
       detached: true,
     });
@@ -77,13 +78,22 @@ export class Supervisor {
       if (stopped || this.#stopping) return;
       this.#fail(new Trouble(`${name} ended unexpectedly (exit code ${code}).${lastWords(logFile)}`));
     });
+    const end = (/** @type {NodeJS.Signals} */ signal) => {
+      if (!tool || !child.pid) return child.kill(signal);
+      // Its group holds what it has started, and may outlive it.
+      try {
+        process.kill(-child.pid, signal);
+      } catch {
+        // The whole group has ended.
+      }
+    };
     const stop = async () => {
       stopped = true;
-      child.kill('SIGTERM');
+      end('SIGTERM');
       const inTime = await Promise.race([ended, sleep(graceMs, null, { ref: false })]);
       if (inTime !== null) return;
       warn(`${name} did not stop in ${graceMs / 1000} s and was ended.`);
-      child.kill('SIGKILL');
+      end('SIGKILL');
       await ended;
     };
     this.onStop(name, stop);

@@ -1,13 +1,14 @@
 import { cpSync, existsSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { build } from './build.mjs';
+import { claimDataFolder } from './data-folder.mjs';
 import { listFiles } from './files.mjs';
 import { report, say, warn } from './log.mjs';
 import { journalFaults } from './migration-order.mjs';
 import { inRoot, root } from './paths.mjs';
 import { freePort } from './ports.mjs';
 import { run } from './processes.mjs';
-import { claimDataFolder, startProduct } from './product.mjs';
+import { startProduct } from './product.mjs';
 import { scratchFolder } from './scratch-folder.mjs';
 import { Supervisor } from './supervisor.mjs';
 import { nodeTestCounts, oneOf, playwrightCounts, sum, vitestCounts } from './test-counts.mjs';
@@ -23,8 +24,8 @@ import { nodeTestCounts, oneOf, playwrightCounts, sum, vitestCounts } from './te
  * @typedef {{ name: string, title: string, run: (context: TestContext) => Promise<Counts> }} Step
  */
 
-/** `.only` is refused and snapshots are not written. */
-const env = { ...process.env, CI: '1', FORCE_COLOR: '0' };
+/** With CI set, `.only` is refused and snapshots are not written; it also makes some tools colour a file. */
+const env = { ...process.env, CI: '1', ...(process.stdout.isTTY ? {} : { NO_COLOR: '1' }) };
 
 /**
  * @param {string} tool
