@@ -3,7 +3,14 @@ import { AccessModule } from './access/access.module.js';
 import { ConfigModule } from './config/config.module.js';
 import type { Env } from './config/env.js';
 import { DatabaseModule } from './database/database.module.js';
+import { AuthModule } from './modules/auth/auth.module.js';
+import { CatalogueModule } from './modules/catalogue/catalogue.module.js';
+import { ClientsModule } from './modules/clients/clients.module.js';
 import { HealthModule } from './modules/health/health.module.js';
+import { JobsModule } from './modules/jobs/jobs.module.js';
+import { PropertiesModule } from './modules/properties/properties.module.js';
+import { SheetsModule } from './modules/sheets/sheets.module.js';
+import { MailModule } from './ports/mail/mail.module.js';
 import { QueueModule } from './ports/queue/queue.module.js';
 import { StorageModule } from './ports/storage/storage.module.js';
 
@@ -19,8 +26,15 @@ export class AppModule {
         DatabaseModule,
         QueueModule,
         StorageModule,
+        MailModule,
         AccessModule,
+        AuthModule,
         HealthModule,
+        ClientsModule,
+        PropertiesModule,
+        JobsModule,
+        SheetsModule,
+        CatalogueModule,
       ],
     };
   }

@@ -3,6 +3,7 @@ import { ConfigModule } from './config/config.module.js';
 import type { Env } from './config/env.js';
 import { DatabaseModule } from './database/database.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
+import { MailModule } from './ports/mail/mail.module.js';
 import { QueueModule } from './ports/queue/queue.module.js';
 import { StorageModule } from './ports/storage/storage.module.js';
 
@@ -13,7 +14,7 @@ export class WorkerModule {
   static with(env: Env): DynamicModule {
     return {
       module: WorkerModule,
-      imports: [ConfigModule.with(env), DatabaseModule, QueueModule, StorageModule, JobsModule],
+      imports: [ConfigModule.with(env), DatabaseModule, QueueModule, StorageModule, MailModule, JobsModule],
     };
   }
 }

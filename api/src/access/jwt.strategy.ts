@@ -1,20 +1,10 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { PassportStrategy } from '@nestjs/passport';
-import type { Request } from 'express';
 import { Strategy } from 'passport-jwt';
-import { z } from 'zod';
 import { ENV } from '../config/config.module.js';
 import type { Env } from '../config/env.js';
-import { SESSION_COOKIE } from './cookie.js';
 import { type LiveSession, SessionRepository } from './session.repository.js';
-
-const payloadSchema = z.object({ sid: z.uuid() });
-
-const fromCookie = (request: Request): string | null => {
-  const cookies: Record<string, unknown> = request.cookies ?? {};
-  const token = cookies[SESSION_COOKIE];
-  return typeof token === 'string' ? token : null;
-};
+import { sessionTokenOf, sessionTokenSchema } from './session-cookie.js';
 
 /** The cookie's token only names a session; whether it still stands is asked of the database each time. */
 @Injectable()
@@ -24,7 +14,7 @@ export class JwtStrategy extends PassportStrategy(Strategy) {
     @Inject(SessionRepository) private readonly sessions: SessionRepository,
   ) {
     super({
-      jwtFromRequest: fromCookie,
+      jwtFromRequest: sessionTokenOf,
       secretOrKey: env.SESSION_SECRET,
       algorithms: ['HS256'],
       // The session row holds the end of it: it moves on with use.
@@ -33,7 +23,7 @@ export class JwtStrategy extends PassportStrategy(Strategy) {
   }
 
   async validate(payload: unknown): Promise<LiveSession | false> {
-    const parsed = payloadSchema.safeParse(payload);
+    const parsed = sessionTokenSchema.safeParse(payload);
     if (!parsed.success) return false;
     const now = new Date();
     const session = await this.sessions.findLive(parsed.data.sid, now);

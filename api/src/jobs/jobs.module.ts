@@ -1,9 +1,10 @@
 import { Inject, Module, type OnApplicationBootstrap } from '@nestjs/common';
 import { Queue } from '../ports/queue/queue.js';
 import { JOB_HANDLERS, type JobHandler } from './job-handler.js';
+import { SendMail } from './mail.js';
 
 /** Handler classes of the worker; add a new one here. */
-const handlers: (new (...parts: never[]) => JobHandler)[] = [];
+const handlers: (new (...parts: never[]) => JobHandler)[] = [SendMail];
 
 @Module({
   providers: [

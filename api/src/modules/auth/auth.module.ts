@@ -1,0 +1,16 @@
+import { Module } from '@nestjs/common';
+import { CompaniesModule } from '../companies/companies.module.js';
+import { AuthController } from './auth.controller.js';
+import { AuthService } from './auth.service.js';
+import { Callers } from './caller.js';
+import { EmailTokensRepository } from './email-tokens.repository.js';
+import { MeService } from './me.service.js';
+import { SessionsService } from './sessions.service.js';
+
+@Module({
+  imports: [CompaniesModule],
+  controllers: [AuthController],
+  providers: [AuthService, MeService, SessionsService, Callers, EmailTokensRepository],
+  exports: [MeService, SessionsService, Callers, EmailTokensRepository],
+})
+export class AuthModule {}
