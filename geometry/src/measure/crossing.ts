@@ -54,6 +54,9 @@ function insideParts(a: GroundPoint, b: GroundPoint, polygon: Polygon): [number,
   return parts;
 }
 
+/** A line through a corner must cut one of its two edges, whatever rounding says; a cut too many is harmless. */
+const SLACK = 1e-9;
+
 /** Where along a–b the polygon's edges cross it or touch it, as shares of the segment. */
 function cutsAt(a: GroundPoint, b: GroundPoint, polygon: Polygon): number[] {
   const dx = b.x - a.x;
@@ -73,7 +76,7 @@ function cutsAt(a: GroundPoint, b: GroundPoint, polygon: Polygon): number[] {
       cuts.push(((d.x - a.x) * dx + (d.y - a.y) * dy) / square);
     } else {
       const onEdge = ((c.x - a.x) * dy - (c.y - a.y) * dx) / cross;
-      if (onEdge >= 0 && onEdge <= 1) cuts.push(((c.x - a.x) * ey - (c.y - a.y) * ex) / cross);
+      if (onEdge >= -SLACK && onEdge <= 1 + SLACK) cuts.push(((c.x - a.x) * ey - (c.y - a.y) * ex) / cross);
     }
   }
   return cuts.filter((t) => t > 0 && t < 1);

@@ -18,6 +18,7 @@ export {
   lengthAlong,
   lengthBetween,
   type MeasuredLength,
+  MISFIT_LIMIT,
   type ReferenceResidual,
   type SolvedScale,
   TRUSTED_RELATIVE_ERROR,

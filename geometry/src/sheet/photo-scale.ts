@@ -3,6 +3,7 @@ import { inverse, type Matrix3 } from './homography.js';
 import type { ScaleReference } from './references.js';
 import {
   type GroundReading,
+  growthOfErrors,
   lengthBetween,
   quadraticForm,
   type ReferenceResidual,
@@ -35,9 +36,6 @@ interface PhotoSolution {
  */
 const LEAST_HORIZON_SIGMAS = 5;
 
-/** Leftovers this many times the expected click error can't be clicks; then the stated errors must grow. */
-export const MISFIT_LIMIT = 3;
-
 /** A photo's scale: a homography between the sheet and the ground, and the covariance of its entries. */
 export class PhotoScale implements SolvedScale {
   readonly view = 'photo';
@@ -55,7 +53,7 @@ export class PhotoScale implements SolvedScale {
   constructor(solution: PhotoSolution) {
     this.misfit = solution.misfit;
     this.clickSigmaPixels = solution.clickSigmaPixels;
-    const growth = solution.misfit !== null && solution.misfit > MISFIT_LIMIT ? solution.misfit ** 2 : 1;
+    const growth = growthOfErrors(solution.misfit);
     this.covariance = Float64Array.from(solution.unitCovariance, (c) => c * growth);
     this.toImage = solution.homography;
     this.toGround = inverse(solution.homography);

@@ -55,6 +55,17 @@ export interface MeasuredLength {
 /** A length whose error passes this share of it is not to be trusted (the product's own promise). */
 export const TRUSTED_RELATIVE_ERROR = 0.1;
 
+/** Leftovers this many times the expected click error can't be clicks: some reference is wrong. */
+export const MISFIT_LIMIT = 3;
+
+/**
+ * The factor on the calibration's variances. Clicks as good as expected leave it at 1, whatever their luck;
+ * beyond the limit the leftovers themselves are the better measure of the error (Birge's ratio).
+ */
+export function growthOfErrors(misfit: number | null): number {
+  return misfit !== null && misfit > MISFIT_LIMIT ? misfit ** 2 : 1;
+}
+
 /** The straight distance on the ground between two sheet points; null where one is not on the ground. */
 export function lengthBetween(scale: SolvedScale, a: SheetPoint, b: SheetPoint): MeasuredLength | null {
   return lengthAlong(scale, [a, b]);

@@ -1,6 +1,6 @@
 import { meters, pixels, type SheetPoint } from '../units/brand.js';
 import type { DrawingScale, ScaleReference } from './references.js';
-import type { GroundReading, ReferenceResidual, SolvedScale } from './scale.js';
+import { type GroundReading, growthOfErrors, type ReferenceResidual, type SolvedScale } from './scale.js';
 
 /**
  * How far a printed drawing is off its written scale: paper stretch and the page's rounding to whole
@@ -47,14 +47,15 @@ export function solveSimilarity(
     pixelsPerMeter = fit / information;
   }
   const metersPerPixel = 1 / pixelsPerMeter;
-  const variance = metersPerPixel ** 4 / information;
+  const misfit = misfitOf(observations, pixelsPerMeter);
+  const variance = (metersPerPixel ** 4 / information) * growthOfErrors(misfit);
   return {
     view: 'plan',
     groundFromSheet: (p) => ({ x: meters(p.x * metersPerPixel), y: meters(-p.y * metersPerPixel) }),
     sheetFromGround: (g) => ({ x: pixels(g.x * pixelsPerMeter), y: pixels(-g.y * pixelsPerMeter) }),
     read: (p) => readingAt(p, metersPerPixel),
     residuals: observations.map((o) => residualOf(o, metersPerPixel)),
-    misfit: misfitOf(observations, pixelsPerMeter),
+    misfit,
     clickSigmaPixels,
     covariance: Float64Array.of(variance),
   };
