@@ -1,0 +1,197 @@
+import {
+  cablePoints,
+  itemOf,
+  type NoteRecord,
+  type PlanDocument,
+  type PlanPoint,
+  recordOf,
+} from '@lampwright/geometry/plan';
+import type { Answers } from './answers';
+import { cableColour, cableWeight, loadBand } from './cable-look';
+import type { Point } from './camera';
+import type { AreaShape } from './draw/areas';
+import type { CableStroke } from './draw/cable';
+import { type FixtureLook, fixtureLook, isFault, waitingLook } from './fixture-look';
+import { initialOf, tagOf, windowOf } from './names';
+import { dimBlue, grey, ink, overRed } from './palette';
+import { voltsText } from './words';
+
+export interface SceneFixture {
+  readonly id: string;
+  readonly at: Point;
+  readonly look: FixtureLook;
+  readonly initial: string;
+  /** What its label says when it has one. */
+  readonly text: string;
+  /** Why it has a label without being hovered or chosen; null: it has none. */
+  readonly standing: 'fault' | 'worst' | 'unwired' | null;
+}
+
+export interface SceneCable extends CableStroke {
+  readonly id: string;
+  readonly fromId: string;
+  readonly toId: string;
+  readonly via: readonly Point[];
+}
+
+export interface SceneNode {
+  readonly id: string;
+  readonly at: Point;
+  readonly kind: 'transformer' | 'feed' | 'hub' | 'splice' | 'note';
+  readonly label: string;
+}
+
+export interface SceneMeasurement {
+  readonly id: string;
+  readonly points: readonly Point[];
+  readonly text: string;
+}
+
+/** What one sheet of a plan shows: plain data in sheet pixels, ready to draw at any camera. */
+export interface Scene {
+  readonly fixtures: readonly SceneFixture[];
+  readonly cables: readonly SceneCable[];
+  readonly nodes: readonly SceneNode[];
+  readonly areas: readonly AreaShape[];
+  readonly measurements: readonly SceneMeasurement[];
+}
+
+export const emptyScene: Scene = { fixtures: [], cables: [], nodes: [], areas: [], measurements: [] };
+
+/** Words that need the sheet's scale and the person's units. */
+export interface SceneWords {
+  readonly areaText: (name: string, points: readonly PlanPoint[]) => string;
+  readonly lengthText: (points: readonly PlanPoint[]) => string;
+}
+
+export function buildScene(
+  doc: PlanDocument,
+  sheetId: string,
+  answers: Answers | null,
+  words: SceneWords,
+): Scene {
+  const worst = worstOfRuns(doc, answers);
+  const fixtures: SceneFixture[] = [];
+  const cables: SceneCable[] = [];
+  const nodes: SceneNode[] = [];
+  const areas: AreaShape[] = [];
+  const measurements: SceneMeasurement[] = [];
+  for (const record of doc.values()) {
+    if (!('sheetId' in record) || record.sheetId !== sheetId) continue;
+    switch (record.kind) {
+      case 'fixture': {
+        const window = windowOf(doc, record);
+        const reading = answers?.fixtures.get(record.id);
+        const look = answers === null ? waitingLook : fixtureLook(reading, window);
+        const tag = tagOf(doc, record);
+        const shown =
+          reading === undefined || look.kind === 'unwired' ? null : voltsText(reading.volts, window);
+        fixtures.push({
+          id: record.id,
+          at: record.at,
+          look,
+          initial: initialOf(doc, record),
+          text: shown === null ? (look.kind === 'unwired' ? `${tag} not wired yet` : tag) : `${tag} ${shown}`,
+          standing:
+            look.kind === 'unwired'
+              ? 'unwired'
+              : isFault(look.kind)
+                ? 'fault'
+                : worst.has(record.id)
+                  ? 'worst'
+                  : null,
+        });
+        break;
+      }
+      case 'cable': {
+        const points = cablePoints(doc, record);
+        if (points === undefined) break;
+        const item = itemOf(doc, record.itemId, 'cable');
+        cables.push({
+          id: record.id,
+          fromId: record.fromId,
+          toId: record.toId,
+          via: record.via,
+          points,
+          weight: item === undefined ? 2 : cableWeight(item.conductor),
+          colour: cableColour(loadBand(answers?.cables.get(record.id)?.ampacityPercent ?? null)),
+          dashed: record.runId === null,
+        });
+        break;
+      }
+      case 'transformer':
+      case 'feed':
+        nodes.push({ id: record.id, at: record.at, kind: record.kind, label: tagOf(doc, record) });
+        break;
+      case 'junction':
+        nodes.push({ id: record.id, at: record.at, kind: record.style, label: tagOf(doc, record) });
+        break;
+      case 'note':
+        nodes.push({ id: record.id, at: record.at, kind: 'note', label: firstLine(record) });
+        break;
+      case 'area':
+        areas.push({
+          id: record.id,
+          use: record.use,
+          points: record.points,
+          label: words.areaText(record.name, record.points),
+        });
+        break;
+      case 'measurement':
+        measurements.push({ id: record.id, points: record.points, text: words.lengthText(record.points) });
+        break;
+    }
+  }
+  return { fixtures, cables, nodes, areas, measurements };
+}
+
+/** Of each run the fixture with the least room between its volts and the edge of its window. */
+export function worstOfRuns(doc: PlanDocument, answers: Answers | null): Set<string> {
+  const worst = new Map<string, { id: string; room: number }>();
+  if (answers === null) return new Set();
+  const runs = runOfNodes(doc);
+  for (const reading of answers.fixtures.values()) {
+    if (reading.state === 'off' || reading.state === 'unwired') continue;
+    const fixture = recordOf(doc, reading.id, 'fixture');
+    const window = fixture === undefined ? null : windowOf(doc, fixture);
+    const run = runs.get(reading.id);
+    if (window === null || run === undefined) continue;
+    const room = Math.min(reading.volts - window.minVolts, window.maxVolts - reading.volts);
+    const before = worst.get(run);
+    if (before === undefined || room < before.room) worst.set(run, { id: reading.id, room });
+  }
+  return new Set([...worst.values()].map((w) => w.id));
+}
+
+/** The run whose cable reaches a record, by record id. Where two runs are joined, the first one found. */
+export function runOfNodes(doc: PlanDocument): Map<string, string> {
+  const runs = new Map<string, string>();
+  for (const record of doc.values()) {
+    if (record.kind !== 'cable' || record.runId === null) continue;
+    if (!runs.has(record.fromId)) runs.set(record.fromId, record.runId);
+    if (!runs.has(record.toId)) runs.set(record.toId, record.runId);
+  }
+  return runs;
+}
+
+/** The edge of a fixture's label: the hue of what is wrong, ink for the rest. */
+export function labelEdge(look: FixtureLook): string {
+  switch (look.kind) {
+    case 'dim':
+      return dimBlue;
+    case 'overdriven':
+      return overRed;
+    case 'dark':
+      return ink;
+    case 'in-window':
+    case 'off':
+    case 'unwired':
+    case 'waiting':
+      return grey;
+  }
+}
+
+function firstLine(note: NoteRecord): string {
+  const line = note.text.split('\n')[0] ?? '';
+  return line.length > 32 ? `${line.slice(0, 31)}…` : line;
+}
