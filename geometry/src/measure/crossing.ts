@@ -25,6 +25,7 @@ export function polygonCrossing(line: readonly GroundPoint[], polygon: Polygon):
     const a = line[i - 1]!;
     const b = line[i]!;
     const length = Math.hypot(b.x - a.x, b.y - a.y);
+    if (length === 0) continue;
     for (const [from, to] of insideParts(a, b, polygon)) {
       const last = spans.at(-1);
       const fromMeters = start + from * length;
@@ -42,7 +43,7 @@ export function polygonCrossing(line: readonly GroundPoint[], polygon: Polygon):
   };
 }
 
-/** The parts of the segment a–b inside the polygon, as shares of the segment, in order. */
+/** The parts of the segment a–b (not a point) inside the polygon, as shares of the segment, in order. */
 function insideParts(a: GroundPoint, b: GroundPoint, polygon: Polygon): [number, number][] {
   const cuts = [0, ...cutsAt(a, b, polygon), 1].sort((p, q) => p - q);
   const parts: [number, number][] = [];
@@ -63,7 +64,6 @@ function cutsAt(a: GroundPoint, b: GroundPoint, polygon: Polygon): number[] {
   const dy = b.y - a.y;
   const square = dx * dx + dy * dy;
   const cuts: number[] = [];
-  if (square === 0) return cuts;
   for (let i = 0, j = polygon.length - 1; i < polygon.length; j = i++) {
     const c = polygon[j]!;
     const d = polygon[i]!;
