@@ -94,7 +94,7 @@ async function buildPart(part, signal) {
   const wallClock = Date.now();
   rmSync(join(cache, part.name), { force: true });
   mkdirSync(cache, { recursive: true });
-  const env = { ...process.env, NODE_ENV: 'production' };
+  const env = { ...process.env, NODE_ENV: 'production', NO_COLOR: '1' };
   const [tool = '', ...args] = part.command;
   const program = inRoot('node_modules/.bin', tool);
   const result = await run(program, args, { cwd: inRoot(part.folder), env, signal });
