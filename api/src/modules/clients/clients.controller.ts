@@ -20,7 +20,7 @@ import { ClientsService } from './clients.service.js';
 const id = { schema: z.uuid() };
 
 @ApiTags('clients')
-@Controller('clients')
+@Controller('api/clients')
 export class ClientsController {
   constructor(@Inject(ClientsService) private readonly clients: ClientsService) {}
 

@@ -20,16 +20,22 @@ export class ClientsRepository {
     page: { limit: number; offset: number },
   ): Promise<(ClientRow & { jobs: number })[]> {
     const rows = await this.database.queries
-      .select({
-        client: clients,
-        jobs: sql<number>`(
-          SELECT count(*)::int FROM ${jobs} JOIN ${properties}
-            ON ${properties.companyId} = ${jobs.companyId} AND ${properties.id} = ${jobs.propertyId}
-          WHERE ${properties.companyId} = ${companyId} AND ${properties.clientId} = ${clients.id}
-            AND ${jobs.archivedAt} IS NULL)`,
-      })
+      .select({ client: clients, jobs: count(jobs.id) })
       .from(clients)
+      .leftJoin(
+        properties,
+        and(eq(properties.companyId, clients.companyId), eq(properties.clientId, clients.id)),
+      )
+      .leftJoin(
+        jobs,
+        and(
+          eq(jobs.companyId, properties.companyId),
+          eq(jobs.propertyId, properties.id),
+          isNull(jobs.archivedAt),
+        ),
+      )
       .where(matching(companyId, filter))
+      .groupBy(clients.id)
       .orderBy(asc(sql`lower(${clients.name})`), asc(clients.id))
       .limit(page.limit)
       .offset(page.offset);

@@ -20,7 +20,7 @@ import { PropertiesService } from './properties.service.js';
 const id = { schema: z.uuid() };
 
 @ApiTags('properties')
-@Controller('properties')
+@Controller('api/properties')
 export class PropertiesController {
   constructor(@Inject(PropertiesService) private readonly properties: PropertiesService) {}
 

@@ -1,0 +1,46 @@
+import { catalogueItemSchema, fixtureKinds } from '@lampwright/geometry/catalogue';
+import { describe, expect, it } from 'vitest';
+import { starterCatalogue } from './index.js';
+
+const of = (category: string) => starterCatalogue.filter((item) => item.category === category);
+
+describe('the starter catalogue', () => {
+  it('holds only items that its own editor would accept', () => {
+    for (const item of starterCatalogue)
+      expect(catalogueItemSchema.safeParse(item).error?.issues ?? [], item.name).toEqual([]);
+  });
+
+  it('names nothing twice', () => {
+    const names = starterCatalogue.map((item) => item.name);
+    expect(names.filter((name, i) => names.indexOf(name) !== i)).toEqual([]);
+  });
+
+  it('has every kind of fixture, and a lamp for every base', () => {
+    const kinds = new Set(
+      starterCatalogue.flatMap((item) => (item.category === 'fixture' ? [item.kind] : [])),
+    );
+    expect(fixtureKinds.filter((kind) => !kinds.has(kind))).toEqual([]);
+    const bases = new Set(starterCatalogue.flatMap((item) => (item.category === 'lamp' ? [item.base] : [])));
+    for (const item of starterCatalogue)
+      if (item.category === 'fixture' && item.light === 'lamp') expect(bases).toContain(item.base);
+  });
+
+  it('has the usual gauges and sizes', () => {
+    const conductors = starterCatalogue.flatMap((item) =>
+      item.category === 'cable' ? [item.conductor] : [],
+    );
+    for (const awg of [8, 10, 12, 14, 16, 18]) expect(conductors).toContainEqual({ awg });
+    for (const mm2 of [1.5, 2.5, 4, 6]) expect(conductors).toContainEqual({ mm2 });
+    const sizes = starterCatalogue.flatMap((item) => (item.category === 'transformer' ? [item.ratedVA] : []));
+    for (const size of [150, 300, 600, 900]) expect(sizes).toContain(size);
+    for (const category of ['hub', 'connector', 'control']) expect(of(category).length).toBeGreaterThan(1);
+  });
+
+  it('has an LED lamp of 4 W that draws 5.5 VA', () => {
+    const lamp = starterCatalogue.find(
+      (item) => item.category === 'lamp' && item.name.includes('LED lamp GU5.3, 4 W'),
+    );
+    if (lamp?.category !== 'lamp' || lamp.load.kind !== 'driver') throw new Error('missing');
+    expect(lamp.load.watts / (lamp.load.powerFactor ?? 1)).toBeCloseTo(5.5, 2);
+  });
+});

@@ -1,0 +1,45 @@
+import { Inject, Injectable } from '@nestjs/common';
+import { and, eq, sql } from 'drizzle-orm';
+import { Database } from '../../database/database.js';
+import { jobs } from '../../database/schema/index.js';
+import type { SiteWalk } from './site-walk.dto.js';
+
+export type JobRow = typeof jobs.$inferSelect;
+type Editable = Pick<JobRow, 'name' | 'stage' | 'notes' | 'siteWalkOn' | 'installOn' | 'existingSystem'>;
+
+@Injectable()
+export class JobsRepository {
+  constructor(@Inject(Database) private readonly database: Database) {}
+
+  async find(companyId: string, id: string): Promise<JobRow | null> {
+    const [row] = await this.database.queries
+      .select()
+      .from(jobs)
+      .where(and(eq(jobs.companyId, companyId), eq(jobs.id, id)));
+    return row ?? null;
+  }
+
+  async insert(
+    companyId: string,
+    values: { name: string; propertyId: string; existingSystem: boolean; notes: string },
+  ): Promise<JobRow> {
+    const [row] = await this.database.queries
+      .insert(jobs)
+      .values({ ...values, companyId })
+      .returning();
+    return row!;
+  }
+
+  async update(
+    companyId: string,
+    id: string,
+    values: Partial<Editable & { archivedAt: Date | null; siteWalk: SiteWalk }>,
+  ): Promise<JobRow | null> {
+    const [row] = await this.database.queries
+      .update(jobs)
+      .set({ ...values, updatedAt: sql`now()` })
+      .where(and(eq(jobs.companyId, companyId), eq(jobs.id, id)))
+      .returning();
+    return row ?? null;
+  }
+}
