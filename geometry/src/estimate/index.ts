@@ -1,1 +1,2 @@
 export * from './contract/index.js';
+export * from './from-plan/index.js';

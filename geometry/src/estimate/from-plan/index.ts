@@ -1,0 +1,6 @@
+export * from './cable-lengths.js';
+export * from './fault.js';
+export * from './plan-faults.js';
+export * from './request.js';
+export { scaleOfSheet, sheetPoint } from './sheet-scale.js';
+export { voltsInWords } from './words.js';
