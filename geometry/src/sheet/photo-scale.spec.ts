@@ -202,6 +202,7 @@ describe('lengths beside a rectangle', () => {
 });
 
 describe('the first-order error of a photo’s lengths', () => {
+  const runs = 1500;
   const lines: YardName[][] = [
     ['pond outer near left', 'pond outer near right'],
     ['pond outer near right', 'pond outer far right'],
@@ -217,7 +218,6 @@ describe('the first-order error of a photo’s lengths', () => {
     (names) => {
       const random = seeded(451);
       const sums = lines.map(() => ({ first: 0, second: 0 }));
-      const runs = 1500;
       for (let i = 0; i < runs; i++) {
         const click = noisy(random);
         const scale = solved(names.map((name) => yardRectangle(name, click)));
@@ -240,6 +240,50 @@ describe('the first-order error of a photo’s lengths', () => {
       });
     },
   );
+
+  it('agrees within 20 % with lengths beside the rectangle, one of them taped with an error (seed 452)', () => {
+    const random = seeded(452);
+    const pairs: [YardName, YardName][] = [
+      ['pond outer near left', 'bed near right'],
+      ['first slab near left', 'right tree foot'],
+    ];
+    const tapeSigma = 0.1;
+    const references = (click: Click): ScaleReference[] => [
+      yardRectangle('patio', click),
+      ...pairs.map(([a, b], i): ScaleReference => {
+        // The second is taped: its stated length is off too, by the same kind of chance.
+        const off = i === 1 ? tapeSigma * click(at(0, 0)).x : 0;
+        return {
+          id: a,
+          kind: 'length',
+          a: click(yardPixel(a)),
+          b: click(yardPixel(b)),
+          meters: meters(yardDistance(a, b) + off),
+          ...(i === 1 ? { sigmaMeters: meters(tapeSigma) } : {}),
+        };
+      }),
+    ];
+    const got = lines.map((): number[] => []);
+    for (let i = 0; i < runs; i++) {
+      const click = noisy(random);
+      const scale = solved(references(click));
+      lines.forEach((line, k) => {
+        got[k]!.push(
+          lengthAlong(
+            scale,
+            line.map((name) => click(yardPixel(name))),
+          )!.meters,
+        );
+      });
+    }
+    const scale = solved(references(exactly));
+    lines.forEach((line, k) => {
+      const mean = got[k]!.reduce((sum, x) => sum + x, 0) / runs;
+      const spread = Math.sqrt(got[k]!.reduce((sum, x) => sum + (x - mean) ** 2, 0) / runs);
+      const stated = lengthAlong(scale, line.map(yardPixel))!;
+      expect(Math.abs(stated.sigmaMeters / spread - 1), line.join(' – ')).toBeLessThan(0.2);
+    });
+  });
 
   it('grows in proportion to the click error', () => {
     const points = [yardPixel('bed near right'), yardPixel('pond outer far left')] as const;

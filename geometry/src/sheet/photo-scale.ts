@@ -64,16 +64,17 @@ export class PhotoScale implements SolvedScale {
     this.residuals = solution.references.flatMap((r) => this.residualsOf(r));
   }
 
-  groundFromSheet(p: SheetPoint): GroundPoint | null {
+  // The three are bound, so that a caller may pass them on as plain functions, as with a plan's scale.
+  readonly groundFromSheet = (p: SheetPoint): GroundPoint | null => {
     const g = this.toGround;
     const u = (p.x - this.image.x) * this.image.scale;
     const v = (p.y - this.image.y) * this.image.scale;
     const w = g[6] * u + g[7] * v + g[8];
     if (!(w > 0)) return null;
     return this.framed((g[0] * u + g[1] * v + g[2]) / w, (g[3] * u + g[4] * v + g[5]) / w);
-  }
+  };
 
-  sheetFromGround(point: GroundPoint): SheetPoint | null {
+  readonly sheetFromGround = (point: GroundPoint): SheetPoint | null => {
     const { originX, originY, unit } = this.frame;
     const perUnit = 1 / unit ** 2;
     const x = (this.cos * point.x - this.sin * point.y) * perUnit + originX;
@@ -85,13 +86,13 @@ export class PhotoScale implements SolvedScale {
       x: pixels((h[0] * x + h[1] * y + h[2]) / w / this.image.scale + this.image.x),
       y: pixels((h[3] * x + h[4] * y + h[5]) / w / this.image.scale + this.image.y),
     };
-  }
+  };
 
   /**
    * With G the inverse of H and q = G·(u, v, 1): from dG = −G·dH·G follows ∂x/∂H_ij = −(G_0i − x·G_2i)·q_j/w
    * and ∂x/∂u = (G_00 − x·G_20)/w, and the same for y with row 1.
    */
-  read(p: SheetPoint): GroundReading | null {
+  readonly read = (p: SheetPoint): GroundReading | null => {
     const g = this.toGround;
     const s = this.image.scale;
     const u = (p.x - this.image.x) * s;
@@ -132,7 +133,7 @@ export class PhotoScale implements SolvedScale {
       yByParameter,
       nearHorizon: w < LEAST_HORIZON_SIGMAS * Math.sqrt(horizonVariance),
     };
-  }
+  };
 
   private framed(x: number, y: number): GroundPoint {
     const dx = x - this.frame.originX;
