@@ -1,4 +1,5 @@
 import { Module } from '@nestjs/common';
+import { CatalogueModule } from '../catalogue/catalogue.module.js';
 import { CompaniesModule } from '../companies/companies.module.js';
 import { AuthController } from './auth.controller.js';
 import { AuthService } from './auth.service.js';
@@ -8,7 +9,7 @@ import { MeService } from './me.service.js';
 import { SessionsService } from './sessions.service.js';
 
 @Module({
-  imports: [CompaniesModule],
+  imports: [CompaniesModule, CatalogueModule],
   controllers: [AuthController],
   providers: [AuthService, MeService, SessionsService, Callers, EmailTokensRepository],
   exports: [MeService, SessionsService, Callers, EmailTokensRepository],

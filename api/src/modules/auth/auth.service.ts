@@ -12,6 +12,7 @@ import type { Env } from '../../config/env.js';
 import { Database } from '../../database/database.js';
 import { AppError, notFound } from '../../http/app-error.js';
 import { Outbox } from '../../ports/mail/outbox.js';
+import { CatalogueService } from '../catalogue/catalogue.service.js';
 import { CompaniesRepository } from '../companies/companies.repository.js';
 import type { ResetPassword, SignIn, SignUp } from './auth.dto.js';
 import { EmailTokensRepository } from './email-tokens.repository.js';
@@ -52,6 +53,7 @@ export class AuthService {
     @Inject(EmailTokensRepository) private readonly tokens: EmailTokensRepository,
     @Inject(PasswordGate) private readonly gate: PasswordGate,
     @Inject(Outbox) private readonly outbox: Outbox,
+    @Inject(CatalogueService) private readonly catalogue: CatalogueService,
   ) {}
 
   /**
@@ -153,6 +155,7 @@ export class AuthService {
     if (same) return this.sessions.begin(userId, caller, same.id);
     const companyId = await this.companies.insert(input.companyName, input.region ?? 'us');
     await this.memberships.insert(companyId, userId, 'owner');
+    await this.catalogue.seed(companyId);
     return this.sessions.begin(userId, caller, companyId);
   }
 

@@ -30,6 +30,12 @@ describe('the catalogue', () => {
     expect(theirs.filter((entry: { id: string }) => ids.has(entry.id))).toEqual([]);
   });
 
+  it('is given to a company as it signs up', async () => {
+    const { agent } = await test.signUp();
+    const { items } = (await agent.get('/api/catalogue').expect(200)).body;
+    expect(items).toHaveLength(starterCatalogue.length);
+  });
+
   it('filters by category and name', async () => {
     const lamps = (await owner.agent.get('/api/catalogue?category=lamp&search=halogen').expect(200)).body;
     expect(lamps.items).toHaveLength(5);
