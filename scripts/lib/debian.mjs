@@ -33,12 +33,7 @@ export async function ensurePackages(wanted, signal) {
   const missing = missingPackages(wanted);
   if (missing.length === 0) return;
   const names = missing.join(' ');
-  if (process.getuid?.() !== 0 || !existsSync('/usr/bin/apt-get')) {
-    const purposes = missing.map((name) => packages[name]?.purpose).join(' and ');
-    throw new Trouble(
-      `Lampwright needs ${names} for ${purposes}: run "apt-get install ${names}" as root, then try again.`,
-    );
-  }
+  if (process.getuid?.() !== 0 || !existsSync('/usr/bin/apt-get')) throw cannotInstall(missing);
   say(`Installing ${names} from Debian's packages …`);
   const keepClusters = missing.includes('postgresql') ? declineMainCluster() : () => {};
   try {
@@ -50,6 +45,18 @@ export async function ensurePackages(wanted, signal) {
   const still = missingPackages(wanted);
   if (still.length > 0)
     throw new Trouble(`apt-get installed ${names}, yet ${still.join(' ')} can't be found.`);
+}
+
+/**
+ * What to tell a person without the right to install packages.
+ * @param {readonly DebianPackage[]} missing
+ */
+export function cannotInstall(missing) {
+  const names = missing.join(' ');
+  const purposes = missing.map((name) => packages[name]?.purpose).join(' and ');
+  return new Trouble(
+    `Lampwright needs ${names} for ${purposes}: run "apt-get install ${names}" as root, then try again.`,
+  );
 }
 
 /**
