@@ -29,6 +29,8 @@ export const meSchema = z.object({
       name: z.string(),
       region: z.string(),
       settings: z.record(z.string(), z.unknown()),
+      /** The words of the region's rules: NEC or IEC, GFCI or RCD. */
+      words: z.object({ wiringRules: z.string(), protectiveDevice: z.string() }),
     })
     .nullable(),
   role: roleSchema.nullable(),

@@ -4,7 +4,7 @@ export interface ToastInput {
   /** 'problem' stays until it is closed. */
   readonly tone?: 'plain' | 'problem';
   /** Puts back what was just done; the toast then closes. A rejection is shown as a problem. */
-  readonly undo?: () => void | Promise<unknown>;
+  readonly undo?: () => unknown;
   readonly undoLabel?: string;
 }
 
