@@ -32,9 +32,23 @@ export class S3Storage extends ObjectStorage {
   }
 
   async put(key: string, body: Buffer | Readable, type: string): Promise<void> {
-    await this.client.send(
-      new PutObjectCommand({ Bucket: this.bucket, Key: key, Body: body, ContentType: type }),
-    );
+    const command = new PutObjectCommand({ Bucket: this.bucket, Key: key, Body: body, ContentType: type });
+    if (Buffer.isBuffer(body)) {
+      await this.client.send(command);
+      return;
+    }
+    // The client does not listen for a source that fails: nobody listening would end the process.
+    const stop = new AbortController();
+    let failure: Error | null = null;
+    body.on('error', (error) => {
+      failure = error;
+      stop.abort();
+    });
+    try {
+      await this.client.send(command, { abortSignal: stop.signal });
+    } catch (error) {
+      throw failure ?? error;
+    }
   }
 
   async get(key: string): Promise<StoredObject | null> {
