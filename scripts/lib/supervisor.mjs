@@ -26,12 +26,14 @@ export class Supervisor {
   /** @type {{ name: string, undo: () => Promise<void> }[]} */
   #undo = [];
   #stopping = false;
-  /** @type {(trouble: Trouble) => void} */
-  #fail = () => {};
+  #failure = new AbortController();
+
+  /** Aborts, with the trouble as its reason, when a service ends that nobody stopped. */
+  signal = this.#failure.signal;
 
   /** Rejects when a service ends that nobody stopped; never resolves. @type {Promise<never>} */
-  failed = new Promise((_, fail) => {
-    this.#fail = fail;
+  failed = aborted(this.signal).then(() => {
+    throw this.signal.reason;
   });
 
   constructor() {
@@ -76,7 +78,8 @@ export class Supervisor {
     });
     ended.then((code) => {
       if (stopped || this.#stopping) return;
-      this.#fail(new Trouble(`${name} ended unexpectedly (exit code ${code}).${lastWords(logFile)}`));
+      const told = `${name} ended unexpectedly (exit code ${code}).${lastWords(logFile)}`;
+      this.#failure.abort(new Trouble(told));
     });
     const end = (/** @type {NodeJS.Signals} */ signal) => {
       if (!tool || !child.pid) return child.kill(signal);

@@ -142,14 +142,13 @@ async function e2e(context) {
     const file = join(context.scratch, 'e2e.json');
     const more = { LAMPWRIGHT_URL: url, PLAYWRIGHT_JSON_OUTPUT_FILE: file };
     const args = ['test', '-c', 'e2e/playwright.config.ts'];
-    const code = await Promise.race([
-      show('playwright', args, context, { env: { ...env, ...more } }),
-      supervisor.failed,
-    ]);
+    // Without its server there is nothing more to see: the tests end with it.
+    const signal = AbortSignal.any([context.signal, supervisor.signal]);
+    const code = await show('playwright', args, context, { env: { ...env, ...more }, signal });
     counts = playwrightCounts(file, code);
   } catch (error) {
     if (context.signal.aborted) throw error;
-    report(error);
+    report(supervisor.signal.aborted ? supervisor.signal.reason : error);
   } finally {
     await supervisor.stop();
     if (counts.failed > 0 && existsSync(join(folder, 'logs'))) {
