@@ -1,18 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { meters, type SheetPoint } from '../units/brand.js';
-import {
-  lengthAlong,
-  lengthBetween,
-  type RectangleReference,
-  type ScaleReference,
-  solveCalibration,
-} from './calibration.js';
+import { lengthAlong, lengthBetween, type RectangleReference, type ScaleReference } from './calibration.js';
 import {
   at,
-  type Click,
   exactly,
   noisy,
   seeded,
+  solvedPhoto,
+  threeRectangles,
   type YardName,
   type YardRectangle,
   yardDistance,
@@ -22,21 +17,14 @@ import {
   yardRectangleNames,
 } from './yard.testkit.js';
 
-function solved(references: readonly ScaleReference[], clickSigmaPixels?: number) {
-  const result = solveCalibration({ view: 'photo', references }, { clickSigmaPixels });
-  if (!result.ok) throw new Error(result.message);
-  return result.scale;
-}
-
 const allPairs = yardNames.flatMap((a, i) => yardNames.slice(i + 1).map((b) => [a, b] as const));
-const threeRectangles = (click: Click) => yardRectangleNames.map((name) => yardRectangle(name, click));
 
 /** The largest relative error over the given pairs of the yard's known points. */
 function worstError(
   references: readonly ScaleReference[],
   pairs: readonly (readonly [YardName, YardName])[],
 ) {
-  const scale = solved(references);
+  const scale = solvedPhoto(references);
   return Math.max(
     ...pairs.map(([a, b]) => {
       const got = lengthBetween(scale, yardPixel(a), yardPixel(b));
@@ -53,14 +41,14 @@ describe('a photo’s scale from exact pixels', () => {
   it('gives every distance from all three rectangles, which then leave nothing over', () => {
     const references = threeRectangles(exactly);
     expect(worstError(references, allPairs)).toBeLessThan(0.0005);
-    const scale = solved(references);
+    const scale = solvedPhoto(references);
     expect(scale.misfit).toBeLessThan(0.01);
     expect(scale.residuals).toHaveLength(12);
     for (const r of scale.residuals) expect(Math.abs(r.relative)).toBeLessThan(0.0005);
   });
 
   it('lays the ground out as seen from above: origin amid the first rectangle, x to the right, y away', () => {
-    const scale = solved([yardRectangle('patio')]);
+    const scale = solvedPhoto([yardRectangle('patio')]);
     const supplyBox = scale.groundFromSheet(yardPixel('supply box foot'))!;
     // The patio's middle is at (−0.6, 9.8) of the yard.
     expect(supplyBox.x).toBeCloseTo(2.75 + 0.6, 2);
@@ -68,7 +56,7 @@ describe('a photo’s scale from exact pixels', () => {
   });
 
   it('goes from sheet to ground and back', () => {
-    const scale = solved(threeRectangles(exactly));
+    const scale = solvedPhoto(threeRectangles(exactly));
     for (const name of yardNames) {
       const p = yardPixel(name);
       const back = scale.sheetFromGround(scale.groundFromSheet(p)!)!;
@@ -79,7 +67,7 @@ describe('a photo’s scale from exact pixels', () => {
   it('does not mind where the corners start or which way round they go', () => {
     const { corners, widthMeters: w, depthMeters: d, ...rest } = yardRectangle('pond');
     const [a, b, c, e] = corners;
-    const asGiven = solved([yardRectangle('pond'), yardRectangle('patio')]);
+    const asGiven = solvedPhoto([yardRectangle('pond'), yardRectangle('patio')]);
     const orders: RectangleReference[] = [
       { ...rest, corners: [b, c, e, a], widthMeters: d, depthMeters: w },
       { ...rest, corners: [c, e, a, b], widthMeters: w, depthMeters: d },
@@ -87,7 +75,7 @@ describe('a photo’s scale from exact pixels', () => {
       { ...rest, corners: [a, e, c, b], widthMeters: d, depthMeters: w },
     ];
     for (const order of orders) {
-      const scale = solved([order, yardRectangle('patio')]);
+      const scale = solvedPhoto([order, yardRectangle('patio')]);
       for (const name of yardNames) {
         const expected = asGiven.groundFromSheet(yardPixel(name))!;
         const got = scale.groundFromSheet(yardPixel(name))!;
@@ -97,7 +85,7 @@ describe('a photo’s scale from exact pixels', () => {
   });
 
   it('keeps the first rectangle’s frame whichever rectangle the solving starts from', () => {
-    const slabFirst = solved([yardRectangle('slab'), yardRectangle('pond')]);
+    const slabFirst = solvedPhoto([yardRectangle('slab'), yardRectangle('pond')]);
     const middle = slabFirst.groundFromSheet(yardPixel('first slab near left'))!;
     expect(middle.x).toBeCloseTo(-0.4, 3);
     expect(middle.y).toBeCloseTo(-0.275, 3);
@@ -113,7 +101,7 @@ describe('a photo’s scale from clicks a pixel off', () => {
     const runs = 300;
     for (let run = 0; run < runs; run++) {
       const click = noisy(random);
-      const scale = solved(names.map((name) => yardRectangle(name, click)));
+      const scale = solvedPhoto(names.map((name) => yardRectangle(name, click)));
       pairs.forEach(([a, b], i) => {
         const got = lengthBetween(scale, yardPixel(a), yardPixel(b))!.meters;
         const error = Math.abs(got / yardDistance(a, b) - 1);
@@ -141,7 +129,7 @@ describe('a photo’s scale from clicks a pixel off', () => {
   it('has a misfit about 1: mean square within 10 % over 400 calibrations (seed 443)', () => {
     const random = seeded(443);
     let sum = 0;
-    for (let i = 0; i < 400; i++) sum += solved(threeRectangles(noisy(random))).misfit! ** 2;
+    for (let i = 0; i < 400; i++) sum += solvedPhoto(threeRectangles(noisy(random))).misfit! ** 2;
     expect(Math.abs(sum / 400 - 1)).toBeLessThan(0.1);
   });
 });
@@ -157,7 +145,7 @@ describe('lengths beside a rectangle', () => {
   });
   const pondEdge = [yardPixel('pond outer near left'), yardPixel('pond outer near right')] as const;
   const sigmaAtPond = (references: readonly ScaleReference[]) =>
-    lengthBetween(solved(references), ...pondEdge)!.sigmaMeters as number;
+    lengthBetween(solvedPhoto(references), ...pondEdge)!.sigmaMeters as number;
 
   it('tighten the error, the more so the better the length is known', () => {
     const patio = yardRectangle('patio');
@@ -191,7 +179,7 @@ describe('lengths beside a rectangle', () => {
   it('grow the stated errors when they contradict the rest', () => {
     const wrong = { ...length('pond outer near left', 'pond outer near right'), meters: meters(5) };
     const references = [...threeRectangles(exactly), wrong] as ScaleReference[];
-    const scale = solved(references);
+    const scale = solvedPhoto(references);
     expect(scale.misfit).toBeGreaterThan(3);
     expect(lengthBetween(scale, ...pondEdge)!.sigmaMeters).toBeGreaterThan(
       2 * sigmaAtPond(threeRectangles(exactly)),
@@ -201,100 +189,8 @@ describe('lengths beside a rectangle', () => {
   });
 });
 
-describe('the first-order error of a photo’s lengths', () => {
-  const runs = 1500;
-  const lines: YardName[][] = [
-    ['pond outer near left', 'pond outer near right'],
-    ['pond outer near right', 'pond outer far right'],
-    ['first slab near left', 'pond outer far right'],
-    ['supply box foot', 'right tree foot'],
-    ['patio near left', 'house right corner'],
-    ['bed near right', 'pond outer near right'],
-    ['supply box foot', 'patio near right', 'pond outer far left', 'first slab far right'],
-  ];
-
-  it.each<YardRectangle[][]>([[['patio']], [['pond']], [['patio', 'pond']], [['patio', 'slab', 'pond']]])(
-    'agrees with 1500 calibrations at random within 20 %% on %j (seed 451)',
-    (names) => {
-      const random = seeded(451);
-      const sums = lines.map(() => ({ first: 0, second: 0 }));
-      for (let i = 0; i < runs; i++) {
-        const click = noisy(random);
-        const scale = solved(names.map((name) => yardRectangle(name, click)));
-        lines.forEach((line, k) => {
-          // The yard's own points are clicked anew: their errors are independent of the calibration's.
-          const got = lengthAlong(
-            scale,
-            line.map((name) => click(yardPixel(name))),
-          )!.meters;
-          sums[k]!.first += got;
-          sums[k]!.second += got * got;
-        });
-      }
-      const scale = solved(names.map((name) => yardRectangle(name)));
-      lines.forEach((line, k) => {
-        const mean = sums[k]!.first / runs;
-        const spread = Math.sqrt(sums[k]!.second / runs - mean * mean);
-        const stated = lengthAlong(scale, line.map(yardPixel))!;
-        expect(Math.abs(stated.sigmaMeters / spread - 1), line.join(' – ')).toBeLessThan(0.2);
-      });
-    },
-  );
-
-  it('agrees within 20 % with lengths beside the rectangle, one of them taped with an error (seed 452)', () => {
-    const random = seeded(452);
-    const pairs: [YardName, YardName][] = [
-      ['pond outer near left', 'bed near right'],
-      ['first slab near left', 'right tree foot'],
-    ];
-    const tapeSigma = 0.1;
-    const references = (click: Click): ScaleReference[] => [
-      yardRectangle('patio', click),
-      ...pairs.map(([a, b], i): ScaleReference => {
-        // The second is taped: its stated length is off too, by the same kind of chance.
-        const off = i === 1 ? tapeSigma * click(at(0, 0)).x : 0;
-        return {
-          id: a,
-          kind: 'length',
-          a: click(yardPixel(a)),
-          b: click(yardPixel(b)),
-          meters: meters(yardDistance(a, b) + off),
-          ...(i === 1 ? { sigmaMeters: meters(tapeSigma) } : {}),
-        };
-      }),
-    ];
-    const got = lines.map((): number[] => []);
-    for (let i = 0; i < runs; i++) {
-      const click = noisy(random);
-      const scale = solved(references(click));
-      lines.forEach((line, k) => {
-        got[k]!.push(
-          lengthAlong(
-            scale,
-            line.map((name) => click(yardPixel(name))),
-          )!.meters,
-        );
-      });
-    }
-    const scale = solved(references(exactly));
-    lines.forEach((line, k) => {
-      const mean = got[k]!.reduce((sum, x) => sum + x, 0) / runs;
-      const spread = Math.sqrt(got[k]!.reduce((sum, x) => sum + (x - mean) ** 2, 0) / runs);
-      const stated = lengthAlong(scale, line.map(yardPixel))!;
-      expect(Math.abs(stated.sigmaMeters / spread - 1), line.join(' – ')).toBeLessThan(0.2);
-    });
-  });
-
-  it('grows in proportion to the click error', () => {
-    const points = [yardPixel('bed near right'), yardPixel('pond outer far left')] as const;
-    const one = lengthBetween(solved(threeRectangles(exactly), 1), ...points)!;
-    const two = lengthBetween(solved(threeRectangles(exactly), 2), ...points)!;
-    expect(two.sigmaMeters / one.sigmaMeters).toBeCloseTo(2, 6);
-  });
-});
-
 describe('the horizon', () => {
-  const scale = solved([yardRectangle('patio')]);
+  const scale = solvedPhoto([yardRectangle('patio')]);
   const under = (y: number): SheetPoint => at(1200, y);
   const near = yardPixel('patio near left');
 
@@ -318,7 +214,7 @@ describe('the horizon', () => {
   });
 
   it('is too near for a slab at the camera’s feet to say anything about the house', () => {
-    const slab = solved([yardRectangle('slab')]);
+    const slab = solvedPhoto([yardRectangle('slab')]);
     const far = lengthBetween(slab, yardPixel('patio far left'), yardPixel('house right corner'))!;
     expect(far.trusted).toBe(false);
     const at2m = lengthBetween(slab, yardPixel('first slab near left'), yardPixel('first slab far right'))!;

@@ -1,5 +1,7 @@
 import { type Meters, meters, pixels, type SheetPoint } from '../units/brand.js';
-import type { RectangleReference } from './references.js';
+import { solveCalibration } from './calibration.js';
+import type { RectangleReference, ScaleReference } from './references.js';
+import type { SolvedScale } from './scale.js';
 
 /**
  * A rendered yard: a ray-traced picture of a modelled garden, 2400 × 1600 px, so that the ground position
@@ -62,6 +64,17 @@ export function yardRectangle(name: YardRectangle, click: Click = exactly): Rect
     widthMeters: yardDistance(a, b),
     depthMeters: yardDistance(b, c),
   };
+}
+
+export function threeRectangles(click: Click = exactly): RectangleReference[] {
+  return yardRectangleNames.map((name) => yardRectangle(name, click));
+}
+
+/** The scale of a photo that must be solvable. */
+export function solvedPhoto(references: readonly ScaleReference[], clickSigmaPixels?: number): SolvedScale {
+  const result = solveCalibration({ view: 'photo', references }, { clickSigmaPixels });
+  if (!result.ok) throw new Error(result.message);
+  return result.scale;
 }
 
 /** A seeded generator of uniform numbers in [0, 1) (mulberry32). */
