@@ -87,15 +87,14 @@ function fixtureAnswers({ circuit, share }: SolvedRun, answers: FixtureAnswer[],
 
 /** Adds the run's cables to `answers`; returns the watts lost in them. */
 function cableAnswers({ circuit, share }: SolvedRun, answers: CableAnswer[]): number {
-  const { run, network, drop } = circuit;
-  const dropAt = (node: number) => (node < 0 ? 0 : drop[node]!);
+  const { run, network } = circuit;
   let lossWatts = 0;
   for (let k = 0; k < run.cables.length; k++) {
     const cable = run.cables[k]!;
     const from = network.cableFrom[k]!;
     const to = network.cableTo[k]!;
-    // From the drops, not from the volts, so that a short cable's current keeps its digits. + 0 makes −0 a 0.
-    const dropVolts = dropAt(to) - dropAt(from) + 0;
+    // Not the difference of the two volts, so that a short cable's current keeps its digits. + 0 makes −0 a 0.
+    const dropVolts = circuit.fall(from, to) + 0;
     const amps = dropVolts * network.cableSiemens[k]! + 0;
     const ampacity = cable.ampacityAmps ?? conductorAmpacity(cable.conductor);
     lossWatts += amps * dropVolts;

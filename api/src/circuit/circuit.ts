@@ -6,19 +6,21 @@ import { buildNetwork, type Network, SOURCE, UNREACHED } from './network.js';
 import { planElimination } from './ordering.js';
 
 /**
- * One run as equations. The unknown of each node is its drop x below the terminal, not its volts: small drops keep
- * all their digits, and everything in the linear system is positive.
+ * One run as equations. Each node has both its drop below the terminal and its volts, moved by the same steps:
+ * where the drop is small it keeps all its digits, and so do volts of next to nothing at the end of an overloaded
+ * chain. A difference of two doubles would lose either the one or the other.
  */
 export class RunCircuit {
   readonly network: Network;
   readonly loads: LoadTable;
   readonly nodeOfFixture: Int32Array;
   readonly factor: NetworkFactor;
-  /** Drop by node, volts below the terminal. */
+  /** By node: volts below the terminal, and volts. */
   readonly drop: Float64Array;
-  /** The least drop that is proven so far: the highest answer lies at or below terminal − floor. */
-  readonly floor: Float64Array;
   readonly nodeVolts: Float64Array;
+  /** The highest answer's drop is proven to be at least this, its volts at most that. */
+  readonly leastDrop: Float64Array;
+  readonly mostVolts: Float64Array;
   readonly nodeAmps: Float64Array;
   readonly nodeSlope: Float64Array;
   readonly atSource = { amps: 0, slope: 0 };
@@ -41,8 +43,9 @@ export class RunCircuit {
     const plan = planElimination(nodeCount, edgeLow, edgeHigh);
     this.factor = new NetworkFactor(nodeCount, edgeLow, edgeHigh, edgeSiemens, plan);
     this.drop = new Float64Array(nodeCount);
-    this.floor = new Float64Array(nodeCount);
     this.nodeVolts = new Float64Array(nodeCount);
+    this.leastDrop = new Float64Array(nodeCount);
+    this.mostVolts = new Float64Array(nodeCount).fill(open);
     this.nodeAmps = new Float64Array(nodeCount);
     this.nodeSlope = new Float64Array(nodeCount);
     this.excess = new Float64Array(nodeCount);
@@ -53,7 +56,7 @@ export class RunCircuit {
   /** Volts of a node number, SOURCE and UNREACHED included. */
   voltsAt(node: number, share: number): Volts {
     if (node === UNREACHED) return volts(0);
-    return volts(node === SOURCE ? share * this.open : share * this.open - this.drop[node]!);
+    return volts(node === SOURCE ? share * this.open : this.nodeVolts[node]!);
   }
 
   /** Amps at the terminals, as the sum of all loads. */
@@ -63,22 +66,39 @@ export class RunCircuit {
     return sum;
   }
 
-  /**
-   * Currents and slopes at the given drops, `share` of the open volts being left at the terminal. Returns whether
-   * all loads are on parts that bend upward, or null where some volts would not be above 0.
-   */
-  evaluate(drop: Float64Array, share: number): boolean | null {
-    const terminal = share * this.open;
-    if (!(terminal > 0)) return null;
-    for (let i = 0; i < drop.length; i++) {
-      const u = terminal - drop[i]!;
-      if (!(u > 0)) return null;
-      this.nodeVolts[i] = u;
-    }
-    return evaluateLoads(this.loads, this.nodeVolts, terminal, this.nodeAmps, this.nodeSlope, this.atSource);
+  /** Sets drops and volts to their proven bounds. */
+  startAtBounds(): void {
+    this.drop.set(this.leastDrop);
+    this.nodeVolts.set(this.mostVolts);
   }
 
-  /** Amps by which Kirchhoff's law is missed at each node, at the drops and currents evaluated last, into `out`. */
+  /**
+   * Currents and slopes at the present volts, `share` of the open volts being left at the terminal. Returns whether
+   * all loads are on parts that bend upward, or null where some volts are not above 0.
+   */
+  evaluate(share: number): boolean | null {
+    const { nodeVolts } = this;
+    if (!(share > 0)) return null;
+    for (let i = 0; i < nodeVolts.length; i++) if (!(nodeVolts[i]! > 0)) return null;
+    return evaluateLoads(
+      this.loads,
+      nodeVolts,
+      share * this.open,
+      this.nodeAmps,
+      this.nodeSlope,
+      this.atSource,
+    );
+  }
+
+  /** Volts from one node down to another, by whichever of drops and volts holds more digits there. */
+  fall(from: number, to: number): number {
+    const { drop, nodeVolts } = this;
+    if (from < 0) return to < 0 ? 0 : drop[to]!;
+    if (to < 0) return -drop[from]!;
+    return drop[from]! < nodeVolts[from]! ? drop[to]! - drop[from]! : nodeVolts[from]! - nodeVolts[to]!;
+  }
+
+  /** Amps by which Kirchhoff's law is missed at each node, at the present volts and the currents evaluated last. */
   mismatch(out: Float64Array): void {
     const { edgeLow, edgeHigh, edgeSiemens, toSource } = this.network;
     const { drop, nodeAmps } = this;
@@ -86,9 +106,9 @@ export class RunCircuit {
     for (let e = 0; e < edgeLow.length; e++) {
       const low = edgeLow[e]!;
       const high = edgeHigh[e]!;
-      const amps = edgeSiemens[e]! * (drop[low]! - drop[high]!);
-      out[low]! += amps;
-      out[high]! -= amps;
+      const amps = edgeSiemens[e]! * this.fall(low, high);
+      out[low]! -= amps;
+      out[high]! += amps;
     }
   }
 
@@ -117,10 +137,19 @@ export class RunCircuit {
       if (node === SOURCE) {
         atSource.slope += many * leastChord(loads, row, share * this.open, topShare * this.open);
       } else {
-        const top = topShare * this.open - this.floor[node]!;
-        nodeSlope[node]! += many * leastChord(loads, row, nodeVolts[node]!, top);
+        nodeSlope[node]! += many * leastChord(loads, row, nodeVolts[node]!, this.mostVolts[node]!);
       }
     }
+  }
+
+  /** Solves the network of plain conductances in nodeSlope, which must be factorised, as the new proven bounds. */
+  lowerBounds(share: number): void {
+    const { leastDrop, mostVolts, nodeSlope, step } = this;
+    const terminal = share * this.open;
+    for (let i = 0; i < step.length; i++) step[i] = nodeSlope[i]! * terminal;
+    this.factor.solve(step, leastDrop);
+    for (let i = 0; i < step.length; i++) step[i] = this.network.toSource[i]! * terminal;
+    this.factor.solve(step, mostVolts);
   }
 
   /**

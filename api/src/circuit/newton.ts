@@ -8,20 +8,25 @@ export interface WindingState {
   readonly runs: readonly RunCircuit[];
   readonly sag: number;
   share: number;
-  /** Upper bound of the highest answer's share; each run's `floor` bounds its volts likewise. */
+  /** Upper bound of the highest answer's share; each run's `mostVolts` bound its volts likewise. */
   topShare: number;
   /** Newton steps and factorisations done, for the bench. */
   iterations: number;
 }
 
-/** Steps this small, as a part of the open volts, end the iteration: far below a millivolt, above rounding. */
-const SETTLED = 1e-12;
-/** Rounding may keep steps from settling; below this part of the open volts that is good enough. */
+/** Steps this small, as a part of a node's volts, end the iteration: far below a millivolt, at rounding. */
+const SETTLED = 1e-13;
+/** Rounding may keep steps from settling: this often without progress below this part is enough. */
 const GOOD_ENOUGH = 1e-9;
+const MOST_STALLS = 3;
+/** Volts below this part of the open volts are settled when their steps are small beside it. */
+const LEAST_SCALE = 1e-9;
 /** Once a step is this small, the matrix is as good as exact and is kept for the last steps. */
 const KEEP_MATRIX = 1e-5;
 /** At the very nose of a supply Newton only halves its error with each step. */
 const MAX_STEPS = 80;
+/** A step that would take volts to 0 or below takes them to this part of what they were. */
+const CUT = 0.1;
 
 /**
  * Newton's method from the upper bound down. Where all loads bend upward (constant power, constant current,
@@ -31,36 +36,43 @@ const MAX_STEPS = 80;
 export function newton(state: WindingState): { safe: boolean } | null {
   const { runs, sag } = state;
   state.share = state.topShare;
-  for (const run of runs) run.drop.set(run.floor);
+  for (const run of runs) run.startAtBounds();
   let safe = sag === 0;
   let moved = Number.POSITIVE_INFINITY;
-  let kept = false;
-  for (let step = 0; step < MAX_STEPS; step++) {
+  let keepMatrix = false;
+  let stalls = 0;
+  for (let count = 0; count < MAX_STEPS; count++) {
     for (const run of runs) {
-      const convex = run.evaluate(run.drop, state.share);
+      const convex = run.evaluate(state.share);
       if (convex === null) return null;
       safe &&= convex;
     }
-    kept = moved < KEEP_MATRIX;
-    if (!kept) {
+    if (!keepMatrix) {
       state.iterations++;
       for (const run of runs) if (!run.factorise(run.nodeSlope)) return null;
     }
     const before = moved;
-    moved = takeStep(state);
-    if (!Number.isFinite(moved)) return null;
-    if (moved <= SETTLED || (kept && moved <= GOOD_ENOUGH && moved >= before / 2)) {
-      for (const run of runs) if (run.evaluate(run.drop, state.share) === null) return null;
+    const step = takeStep(state);
+    if (!Number.isFinite(step.moved)) return null;
+    moved = step.moved;
+    safe &&= !step.cut;
+    const progress = moved <= before / 2 && !step.cut;
+    if (!progress && moved <= GOOD_ENOUGH) stalls++;
+    if (moved <= SETTLED || stalls >= MOST_STALLS) {
+      for (const run of runs) if (run.evaluate(state.share) === null) return null;
       return { safe };
     }
-    // A kept matrix that does not make progress has a load on the other side of its knee: make it anew.
-    if (kept && moved > before / 2) moved = Number.POSITIVE_INFINITY;
+    // A kept matrix that makes no progress has a load on the other side of its knee: then it is made anew.
+    keepMatrix = moved < KEEP_MATRIX && progress;
   }
   return null;
 }
 
-/** One Newton step with the matrices at hand; returns the largest move as a part of the open volts. */
-function takeStep(state: WindingState): number {
+/**
+ * One Newton step with the matrices at hand: the largest move as a part of a node's volts (NaN if there is none),
+ * and whether any node's step had to be cut short of 0 V.
+ */
+function takeStep(state: WindingState): { moved: number; cut: boolean } {
   const { runs, sag, share } = state;
   let shareMove = 0;
   for (const run of runs) {
@@ -78,22 +90,31 @@ function takeStep(state: WindingState): number {
       residual += sag * share * open * (amps + byStep);
       gradient += sag * open * (amps + share * open * run.inputSiemens());
     }
-    if (!(gradient > 0)) return Number.NaN;
+    if (!(gradient > 0)) return { moved: Number.NaN, cut: false };
     shareMove = -residual / gradient;
     state.share = share + shareMove;
   }
-  let largest = Math.abs(shareMove);
+  let moved = Math.abs(shareMove);
+  let cut = false;
   for (const run of runs) {
-    const { drop, step, follow, open } = run;
+    const { drop, nodeVolts, step, follow, open } = run;
     const lift = shareMove * open;
     for (let i = 0; i < drop.length; i++) {
-      const move = lift === 0 ? -step[i]! : follow[i]! * lift - step[i]!;
-      drop[i]! += move;
-      const relative = Math.abs(move) / open;
-      if (!(relative <= largest)) largest = relative;
+      let fall = lift === 0 ? -step[i]! : follow[i]! * lift - step[i]!;
+      let rise = lift === 0 ? step[i]! : (1 - follow[i]!) * lift + step[i]!;
+      const scale = Math.max(nodeVolts[i]!, LEAST_SCALE * open);
+      if (nodeVolts[i]! + rise <= 0) {
+        cut = true;
+        rise = (CUT - 1) * nodeVolts[i]!;
+        fall = lift - rise;
+      }
+      drop[i]! += fall;
+      nodeVolts[i]! += rise;
+      const relative = Math.abs(rise) / scale;
+      if (!(relative <= moved)) moved = relative;
     }
   }
-  return largest;
+  return { moved, cut };
 }
 
 /**

@@ -50,21 +50,21 @@ function stepDown(state: WindingState): void {
   let siemensSeen = 0;
   state.iterations++;
   for (const run of runs) {
-    if (run.evaluate(run.floor, topShare) === null) throw unsettled(state);
+    run.startAtBounds();
+    if (run.evaluate(topShare) === null) throw unsettled(state);
     run.slopesAsConductances(topShare);
     if (!run.factorise(run.nodeSlope)) throw unsettled(state);
     siemensSeen += run.open ** 2 * run.inputSiemens();
   }
   state.topShare = Math.min(topShare, shareLeft(sag, siemensSeen));
-  for (const run of runs) {
-    const terminal = state.topShare * run.open;
-    for (let i = 0; i < run.floor.length; i++) run.floor[i] = run.follow[i]! * terminal;
-  }
+  for (const run of runs) run.lowerBounds(state.topShare);
 }
 
 function isAtTheTop({ runs, share, topShare }: WindingState): boolean {
   if (topShare - share > AT_THE_TOP) return false;
-  return runs.every(({ drop, floor, open }) => drop.every((x, i) => x - floor[i]! <= AT_THE_TOP * open));
+  return runs.every(({ nodeVolts, mostVolts, open }) =>
+    nodeVolts.every((v, i) => mostVolts[i]! - v <= AT_THE_TOP * open),
+  );
 }
 
 /** Checks the answer against the equations themselves, whatever way it was found. */
@@ -73,7 +73,7 @@ function verify(state: WindingState): void {
   let supplied = 0;
   let missed = 0;
   for (const run of runs) {
-    if (run.evaluate(run.drop, share) === null) throw unsettled(state);
+    if (run.evaluate(share) === null) throw unsettled(state);
     run.mismatch(run.step);
     const { amps, open, nodeVolts, nodeAmps, drop, step, network } = run;
     const terminal = share * open;
@@ -83,7 +83,7 @@ function verify(state: WindingState): void {
       used += nodeVolts[i]! * nodeAmps[i]! + network.toSource[i]! * drop[i]! ** 2;
     }
     for (let e = 0; e < network.edgeLow.length; e++) {
-      used += network.edgeSiemens[e]! * (drop[network.edgeLow[e]!]! - drop[network.edgeHigh[e]!]!) ** 2;
+      used += network.edgeSiemens[e]! * run.fall(network.edgeLow[e]!, network.edgeHigh[e]!) ** 2;
     }
     supplied += terminal * amps;
     missed += Math.abs(terminal * amps - used);
