@@ -26,9 +26,10 @@ export function sheetPoint(point: { readonly x: number; readonly y: number }): S
   return { x: pixels(point.x), y: pixels(point.y) };
 }
 
-/** A typed scale means something only where the paper's resolution is known. */
+/** A typed scale means something only on a drawing whose paper's resolution is known. */
 function drawingScaleOf(sheet: SheetRecord): DrawingScale | null {
-  const { groundMetersPerPaperMeter, pixelsPerPaperMeter } = sheet;
+  const { view, groundMetersPerPaperMeter, pixelsPerPaperMeter } = sheet;
+  if (view === 'photo') return null;
   if (groundMetersPerPaperMeter === null || pixelsPerPaperMeter === null) return null;
   return { kind: 'drawing-scale', groundMetersPerPaperMeter, pixelsPerPaperMeter };
 }
