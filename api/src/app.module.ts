@@ -3,11 +3,14 @@ import { AccessModule } from './access/access.module.js';
 import { ConfigModule } from './config/config.module.js';
 import type { Env } from './config/env.js';
 import { DatabaseModule } from './database/database.module.js';
+import { AccountModule } from './modules/account/account.module.js';
 import { AuthModule } from './modules/auth/auth.module.js';
 import { CatalogueModule } from './modules/catalogue/catalogue.module.js';
 import { ClientsModule } from './modules/clients/clients.module.js';
+import { CompaniesModule } from './modules/companies/companies.module.js';
 import { HealthModule } from './modules/health/health.module.js';
 import { JobsModule } from './modules/jobs/jobs.module.js';
+import { MembersModule } from './modules/members/members.module.js';
 import { PropertiesModule } from './modules/properties/properties.module.js';
 import { SheetsModule } from './modules/sheets/sheets.module.js';
 import { MailModule } from './ports/mail/mail.module.js';
@@ -29,6 +32,9 @@ export class AppModule {
         MailModule,
         AccessModule,
         AuthModule,
+        AccountModule,
+        CompaniesModule,
+        MembersModule,
         HealthModule,
         ClientsModule,
         PropertiesModule,

@@ -113,6 +113,14 @@ export class SessionRepository {
       .where(and(eq(sessions.userId, userId), eq(sessions.companyId, companyId)));
   }
 
+  /** Gives a person's sessions that have no company (it was deleted) another one. */
+  async moveFromNone(userId: string, next: string): Promise<void> {
+    await this.database.queries
+      .update(sessions)
+      .set({ companyId: next })
+      .where(and(eq(sessions.userId, userId), isNull(sessions.companyId)));
+  }
+
   /** Ends one session of a person; false when they have no such live session. */
   async revoke(userId: string, sessionId: string): Promise<boolean> {
     const ended = await this.database.queries

@@ -62,7 +62,12 @@ export class EmailTokensRepository {
     return row?.n ?? 0;
   }
 
-  async deleteAll(userId: string): Promise<void> {
-    await this.database.queries.delete(emailTokens).where(eq(emailTokens.userId, userId));
+  /** Removes a person's links; gives the addresses that some of them would have changed to. */
+  async deleteAll(userId: string): Promise<string[]> {
+    const rows = await this.database.queries
+      .delete(emailTokens)
+      .where(eq(emailTokens.userId, userId))
+      .returning({ newEmail: emailTokens.newEmail });
+    return rows.flatMap(({ newEmail }) => newEmail ?? []);
   }
 }

@@ -1,8 +1,13 @@
 import { Module } from '@nestjs/common';
+import { CompaniesController } from './companies.controller.js';
 import { CompaniesRepository } from './companies.repository.js';
+import { CompaniesService } from './companies.service.js';
+import { ExportRepository } from './export.repository.js';
+import { ExportService } from './export.service.js';
 
 @Module({
-  providers: [CompaniesRepository],
-  exports: [CompaniesRepository],
+  controllers: [CompaniesController],
+  providers: [CompaniesService, CompaniesRepository, ExportService, ExportRepository],
+  exports: [CompaniesService, CompaniesRepository],
 })
 export class CompaniesModule {}
