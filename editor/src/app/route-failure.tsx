@@ -1,3 +1,4 @@
+import { useEffect } from 'react';
 import { isRouteErrorResponse, useRouteError } from 'react-router-dom';
 import { Button, LinkButton } from '../components/button';
 import { Mark } from '../components/mark';
@@ -36,8 +37,11 @@ function explain(error: unknown): { title: string; text: string } {
 
 /** An error where a screen would be: inside the shell, or filling the window. */
 export function RouteFailure({ inside = false }: { inside?: boolean }) {
-  const { title, text } = explain(useRouteError());
+  const error = useRouteError();
+  const { title, text } = explain(error);
   useDocumentTitle(title);
+  // For whoever is asked to help: the words above are for the person at the screen.
+  useEffect(() => console.error(error), [error]);
   const actions = (
     <div className={styles.actions}>
       <Button kind="strong" onClick={() => window.location.reload()}>

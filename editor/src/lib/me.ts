@@ -43,9 +43,10 @@ export const meKey = ['me'] as const;
 /** Who is signed in, in which company; null when nobody is. */
 export const meQuery = queryOptions({
   queryKey: meKey,
-  queryFn: async ({ signal }): Promise<Me | null> => {
+  // Takes no abort signal: the router waits for it, and a component that goes away must not cancel that.
+  queryFn: async (): Promise<Me | null> => {
     try {
-      return await get('/api/auth/me', meSchema, { signal });
+      return await get('/api/auth/me', meSchema);
     } catch (error) {
       if (error instanceof ApiProblem && error.status === 401) return null;
       throw error;

@@ -11,6 +11,8 @@ export const sheetSchema = z.object({
   status: z.enum(['uploaded', 'processing', 'choose-page', 'ready', 'failed']),
   /** What went wrong, in a sentence. */
   failure: z.string().nullable(),
+  /** It failed, and the file is still there to be tried again. */
+  canRetry: z.boolean(),
   pageCount: z.number().nullable(),
   page: z.number().nullable(),
   widthPx: z.number().nullable(),

@@ -1,5 +1,6 @@
 import { type ComponentProps, useState } from 'react';
 import { type Control, type FieldPath, type FieldValues, useController } from 'react-hook-form';
+import { Select } from '../select';
 import { Field, type FieldText } from './field';
 import styles from './form.module.css';
 
@@ -184,11 +185,10 @@ export function SelectField<In extends FieldValues, Out>({
   return (
     <Field label={label} hint={hint} optional={optional} error={fieldState.error?.message}>
       {(ids) => (
-        <select
+        <Select
           {...ids}
           ref={field.ref}
           name={name}
-          className={styles.select}
           disabled={disabled}
           value={field.value ?? ''}
           onBlur={field.onBlur}
@@ -200,7 +200,7 @@ export function SelectField<In extends FieldValues, Out>({
               {option.label}
             </option>
           ))}
-        </select>
+        </Select>
       )}
     </Field>
   );

@@ -16,10 +16,17 @@ export const pointerToName = (pointer: string): string =>
     .join('.');
 
 /** Gives each fault to its field, and what fits no field of this form to the form as a whole. */
-export function sortErrors(error: unknown, isField: (name: string) => boolean): Sorted {
+export function sortErrors(
+  error: unknown,
+  isField: (name: string) => boolean,
+  fieldOf: Readonly<Record<string, string>> = {},
+): Sorted {
   if (!(error instanceof ApiProblem) || error.errors.length === 0)
     return { fields: [], rest: sentenceOf(error) };
-  const faults = error.errors.map((fault) => ({ name: pointerToName(fault.pointer), message: fault.detail }));
+  const faults = error.errors.map((fault) => {
+    const name = pointerToName(fault.pointer);
+    return { name: fieldOf[name] ?? name, message: fault.detail };
+  });
   const fields = faults.filter((fault) => isField(fault.name));
   const others = faults.filter((fault) => !isField(fault.name));
   return {

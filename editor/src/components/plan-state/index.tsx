@@ -21,15 +21,18 @@ export function PlanState({ faults, cautions, fixtures }: PlanStateProps) {
       ) : (
         <span className={styles.line}>
           <Tick />
-          {count(fixtures, 'fixture')}, no faults
+          No faults
         </span>
       )}
-      {cautions !== null && cautions > 0 && (
-        <span className={styles.second}>{count(cautions, 'caution')}</span>
-      )}
+      <span className={styles.second}>{detail(fixtures, cautions)}</span>
     </span>
   );
 }
+
+const detail = (fixtures: number, cautions: number | null): string =>
+  cautions === null || cautions === 0
+    ? count(fixtures, 'fixture')
+    : `${count(fixtures, 'fixture')} · ${count(cautions, 'caution')}`;
 
 const Burst = () => (
   <svg viewBox="0 0 16 16" width="14" height="14" aria-hidden="true">

@@ -1,4 +1,5 @@
 import { SearchBox } from '../../components/search-box';
+import { Select } from '../../components/select';
 import { stageOptions, stageSchema } from '../../lib/stages';
 import styles from './jobs.module.css';
 import { changeAsk, type ListAsk } from './list-ask';
@@ -16,8 +17,7 @@ export function JobFilters({ ask, onAsk }: JobFiltersProps) {
         value={ask.search}
         onSearch={(search) => onAsk(changeAsk(ask, { search }))}
       />
-      <select
-        className={styles.filter}
+      <Select
         aria-label="Stage"
         value={ask.stage ?? ''}
         onChange={(event) => {
@@ -31,16 +31,15 @@ export function JobFilters({ ask, onAsk }: JobFiltersProps) {
             {label}
           </option>
         ))}
-      </select>
-      <select
-        className={styles.filter}
+      </Select>
+      <Select
         aria-label="Which jobs"
         value={ask.archived ? 'archived' : 'current'}
         onChange={(event) => onAsk(changeAsk(ask, { archived: event.target.value === 'archived' }))}
       >
         <option value="current">Current jobs</option>
         <option value="archived">Archived jobs</option>
-      </select>
+      </Select>
     </div>
   );
 }

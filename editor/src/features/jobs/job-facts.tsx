@@ -1,0 +1,56 @@
+import { Link } from 'react-router-dom';
+import { to } from '../../app/paths';
+import { formatDay, formatMoment } from '../../lib/format';
+import type { Job } from '../../lib/jobs';
+import styles from './job-page.module.css';
+
+/** Who, where and when, beside the job's sheets. */
+export function JobFacts({ job }: { job: Job }) {
+  return (
+    <dl className={styles.facts}>
+      <div>
+        <dt>Client</dt>
+        <dd>
+          <Link to={to.client(job.client.id)}>{job.client.name}</Link>
+          {job.client.phone && (
+            <a href={`tel:${job.client.phone.replace(/[^+\d]/g, '')}`}>{job.client.phone}</a>
+          )}
+          {job.client.email && <a href={`mailto:${job.client.email}`}>{job.client.email}</a>}
+        </dd>
+      </div>
+      <div>
+        <dt>Property</dt>
+        <dd>
+          <span>{job.property.name}</span>
+          {job.property.address !== '' && job.property.address !== job.property.name && (
+            <span>{job.property.address}</span>
+          )}
+        </dd>
+      </div>
+      {job.property.accessNotes !== '' && (
+        <div>
+          <dt>Getting in</dt>
+          <dd className={styles.prose}>{job.property.accessNotes}</dd>
+        </div>
+      )}
+      <div>
+        <dt>Site walk</dt>
+        <dd>{job.siteWalkOn ? formatDay(job.siteWalkOn) : <span className="quiet">No date yet</span>}</dd>
+      </div>
+      <div>
+        <dt>Install</dt>
+        <dd>{job.installOn ? formatDay(job.installOn) : <span className="quiet">No date yet</span>}</dd>
+      </div>
+      <div>
+        <dt>System</dt>
+        <dd>{job.existingSystem ? 'Existing, to be surveyed' : 'New'}</dd>
+      </div>
+      <div>
+        <dt>Changed</dt>
+        <dd>
+          <time dateTime={job.updatedAt}>{formatMoment(job.updatedAt)}</time>
+        </dd>
+      </div>
+    </dl>
+  );
+}
