@@ -74,6 +74,8 @@ export const planChanges = pgTable(
     remove: jsonb('remove').notNull(),
     /** Null for the system's own changes and for deleted people. */
     authorId: uuid('author_id'),
+    /** The editing session that made it, whose later changes know it; empty for the system's own. */
+    session: text('session').notNull().default(''),
     label: text('label').notNull().default(''),
     createdAt: createdAt(),
   },

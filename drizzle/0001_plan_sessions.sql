@@ -1,0 +1,1 @@
+ALTER TABLE "plan_changes" ADD COLUMN "session" text DEFAULT '' NOT NULL;
