@@ -1,13 +1,14 @@
 import { type DynamicModule, Module } from '@nestjs/common';
 import { AccessModule } from './access/access.module.js';
 import { ConfigModule } from './config/config.module.js';
-import type { Env } from './config/env.js';
+import { type Env, isLocal } from './config/env.js';
 import { DatabaseModule } from './database/database.module.js';
 import { AccountModule } from './modules/account/account.module.js';
 import { AuthModule } from './modules/auth/auth.module.js';
 import { CatalogueModule } from './modules/catalogue/catalogue.module.js';
 import { ClientsModule } from './modules/clients/clients.module.js';
 import { CompaniesModule } from './modules/companies/companies.module.js';
+import { DevMailModule } from './modules/dev-mail/dev-mail.module.js';
 import { HealthModule } from './modules/health/health.module.js';
 import { JobsModule } from './modules/jobs/jobs.module.js';
 import { MembersModule } from './modules/members/members.module.js';
@@ -35,6 +36,7 @@ export class AppModule {
         AccountModule,
         CompaniesModule,
         MembersModule,
+        ...(isLocal(env) ? [DevMailModule] : []),
         HealthModule,
         ClientsModule,
         PropertiesModule,

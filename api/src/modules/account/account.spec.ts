@@ -165,7 +165,7 @@ describe('a person’s own account', () => {
     for (const { name } of tables as { name: string }[]) {
       const { rows: found } = await test.database.executeSql(
         `SELECT 1 FROM "${name}" t WHERE t::text ILIKE $1 OR t::text ILIKE $2`,
-        [`%${leaver.email}%`, '%Lea Leaver%'],
+        [`%${leaver.email}%`, `%${leaver.name}%`],
       );
       expect(found, name).toEqual([]);
     }
@@ -180,11 +180,8 @@ describe('a person’s own account', () => {
     await owner.post('/api/invitations').send({ email, role }).expect(201);
     const token = await tokenFor(test.database, email);
     const agent = test.agent();
-    const password = 'a password of theirs';
-    const { body } = await agent
-      .post('/api/invitations/accept')
-      .send({ token, name: 'Lea Leaver', password })
-      .expect(200);
-    return { agent, email, password, id: meSchema.parse(body).user.id };
+    const [name, password] = [`Leaver number ${joined}`, 'a password of theirs'];
+    const { body } = await agent.post('/api/invitations/accept').send({ token, name, password }).expect(200);
+    return { agent, name, email, password, id: meSchema.parse(body).user.id };
   }
 });

@@ -1,0 +1,179 @@
+import { mkdtemp, rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
+import { startTestApp, type TestApp } from '../../../test/harness.js';
+import { SendMail } from '../../jobs/mail.js';
+import { type MailCatcher, startMailCatcher } from './catcher.js';
+import { caughtMailListSchema } from './caught-mail.js';
+import { renderLetter } from './letter.js';
+import { MailRepository } from './mail.repository.js';
+import { Mailer, type OutgoingMail } from './mailer.js';
+import { Outbox } from './outbox.js';
+
+class RecordingMailer extends Mailer {
+  readonly sent: OutgoingMail[] = [];
+  failing = false;
+  async send(mail: OutgoingMail): Promise<void> {
+    if (this.failing) throw new Error('The mail service is away.');
+    // Time for another worker to begin with the same message.
+    await new Promise((resolve) => setTimeout(resolve, 30));
+    this.sent.push(mail);
+  }
+  close(): void {}
+}
+
+describe('mail', () => {
+  let dir: string;
+  let catcher: MailCatcher;
+  let test: TestApp;
+  beforeAll(async () => {
+    dir = await mkdtemp(join(tmpdir(), 'lampwright-mail-'));
+    catcher = await startMailCatcher({ smtpPort: 0, httpPort: 0, dir });
+    test = await startTestApp({ SMTP_URL: catcher.smtpUrl, MAIL_VIEWER_URL: catcher.httpUrl });
+  });
+  afterAll(async () => {
+    await test.close();
+    await catcher.close();
+    await rm(dir, { recursive: true, force: true });
+  });
+
+  const inbox = async (address: string) => {
+    const { body } = await test.agent().get('/dev/mail/messages.json').expect(200);
+    return caughtMailListSchema.parse(body).items.filter(({ to }) => to.includes(address));
+  };
+  const outbox = () => test.app.get(Outbox, { strict: false });
+  const rowsTo = async (address: string) =>
+    (await test.database.executeSql('SELECT * FROM mail_messages WHERE "to" = $1', [address])).rows as {
+      id: string;
+      attempts: number;
+      sent_at: Date | null;
+      text: string;
+    }[];
+
+  describe('from the outbox', () => {
+    const mailer = new RecordingMailer();
+    afterEach(() => {
+      mailer.sent.length = 0;
+      mailer.failing = false;
+    });
+    const handler = () =>
+      new SendMail(test.env, test.database, test.app.get(MailRepository, { strict: false }), mailer);
+
+    it('is written with the transaction, or not at all', async () => {
+      await expect(
+        test.database.transaction(async () => {
+          await outbox().post(null, 'undone@example.com', { subject: 'Undone', paragraphs: ['No.'] });
+          throw new Error('changed its mind');
+        }),
+      ).rejects.toThrow('changed its mind');
+      expect(await rowsTo('undone@example.com')).toEqual([]);
+      await outbox().post(null, 'done@example.com', { subject: 'Done', paragraphs: ['Yes.'] });
+      const [row] = await rowsTo('done@example.com');
+      const jobs = await test.database.executeSql("SELECT data FROM pgboss.job WHERE name = 'mail.send'");
+      expect(jobs.rows).toEqual([{ data: { messageId: row?.id } }]);
+      await test.database.executeSql("DELETE FROM pgboss.job WHERE name = 'mail.send'");
+    });
+
+    it('goes out once, however often its job runs', async () => {
+      const [row] = await rowsTo('done@example.com');
+      const job = { messageId: row!.id };
+      await Promise.all([1, 2, 3].map(() => handler().handle(job)));
+      await handler().handle(job);
+      expect(mailer.sent).toHaveLength(1);
+      expect(mailer.sent[0]).toMatchObject({ messageId: `<${row!.id}@127.0.0.1>`, to: 'done@example.com' });
+      const [after] = await rowsTo('done@example.com');
+      expect(after?.sent_at).not.toBeNull();
+      expect(after?.text).toBe('');
+    });
+
+    it('stays when the service is away, and counts the attempts', async () => {
+      await outbox().post(null, 'later@example.com', { subject: 'Later', paragraphs: ['Soon.'] });
+      await test.database.executeSql("DELETE FROM pgboss.job WHERE name = 'mail.send'");
+      const [row] = await rowsTo('later@example.com');
+      const job = { messageId: row!.id };
+      mailer.failing = true;
+      for (const _ of [1, 2]) await expect(handler().handle(job)).rejects.toThrow('away');
+      expect(await rowsTo('later@example.com')).toMatchObject([{ attempts: 2, sent_at: null }]);
+      mailer.failing = false;
+      await handler().handle(job);
+      expect(mailer.sent).toHaveLength(1);
+    });
+  });
+
+  it('travels from a request through the worker to the catcher, and is read at /dev/mail', async () => {
+    await test.startWorker();
+    const { email } = await test.signUp();
+    await test.agent().post('/api/auth/forgot-password').send({ email }).expect(202);
+    await vi.waitFor(async () => expect(await inbox(email)).toHaveLength(1), {
+      timeout: 20_000,
+      interval: 200,
+    });
+    const [mail] = await inbox(email);
+    expect(mail).toMatchObject({ subject: 'Choose a new password', to: [email] });
+    expect(mail?.from).toContain('post@example.com');
+    const link = /http:\/\/\S+#token=[\w-]+/.exec(mail?.text ?? '')?.[0];
+    expect(link).toBeDefined();
+    const list = await test.agent().get('/dev/mail').expect(200);
+    expect(list.text).toContain(`/dev/mail/messages/${mail?.id}`);
+    const page = await test.agent().get(`/dev/mail/messages/${mail?.id}`).expect(200);
+    expect(page.text).toContain(`<a href="${link}">`);
+    expect(page.headers['content-security-policy']).not.toContain('script-src');
+    await test.agent().get('/dev/mail/messages/1b4e28ba-2fa1-4d3b-a3f5-ef19b5a7633b').expect(404);
+  });
+
+  it('outlasts a restart of the catcher', async () => {
+    const place = await mkdtemp(join(dir, 'restart-'));
+    const options = { smtpPort: 0, httpPort: 0, dir: place };
+    const first = await startMailCatcher(options);
+    const { SmtpMailer } = await import('./smtp-mailer.js');
+    const mailer = new SmtpMailer({ ...test.env, SMTP_URL: first.smtpUrl });
+    for (const n of [1, 2])
+      await mailer.send({
+        messageId: `<${n}@example.com>`,
+        to: 'twice@example.com',
+        subject: `Number ${n} – größer`,
+        text: 'A line\n',
+        html: '<p>A line</p>',
+      });
+    mailer.close();
+    await first.close();
+    const second = await startMailCatcher(options);
+    const { items } = caughtMailListSchema.parse(await (await fetch(`${second.httpUrl}/messages`)).json());
+    await second.close();
+    expect(items.map(({ subject, messageId }) => [subject, messageId])).toEqual([
+      ['Number 2 – größer', '<2@example.com>'],
+      ['Number 1 – größer', '<1@example.com>'],
+    ]);
+  });
+
+  it('can’t be made to carry somebody’s markup', () => {
+    const { html, text } = renderLetter({
+      subject: 'Hello',
+      paragraphs: ['<img src=x onerror=alert(1)> & "co"'],
+      action: { label: 'Go', url: 'http://127.0.0.1/"><script>' },
+    });
+    expect(html).not.toMatch(/<img|<script/);
+    expect(text).toContain('<img src=x onerror=alert(1)> & "co"');
+  });
+
+  it('has no viewer in production', async () => {
+    const production = await startTestApp({
+      LAMPWRIGHT_MODE: 'production',
+      PUBLIC_URL: 'https://lampwright.example',
+    });
+    try {
+      await production.agent().get('/dev/mail').expect(404);
+      await production.agent().get('/dev/mail/messages.json').expect(404);
+      const answer = await production.agent().post('/api/auth/sign-up').send({
+        companyName: 'Real',
+        name: 'Real Person',
+        email: 'real@example.com',
+        password: 'real enough',
+      });
+      expect(answer.headers['set-cookie']?.[0]).toMatch(/; HttpOnly; Secure; SameSite=Lax$/);
+    } finally {
+      await production.close();
+    }
+  });
+});
