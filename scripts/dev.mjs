@@ -53,7 +53,8 @@ async function startAll(folder, port, supervisor, signal) {
   tool({ name: 'The compiler of geometry', args: watch, env });
   tool({ name: 'The API', args: [bin('nest'), 'start', '--watch'], env, cwd: inRoot('api') });
   // The API's compiler empties the folder that the worker runs from when it begins.
-  await Promise.race([waitForHealth(`http://127.0.0.1:${port}`, signal), supervisor.failed]);
+  const stopped = AbortSignal.any([signal, supervisor.signal]);
+  await waitForHealth(`http://127.0.0.1:${port}`, stopped);
   tool({
     name: 'The worker',
     args: ['--watch', '--watch-preserve-output', inRoot('api/dist/worker.js')],
@@ -63,6 +64,6 @@ async function startAll(folder, port, supervisor, signal) {
   const vite = [bin('vite'), '--port', String(editorPort), '--strictPort', '--clearScreen', 'false'];
   const editorEnv = { ...env, LAMPWRIGHT_API_URL: `http://127.0.0.1:${port}` };
   tool({ name: 'The editor', args: vite, env: editorEnv, cwd: inRoot('editor') });
-  await Promise.race([waitForPort(editorPort, { signal }), supervisor.failed]);
+  await waitForPort(editorPort, { signal: stopped });
   return page;
 }

@@ -57,8 +57,10 @@ async function startFakes(folder, state, supervisor, signal) {
     env: fakesEnvironment(folder, state),
     logFile: join(folder, 'logs', 'fakes.log'),
   });
-  const listening = Promise.all(Object.values(state.ports).map((port) => waitForPort(port, { signal })));
-  const up = await Promise.race([listening, supervisor.failed]);
+  const stopped = AbortSignal.any([signal, supervisor.signal]);
+  const up = await Promise.all(
+    Object.values(state.ports).map((port) => waitForPort(port, { signal: stopped })),
+  );
   if (up.includes(false)) throw new Trouble(`The local storage and mail did not start; see ${folder}/logs.`);
 }
 
@@ -92,7 +94,7 @@ export async function startProduct({ folder, port, supervisor, signal }) {
     const logFile = join(folder, 'logs', `${script === 'main' ? 'api' : script}.log`);
     supervisor.start({ name, args: [inRoot(`api/dist/${script}.js`)], env, logFile });
   }
-  await Promise.race([waitForHealth(url, signal), supervisor.failed]);
+  await waitForHealth(url, AbortSignal.any([signal, supervisor.signal]));
   return { url, cluster, env };
 }
 
