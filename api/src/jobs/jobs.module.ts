@@ -1,13 +1,26 @@
 import { Inject, Module, type OnApplicationBootstrap } from '@nestjs/common';
+import { Decoder } from '../media/decoder.js';
+import { PlanStoreModule } from '../modules/plans/plan-store.module.js';
+import { SheetStoreModule } from '../modules/sheets/sheet-store.module.js';
 import { Queue } from '../ports/queue/queue.js';
 import { JOB_HANDLERS, type JobHandler } from './job-handler.js';
 import { SendMail } from './mail.js';
+import { ProcessSheet } from './sheets.js';
+import { DeleteStored } from './storage.js';
+import { SummarisePlan } from './summarise-plan.js';
 
 /** Handler classes of the worker; add a new one here. */
-const handlers: (new (...parts: never[]) => JobHandler)[] = [SendMail];
+const handlers: (new (...parts: never[]) => JobHandler)[] = [
+  SendMail,
+  ProcessSheet,
+  DeleteStored,
+  SummarisePlan,
+];
 
 @Module({
+  imports: [SheetStoreModule, PlanStoreModule],
   providers: [
+    Decoder,
     ...handlers,
     {
       provide: JOB_HANDLERS,

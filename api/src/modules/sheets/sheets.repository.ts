@@ -1,5 +1,5 @@
 import { Inject, Injectable } from '@nestjs/common';
-import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm';
+import { and, asc, count, eq, inArray, isNull } from 'drizzle-orm';
 import { Database } from '../../database/database.js';
 import { jobs, sheets } from '../../database/schema/index.js';
 
@@ -76,12 +76,41 @@ export class SheetsRepository {
       .orderBy(asc(sheets.createdAt));
   }
 
-  /** The place of a new sheet among those of its job. */
-  async countOfJob(companyId: string, jobId: string): Promise<number> {
+  /** How many sheets of a job are ready, put away ones included. */
+  async readyOfJob(companyId: string, jobId: string): Promise<number> {
     const [row] = await this.database.queries
-      .select({ n: sql<number>`count(*)::int` })
+      .select({ n: count() })
       .from(sheets)
-      .where(and(eq(sheets.companyId, companyId), eq(sheets.jobId, jobId)));
+      .where(and(eq(sheets.companyId, companyId), eq(sheets.jobId, jobId), eq(sheets.status, 'ready')));
     return row?.n ?? 0;
+  }
+
+  /**
+   * Runs `work` unless another worker is at the same sheet. The lock belongs to a connection held meanwhile,
+   * so that it ends with a worker that is killed.
+   */
+  async alone(sheetId: string, work: () => Promise<void>): Promise<void> {
+    const client = await this.database.pool.connect();
+    let broken = false;
+    const onError = () => {
+      broken = true;
+    };
+    client.on('error', onError);
+    try {
+      const key = [`sheet ${sheetId}`];
+      const tried = await client.query<{ got: boolean }>(
+        'SELECT pg_try_advisory_lock(hashtextextended($1, 0)) AS got',
+        key,
+      );
+      if (!tried.rows[0]?.got) return;
+      try {
+        await work();
+      } finally {
+        if (!broken) await client.query('SELECT pg_advisory_unlock(hashtextextended($1, 0))', key);
+      }
+    } finally {
+      client.off('error', onError);
+      client.release(broken);
+    }
   }
 }

@@ -60,7 +60,8 @@ export class UploadInterceptor implements NestInterceptor, OnModuleDestroy {
     if (this.folder) await rm(await this.folder, { recursive: true, force: true });
   }
 
-  private tempFolder(): Promise<string> {
+  /** Where received files lie until they are answered; made at first need. */
+  tempFolder(): Promise<string> {
     this.folder ??= mkdtemp(join(tmpdir(), 'lampwright-uploads-'));
     return this.folder;
   }
