@@ -131,6 +131,9 @@ function lastWords(logFile) {
   return `${lines ? `\n${lines}` : ''}\nIts log is ${logFile}.`;
 }
 
+/** How often to look whether npm is still there. */
+const lookMs = 250;
+
 /**
  * Aborts at Ctrl-C, SIGTERM or a closed terminal. Repeated signals (npm passes on what the terminal has
  * already sent) change nothing.
@@ -140,6 +143,12 @@ export function stopSignal() {
   const controller = new AbortController();
   for (const name of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
     process.on(name, () => controller.abort(name));
+  }
+  // A SIGTERM to npm ends the shell between npm and this process, which itself hears nothing of it.
+  if (process.env.npm_lifecycle_event) {
+    const parent = process.ppid;
+    const look = () => process.ppid === parent || controller.abort('npm ended');
+    setInterval(look, lookMs).unref();
   }
   return controller.signal;
 }
