@@ -12,6 +12,7 @@ import { DevMailModule } from './modules/dev-mail/dev-mail.module.js';
 import { HealthModule } from './modules/health/health.module.js';
 import { JobsModule } from './modules/jobs/jobs.module.js';
 import { MembersModule } from './modules/members/members.module.js';
+import { PlansModule } from './modules/plans/plans.module.js';
 import { PropertiesModule } from './modules/properties/properties.module.js';
 import { SheetsModule } from './modules/sheets/sheets.module.js';
 import { MailModule } from './ports/mail/mail.module.js';
@@ -42,6 +43,7 @@ export class AppModule {
         PropertiesModule,
         JobsModule,
         SheetsModule,
+        PlansModule,
         CatalogueModule,
       ],
     };
