@@ -1,6 +1,6 @@
 import { queryOptions, useQuery, useSuspenseQuery } from '@tanstack/react-query';
 import { z } from 'zod';
-import { ApiProblem, get } from './api/client';
+import { type Answer, ApiProblem, answer, server } from './api/client';
 
 export const roleSchema = z.enum(['owner', 'designer', 'crew']);
 export type Role = z.infer<typeof roleSchema>;
@@ -10,33 +10,7 @@ export type Units = z.infer<typeof unitsSchema>;
 export const themeSchema = z.enum(['light', 'dark', 'system']);
 export type ThemeChoice = z.infer<typeof themeSchema>;
 
-export const preferencesSchema = z.object({
-  units: unitsSchema.catch('imperial'),
-  theme: themeSchema.catch('system'),
-});
-
-export const meSchema = z.object({
-  user: z.object({
-    id: z.string(),
-    name: z.string(),
-    email: z.string(),
-    preferences: preferencesSchema,
-  }),
-  /** Null for a person who belongs to no company (any more). */
-  company: z
-    .object({
-      id: z.string(),
-      name: z.string(),
-      region: z.string(),
-      settings: z.record(z.string(), z.unknown()),
-      /** The words of the region's rules: NEC or IEC, GFCI or RCD. */
-      words: z.object({ wiringRules: z.string(), protectiveDevice: z.string() }),
-    })
-    .nullable(),
-  role: roleSchema.nullable(),
-  companies: z.array(z.object({ id: z.string(), name: z.string(), role: roleSchema })),
-});
-export type Me = z.infer<typeof meSchema>;
+export type Me = Answer<'/api/auth/me', 'get'>;
 
 export const meKey = ['me'] as const;
 
@@ -46,7 +20,7 @@ export const meQuery = queryOptions({
   // Takes no abort signal: the router waits for it, and a component that goes away must not cancel that.
   queryFn: async (): Promise<Me | null> => {
     try {
-      return await get('/api/auth/me', meSchema);
+      return await answer(server.GET('/api/auth/me'));
     } catch (error) {
       if (error instanceof ApiProblem && error.status === 401) return null;
       throw error;

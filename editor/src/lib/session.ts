@@ -1,12 +1,12 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { act } from './api/client';
+import { server } from './api/client';
 import { meKey } from './me';
 
 /** Ends this session. Everything that was read for the person is forgotten. */
 export function useSignOut() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: () => act('POST', '/api/auth/sign-out', {}),
+    mutationFn: () => server.POST('/api/auth/sign-out'),
     onSuccess: () => {
       client.clear();
       client.setQueryData(meKey, null);
@@ -18,7 +18,7 @@ export function useSignOut() {
 export function useSwitchCompany() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (companyId: string) => act('POST', '/api/auth/active-company', { companyId }),
+    mutationFn: (companyId: string) => server.POST('/api/auth/active-company', { body: { companyId } }),
     onSuccess: async () => {
       client.removeQueries({ predicate: (query) => query.queryKey[0] !== meKey[0] });
       await client.refetchQueries({ queryKey: meKey });

@@ -1,7 +1,8 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { z } from 'zod';
-import { act, post } from '../../lib/api/client';
-import { meKey, roleSchema } from '../../lib/me';
+import { type Answer, answer, server } from '../../lib/api/client';
+import { meKey } from '../../lib/me';
+import { regionCodes } from '../../lib/regions';
 
 const email = z.email();
 /** The length is what makes a password hard to guess; no rules about kinds of characters. */
@@ -16,7 +17,7 @@ export const signUpSchema = z.object({
   name: z.string().trim().min(1).max(120),
   email,
   password: newPassword,
-  region: z.string().min(1),
+  region: z.enum(regionCodes),
 });
 export const forgotSchema = z.object({ email });
 export const resetSchema = z.object({ password: newPassword });
@@ -38,7 +39,7 @@ export function useSignIn() {
   const renew = useNewIdentity();
   return useMutation({
     mutationFn: async (input: SignIn) => {
-      await act('POST', '/api/auth/sign-in', input);
+      await server.POST('/api/auth/sign-in', { body: input });
       await renew();
     },
   });
@@ -48,7 +49,7 @@ export function useSignUp() {
   const renew = useNewIdentity();
   return useMutation({
     mutationFn: async (input: SignUp) => {
-      await act('POST', '/api/auth/sign-up', input);
+      await server.POST('/api/auth/sign-up', { body: input });
       await renew();
     },
   });
@@ -56,40 +57,32 @@ export function useSignUp() {
 
 export const useForgotPassword = () =>
   useMutation({
-    mutationFn: (input: { email: string }) => act('POST', '/api/auth/forgot-password', input),
+    mutationFn: (input: { email: string }) => server.POST('/api/auth/forgot-password', { body: input }),
   });
 
 export const useResetPassword = () =>
   useMutation({
     mutationFn: (input: { token: string; password: string }) =>
-      act('POST', '/api/auth/reset-password', input),
+      server.POST('/api/auth/reset-password', { body: input }),
   });
 
 export function useConfirmEmail() {
   const renew = useNewIdentity();
   return useMutation({
     mutationFn: async (token: string) => {
-      await act('POST', '/api/auth/confirm-email', { token });
+      await server.POST('/api/auth/confirm-email', { body: { token } });
       await renew();
     },
   });
 }
 
-const invitationSchema = z.object({
-  companyName: z.string(),
-  email: z.string(),
-  role: roleSchema,
-  invitedBy: z.string().nullish(),
-  /** The address already has an account: no name or password is asked for. */
-  hasAccount: z.boolean(),
-});
-export type InvitationLook = z.infer<typeof invitationSchema>;
+export type InvitationLook = Answer<'/api/invitations/look', 'post'>;
 
 /** What an invitation says. Looking counts nothing and accepts nothing. */
 export const useInvitation = (token: string) =>
   useQuery({
     queryKey: ['invitation', token],
-    queryFn: ({ signal }) => post('/api/invitations/look', { token }, invitationSchema, { signal }),
+    queryFn: ({ signal }) => answer(server.POST('/api/invitations/look', { signal, body: { token } })),
     enabled: token !== '',
     retry: false,
   });
@@ -98,7 +91,7 @@ export function useAcceptInvitation() {
   const renew = useNewIdentity();
   return useMutation({
     mutationFn: async (input: { token: string; name?: string; password?: string }) => {
-      await act('POST', '/api/invitations/accept', input);
+      await server.POST('/api/invitations/accept', { body: input });
       await renew();
     },
   });

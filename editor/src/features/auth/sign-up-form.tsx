@@ -1,12 +1,11 @@
 import { Form, PasswordField, SelectField, TextField, useZodForm } from '../../components/form';
 import { regions } from '../../lib/regions';
-import { signUpSchema, useSignUp } from './api';
+import { type SignUp, signUpSchema, useSignUp } from './api';
 
 export function SignUpForm({ onDone }: { onDone: () => void }) {
   const signUp = useSignUp();
-  const form = useZodForm(signUpSchema, {
-    defaultValues: { companyName: '', name: '', email: '', password: '', region: 'us' },
-  });
+  const start: SignUp = { companyName: '', name: '', email: '', password: '', region: 'us' };
+  const form = useZodForm(signUpSchema, { defaultValues: start });
   const { control } = form;
   return (
     <Form

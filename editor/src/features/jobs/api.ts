@@ -1,34 +1,12 @@
 import { keepPreviousData, queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
-import { z } from 'zod';
-import { get, patch, post } from '../../lib/api/client';
+import { type Answer, answer, server } from '../../lib/api/client';
 import { clientsKey, propertiesKey } from '../../lib/clients';
-import { type Job, jobAddress, jobKey, jobSchema, jobsKey } from '../../lib/jobs';
-import { type Stage, stageSchema } from '../../lib/stages';
+import { type Job, jobKey, jobsKey } from '../../lib/jobs';
+import type { Stage } from '../../lib/stages';
 import type { ListAsk } from './list-ask';
 
-const listedJobSchema = z.object({
-  id: z.string(),
-  name: z.string(),
-  stage: stageSchema,
-  existingSystem: z.boolean(),
-  client: z.object({ id: z.string(), name: z.string() }),
-  property: z.object({ id: z.string(), name: z.string(), address: z.string() }),
-  thumbnailUrl: z.string().nullable(),
-  /** Of the plan, as the server last worked them out; null before it has. */
-  faults: z.number().nullable(),
-  cautions: z.number().nullable(),
-  fixtures: z.number().nullable(),
-  updatedAt: z.string(),
-  archivedAt: z.string().nullable(),
-});
-export type ListedJob = z.infer<typeof listedJobSchema>;
-
-export const jobListSchema = z.object({
-  items: z.array(listedJobSchema),
-  total: z.number(),
-  page: z.number(),
-  pageSize: z.number(),
-});
+type JobList = Answer<'/api/jobs', 'get'>;
+export type ListedJob = JobList['items'][number];
 
 export const PAGE_SIZE = 25;
 
@@ -36,18 +14,22 @@ export const jobListQuery = (ask: ListAsk) =>
   queryOptions({
     queryKey: [...jobsKey, 'list', ask],
     queryFn: ({ signal }) =>
-      get('/api/jobs', jobListSchema, {
-        signal,
-        query: {
-          search: ask.search,
-          stage: ask.stage,
-          archived: ask.archived ? 'true' : undefined,
-          sort: ask.sort,
-          direction: ask.direction,
-          page: ask.page,
-          pageSize: PAGE_SIZE,
-        },
-      }),
+      answer(
+        server.GET('/api/jobs', {
+          signal,
+          params: {
+            query: {
+              search: ask.search || undefined,
+              stage: ask.stage ?? undefined,
+              archived: ask.archived ? 'true' : undefined,
+              sort: ask.sort,
+              direction: ask.direction,
+              page: ask.page,
+              pageSize: PAGE_SIZE,
+            },
+          },
+        }),
+      ),
     placeholderData: keepPreviousData,
   });
 
@@ -62,7 +44,7 @@ export interface NewJob {
 export function useCreateJob() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (job: NewJob) => post('/api/jobs', job, jobSchema),
+    mutationFn: (job: NewJob) => answer(server.POST('/api/jobs', { body: job })),
     onSuccess: async (job) => {
       client.setQueryData(jobKey(job.id), job);
       await Promise.all([
@@ -83,6 +65,8 @@ export interface JobEdit {
   readonly existingSystem?: boolean;
 }
 
+const at = (id: string) => ({ params: { path: { id } } });
+
 function useJobChange<V>(jobId: string, change: (value: V) => Promise<Job>) {
   const client = useQueryClient();
   return useMutation({
@@ -95,10 +79,12 @@ function useJobChange<V>(jobId: string, change: (value: V) => Promise<Job>) {
 }
 
 export const useEditJob = (jobId: string) =>
-  useJobChange(jobId, (edit: JobEdit) => patch(jobAddress(jobId), edit, jobSchema));
+  useJobChange(jobId, (edit: JobEdit) =>
+    answer(server.PATCH('/api/jobs/{id}', { ...at(jobId), body: edit })),
+  );
 
 export const useArchiveJob = (jobId: string) =>
-  useJobChange(jobId, () => post(`${jobAddress(jobId)}/archive`, {}, jobSchema));
+  useJobChange(jobId, () => answer(server.POST('/api/jobs/{id}/archive', at(jobId))));
 
 export const useRestoreJob = (jobId: string) =>
-  useJobChange(jobId, () => post(`${jobAddress(jobId)}/restore`, {}, jobSchema));
+  useJobChange(jobId, () => answer(server.POST('/api/jobs/{id}/restore', at(jobId))));

@@ -1,7 +1,6 @@
 import { useCallback, useEffect, useRef, useState } from 'react';
 import { ApiProblem, isAbort, sentenceOf } from '../../lib/api/client';
 import { upload } from '../../lib/api/upload';
-import { jobAddress } from '../../lib/jobs';
 import type { SheetView } from '../../lib/sheets';
 import { isHeic, jpegFromHeic } from './heic';
 
@@ -61,7 +60,7 @@ async function sendOne(
   form.set('name', nameOfFile(file.name, view));
   form.set('file', image);
   tell({ kind: 'sending', share: 0 });
-  await upload(`${jobAddress(jobId)}/sheets`, form, {
+  await upload(`/api/jobs/${encodeURIComponent(jobId)}/sheets`, form, {
     signal,
     onProgress: (share) => tell({ kind: 'sending', share }),
   });

@@ -1,5 +1,5 @@
-import { tellSignedOut } from './client';
-import { problemFrom, unreachable } from './problem';
+import { unreachable } from './problem';
+import { jsonOrNull, problemOf } from './transport';
 
 interface UploadOptions {
   /** Share of the bytes that have left, 0 to 1. */
@@ -30,22 +30,12 @@ export function upload(
       if (event.lengthComputable) onProgress(event.loaded / event.total);
     };
     request.onload = () => {
-      const body = parsed(request.responseText);
+      const body = jsonOrNull(request.responseText);
       if (request.status >= 200 && request.status < 300) return resolve(body);
-      const problem = problemFrom(request.status, body);
-      if (problem.status === 401 && problem.code === 'not-signed-in') tellSignedOut();
-      reject(problem);
+      reject(problemOf(request.status, body));
     };
     request.open('POST', path);
     request.setRequestHeader('Accept', 'application/json');
     request.send(form);
   });
-}
-
-function parsed(text: string): unknown {
-  try {
-    return JSON.parse(text);
-  } catch {
-    return null;
-  }
 }

@@ -7,7 +7,7 @@ import { type InvitationLook, useInvitation } from '../../features/auth/api';
 import { Front } from '../../features/auth/front';
 import { Join } from '../../features/auth/join';
 import { useLinkToken } from '../../lib/link-token';
-import type { Role } from '../../lib/me';
+import { type Role, useMaybeMe } from '../../lib/me';
 
 function mayDo(role: Role): string {
   switch (role) {
@@ -21,12 +21,13 @@ function mayDo(role: Role): string {
 }
 
 const ledeOf = (invitation: InvitationLook) =>
-  `${invitation.invitedBy ? `${invitation.invitedBy} invites` : 'The company invites'} ${invitation.email}. ${mayDo(invitation.role)}`;
+  `The invitation is for ${invitation.email}. ${mayDo(invitation.role)}`;
 
 export default function InvitationScreen() {
   const token = useLinkToken();
   const navigate = useNavigate();
   const invitation = useInvitation(token);
+  const me = useMaybeMe();
 
   if (token === '')
     return (
@@ -34,7 +35,7 @@ export default function InvitationScreen() {
         <Problem error="This link is not complete. Open it from the mail again." />
       </Front>
     );
-  if (invitation.isPending)
+  if (invitation.isPending || me.isPending)
     return (
       <Front title="Invitation">
         <SkeletonRows rows={2} label="Reading the invitation" />
@@ -50,6 +51,7 @@ export default function InvitationScreen() {
     <Front title={`Join ${invitation.data.companyName}`} lede={ledeOf(invitation.data)}>
       <Join
         token={token}
+        me={me.data ?? null}
         invitation={invitation.data}
         onDone={() => {
           showToast({ message: `You have joined ${invitation.data.companyName}.` });
