@@ -6,8 +6,9 @@ import { Trouble, warn } from './log.mjs';
 import { inRoot } from './paths.mjs';
 
 const guard = inRoot('scripts/lib/orphan-guard.mjs');
-/** Longer than the API's own grace for requests under way. */
+/** Longer than the API's own grace for requests under way; tools have nothing to finish. */
 const graceMs = 15_000;
+const toolGraceMs = 3_000;
 const maxLogBytes = 10_000_000;
 
 /**
@@ -93,9 +94,9 @@ export class Supervisor {
     const stop = async () => {
       stopped = true;
       end('SIGTERM');
-      const inTime = await Promise.race([ended, sleep(graceMs, null, { ref: false })]);
+      const inTime = await Promise.race([ended, sleep(tool ? toolGraceMs : graceMs, null, { ref: false })]);
       if (inTime !== null) return;
-      warn(`${name} did not stop in ${graceMs / 1000} s and was ended.`);
+      if (!tool) warn(`${name} did not stop in ${graceMs / 1000} s and was ended.`);
       end('SIGKILL');
       await ended;
     };
