@@ -1,0 +1,174 @@
+import { mkdtemp, readdir, rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { hashPassword } from '../src/access/password.js';
+import { type MailCatcher, startMailCatcher } from '../src/ports/mail/catcher.js';
+import { type FakeS3, startFakeS3 } from '../src/ports/storage/fake-s3.js';
+import { type Audience, hiddenElsewhere, type RouteCase, type ValidRequest } from './access/route-case.js';
+import { serverRoutes } from './access/server-routes.js';
+import { MARK, makeWorld, PASSWORD, type World } from './access/world.js';
+import { type Agent, startTestApp, type TestApp } from './harness.js';
+import type { TestPerson } from './people.js';
+
+/** Each module's own table: a file NAME.routes.ts in ./access that exports `routes`. */
+async function readTables(): Promise<RouteCase[]> {
+  const folder = fileURLToPath(new URL('./access', import.meta.url));
+  const files = (await readdir(folder)).filter((name) => name.endsWith('.routes.ts')).sort();
+  const tables = await Promise.all(
+    files.map(async (file) => {
+      const { routes } = (await import(join(folder, file))) as { routes: readonly RouteCase[] };
+      return routes;
+    }),
+  );
+  return tables.flat();
+}
+
+const callers = ['signed out', 'no company', 'owner', 'designer', 'crew', 'other owner'] as const;
+type Caller = (typeof callers)[number];
+
+const roles: Readonly<Record<Exclude<Audience, 'anyone' | 'signed-in'>, readonly Caller[]>> = {
+  everyone: ['owner', 'designer', 'crew'],
+  planners: ['owner', 'designer'],
+  owners: ['owner'],
+};
+
+type Expectation = 'allowed' | 'not signed in' | 'not allowed' | 'hidden';
+
+/** What a route must answer to a caller, by its table entry alone. */
+function expected(route: RouteCase, caller: Caller): Expectation {
+  const { audience } = route;
+  if (audience === 'anyone') return 'allowed';
+  if (caller === 'signed out') return 'not signed in';
+  const outside = caller === 'other owner' || (caller === 'no company' && audience === 'signed-in');
+  if (outside && hiddenElsewhere(route)) return 'hidden';
+  if (audience === 'signed-in' || caller === 'other owner') return 'allowed';
+  return roles[audience].includes(caller) ? 'allowed' : 'not allowed';
+}
+
+const personOf = (world: World, caller: Caller): TestPerson | null => {
+  switch (caller) {
+    case 'signed out':
+      return null;
+    case 'no company':
+      return world.nobody;
+    case 'other owner':
+      return world.otherOwner;
+    case 'owner':
+    case 'designer':
+    case 'crew':
+      return world.members[caller];
+  }
+};
+
+const routeCases = await readTables();
+
+describe('the access walk', () => {
+  let test: TestApp;
+  let dir: string;
+  let storage: FakeS3;
+  let catcher: MailCatcher;
+  let passwordHash: string;
+
+  beforeAll(async () => {
+    dir = await mkdtemp(join(tmpdir(), 'lampwright-walk-'));
+    storage = await startFakeS3({
+      port: 0,
+      dir: join(dir, 'objects'),
+      bucket: 'lampwright',
+      accessKeyId: 'test',
+      secretAccessKey: 'test',
+    });
+    catcher = await startMailCatcher({ smtpPort: 0, httpPort: 0, dir: join(dir, 'mail') });
+    test = await startTestApp({
+      S3_ENDPOINT: storage.endpoint,
+      SMTP_URL: catcher.smtpUrl,
+      MAIL_VIEWER_URL: catcher.httpUrl,
+    });
+    passwordHash = await hashPassword(PASSWORD);
+  });
+  afterAll(async () => {
+    await test.close();
+    await Promise.all([storage.close(), catcher.close()]);
+    await rm(dir, { recursive: true, force: true });
+  });
+
+  it('knows every route of the running server, and no other', () => {
+    const known = routeCases.map(({ route }) => route);
+    expect(known.filter((route, index) => known.indexOf(route) !== index)).toEqual([]);
+    expect([...known].sort()).toEqual(serverRoutes(test.app));
+  });
+
+  describe.each(routeCases)('$route', (route) => {
+    it.each(callers)('for %s', async (caller) => {
+      const world = await makeWorld(test, passwordHash);
+      const person = personOf(world, caller);
+      const request = (await route.request?.(world, person)) ?? {};
+      const answer = await send(person?.agent ?? test.agent(), route.route, request);
+      const told = `${answer.status} ${answer.text ?? ''}`;
+      switch (expected(route, caller)) {
+        case 'allowed':
+          if (route.answers === undefined) expect(answer.status, told).toBeLessThan(300);
+          else expect(answer.status, told).toBe(route.answers);
+          break;
+        case 'not signed in':
+          expect(answer.status, told).toBe(401);
+          break;
+        case 'not allowed':
+          expect(answer.status, told).toBe(403);
+          break;
+        case 'hidden':
+          expect(answer.status, told).toBe(404);
+          break;
+      }
+      if (caller === 'no company' || caller === 'other owner') expectNothingOfOurs(route, world, answer);
+    });
+
+    const method = route.route.split(' ')[0];
+    if (method !== 'GET')
+      it('for another site’s page', async () => {
+        const world = await makeWorld(test, passwordHash);
+        const { owner } = world.members;
+        const request = (await route.request?.(world, owner)) ?? {};
+        const answer = await send(owner.agent, route.route, request, { 'Sec-Fetch-Site': 'cross-site' });
+        expect(answer.status).toBe(403);
+        expect(answer.body.code).toBe('cross-site');
+      });
+  });
+});
+
+/** What a stranger is answered holds no trace of our company; an invited one is told whose letter it is. */
+function expectNothingOfOurs(route: RouteCase, world: World, answer: { text?: string; body: unknown }): void {
+  if (route.audience === 'anyone') return;
+  const text = answer.text ?? JSON.stringify(answer.body);
+  expect(text).not.toContain(MARK);
+  expect(text).not.toContain(world.companyId);
+  for (const { actor } of Object.values(world.members)) expect(text).not.toContain(actor.userId);
+}
+
+async function send(
+  agent: Agent,
+  route: string,
+  { params = {}, query = {}, body, file, fields = {} }: ValidRequest,
+  headers: Record<string, string> = {},
+) {
+  const [method = '', path = ''] = route.split(' ');
+  const address = path.replace(/:(\w+)/g, (_, name: string) => {
+    const value = params[name];
+    if (value === undefined)
+      throw new Error(`The entry of ${route} gives no value for its parameter ${name}.`);
+    return encodeURIComponent(value);
+  });
+  const call = agent[verb(method)](address).query(query).set(headers);
+  if (!file) return body === undefined ? call : call.send(body);
+  for (const [name, value] of Object.entries(fields)) call.field(name, value);
+  return call.attach('file', file.content, file.name);
+}
+
+const verbs = ['get', 'post', 'put', 'patch', 'delete'] as const;
+function verb(method: string): (typeof verbs)[number] {
+  const found = verbs.find((name) => name === method.toLowerCase());
+  if (!found) throw new Error(`The walk can't send ${method} yet.`);
+  return found;
+}

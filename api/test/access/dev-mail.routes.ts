@@ -1,0 +1,24 @@
+import { createTransport } from 'nodemailer';
+import type { RouteCase } from './route-case.js';
+
+export const routes: readonly RouteCase[] = [
+  { route: 'GET /dev/mail', audience: 'anyone', answers: 200 },
+  { route: 'GET /dev/mail/messages.json', audience: 'anyone', answers: 200 },
+  {
+    route: 'GET /dev/mail/messages/:id',
+    audience: 'anyone',
+    answers: 200,
+    request: async ({ test }) => {
+      const transport = createTransport(test.env.SMTP_URL);
+      await transport.sendMail({
+        from: 'a@example.com',
+        to: 'b@example.com',
+        subject: 'Caught',
+        text: 'Text',
+      });
+      transport.close();
+      const { body } = await test.agent().get('/dev/mail/messages.json');
+      return { params: { id: body.items[0].id } };
+    },
+  },
+];
