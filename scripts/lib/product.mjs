@@ -86,15 +86,15 @@ async function runStep(what, script, env, signal) {
 export async function startProduct({ folder, port, supervisor, signal }) {
   const { cluster, env } = await startGround({ folder, supervisor, signal, port });
   const url = `http://127.0.0.1:${port}`;
-  // Stopped the other way round: first no more requests, then no more work, then what both stand on.
-  for (const [name, script] of /** @type {const} */ ([
-    ['The worker', 'worker'],
-    ['The API', 'main'],
-  ])) {
-    const logFile = join(folder, 'logs', `${script === 'main' ? 'api' : script}.log`);
-    supervisor.start({ name, args: [inRoot(`api/dist/${script}.js`)], env, logFile });
-  }
+  const service = (/** @type {string} */ script) => ({
+    args: [inRoot(`api/dist/${script}.js`)],
+    env,
+    logFile: join(folder, 'logs', `${script === 'main' ? 'api' : script}.log`),
+  });
+  supervisor.start({ name: 'The API', ...service('main') });
   await waitForHealth(url, AbortSignal.any([signal, supervisor.signal]));
+  // Stopped first no more requests, then no more work, then what both stand on.
+  supervisor.start({ name: 'The worker', ...service('worker'), stopAfter: 'The API' });
   return { url, cluster, env };
 }
 

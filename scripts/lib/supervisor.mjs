@@ -21,7 +21,7 @@ const maxLogBytes = 10_000_000;
 
 /**
  * Node processes that belong to one command, and what else must be undone: stopped in the reverse order of
- * their start, or in the order given. A service that ends by itself ends the whole.
+ * their start, if not told otherwise. A service that ends by itself ends the whole.
  */
 export class Supervisor {
   /** @type {{ name: string, undo: () => Promise<void> }[]} */
@@ -59,10 +59,11 @@ export class Supervisor {
    * @param {NodeJS.ProcessEnv} service.env
    * @param {string} [service.cwd]
    * @param {string} [service.logFile] its output goes here, else to the terminal
+   * @param {string} [service.stopAfter] the name of an earlier service that is to be stopped before this one
    * @param {boolean} [service.tool] a development tool with processes of its own, all to be stopped at once
    * @returns {Service}
    */
-  start({ name, args, env, cwd = inRoot(), logFile, tool = false }) {
+  start({ name, args, env, cwd = inRoot(), logFile, stopAfter, tool = false }) {
     const output = logFile ? openLog(logFile) : 'inherit';
     const child = spawn(process.execPath, ['--import', guard, ...args], {
       cwd,
@@ -100,7 +101,8 @@ export class Supervisor {
       end('SIGKILL');
       await ended;
     };
-    this.onStop(name, stop);
+    const earlier = this.#undo.findIndex((one) => one.name === stopAfter);
+    this.#undo.splice(earlier < 0 ? this.#undo.length : earlier, 0, { name, undo: stop });
     return { name, pid: child.pid, ended, stop };
   }
 

@@ -34,14 +34,14 @@ async function until(condition) {
 
 const notes = () => (existsSync(order) ? readFileSync(order, 'utf8').trim().split('\n') : []);
 
-test('services are stopped in the reverse order of their start, one after the other', async () => {
+test('services are stopped in the reverse order of their start, or as told, one after the other', async () => {
   const supervisor = new Supervisor();
-  for (const [n, name] of ['ground', 'worker', 'api'].entries()) {
-    supervisor.start(service(name));
+  for (const [n, name] of ['ground', 'fakes', 'api', 'worker'].entries()) {
+    supervisor.start({ ...service(name), stopAfter: name === 'worker' ? 'api' : undefined });
     await until(() => notes().length === n + 1);
   }
   await supervisor.stop();
-  assert.deepEqual(notes().slice(3), ['stop api', 'stop worker', 'stop ground']);
+  assert.deepEqual(notes().slice(4), ['stop api', 'stop worker', 'stop fakes', 'stop ground']);
 });
 
 test('a service that ends by itself is named, with its last words', async () => {
