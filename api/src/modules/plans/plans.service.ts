@@ -201,16 +201,8 @@ function merge(
     if (known.has(change.id)) continue;
     const rebased = rebase(seen, present, change);
     if (rebased.kind === 'conflict')
-      for (const found of rebased.conflicts) {
-        const earlier = conflicts.get(found.recordId);
-        // A record changed several times is in conflict once: between what was, theirs, and mine in the end.
-        conflicts.set(found.recordId, {
-          ...found,
-          base: earlier ? earlier.base : found.base,
-          theirs: earlier ? earlier.theirs : found.theirs,
-          changeId: earlier?.changeId ?? change.id,
-        });
-      }
+      for (const found of rebased.conflicts)
+        if (!conflicts.has(found.recordId)) conflicts.set(found.recordId, { ...found, changeId: change.id });
     fresh.push(change);
     seen = apply(seen, change);
     present = apply(present, change);
@@ -221,7 +213,10 @@ function merge(
       'Somebody changed the same things as you. Choose for each which to keep.',
       {
         version: held.version,
-        conflicts: [...conflicts.values()],
+        // Several changes of one record are one conflict: what was, theirs, and mine in the end.
+        conflicts: [...conflicts.values()].map((found) =>
+          found.mine === null ? found : { ...found, mine: present.get(found.recordId) ?? found.mine },
+        ),
         others: others.map(committed),
       },
     );
