@@ -2,7 +2,7 @@ import { eq } from 'drizzle-orm';
 import sharp from 'sharp';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { addCompany, addPerson, endSessions, type TestPerson } from '../../../test/people.js';
-import { planChanges, planRecords, sheets } from '../../database/schema/index.js';
+import { planChanges, sheets } from '../../database/schema/index.js';
 import { lockedPdf, pdf, phonePhoto, quarters } from '../../media/files.testkit.js';
 import { MAX_UPLOAD_BYTES } from '../../media/limits.js';
 import { newJob, type SheetTest, settled, startSheetTest, until } from './sheets.testkit.js';
@@ -35,6 +35,11 @@ describe('sheets with a worker', () => {
     return answer.body;
   };
 
+  const onPlan = async (sheetId: string): Promise<{ id: string } | undefined> => {
+    const { body } = await owner.agent.get(`/api/jobs/${jobId}/plan`).expect(200);
+    return body.records.find(({ id }: { id: string }) => id === sheetId);
+  };
+
   it('takes a photo through to an upright image, a thumbnail and a place in the plan', async () => {
     const sent = await upload(await phonePhoto(6), 'Garten hinten.JPG');
     expect(sent).toMatchObject({ name: 'Garten hinten', view: 'photo', status: 'uploaded', imageUrl: null });
@@ -62,13 +67,14 @@ describe('sheets with a worker', () => {
     const thumbnail = await owner.agent.get(sheet.thumbnailUrl!).buffer().expect(200);
     expect((await sharp(thumbnail.body).metadata()).height).toBe(480);
 
-    const records = await test.database.queries
-      .select()
-      .from(planRecords)
-      .where(eq(planRecords.jobId, jobId));
-    expect(records.map((row) => row.record)).toContainEqual(
-      expect.objectContaining({ kind: 'sheet', id: sheet.id, widthPx: 400, heightPx: 600, view: 'photo' }),
-    );
+    expect(await onPlan(sheet.id)).toMatchObject({
+      kind: 'sheet',
+      name: 'Garten hinten',
+      order: 0,
+      widthPx: 400,
+      heightPx: 600,
+      view: 'photo',
+    });
     const list = await owner.agent.get('/api/jobs').expect(200);
     expect(list.body.items.find((item: { id: string }) => item.id === jobId).thumbnailUrl).toBe(
       sheet.thumbnailUrl,
@@ -159,8 +165,8 @@ describe('sheets with a worker', () => {
     const changes = await test.database.queries
       .select()
       .from(planChanges)
-      .where(eq(planChanges.changeId, `sheet-${id}`));
-    expect(changes).toHaveLength(1);
+      .where(eq(planChanges.jobId, jobId));
+    expect(changes.filter(({ put }) => Object.hasOwn(put as object, id))).toHaveLength(1);
   });
 
   it('renames and removes a sheet, and keeps the image for earlier versions of the plan', async () => {
@@ -168,11 +174,13 @@ describe('sheets with a worker', () => {
     const sheet = await settled(owner.agent, id);
     const renamed = await owner.agent.patch(`/api/sheets/${id}`).send({ name: 'Front' }).expect(200);
     expect(renamed.body.name).toBe('Front');
+    expect(await onPlan(id)).toMatchObject({ kind: 'sheet', name: 'Front' });
     await crew.agent.patch(`/api/sheets/${id}`).send({ name: 'Mine' }).expect(403);
     await stranger.agent.delete(`/api/sheets/${id}`).expect(404);
     await owner.agent.delete(`/api/sheets/${id}`).expect(204);
     await owner.agent.delete(`/api/sheets/${id}`).expect(404);
     expect((await owner.agent.get(`/api/jobs/${jobId}/sheets`).expect(200)).body.items).toEqual([]);
+    expect(await onPlan(id)).toBeUndefined();
     await owner.agent.get(sheet.imageUrl!).expect(200);
   });
 
