@@ -1,8 +1,10 @@
-import { Link, NavLink, Outlet, ScrollRestoration, useNavigation } from 'react-router-dom';
+import { Link, NavLink, Outlet, ScrollRestoration, useLocation, useNavigation } from 'react-router-dom';
 import { CatalogueIcon, ClientsIcon, CompanyIcon, JobsIcon } from '../../components/icons';
 import { Mark } from '../../components/mark';
+import { useMe } from '../../lib/me';
 import { paths } from '../paths';
 import { AccountMenu } from './account-menu';
+import { NoCompany } from './no-company';
 import styles from './shell.module.css';
 
 const places = [
@@ -15,6 +17,8 @@ const places = [
 /** The frame of every screen but the plan page: a bar on top; on a phone the places move to the foot. */
 export function Shell() {
   const navigation = useNavigation();
+  const { pathname } = useLocation();
+  const me = useMe();
   return (
     <div className={styles.shell}>
       <a href="#main" className={styles.skip}>
@@ -39,7 +43,7 @@ export function Shell() {
         {navigation.state === 'loading' && <div className={styles.progress} aria-hidden="true" />}
       </header>
       <main id="main" className={styles.main} tabIndex={-1}>
-        <Outlet />
+        {me.company === null && pathname !== paths.account ? <NoCompany /> : <Outlet />}
       </main>
       <ScrollRestoration />
     </div>

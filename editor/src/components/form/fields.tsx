@@ -105,15 +105,20 @@ export function parseNumber(text: string): number | null {
   return /^[+-]?(\d+\.?\d*|\.\d+)$/.test(trimmed) ? Number(trimmed) : Number.NaN;
 }
 
-const show = (value: unknown): string =>
-  typeof value === 'number' && Number.isFinite(value) ? String(value) : '';
-
 type NumberProps<In extends FieldValues, Out> = Bound<In, Out> &
   FieldText & {
     /** Written after the field, and read out with it. */
     readonly unit?: string;
     readonly placeholder?: string;
+    /** Shown and typed in another unit than it is kept in. */
+    readonly scale?: Scale;
   };
+
+/** From the number that is kept to the one that is seen, and back. */
+export interface Scale {
+  readonly show: (kept: number) => number;
+  readonly keep: (shown: number) => number;
+}
 
 export function NumberField<In extends FieldValues, Out>({
   control,
@@ -124,13 +129,15 @@ export function NumberField<In extends FieldValues, Out>({
   unit,
   placeholder,
   disabled,
+  scale,
 }: NumberProps<In, Out>) {
   const { field, fieldState } = useController({ control, name });
   // What was typed is kept beside the number that it means: "1." must survive until the next digit.
-  const [typed, setTyped] = useState(() => show(field.value));
-  const meant = parseNumber(typed);
-  const same = Object.is(meant, field.value) || (meant === null && field.value === undefined);
-  const text = same || Number.isNaN(field.value) ? typed : show(field.value);
+  const asText = (value: unknown): string =>
+    typeof value !== 'number' || !Number.isFinite(value) ? '' : String(scale ? scale.show(value) : value);
+  const [typed, setTyped] = useState({ text: asText(field.value), means: field.value as unknown });
+  // A value that did not come from this field (a reset) replaces what was typed.
+  const text = Object.is(typed.means, field.value) ? typed.text : asText(field.value);
   return (
     <Field label={label} hint={hint} optional={optional} error={fieldState.error?.message}>
       {(ids) => (
@@ -148,8 +155,10 @@ export function NumberField<In extends FieldValues, Out>({
             value={text}
             onBlur={field.onBlur}
             onChange={(event) => {
-              setTyped(event.target.value);
-              field.onChange(parseNumber(event.target.value));
+              const shown = parseNumber(event.target.value);
+              const means = shown === null || !scale ? shown : scale.keep(shown);
+              setTyped({ text: event.target.value, means });
+              field.onChange(means);
             }}
           />
           {unit && <span className={styles.unit}>{unit}</span>}

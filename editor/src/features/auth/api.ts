@@ -2,26 +2,22 @@ import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { z } from 'zod';
 import { type Answer, answer, server } from '../../lib/api/client';
 import { meKey } from '../../lib/me';
+import { newPasswordSchema } from '../../lib/password';
 import { regionCodes } from '../../lib/regions';
 
 const email = z.email();
-/** The length is what makes a password hard to guess; no rules about kinds of characters. */
-export const newPassword = z
-  .string()
-  .min(10, { error: 'At least 10 characters. A few unrelated words are easy to remember.' })
-  .max(200);
 
 export const signInSchema = z.object({ email, password: z.string().min(1) });
 export const signUpSchema = z.object({
   companyName: z.string().trim().min(1).max(120),
   name: z.string().trim().min(1).max(120),
   email,
-  password: newPassword,
+  password: newPasswordSchema,
   region: z.enum(regionCodes),
 });
 export const forgotSchema = z.object({ email });
-export const resetSchema = z.object({ password: newPassword });
-export const joinSchema = z.object({ name: z.string().trim().min(1).max(120), password: newPassword });
+export const resetSchema = z.object({ password: newPasswordSchema });
+export const joinSchema = z.object({ name: z.string().trim().min(1).max(120), password: newPasswordSchema });
 
 export type SignIn = z.infer<typeof signInSchema>;
 export type SignUp = z.infer<typeof signUpSchema>;
