@@ -28,6 +28,8 @@ export const EDGE_SHARE = 0.2;
 
 export const waitingLook: FixtureLook = { kind: 'waiting', tint: 0, notch: null };
 
+export const unwiredLook: FixtureLook = { kind: 'unwired', tint: 0, notch: null };
+
 export function fixtureLook(reading: FixtureReading | undefined, window: Bounds | null): FixtureLook {
   if (reading === undefined) return waitingLook;
   if (reading.state !== 'in-window') return { kind: reading.state, tint: 0, notch: null };

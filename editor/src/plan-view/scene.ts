@@ -11,7 +11,7 @@ import { cableColour, cableWeight, loadBand } from './cable-look';
 import type { Point } from './camera';
 import type { AreaShape } from './draw/areas';
 import type { CableStroke } from './draw/cable';
-import { type FixtureLook, fixtureLook, isFault, waitingLook } from './fixture-look';
+import { type FixtureLook, fixtureLook, isFault, unwiredLook } from './fixture-look';
 import { initialOf, tagOf, windowOf } from './names';
 import { dimBlue, grey, ink, overRed } from './palette';
 import { voltsText } from './words';
@@ -64,10 +64,16 @@ export interface SceneWords {
   readonly lengthText: (points: readonly PlanPoint[]) => string;
 }
 
+/** What is known of a plan's volts: the last answer, and which fixtures no run feeds. */
+export interface Readings {
+  readonly answers: Answers | null;
+  readonly unwired: ReadonlySet<string>;
+}
+
 export function buildScene(
   doc: PlanDocument,
   sheetId: string,
-  answers: Answers | null,
+  { answers, unwired }: Readings,
   words: SceneWords,
 ): Scene {
   const worst = worstOfRuns(doc, answers);
@@ -82,7 +88,7 @@ export function buildScene(
       case 'fixture': {
         const window = windowOf(doc, record);
         const reading = answers?.fixtures.get(record.id);
-        const look = answers === null ? waitingLook : fixtureLook(reading, window);
+        const look = unwired.has(record.id) ? unwiredLook : fixtureLook(reading, window);
         const tag = tagOf(doc, record);
         const shown =
           reading === undefined || look.kind === 'unwired' ? null : voltsText(reading.volts, window);

@@ -1,10 +1,7 @@
+import { sheetPoint } from '@lampwright/geometry/estimate';
 import type { SolvedScale } from '@lampwright/geometry/sheet';
-import { meters, pixels, type SheetPoint } from '@lampwright/geometry/units';
+import { meters } from '@lampwright/geometry/units';
 import type { Point } from '../../../plan-view/camera';
-
-export function sheetPoint(p: Point): SheetPoint {
-  return { x: pixels(p.x), y: pixels(p.y) };
-}
 
 /**
  * The sheet point that lies `length` metres from `from` on the ground: at an angle in degrees, counter-clockwise

@@ -1,5 +1,5 @@
+import { simplifyOutline } from '@lampwright/geometry/measure';
 import type { Point } from '../../../plan-view/camera';
-import { simplify } from './simplify';
 import { distance, type Preview, type Tool, type ToolContext, type ToolId } from './tool';
 
 const SAME_PLACE = 4;
@@ -83,7 +83,7 @@ export function createPathTool(ctx: ToolContext, rules: PathRules): Tool {
             click(event.at);
             return true;
           }
-          set(simplify(ended.stroke, TREMBLE / ctx.zoom()));
+          set(simplifyOutline(ended.stroke, TREMBLE / ctx.zoom()));
           end();
           return true;
         }

@@ -1,0 +1,32 @@
+import { useCallback, useMemo } from 'react';
+import type { Point } from '../../../plan-view/camera';
+import { buildScene, emptyScene } from '../../../plan-view/scene';
+import { useDoc, useEstimate, useScale, useSession, useUnitSystem } from '../page/context';
+import { areaText, lengthText as lengthOf } from '../page/lengths';
+
+/** The open sheet as drawable data; built anew only when the plan, its volts or its scale change. */
+export function useScene() {
+  const doc = useDoc();
+  const sheetId = useSession((s) => s.sheetId);
+  const answers = useEstimate((s) => s.answers);
+  const unwired = useEstimate((s) => s.unwired);
+  const scale = useScale();
+  const units = useUnitSystem();
+  const lengthText = useCallback(
+    (points: readonly Point[]) => lengthOf(scale, points, units),
+    [scale, units],
+  );
+  const scene = useMemo(() => {
+    if (!doc.has(sheetId)) return emptyScene;
+    return buildScene(
+      doc,
+      sheetId,
+      { answers, unwired },
+      {
+        lengthText,
+        areaText: (name, points) => [name, areaText(scale, points, units)].filter(Boolean).join(' · '),
+      },
+    );
+  }, [doc, sheetId, answers, unwired, scale, units, lengthText]);
+  return { scene, lengthText };
+}

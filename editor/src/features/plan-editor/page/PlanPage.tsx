@@ -1,0 +1,193 @@
+import { type ReactNode, useEffect } from 'react';
+import { PlanCanvas } from '../canvas/PlanCanvas';
+import { Inspector } from '../inspector/Inspector';
+import { Ledger } from '../ledger/Ledger';
+import { Profile } from '../profile/Profile';
+import { ScalePanel } from '../scale/ScalePanel';
+import { Conflicts } from './Conflicts';
+import { useDoc, useEditor, useEstimate, usePlan, useScale, useSession, useSheet, useTools } from './context';
+import { FaultList } from './FaultList';
+import { type CatalogueEntry, firstChoices } from './items';
+import { Legend } from './Legend';
+import styles from './page.module.css';
+import { Requests } from './Requests';
+import type { Drawer } from './session';
+import { pageKey } from './shortcuts';
+import { ToolOptions } from './ToolOptions';
+import { ToolStrip } from './ToolStrip';
+import { TopBar } from './TopBar';
+import { type Faults, useFaults } from './use-faults';
+import { ZoomBar } from './ZoomBar';
+
+export interface PlanPageProps {
+  readonly jobName: string;
+  readonly jobTo: string;
+  readonly jobsTo: string;
+  /** Where the picture of a sheet is; null while it has none. */
+  readonly imageUrl: (sheetId: string) => string | null;
+  readonly entries: readonly CatalogueEntry[];
+  /** The list of earlier versions. */
+  readonly history: ReactNode;
+}
+
+/** The plan page: the drawing fills the window; tools, ledger and profile stand around it. */
+export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }: PlanPageProps) {
+  const editor = useEditor();
+  const doc = useDoc();
+  const sheet = useSheet();
+  const faults = useFaults();
+  const drawer = useSession((s) => s.drawer);
+
+  useEffect(() => {
+    const onKeyDown = (event: KeyboardEvent) => {
+      if (!event.defaultPrevented && pageKey(editor, event)) event.preventDefault();
+    };
+    window.addEventListener('keydown', onKeyDown);
+    return () => window.removeEventListener('keydown', onKeyDown);
+  }, [editor]);
+
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the first choices are made once the catalogue is there.
+  useEffect(() => {
+    const { choices } = editor.session.getState();
+    editor.session.setState({ choices: firstChoices(doc, entries, choices) });
+  }, [editor, entries]);
+
+  return (
+    <div className={styles.page}>
+      <TopBar jobName={jobName} jobTo={jobTo} jobsTo={jobsTo} faults={faults} />
+      <ToolStrip />
+      <main className={styles.drawing}>
+        <h1 className="visually-hidden">Plan of {jobName}</h1>
+        {sheet === undefined ? <NoSheet jobTo={jobTo} /> : <PlanCanvas imageUrl={imageUrl(sheet.id)} />}
+        <ToolOptions entries={entries} />
+        <Requests />
+        <Messages />
+        <div className={styles.foot}>
+          <Legend />
+          <span className={styles.spring} />
+          <ZoomBar />
+        </div>
+        <Panels faults={faults} history={history} />
+      </main>
+      <aside className={styles.profile} data-open={drawer === 'profile' || undefined} aria-label="Profile">
+        <Profile />
+      </aside>
+      <aside
+        className={styles.side}
+        data-open={drawer === 'ledger' || drawer === 'inspector' || undefined}
+        data-part={drawer}
+        aria-label="Ledger"
+      >
+        <Ledger />
+        <Inspector entries={entries} />
+      </aside>
+      <Drawers />
+    </div>
+  );
+}
+
+function Panels({ faults, history }: { readonly faults: Faults; readonly history: ReactNode }) {
+  const panel = useSession((s) => s.panel);
+  switch (panel) {
+    case 'none':
+      return null;
+    case 'scale':
+      return <ScalePanel />;
+    case 'faults':
+      return <FaultList faults={faults.list} />;
+    case 'history':
+      return history;
+    case 'conflicts':
+      return <Conflicts />;
+  }
+}
+
+function NoSheet({ jobTo }: { readonly jobTo: string }) {
+  return (
+    <div className={styles.nothing}>
+      <h2>No sheet yet</h2>
+      <p>A plan is drawn over a photo of the yard or a plot plan.</p>
+      <a className={styles.primary} href={jobTo}>
+        Add a photo or a plot plan
+      </a>
+    </div>
+  );
+}
+
+/** What the page has to say while one draws: refusals, the missing scale, volts that did not come. */
+function Messages() {
+  const editor = useEditor();
+  const message = useSession((s) => s.message);
+  const problem = useEstimate((s) => s.problem);
+  const scale = useScale();
+  const sheet = useSheet();
+  const hasCable = useEstimate((s) => (s.plan?.waiting.length ?? 0) > 0);
+  const toolId = useTools((s) => s.toolId);
+  const conflicts = usePlan((s) => s.conflicts.length);
+  return (
+    <div className={styles.messages} aria-live="polite">
+      {message !== null && (
+        <p>
+          {message}
+          <button type="button" onClick={() => editor.session.setState({ message: null })}>
+            Close
+          </button>
+        </p>
+      )}
+      {conflicts > 0 && (
+        <p>
+          Somebody else changed what you changed.
+          <button type="button" onClick={() => editor.session.setState({ panel: 'conflicts' })}>
+            Choose
+          </button>
+        </p>
+      )}
+      {problem !== null && (
+        <p>
+          No volts: {problem}
+          <button type="button" onClick={() => editor.estimate.retry()}>
+            Try again
+          </button>
+        </p>
+      )}
+      {sheet !== undefined && scale === null && hasCable && toolId !== 'scale' && (
+        <p>
+          Lengths and volts wait for this sheet’s scale.
+          {editor.canEdit && (
+            <button type="button" onClick={() => editor.use('scale')}>
+              Set the scale
+            </button>
+          )}
+        </p>
+      )}
+    </div>
+  );
+}
+
+const drawers: readonly { readonly id: Exclude<Drawer, 'none'>; readonly word: string }[] = [
+  { id: 'ledger', word: 'Ledger' },
+  { id: 'profile', word: 'Profile' },
+  { id: 'inspector', word: 'Chosen' },
+];
+
+/** On a phone: what slides up over the drawing. */
+function Drawers() {
+  const editor = useEditor();
+  const drawer = useSession((s) => s.drawer);
+  const chosen = useSession((s) => s.selection.size);
+  return (
+    <div className={styles.drawers} role="toolbar" aria-label="Panels">
+      {drawers.map(({ id, word }) => (
+        <button
+          key={id}
+          type="button"
+          aria-pressed={drawer === id}
+          disabled={id === 'inspector' && chosen === 0}
+          onClick={() => editor.session.setState({ drawer: drawer === id ? 'none' : id })}
+        >
+          {id === 'inspector' && chosen > 0 ? `${word} ${chosen}` : word}
+        </button>
+      ))}
+    </div>
+  );
+}

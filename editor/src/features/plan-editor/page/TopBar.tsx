@@ -1,0 +1,68 @@
+import { Link } from 'react-router-dom';
+import { Button } from '../../../components/button';
+import { Mark } from '../../../components/mark';
+import { useEditor, usePlan } from './context';
+import styles from './page.module.css';
+import { SaveNote } from './SaveNote';
+import { SheetTabs } from './SheetTabs';
+import type { Faults } from './use-faults';
+
+interface TopBarProps {
+  readonly jobName: string;
+  readonly jobTo: string;
+  readonly jobsTo: string;
+  readonly faults: Faults;
+}
+
+export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {
+  const editor = useEditor();
+  const undoLabel = usePlan((s) => s.undoLabel);
+  const redoLabel = usePlan((s) => s.redoLabel);
+  const { fault, caution, advice } = faults.counts;
+  const open = (panel: 'faults' | 'history') =>
+    editor.session.setState({ panel: editor.session.getState().panel === panel ? 'none' : panel });
+  return (
+    <header className={styles.bar}>
+      <Link to={jobsTo} className={styles.home} aria-label="Lampwright, all jobs">
+        <Mark />
+        <span>Lampwright</span>
+      </Link>
+      <Link to={jobTo} className={styles.job}>
+        {jobName}
+      </Link>
+      <SheetTabs addSheetTo={editor.canEdit ? jobTo : null} />
+      <div className={styles.spring} />
+      {editor.canEdit ? (
+        <SaveNote />
+      ) : (
+        <span className={styles.saved}>You can look; only designers change plans.</span>
+      )}
+      {editor.canEdit && (
+        <>
+          <Button
+            aria-disabled={undoLabel === null || undefined}
+            title={undoLabel === null ? 'Nothing to undo' : `Undo: ${undoLabel}`}
+            onClick={() => editor.undo()}
+          >
+            Undo
+          </Button>
+          <Button
+            aria-disabled={redoLabel === null || undefined}
+            title={redoLabel === null ? 'Nothing to redo' : `Redo: ${redoLabel}`}
+            onClick={() => editor.redo()}
+          >
+            Redo
+          </Button>
+        </>
+      )}
+      <Button onClick={() => open('history')}>History</Button>
+      <Button kind="strong" onClick={() => open('faults')}>
+        {fault > 0
+          ? `${fault} ${fault === 1 ? 'fault' : 'faults'} before sharing`
+          : caution + advice > 0
+            ? `No faults, ${caution + advice} to look at`
+            : 'No faults'}
+      </Button>
+    </header>
+  );
+}

@@ -1,0 +1,37 @@
+import { createStore, type StoreApi } from 'zustand/vanilla';
+import type { Choices, Request } from '../tools/tool';
+
+/** Which panel stands over the drawing, if any. */
+export type Panel = 'none' | 'scale' | 'faults' | 'history' | 'conflicts';
+/** On a phone, what has slid up over the drawing. */
+export type Drawer = 'none' | 'ledger' | 'profile' | 'inspector';
+
+export interface SessionState {
+  readonly sheetId: string;
+  readonly selection: ReadonlySet<string>;
+  readonly hoveredId: string | null;
+  readonly choices: Choices;
+  readonly request: Request | null;
+  /** The sentence that the drawing says last. */
+  readonly message: string | null;
+  readonly panel: Panel;
+  readonly drawer: Drawer;
+  /** The run whose profile is shown when the selection is of none. */
+  readonly runId: string | null;
+}
+
+const nothing: ReadonlySet<string> = new Set();
+
+export function createSession(sheetId: string): StoreApi<SessionState> {
+  return createStore<SessionState>(() => ({
+    sheetId,
+    selection: nothing,
+    hoveredId: null,
+    choices: { fixture: null, transformer: null, cable: null, junction: 'hub', reference: 'length' },
+    request: null,
+    message: null,
+    panel: 'none',
+    drawer: 'none',
+    runId: null,
+  }));
+}
