@@ -101,13 +101,22 @@ describe('the access walk', () => {
   });
 
   describe.each(routeCases)('$route', (route) => {
+    /** Those who are refused leave everything as it was, so that they can share what the request is about. */
+    let untouched: Promise<{ world: World; request: ValidRequest }> | undefined;
+    const forRefused = () => {
+      untouched ??= prepare(route, null);
+      return untouched;
+    };
+
     it.each(callers)('for %s', async (caller) => {
-      const world = await makeWorld(test, passwordHash);
+      const expectation = expected(route, caller);
+      const { world, request } = await (expectation === 'allowed' ? prepare(route, caller) : forRefused());
       const person = personOf(world, caller);
-      const request = (await route.request?.(world, person)) ?? {};
-      const answer = await send(person?.agent ?? test.agent(), route.route, request);
+      const answer = route.endless
+        ? await begin(test.url, person, addressOf(route.route, request))
+        : await send(person?.agent ?? test.agent(), route.route, request);
       const told = `${answer.status} ${answer.text ?? ''}`;
-      switch (expected(route, caller)) {
+      switch (expectation) {
         case 'allowed':
           if (route.answers === undefined) expect(answer.status, told).toBeLessThan(300);
           else expect(answer.status, told).toBe(route.answers);
@@ -125,21 +134,25 @@ describe('the access walk', () => {
       if (caller === 'no company' || caller === 'other owner') expectNothingOfOurs(route, world, answer);
     });
 
-    const method = route.route.split(' ')[0];
-    if (method !== 'GET')
+    if (!route.route.startsWith('GET '))
       it('for another site’s page', async () => {
-        const world = await makeWorld(test, passwordHash);
-        const { owner } = world.members;
-        const request = (await route.request?.(world, owner)) ?? {};
-        const answer = await send(owner.agent, route.route, request, { 'Sec-Fetch-Site': 'cross-site' });
+        const { world, request } = await forRefused();
+        const { agent } = world.members.owner;
+        const answer = await send(agent, route.route, request, { 'Sec-Fetch-Site': 'cross-site' });
         expect(answer.status).toBe(403);
         expect(answer.body.code).toBe('cross-site');
       });
   });
+
+  async function prepare(route: RouteCase, caller: Caller | null) {
+    const world = await makeWorld(test, passwordHash);
+    const person = caller && personOf(world, caller);
+    return { world, request: (await route.request?.(world, person)) ?? {} };
+  }
 });
 
 /** What a stranger is answered holds no trace of our company; an invited one is told whose letter it is. */
-function expectNothingOfOurs(route: RouteCase, world: World, answer: { text?: string; body: unknown }): void {
+function expectNothingOfOurs(route: RouteCase, world: World, answer: Answer): void {
   if (route.audience === 'anyone') return;
   const text = answer.text ?? JSON.stringify(answer.body);
   expect(text).not.toContain(MARK);
@@ -147,20 +160,44 @@ function expectNothingOfOurs(route: RouteCase, world: World, answer: { text?: st
   for (const { actor } of Object.values(world.members)) expect(text).not.toContain(actor.userId);
 }
 
-async function send(
-  agent: Agent,
-  route: string,
-  { params = {}, query = {}, body, file, fields = {} }: ValidRequest,
-  headers: Record<string, string> = {},
-) {
-  const [method = '', path = ''] = route.split(' ');
-  const address = path.replace(/:(\w+)/g, (_, name: string) => {
+interface Answer {
+  readonly status: number;
+  readonly text?: string;
+  readonly body: unknown;
+}
+
+/** Waits for the beginning of an answer, and leaves if it is one without an end. */
+async function begin(url: string, person: TestPerson | null, address: string): Promise<Answer> {
+  const leave = new AbortController();
+  const answer = await fetch(url + address, {
+    headers: person ? { Cookie: person.cookie } : {},
+    signal: leave.signal,
+  });
+  const streams = answer.headers.get('Content-Type')?.startsWith('text/event-stream') ?? false;
+  const text = streams ? '' : await answer.text();
+  leave.abort();
+  return { status: answer.status, text, body: {} };
+}
+
+function addressOf(route: string, { params = {} }: ValidRequest): string {
+  const [, path = ''] = route.split(' ');
+  return path.replace(/:(\w+)/g, (_, name: string) => {
     const value = params[name];
     if (value === undefined)
       throw new Error(`The entry of ${route} gives no value for its parameter ${name}.`);
     return encodeURIComponent(value);
   });
-  const call = agent[verb(method)](address).query(query).set(headers);
+}
+
+async function send(
+  agent: Agent,
+  route: string,
+  request: ValidRequest,
+  headers: Record<string, string> = {},
+): Promise<Answer & { body: { code?: string } }> {
+  const [method = ''] = route.split(' ');
+  const { query = {}, body, file, fields = {} } = request;
+  const call = agent[verb(method)](addressOf(route, request)).query(query).set(headers);
   if (!file) return body === undefined ? call : call.send(body);
   for (const [name, value] of Object.entries(fields)) call.field(name, value);
   return call.attach('file', file.content, file.name);

@@ -32,6 +32,8 @@ export interface RouteCase {
   readonly elsewhere?: 'hidden' | 'own';
   /** The status of a call by those who may; any of 200 to 299 by default. */
   readonly answers?: number;
+  /** The answer goes on until its reader leaves (a stream of events): only its beginning is looked at. */
+  readonly endless?: true;
   /**
    * Makes whatever the request is about, in a world that is made for this one call. Without a caller the
    * request is about the company's things; `caller` is for what belongs to a person.
