@@ -213,6 +213,27 @@ describe('windows that go away', () => {
     expect(server.isSound()).toBe(true);
   });
 
+  it('are built upon before what they left is saved, without conflict', async () => {
+    const { server, open, fixture, move } = setting();
+    const first = open();
+    await first.store.start();
+    const f = fixture(first.store, 100);
+    await rest();
+    server.weather = () => 'lost-on-the-way';
+    move(first.store, f, 1);
+    await rest();
+    first.kill();
+    const { store } = open();
+    await store.start();
+    move(store, f, 1);
+    await rest();
+    server.weather = () => 'fine';
+    await store.resume();
+    await rest();
+    expect(store.saving.getState()).toMatchObject({ phase: 'saved', unsent: 0 });
+    expect(x(server.plan, f)).toBe(102);
+  });
+
   it('keep IndexedDB in order across reloads', async () => {
     const { server, open, note, texts } = setting(indexedDbStorage() as ReturnType<typeof memoryStorage>);
     server.weather = () => 'down';
