@@ -74,12 +74,12 @@ export class RunCircuit {
 
   /**
    * Currents and slopes at the present volts, `share` of the open volts being left at the terminal. Returns whether
-   * all loads are on parts that bend upward, or null where some volts are not above 0.
+   * all loads are on parts that bend upward, or null where some volts are below 0.
    */
   evaluate(share: number): boolean | null {
     const { nodeVolts } = this;
     if (!(share > 0)) return null;
-    for (let i = 0; i < nodeVolts.length; i++) if (!(nodeVolts[i]! > 0)) return null;
+    for (let i = 0; i < nodeVolts.length; i++) if (!(nodeVolts[i]! >= 0)) return null;
     return evaluateLoads(
       this.loads,
       nodeVolts,
@@ -122,7 +122,9 @@ export class RunCircuit {
   /** Each load as the conductance i/u that it shows at the volts evaluated last, into nodeSlope. */
   slopesAsConductances(share: number): void {
     const { nodeSlope, nodeAmps, nodeVolts, atSource } = this;
-    for (let i = 0; i < nodeSlope.length; i++) nodeSlope[i] = nodeAmps[i]! / nodeVolts[i]!;
+    // At 0 V, reached only by underflow, every load is on the plain part where its slope is its conductance.
+    for (let i = 0; i < nodeSlope.length; i++)
+      if (nodeVolts[i]! > 0) nodeSlope[i] = nodeAmps[i]! / nodeVolts[i]!;
     atSource.slope = atSource.amps / (share * this.open);
   }
 

@@ -22,7 +22,7 @@ export interface LoadTable {
   readonly lead: Float64Array;
   /** VA of a driver; amps per volt^0.55 of a filament; amps of a current. */
   readonly size: Float64Array;
-  /** Node volts below which a driver or current acts as a plain conductance. */
+  /** Node volts below which a load acts as a plain conductance. */
   readonly knee: Float64Array;
   /** Siemens of that conductance, lead included; for a resistive load at all volts. */
   readonly siemens: Float64Array;
@@ -40,6 +40,11 @@ type LoadKind = typeof CONDUCTANCE | typeof DRIVER | typeof FILAMENT | typeof CU
 
 /** Current of a filament ∝ volts^0.55 (lamp rerating handbooks). */
 const FILAMENT_EXPONENT = 0.55;
+/**
+ * v^0.55 is infinitely steep at 0 V, where double precision ends. Below this part of the tap's open volts (some
+ * 1e-17 V, where the law gives less than a billionth of the rated current) a filament counts as a plain conductance.
+ */
+const FILAMENT_KNEE = 1e-18;
 /** Below this share of the tap's open volts a `current` load acts as a resistance, so that an answer exists. */
 export const CURRENT_KNEE = 0.1;
 
@@ -102,22 +107,32 @@ function describeLoad(table: LoadTable, row: number, fixture: NormalizedFixture,
     case 'filament':
       table.kind[row] = FILAMENT;
       table.size[row] = load.watts / load.ratedVolts ** (1 + FILAMENT_EXPONENT);
+      describeKnee(
+        table,
+        row,
+        FILAMENT_KNEE * open,
+        table.size[row]! * (FILAMENT_KNEE * open) ** FILAMENT_EXPONENT,
+      );
       return;
     case 'resistive':
       table.kind[row] = CONDUCTANCE;
       table.siemens[row] = 1 / (lead + load.ratedVolts ** 2 / load.watts);
       return;
-    case 'current': {
-      const kneeVolts = CURRENT_KNEE * open;
+    case 'current':
       table.kind[row] = CURRENT;
       table.size[row] = load.amps;
-      table.siemens[row] = 1 / (lead + kneeVolts / load.amps);
-      table.knee[row] = kneeVolts + lead * load.amps;
+      describeKnee(table, row, CURRENT_KNEE * open, load.amps);
       return;
-    }
     case 'off':
       return;
   }
+}
+
+/** Below `volts` at the lead's end, where it draws `amps`, the load is a plain conductance. */
+function describeKnee(table: LoadTable, row: number, volts: number, amps: number): void {
+  const lead = table.lead[row]!;
+  table.siemens[row] = 1 / (lead + volts / amps);
+  table.knee[row] = volts + lead * amps;
 }
 
 /** The higher v with v + lead × va / v = u; u must be at or above the knee. */
@@ -142,22 +157,24 @@ function filamentVolts(u: number, size: number, lead: number): number {
   return v;
 }
 
-/** Fills in volts, amps and slope of one row at node volts u > 0; false if it is on a part that bends downward. */
+/** Fills in volts, amps and slope of one row at node volts u ≥ 0; false if it is on a part that bends downward. */
 export function evaluateLoad(table: LoadTable, row: number, u: number): boolean {
   const { volts, amps, slope } = table;
   const lead = table.lead[row]!;
   const size = table.size[row]!;
   const kind = table.kind[row]! as LoadKind;
   switch (kind) {
-    case FILAMENT: {
-      const v = filamentVolts(u, size, lead);
-      const i = size * v ** FILAMENT_EXPONENT;
-      const inner = (FILAMENT_EXPONENT * i) / v;
-      volts[row] = v;
-      amps[row] = i;
-      slope[row] = inner / (1 + lead * inner);
-      return false;
-    }
+    case FILAMENT:
+      if (u >= table.knee[row]!) {
+        const v = filamentVolts(u, size, lead);
+        const i = size * v ** FILAMENT_EXPONENT;
+        const inner = (FILAMENT_EXPONENT * i) / v;
+        volts[row] = v;
+        amps[row] = i;
+        slope[row] = inner / (1 + lead * inner);
+        return false;
+      }
+      break;
     case DRIVER:
       if (u >= table.knee[row]!) {
         const v = driverVolts(u, size, lead);
@@ -196,7 +213,7 @@ export function leastChord(table: LoadTable, row: number, u: number, top: number
       return table.siemens[row]!;
     case FILAMENT: {
       // Concave: no chord is flatter than the tangent at the far end.
-      if (top <= u) return table.slope[row]!;
+      if (top <= u || top < table.knee[row]!) return table.slope[row]!;
       const v = filamentVolts(top, table.size[row]!, table.lead[row]!);
       const inner = FILAMENT_EXPONENT * table.size[row]! * v ** (FILAMENT_EXPONENT - 1);
       return inner / (1 + table.lead[row]! * inner);
@@ -215,7 +232,7 @@ export function leastChord(table: LoadTable, row: number, u: number, top: number
   }
 }
 
-/** Adds up amps and slopes per node; those of loads at the source come back as sums. Node volts must be above 0. */
+/** Adds up amps and slopes per node; those of loads at the source come back as sums. Node volts must not be below 0. */
 export function evaluateLoads(
   table: LoadTable,
   nodeVolts: Float64Array,

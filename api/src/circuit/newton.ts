@@ -19,14 +19,14 @@ const SETTLED = 1e-13;
 /** Rounding may keep steps from settling: this often without progress below this part is enough. */
 const GOOD_ENOUGH = 1e-9;
 const MOST_STALLS = 3;
-/** Volts below this part of the open volts are settled when their steps are small beside it. */
-const LEAST_SCALE = 1e-9;
+/** Volts below this part of the open volts are as good as none and may settle as they like. */
+const LEAST_SCALE = 1e-12;
 /** Once a step is this small, the matrix is as good as exact and is kept for the last steps. */
 const KEEP_MATRIX = 1e-5;
 /** At the very nose of a supply Newton only halves its error with each step. */
 const MAX_STEPS = 80;
 /** A step that would take volts to 0 or below takes them to this part of what they were. */
-const CUT = 0.1;
+const CUT = 1e-3;
 
 /**
  * Newton's method from the upper bound down. Where all loads bend upward (constant power, constant current,
@@ -103,7 +103,7 @@ function takeStep(state: WindingState): { moved: number; cut: boolean } {
       let fall = lift === 0 ? -step[i]! : follow[i]! * lift - step[i]!;
       let rise = lift === 0 ? step[i]! : (1 - follow[i]!) * lift + step[i]!;
       const scale = Math.max(nodeVolts[i]!, LEAST_SCALE * open);
-      if (nodeVolts[i]! + rise <= 0) {
+      if (nodeVolts[i]! + rise < 0) {
         cut = true;
         rise = (CUT - 1) * nodeVolts[i]!;
         fall = lift - rise;

@@ -11,10 +11,12 @@ export interface Elimination {
 }
 
 /**
- * More multiplications than this in one factorisation would hold a server for seconds. Only a random tangle of
- * thousands of cross-connections comes near: a square grid of 5,000 nodes needs under ten million.
+ * More multiplications in one factorisation, or more entries merged while planning it, would hold a server for
+ * seconds. Only a random tangle of thousands of cross-connections comes near: a square grid of 5,000 nodes needs
+ * under a hundredth of either.
  */
-const MAX_MULTIPLICATIONS = 1.5e9;
+const MAX_MULTIPLICATIONS = 1e9;
+const MAX_MERGED = 1e8;
 
 export class TooTangled extends Error {}
 
@@ -52,6 +54,7 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
   const mark = new Int32Array(nodeCount).fill(-1);
   let stamp = 0;
   let multiplications = 0;
+  let merged = 0;
   for (let p = 0; p < nodeCount; p++) {
     const node = queue.takeLeast();
     position[node] = p;
@@ -59,7 +62,7 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
     columns.push(touched);
     const allJoined = touched.length === nodeCount - p - 1;
     multiplications += touched.length ** 2 * (allJoined ? touched.length / 3 : 1);
-    if (multiplications > MAX_MULTIPLICATIONS) throw new TooTangled();
+    if (multiplications > MAX_MULTIPLICATIONS || merged > MAX_MERGED) throw new TooTangled();
     if (allJoined) {
       finishClique(touched, p + 1, position, columns);
       break;
@@ -74,6 +77,7 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
     for (const one of touched) {
       stamp++;
       const list = neighbours[one]!;
+      merged += list.length + touched.length;
       let kept = 0;
       for (const other of list) {
         if (position[other] !== -1) continue;

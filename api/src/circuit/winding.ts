@@ -9,12 +9,14 @@ import { shareLeft } from './supply.js';
  */
 const DOWNWARD_WORK = 2e7;
 const LEAST_DOWNWARD_STEPS = 500;
+/** Evaluating a load costs about as much as this many entries. */
+const LOAD_WORK = 10;
 /** An answer this close, as a part of the open volts, below the proven upper bound is as good as the highest. */
 const AT_THE_TOP = 1e-6;
 /** Kirchhoff's law and the power balance must hold to this part of the volt-amperes supplied. */
 const BALANCE = 1e-7;
 /** … or to this many volt-amperes, where next to nothing flows. */
-const BALANCE_VA = 1e-12;
+const BALANCE_VA = 1e-18;
 
 /**
  * Solves all runs of one winding for the answer with the highest volts. Newton from no-load volts finds it at once
@@ -24,7 +26,10 @@ const BALANCE_VA = 1e-12;
  */
 export function solveWinding(runs: readonly RunCircuit[], sag: number): WindingState {
   const state: WindingState = { runs, sag, share: 1, topShare: 1, iterations: 0 };
-  const workPerStep = runs.reduce((sum, { factor, loads }) => sum + factor.entries + loads.count, 20);
+  const workPerStep = runs.reduce(
+    (sum, { factor, loads }) => sum + factor.entries + LOAD_WORK * loads.count,
+    20,
+  );
   const mostSteps = Math.max(LEAST_DOWNWARD_STEPS, DOWNWARD_WORK / workPerStep);
   let batch = 1;
   for (let done = 0; done <= mostSteps; ) {
