@@ -1,7 +1,7 @@
 import { type ExecutionContext, Injectable } from '@nestjs/common';
 import { Reflector } from '@nestjs/core';
 import { AuthGuard } from '@nestjs/passport';
-import type { Request } from 'express';
+import type { Request, Response } from 'express';
 import { notAllowed, notSignedIn } from '../http/app-error.js';
 import { ACCESS, type Access } from './decorators.js';
 import { allows } from './permissions.js';
@@ -24,6 +24,8 @@ export class AccessGuard extends AuthGuard('jwt') {
 
     await super.canActivate(context);
     const request = context.switchToHttp().getRequest<Request>();
+    // Whatever is behind a sign-in stays in no cache, unless the route has a better rule of its own.
+    context.switchToHttp().getResponse<Response>().setHeader('Cache-Control', 'no-store');
     const session = request.user as LiveSession;
     request.person = { userId: session.userId, sessionId: session.sessionId };
     if (session.companyId !== null && session.role !== null)

@@ -1,5 +1,5 @@
 import { Inject, Injectable } from '@nestjs/common';
-import { and, desc, eq, gt, isNull, lt, ne } from 'drizzle-orm';
+import { and, desc, eq, gt, isNull, lt, ne, or } from 'drizzle-orm';
 import { Database } from '../database/database.js';
 import { memberships, sessions, users } from '../database/schema/index.js';
 import type { Role } from './permissions.js';
@@ -142,6 +142,15 @@ export class SessionRepository {
           isNull(sessions.revokedAt),
           except === undefined ? undefined : ne(sessions.id, except),
         ),
+      );
+  }
+
+  /** Removes a person's sessions that ended before a time, by whatever end. */
+  async deleteEnded(userId: string, before: Date): Promise<void> {
+    await this.database.queries
+      .delete(sessions)
+      .where(
+        and(eq(sessions.userId, userId), or(lt(sessions.revokedAt, before), lt(sessions.expiresAt, before))),
       );
   }
 

@@ -1,4 +1,4 @@
-import { Body, Controller, Get, Header, HttpCode, Inject, Post, Req, Res } from '@nestjs/common';
+import { Body, Controller, Get, HttpCode, Inject, Post, Req, Res } from '@nestjs/common';
 import {
   ApiAcceptedResponse,
   ApiCreatedResponse,
@@ -112,7 +112,6 @@ export class AuthController {
 
   @Get('me')
   @SignedIn()
-  @Header('Cache-Control', 'no-store')
   @ApiOkResponse({ standardSchema: meSchema })
   async whoAmI(@CurrentPerson() person: Person, @Req() request: Request): Promise<Me> {
     return this.me.describe(person.userId, request.actor?.companyId ?? null);

@@ -104,6 +104,31 @@ describe('signing up, in and out', () => {
     await test.agent().post('/api/auth/sign-out').expect(204);
   });
 
+  it('forgets sessions that ended long ago', async () => {
+    const { agent, email, password } = await test.signUp();
+    await agent.post('/api/auth/sign-out').expect(204);
+    const count = async () => {
+      const { rows } = await test.database.executeSql(
+        'SELECT count(*)::int AS n FROM sessions s JOIN users u ON u.id = s.user_id WHERE u.email = $1',
+        [email],
+      );
+      return (rows[0] as { n: number }).n;
+    };
+    await test.agent().post('/api/auth/sign-in').send({ email, password }).expect(200);
+    expect(await count()).toBe(2);
+    await test.database.executeSql(
+      "UPDATE sessions SET revoked_at = revoked_at - interval '91 days' WHERE revoked_at IS NOT NULL",
+    );
+    await test.agent().post('/api/auth/sign-in').send({ email, password }).expect(200);
+    expect(await count()).toBe(2);
+  });
+
+  it('keeps answers behind the sign-in out of caches', async () => {
+    const { agent } = await test.signUp();
+    for (const path of ['/api/auth/me', '/api/company', '/api/members'])
+      expect((await agent.get(path).expect(200)).headers['cache-control']).toBe('no-store');
+  });
+
   it('answers alike for a wrong password and for nobody', async () => {
     const { email } = await test.signUp();
     const [wrong, nobody] = await Promise.all(

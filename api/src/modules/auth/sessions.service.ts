@@ -17,6 +17,9 @@ export interface BegunSession {
   readonly companyId: string | null;
 }
 
+/** Where a person worked last is remembered for as long; after that nothing is left of a session that ended. */
+const FORGET_AFTER_MS = 90 * 86_400_000;
+
 /** User agents are only shown back to their owner; longer ones are cut to what is worth showing. */
 const MOST_USER_AGENT = 300;
 
@@ -33,6 +36,7 @@ export class SessionsService {
    */
   async begin(userId: string, caller: Caller, companyId?: string): Promise<BegunSession> {
     if (caller.session) await this.sessions.revoke(caller.session.userId, caller.session.sessionId);
+    await this.sessions.deleteEnded(userId, new Date(Date.now() - FORGET_AFTER_MS));
     const active = companyId ?? (await this.usualCompany(userId));
     const sessionId = await this.sessions.insert(userId, active, caller.userAgent.slice(0, MOST_USER_AGENT));
     return { sessionId, userId, companyId: active };
