@@ -1,5 +1,19 @@
 import { Inject, Injectable } from '@nestjs/common';
-import { and, asc, desc, eq, ilike, isNotNull, isNull, or, type SQL, sql } from 'drizzle-orm';
+import {
+  and,
+  asc,
+  count,
+  desc,
+  eq,
+  ilike,
+  inArray,
+  isNotNull,
+  isNull,
+  or,
+  type SQL,
+  type SQLWrapper,
+  sql,
+} from 'drizzle-orm';
 import { Database } from '../../database/database.js';
 import { clients, jobs, planSummaries, plans, properties, sheets } from '../../database/schema/index.js';
 import { containing } from '../../database/search.js';
@@ -22,36 +36,22 @@ export class JobListRepository {
 
   /** Only the jobs of the page are looked into further, so that the length of the whole list costs little. */
   async page(companyId: string, filter: JobFilter, order: JobOrder, limit: number, offset: number) {
+    const updated = sql<Date>`greatest(${jobs.updatedAt}, ${plans.updatedAt})`;
     const chosen = this.database.queries
       .select({
         id: jobs.id,
+        propertyId: jobs.propertyId,
         name: jobs.name,
         stage: jobs.stage,
         existingSystem: jobs.existingSystem,
+        createdAt: jobs.createdAt,
         archivedAt: jobs.archivedAt,
-        updatedAt: sql<Date>`greatest(${jobs.updatedAt}, ${plans.updatedAt})`
-          .mapWith(jobs.updatedAt)
-          .as('last_updated'),
-        clientId: sql<string>`${clients.id}`.as('client_id'),
-        clientName: sql<string>`${clients.name}`.as('client_name'),
-        propertyId: sql<string>`${properties.id}`.as('property_id'),
-        propertyName: sql<string>`${properties.name}`.as('property_name'),
-        address: properties.address,
-        total: sql<number>`(count(*) OVER ())::int`.as('total'),
-        place: sql<number>`row_number() OVER (ORDER BY ${sql.join(ordering(order), sql`, `)})`.as('place'),
+        updatedAt: updated.mapWith(jobs.updatedAt).as('last_updated'),
       })
       .from(jobs)
-      .innerJoin(
-        properties,
-        and(eq(properties.companyId, jobs.companyId), eq(properties.id, jobs.propertyId)),
-      )
-      .innerJoin(
-        clients,
-        and(eq(clients.companyId, properties.companyId), eq(clients.id, properties.clientId)),
-      )
       .leftJoin(plans, and(eq(plans.companyId, jobs.companyId), eq(plans.jobId, jobs.id)))
-      .where(matching(companyId, filter))
-      .orderBy(sql`place`)
+      .where(this.matching(companyId, filter))
+      .orderBy(...ordering({ ...jobs, updatedAt: updated }, order))
       .limit(limit)
       .offset(offset)
       .as('chosen');
@@ -90,66 +90,76 @@ export class JobListRepository {
         existingSystem: chosen.existingSystem,
         archivedAt: chosen.archivedAt,
         updatedAt: chosen.updatedAt,
-        client: { id: chosen.clientId, name: chosen.clientName },
-        property: { id: chosen.propertyId, name: chosen.propertyName, address: chosen.address },
-        total: chosen.total,
+        client: { id: clients.id, name: clients.name },
+        property: { id: properties.id, name: properties.name, address: properties.address },
         thumbnailSheetId: thumbnail.sheetId,
         faults: summary.faults,
         cautions: summary.cautions,
         fixtures: summary.fixtures,
       })
       .from(chosen)
+      .innerJoin(properties, and(eq(properties.companyId, companyId), eq(properties.id, chosen.propertyId)))
+      .innerJoin(clients, and(eq(clients.companyId, companyId), eq(clients.id, properties.clientId)))
       .leftJoinLateral(thumbnail, sql`true`)
       .leftJoinLateral(summary, sql`true`)
-      .orderBy(chosen.place);
+      .orderBy(...ordering(chosen, order));
   }
 
-  /** For pages beyond the end, which bring no row to tell the total. */
   async count(companyId: string, filter: JobFilter): Promise<number> {
     const [row] = await this.database.queries
-      .select({ n: sql<number>`count(*)::int` })
+      .select({ n: count() })
       .from(jobs)
-      .innerJoin(
-        properties,
-        and(eq(properties.companyId, jobs.companyId), eq(properties.id, jobs.propertyId)),
-      )
+      .where(this.matching(companyId, filter));
+    return row?.n ?? 0;
+  }
+
+  /** What a search finds by client and property is gathered once, not asked anew for every job. */
+  private matching(companyId: string, { search, stage, archived }: JobFilter): SQL | undefined {
+    const pattern = containing(search);
+    const places = this.database.queries
+      .select({ id: properties.id })
+      .from(properties)
       .innerJoin(
         clients,
         and(eq(clients.companyId, properties.companyId), eq(clients.id, properties.clientId)),
       )
-      .where(matching(companyId, filter));
-    return row?.n ?? 0;
+      .where(
+        and(
+          eq(properties.companyId, companyId),
+          or(
+            ilike(clients.name, pattern),
+            ilike(properties.name, pattern),
+            ilike(properties.address, pattern),
+          ),
+        ),
+      );
+    return and(
+      eq(jobs.companyId, companyId),
+      archived ? isNotNull(jobs.archivedAt) : isNull(jobs.archivedAt),
+      stage === null ? undefined : eq(jobs.stage, stage),
+      search === '' ? undefined : or(ilike(jobs.name, pattern), inArray(jobs.propertyId, places)),
+    );
   }
 }
 
-function matching(companyId: string, { search, stage, archived }: JobFilter): SQL | undefined {
-  const pattern = containing(search);
-  return and(
-    eq(jobs.companyId, companyId),
-    archived ? isNotNull(jobs.archivedAt) : isNull(jobs.archivedAt),
-    stage === null ? undefined : eq(jobs.stage, stage),
-    search === ''
-      ? undefined
-      : or(
-          ilike(jobs.name, pattern),
-          ilike(clients.name, pattern),
-          ilike(properties.name, pattern),
-          ilike(properties.address, pattern),
-        ),
-  );
+interface Sortable {
+  readonly id: SQLWrapper;
+  readonly name: SQLWrapper;
+  readonly stage: SQLWrapper;
+  readonly createdAt: SQLWrapper;
+  readonly updatedAt: SQLWrapper;
 }
 
-function ordering({ by, direction }: JobOrder): SQL[] {
+function ordering({ id, name, stage, createdAt, updatedAt }: Sortable, { by, direction }: JobOrder): SQL[] {
   const to = direction === 'asc' ? asc : desc;
-  const updated = sql`greatest(${jobs.updatedAt}, ${plans.updatedAt})`;
   switch (by) {
     case 'updated':
-      return [to(updated), asc(jobs.id)];
+      return [to(updatedAt), asc(id)];
     case 'created':
-      return [to(jobs.createdAt), asc(jobs.id)];
+      return [to(createdAt), asc(id)];
     case 'name':
-      return [to(sql`lower(${jobs.name})`), asc(jobs.id)];
+      return [to(sql`lower(${name})`), asc(id)];
     case 'stage':
-      return [to(jobs.stage), desc(updated), asc(jobs.id)];
+      return [to(stage), desc(updatedAt), asc(id)];
   }
 }

@@ -34,15 +34,12 @@ export class JobsService {
     };
     // Newest first, but names and stages from their beginning.
     const direction = query.direction ?? (sort === 'updated' || sort === 'created' ? 'desc' : 'asc');
-    const rows = await this.lists.page(
-      actor.companyId,
-      filter,
-      { by: sort, direction },
-      pageSize,
-      (page - 1) * pageSize,
-    );
-    const total = rows[0]?.total ?? (page === 1 ? 0 : await this.lists.count(actor.companyId, filter));
-    const items = rows.map(({ total: _, thumbnailSheetId, updatedAt, archivedAt, ...row }) => ({
+    const order = { by: sort, direction } as const;
+    const [rows, total] = await Promise.all([
+      this.lists.page(actor.companyId, filter, order, pageSize, (page - 1) * pageSize),
+      this.lists.count(actor.companyId, filter),
+    ]);
+    const items = rows.map(({ thumbnailSheetId, updatedAt, archivedAt, ...row }) => ({
       ...row,
       thumbnailUrl: thumbnailSheetId === null ? null : thumbnailUrl(thumbnailSheetId),
       updatedAt: updatedAt.toISOString(),
