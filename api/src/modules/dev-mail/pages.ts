@@ -20,7 +20,7 @@ dt { color: var(--quiet) } dd { margin: 0; overflow-wrap: anywhere }
 pre { margin: 0 0 32px; padding: 20px; background: var(--chalk); border-radius: 4px; font: inherit; white-space: pre-wrap; overflow-wrap: anywhere }
 iframe { width: 100%; height: 520px; border: 1px solid var(--chalk); border-radius: 4px; background: #FBF8F2 }
 h2 { font-size: 16px; font-weight: 600; margin: 0 0 8px }
-@media (max-width: 600px) { .when { display: none } }
+@media (max-width: 600px) { thead { display: none } tr { display: block; padding: 10px 0; border-bottom: 1px solid var(--chalk) } td { display: block; padding: 0; border: 0 } dl { grid-template-columns: 1fr } dd { margin-bottom: 8px } }
 `;
 
 const page = (title: string, body: string): string => `<!doctype html>
@@ -46,12 +46,12 @@ export function listPage(mails: readonly CaughtMail[]): string {
       ({ id, subject, to, receivedAt }) => `<tr>
 <td><a href="/dev/mail/messages/${encodeURIComponent(id)}">${escapeHtml(subject || '(no subject)')}</a></td>
 <td>${escapeHtml(to.join(', '))}</td>
-<td class="when"><time datetime="${escapeHtml(receivedAt)}">${time(receivedAt)}</time></td>
+<td><time datetime="${escapeHtml(receivedAt)}">${time(receivedAt)}</time></td>
 </tr>`,
     )
     .join('\n');
   const table = `<table>
-<thead><tr><th scope="col">Subject</th><th scope="col">To</th><th scope="col" class="when">Caught</th></tr></thead>
+<thead><tr><th scope="col">Subject</th><th scope="col">To</th><th scope="col">Caught</th></tr></thead>
 <tbody>
 ${rows}
 </tbody></table>`;
