@@ -40,7 +40,11 @@ export type SaveAnswer =
 export interface PlanTransport {
   /** @throws when the plan can't be had; the message is a sentence for the person */
   load(): Promise<{ readonly version: number; readonly records: readonly PlanRecord[] }>;
-  /** @throws as `load` */
+  /**
+   * Changes after the version, in order and without a gap; the newest may be left for a further call, which
+   * the version next heard of brings about.
+   * @throws as `load`
+   */
   changesSince(version: number): Promise<readonly CommittedChange[]>;
   /** Never throws: whatever happens is an answer. */
   save(request: SaveRequest): Promise<SaveAnswer>;
