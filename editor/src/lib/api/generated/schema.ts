@@ -676,6 +676,102 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/api/jobs/{jobId}/plan": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Plans_get"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/plan/changes": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Plans_changes"];
+        put?: never;
+        post: operations["Plans_save"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/plan/history": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Plans_history"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/plan/restore": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Plans_restore"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/plan/summary": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Plans_summary"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/plan/events": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Plans_follow"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/api/catalogue": {
         parameters: {
             query?: never;
@@ -3432,6 +3528,353 @@ export interface operations {
                 content: {
                     "application/json": string;
                 };
+            };
+        };
+    };
+    Plans_get: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        records: ({
+                            kind: string;
+                            id: string;
+                        } & {
+                            [key: string]: unknown;
+                        })[];
+                    };
+                };
+            };
+        };
+    };
+    Plans_changes: {
+        parameters: {
+            query: {
+                since: number;
+            };
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        changes: {
+                            version: number;
+                            change: {
+                                id: string;
+                                schema: number;
+                                put: {
+                                    [key: string]: {
+                                        kind: string;
+                                        id: string;
+                                    } & {
+                                        [key: string]: unknown;
+                                    };
+                                };
+                                remove: string[];
+                            };
+                        }[];
+                        more: boolean;
+                    };
+                };
+            };
+        };
+    };
+    Plans_save: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    session?: string;
+                    baseVersion: number;
+                    own?: string[];
+                    changes: unknown[];
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        applied: {
+                            id: string;
+                            version: number;
+                        }[];
+                        others: {
+                            version: number;
+                            change: {
+                                id: string;
+                                schema: number;
+                                put: {
+                                    [key: string]: {
+                                        kind: string;
+                                        id: string;
+                                    } & {
+                                        [key: string]: unknown;
+                                    };
+                                };
+                                remove: string[];
+                            };
+                        }[];
+                    };
+                };
+            };
+            409: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** @enum {number} */
+                        status: 409;
+                        /** @enum {string} */
+                        code: "plan-conflict";
+                        detail: string;
+                        version: number;
+                        conflicts: {
+                            changeId: string;
+                            recordId: string;
+                            /** @enum {string} */
+                            reason: "changed" | "missing";
+                            message: string;
+                            base: ({
+                                kind: string;
+                                id: string;
+                            } & {
+                                [key: string]: unknown;
+                            }) | null;
+                            theirs: ({
+                                kind: string;
+                                id: string;
+                            } & {
+                                [key: string]: unknown;
+                            }) | null;
+                            mine: ({
+                                kind: string;
+                                id: string;
+                            } & {
+                                [key: string]: unknown;
+                            }) | null;
+                        }[];
+                        others: {
+                            version: number;
+                            change: {
+                                id: string;
+                                schema: number;
+                                put: {
+                                    [key: string]: {
+                                        kind: string;
+                                        id: string;
+                                    } & {
+                                        [key: string]: unknown;
+                                    };
+                                };
+                                remove: string[];
+                            };
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Plans_history: {
+        parameters: {
+            query?: {
+                before?: number;
+                limit?: number;
+            };
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        items: {
+                            version: number;
+                            changeId: string;
+                            /** Format: date-time */
+                            at: string;
+                            author: {
+                                id: string;
+                                name: string;
+                            } | null;
+                            label: string;
+                            put: number;
+                            removed: number;
+                        }[];
+                        next: number | null;
+                    };
+                };
+            };
+        };
+    };
+    Plans_restore: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    version: number;
+                    changeId?: string;
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        applied: {
+                            id: string;
+                            version: number;
+                        }[];
+                        others: {
+                            version: number;
+                            change: {
+                                id: string;
+                                schema: number;
+                                put: {
+                                    [key: string]: {
+                                        kind: string;
+                                        id: string;
+                                    } & {
+                                        [key: string]: unknown;
+                                    };
+                                };
+                                remove: string[];
+                            };
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Plans_summary: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        summary: {
+                            planVersion: number;
+                            solverVersion: string;
+                            fixtures: number;
+                            unwired: number;
+                            waiting: number;
+                            counts: {
+                                fault: number;
+                                caution: number;
+                                advice: number;
+                            };
+                            lowestVolts: number | null;
+                            highestVolts: number | null;
+                            failure: string | null;
+                            transformers: {
+                                id: string;
+                                label: string;
+                                voltAmps: number;
+                                loadPercent: number;
+                            }[];
+                            runs: {
+                                id: string;
+                                label: string;
+                                lowestVolts: number | null;
+                                highestVolts: number | null;
+                                lengthMeters: number;
+                            }[];
+                            faults: {
+                                code: string;
+                                /** @enum {string} */
+                                severity: "fault" | "caution" | "advice";
+                                recordId: string;
+                                otherId: string | null;
+                                message: string;
+                            }[];
+                        } | null;
+                    };
+                };
+            };
+        };
+    };
+    Plans_follow: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description A stream of {"version": n}. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
             };
         };
     };
