@@ -15,7 +15,7 @@ interface FormProps<In extends FieldValues, Out> {
   /** lamp only where the form is what moves the job on. */
   readonly submitKind?: 'lamp' | 'strong';
   /** The form's field for the server's name of it, where the two differ. */
-  readonly fieldOf?: Readonly<Record<string, string>>;
+  readonly serverName?: (name: string) => string;
   /** Beside the button. */
   readonly beside?: ReactNode;
   readonly wideButton?: boolean;
@@ -29,7 +29,7 @@ export function Form<In extends FieldValues, Out>({
   submitLabel,
   submitKind = 'strong',
   beside,
-  fieldOf = {},
+  serverName,
   wideButton = false,
   children,
 }: FormProps<In, Out>) {
@@ -39,7 +39,7 @@ export function Form<In extends FieldValues, Out>({
       await onSubmit(values);
     } catch (error) {
       const known = (name: string) => hasField(form.control._fields, name);
-      const { fields, rest } = sortErrors(error, known, fieldOf);
+      const { fields, rest } = sortErrors(error, known, serverName);
       fields.forEach(({ name, message }, i) => {
         form.setError(name as FieldPath<In>, { type: 'server', message }, { shouldFocus: i === 0 });
       });

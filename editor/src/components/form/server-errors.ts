@@ -19,13 +19,12 @@ export const pointerToName = (pointer: string): string =>
 export function sortErrors(
   error: unknown,
   isField: (name: string) => boolean,
-  fieldOf: Readonly<Record<string, string>> = {},
+  fieldOf: (name: string) => string = (name) => name,
 ): Sorted {
   if (!(error instanceof ApiProblem) || error.errors.length === 0)
     return { fields: [], rest: sentenceOf(error) };
   const faults = error.errors.map((fault) => {
-    const name = pointerToName(fault.pointer);
-    return { name: fieldOf[name] ?? name, message: fault.detail };
+    return { name: fieldOf(pointerToName(fault.pointer)), message: fault.detail };
   });
   const fields = faults.filter((fault) => isField(fault.name));
   const others = faults.filter((fault) => !isField(fault.name));

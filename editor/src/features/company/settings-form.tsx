@@ -43,7 +43,7 @@ const fahrenheit = {
 };
 
 /** Pointers of the server name the settings within the company. */
-const fieldOf = Object.fromEntries(Object.keys(schema.shape).map((key) => [`settings.${key}`, key] as const));
+const fieldOf = (name: string): string => name.replace(/^settings\./, '');
 
 /** What plans of this company begin with. A plan keeps its own values afterwards. */
 export function SettingsForm({ company }: { company: Company }) {
@@ -57,7 +57,7 @@ export function SettingsForm({ company }: { company: Company }) {
       form={form}
       label="Working values"
       submitLabel="Save working values"
-      fieldOf={fieldOf}
+      serverName={fieldOf}
       onSubmit={async (settings) => {
         await edit.mutateAsync({ settings });
         form.reset(settings);

@@ -42,7 +42,7 @@ export function NewJobForm({ clientId, onMade }: NewJobFormProps) {
       label="New job"
       submitLabel="Create the job"
       submitKind="lamp"
-      fieldOf={newJobFieldOf}
+      serverName={newJobFieldOf}
       onSubmit={async (values) => {
         // A new client has no property to choose from, whatever was chosen before.
         const sent = known ? values : { ...values, propertyMode: 'new' as const };

@@ -77,8 +77,7 @@ export function newJobOf(form: NewJobForm): NewJob {
   };
 }
 
-/** The form's own field for a pointer of the server's faults. */
-export const newJobFieldOf: Readonly<Record<string, string>> = {
+const fields: Readonly<Record<string, string>> = {
   'client.id': 'clientId',
   'client.name': 'clientName',
   'client.email': 'clientEmail',
@@ -88,3 +87,6 @@ export const newJobFieldOf: Readonly<Record<string, string>> = {
   'property.address': 'address',
   'property.accessNotes': 'accessNotes',
 };
+
+/** The form's own field for the server's name of it. */
+export const newJobFieldOf = (name: string): string => fields[name] ?? name;
