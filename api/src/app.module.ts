@@ -9,6 +9,7 @@ import { CatalogueModule } from './modules/catalogue/catalogue.module.js';
 import { ClientsModule } from './modules/clients/clients.module.js';
 import { CompaniesModule } from './modules/companies/companies.module.js';
 import { DevMailModule } from './modules/dev-mail/dev-mail.module.js';
+import { EstimatesModule } from './modules/estimates/estimates.module.js';
 import { HealthModule } from './modules/health/health.module.js';
 import { JobsModule } from './modules/jobs/jobs.module.js';
 import { MembersModule } from './modules/members/members.module.js';
@@ -45,6 +46,7 @@ export class AppModule {
         SheetsModule,
         PlansModule,
         CatalogueModule,
+        EstimatesModule,
       ],
     };
   }
