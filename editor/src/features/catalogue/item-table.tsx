@@ -1,11 +1,17 @@
 import { Link } from 'react-router-dom';
-import { to } from '../../app/paths';
 import { Table } from '../../components/table';
 import type { CatalogueEntry } from './api';
 import styles from './catalogue.module.css';
 import { describe } from './describe';
 
-export function ItemTable({ entries, label }: { entries: readonly CatalogueEntry[]; label: string }) {
+interface ItemTableProps {
+  readonly entries: readonly CatalogueEntry[];
+  readonly label: string;
+  /** Where an item's name leads. */
+  readonly hrefOf: (itemId: string) => string;
+}
+
+export function ItemTable({ entries, label, hrefOf }: ItemTableProps) {
   return (
     <Table label={label}>
       <thead>
@@ -28,7 +34,7 @@ export function ItemTable({ entries, label }: { entries: readonly CatalogueEntry
           return (
             <tr key={id} className={styles.row}>
               <td>
-                <Link to={to.catalogueItem(id)} className={styles.name}>
+                <Link to={hrefOf(id)} className={styles.name}>
                   {item.name}
                 </Link>
                 <div className={styles.below}>{[sort, figures].filter(Boolean).join(' · ')}</div>

@@ -1,10 +1,15 @@
 import { Link } from 'react-router-dom';
-import { to } from '../../app/paths';
 import { Table } from '../../components/table';
 import type { Client } from '../../lib/clients';
 import styles from './clients.module.css';
 
-export function ClientTable({ clients }: { clients: readonly (Client & { readonly jobs: number })[] }) {
+interface ClientTableProps {
+  readonly clients: readonly (Client & { readonly jobs: number })[];
+  /** Where a client's name leads. */
+  readonly hrefOf: (clientId: string) => string;
+}
+
+export function ClientTable({ clients, hrefOf }: ClientTableProps) {
   return (
     <Table label="Clients">
       <thead>
@@ -25,7 +30,7 @@ export function ClientTable({ clients }: { clients: readonly (Client & { readonl
         {clients.map((client) => (
           <tr key={client.id} className={styles.row}>
             <td>
-              <Link to={to.client(client.id)} className={styles.name}>
+              <Link to={hrefOf(client.id)} className={styles.name}>
                 {client.name}
               </Link>
               <div className={styles.below}>{client.phone ?? client.email}</div>

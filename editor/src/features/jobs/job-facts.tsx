@@ -1,17 +1,16 @@
 import { Link } from 'react-router-dom';
-import { to } from '../../app/paths';
 import { formatDay, formatMoment } from '../../lib/format';
 import type { Job } from '../../lib/jobs';
 import styles from './job-page.module.css';
 
 /** Who, where and when, beside the job's sheets. */
-export function JobFacts({ job }: { job: Job }) {
+export function JobFacts({ job, clientHref }: { job: Job; clientHref: string }) {
   return (
     <dl className={styles.facts}>
       <div>
         <dt>Client</dt>
         <dd>
-          <Link to={to.client(job.client.id)}>{job.client.name}</Link>
+          <Link to={clientHref}>{job.client.name}</Link>
           {job.client.phone && (
             <a href={`tel:${job.client.phone.replace(/[^+\d]/g, '')}`}>{job.client.phone}</a>
           )}

@@ -1,5 +1,4 @@
 import { Link } from 'react-router-dom';
-import { to } from '../../app/paths';
 import { PlanState } from '../../components/plan-state';
 import { SortHead, Table } from '../../components/table';
 import { formatAgo, formatMoment } from '../../lib/format';
@@ -11,12 +10,14 @@ import type { ListAsk, Sort } from './list-ask';
 interface JobTableProps {
   readonly jobs: readonly ListedJob[];
   readonly ask: ListAsk;
+  /** Where a job's name leads. */
+  readonly hrefOf: (jobId: string) => string;
   readonly onSort: (sort: Sort) => void;
   /** The rows are of the former question; the answer is on its way. */
   readonly stale: boolean;
 }
 
-export function JobTable({ jobs, ask, onSort, stale }: JobTableProps) {
+export function JobTable({ jobs, ask, hrefOf, onSort, stale }: JobTableProps) {
   const sorted = (sort: Sort) => (ask.sort === sort ? ask.direction : null);
   const now = Date.now();
   return (
@@ -53,7 +54,7 @@ export function JobTable({ jobs, ask, onSort, stale }: JobTableProps) {
                 <Thumbnail url={job.thumbnailUrl} />
               </td>
               <td>
-                <Link to={to.job(job.id)} className={styles.name}>
+                <Link to={hrefOf(job.id)} className={styles.name}>
                   {job.name}
                 </Link>
                 <div className={styles.below}>

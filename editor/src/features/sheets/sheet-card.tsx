@@ -1,6 +1,5 @@
 import { type ReactNode, useState } from 'react';
 import { Link } from 'react-router-dom';
-import { to } from '../../app/paths';
 import { Button } from '../../components/button';
 import { MenuItem, MoreMenu } from '../../components/more-menu';
 import { showProblem } from '../../components/toast';
@@ -16,11 +15,13 @@ interface SheetCardProps {
   readonly jobId: string;
   readonly sheet: Sheet;
   readonly editable: boolean;
+  /** Where its picture leads: the plan, on this sheet. */
+  readonly planHref: string;
 }
 
 type Asking = 'page' | 'name' | 'removal' | null;
 
-export function SheetCard({ jobId, sheet, editable }: SheetCardProps) {
+export function SheetCard({ jobId, sheet, editable, planHref }: SheetCardProps) {
   const [asking, setAsking] = useState<Asking>(null);
   const during = (what: Asking) => ({
     open: asking === what,
@@ -28,7 +29,13 @@ export function SheetCard({ jobId, sheet, editable }: SheetCardProps) {
   });
   return (
     <li className={styles.card}>
-      <Picture jobId={jobId} sheet={sheet} editable={editable} onChoosePage={() => setAsking('page')} />
+      <Picture
+        jobId={jobId}
+        sheet={sheet}
+        editable={editable}
+        planHref={planHref}
+        onChoosePage={() => setAsking('page')}
+      />
       <div className={styles.foot}>
         <div className={styles.words}>
           <div className={styles.name} title={sheet.name}>
@@ -58,16 +65,12 @@ interface PictureProps extends SheetCardProps {
   readonly onChoosePage: () => void;
 }
 
-function Picture({ jobId, sheet, editable, onChoosePage }: PictureProps): ReactNode {
+function Picture({ jobId, sheet, editable, planHref, onChoosePage }: PictureProps): ReactNode {
   const retry = useRetrySheet(jobId, sheet.id);
   switch (sheet.status) {
     case 'ready':
       return (
-        <Link
-          to={to.plan(jobId, sheet.id)}
-          className={styles.picture}
-          aria-label={`Open ${sheet.name} in the plan`}
-        >
+        <Link to={planHref} className={styles.picture} aria-label={`Open ${sheet.name} in the plan`}>
           {sheet.thumbnailUrl && <img src={sheet.thumbnailUrl} alt="" loading="lazy" />}
         </Link>
       );

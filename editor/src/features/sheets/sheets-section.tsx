@@ -14,10 +14,11 @@ interface SheetsSectionProps {
   /** As the job told them. */
   readonly initial: readonly Sheet[];
   readonly editable: boolean;
+  readonly planHref: (sheetId: string) => string;
 }
 
 /** The job's yard photos and plot plans, those on their way, and where to add more. */
-export function SheetsSection({ jobId, initial, editable }: SheetsSectionProps) {
+export function SheetsSection({ jobId, initial, editable, planHref }: SheetsSectionProps) {
   const sheets = useQuery(sheetsQuery(jobId, initial));
   const refresh = useRefreshSheets(jobId);
   const { uploads, add, cancel, retry } = useUploads(jobId, () => void refresh());
@@ -38,7 +39,13 @@ export function SheetsSection({ jobId, initial, editable }: SheetsSectionProps) 
       {!none && (
         <ul className={styles.grid}>
           {shown.map((sheet) => (
-            <SheetCard key={sheet.id} jobId={jobId} sheet={sheet} editable={editable} />
+            <SheetCard
+              key={sheet.id}
+              jobId={jobId}
+              sheet={sheet}
+              editable={editable}
+              planHref={planHref(sheet.id)}
+            />
           ))}
           {uploads.map((upload) => (
             <UploadCard

@@ -88,7 +88,9 @@ export default function CatalogueScreen() {
           {archived ? 'Items that you archive are kept here; plans keep them anyway.' : 'Try fewer letters.'}
         </Empty>
       )}
-      {entries.data && !nothing && <ItemTable entries={entries.data} label={categoryLabel(category)} />}
+      {entries.data && !nothing && (
+        <ItemTable entries={entries.data} label={categoryLabel(category)} hrefOf={to.catalogueItem} />
+      )}
     </Page>
   );
 }

@@ -85,7 +85,7 @@ export default function ClientsScreen() {
       )}
       {clients.data && !nothing && (
         <>
-          <ClientTable clients={clients.data.items} />
+          <ClientTable clients={clients.data.items} hrefOf={to.client} />
           <Pager
             page={clients.data.page}
             pageSize={clients.data.pageSize}

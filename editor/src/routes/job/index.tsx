@@ -88,7 +88,12 @@ function JobPage({ job }: { job: Job }) {
       )}
       <div className={styles.columns}>
         <div>
-          <SheetsSection jobId={job.id} initial={job.sheets} editable={editable} />
+          <SheetsSection
+            jobId={job.id}
+            initial={job.sheets}
+            editable={editable}
+            planHref={(sheetId) => to.plan(job.id, sheetId)}
+          />
           <Section
             title="Site walk"
             actions={
@@ -118,7 +123,7 @@ function JobPage({ job }: { job: Job }) {
         </div>
         <aside className={styles.aside} aria-label="Stage, client and dates">
           <StageSteps job={job} editable={editable} />
-          <JobFacts job={job} />
+          <JobFacts job={job} clientHref={to.client(job.client.id)} />
         </aside>
       </div>
       {editable && <EditJob job={job} open={editing} onOpenChange={setEditing} />}

@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useSearchParams } from 'react-router-dom';
-import { paths } from '../../app/paths';
+import { paths, to } from '../../app/paths';
 import { Button, LinkButton } from '../../components/button';
 import { PlusIcon } from '../../components/icons';
 import { Page } from '../../components/page';
@@ -61,6 +61,7 @@ export default function JobsScreen() {
           <JobTable
             jobs={jobs.data.items}
             ask={ask}
+            hrefOf={to.job}
             onSort={(sort) => setAsk(sortBy(ask, sort))}
             stale={jobs.isPlaceholderData}
           />
