@@ -1,3 +1,4 @@
+import type { CableAnswer } from '@lampwright/geometry/estimate';
 import {
   cablePoints,
   itemOf,
@@ -7,14 +8,14 @@ import {
   recordOf,
 } from '@lampwright/geometry/plan';
 import type { Answers } from './answers';
-import { cableColour, cableWeight, loadBand } from './cable-look';
+import { cableColour, cableWeight, type LoadBand, loadBand } from './cable-look';
 import type { Point } from './camera';
 import type { AreaShape } from './draw/areas';
 import type { CableStroke } from './draw/cable';
 import { type FixtureLook, fixtureLook, isFault, unwiredLook } from './fixture-look';
 import { initialOf, tagOf, windowOf } from './names';
 import { dimBlue, grey, ink, overRed } from './palette';
-import { voltsText } from './words';
+import { ampsText, voltsText } from './words';
 
 export interface SceneFixture {
   readonly id: string;
@@ -23,6 +24,8 @@ export interface SceneFixture {
   readonly initial: string;
   /** What its label says when it has one. */
   readonly text: string;
+  /** What it says while it is hovered: amps and drop as well. */
+  readonly fullText: string;
   /** Why it has a label without being hovered or chosen; null: it has none. */
   readonly standing: 'fault' | 'worst' | 'unwired' | null;
 }
@@ -32,6 +35,8 @@ export interface SceneCable extends CableStroke {
   readonly fromId: string;
   readonly toId: string;
   readonly via: readonly Point[];
+  /** What is said of it while it is hovered. */
+  readonly text: string;
 }
 
 export interface SceneNode {
@@ -39,6 +44,8 @@ export interface SceneNode {
   readonly at: Point;
   readonly kind: 'transformer' | 'feed' | 'hub' | 'splice' | 'note';
   readonly label: string;
+  /** How its load stands to its limit. */
+  readonly band: LoadBand;
 }
 
 export interface SceneMeasurement {
@@ -62,6 +69,8 @@ export const emptyScene: Scene = { fixtures: [], cables: [], nodes: [], areas: [
 export interface SceneWords {
   readonly areaText: (name: string, points: readonly PlanPoint[]) => string;
   readonly lengthText: (points: readonly PlanPoint[]) => string;
+  /** The length of a cable as the estimate counts it; empty while it has none. */
+  readonly cableLength: (cableId: string) => string;
 }
 
 /** What is known of a plan's volts: the last answer, and which fixtures no run feeds. */
@@ -97,6 +106,12 @@ export function buildScene(
           at: record.at,
           look,
           initial: initialOf(doc, record),
+          fullText:
+            reading === undefined || shown === null
+              ? look.kind === 'unwired'
+                ? `${tag} not wired yet`
+                : tag
+              : `${tag} ${shown} · ${ampsText(reading.amps)} · ${reading.dropPercent.toFixed(1)} % drop`,
           text: shown === null ? (look.kind === 'unwired' ? `${tag} not wired yet` : tag) : `${tag} ${shown}`,
           standing:
             look.kind === 'unwired'
@@ -118,6 +133,7 @@ export function buildScene(
           fromId: record.fromId,
           toId: record.toId,
           via: record.via,
+          text: cableText(words.cableLength(record.id), answers?.cables.get(record.id)),
           points,
           weight: item === undefined ? 2 : cableWeight(item.conductor),
           colour: cableColour(loadBand(answers?.cables.get(record.id)?.ampacityPercent ?? null)),
@@ -127,13 +143,28 @@ export function buildScene(
       }
       case 'transformer':
       case 'feed':
-        nodes.push({ id: record.id, at: record.at, kind: record.kind, label: tagOf(doc, record) });
+        nodes.push({
+          id: record.id,
+          at: record.at,
+          kind: record.kind,
+          label: tagOf(doc, record),
+          band: loadBand(
+            answers?.transformers.get(record.kind === 'feed' ? record.transformerId : record.id)
+              ?.loadPercent ?? null,
+          ),
+        });
         break;
       case 'junction':
-        nodes.push({ id: record.id, at: record.at, kind: record.style, label: tagOf(doc, record) });
+        nodes.push({
+          id: record.id,
+          at: record.at,
+          kind: record.style,
+          label: tagOf(doc, record),
+          band: 'calm',
+        });
         break;
       case 'note':
-        nodes.push({ id: record.id, at: record.at, kind: 'note', label: firstLine(record) });
+        nodes.push({ id: record.id, at: record.at, kind: 'note', label: firstLine(record), band: 'calm' });
         break;
       case 'area':
         areas.push({
@@ -195,6 +226,12 @@ export function labelEdge(look: FixtureLook): string {
     case 'waiting':
       return grey;
   }
+}
+
+function cableText(length: string, reading: CableAnswer | undefined): string {
+  if (reading === undefined) return length;
+  const lost = `${Math.abs(reading.dropVolts).toFixed(2)} V lost`;
+  return [length, ampsText(reading.amps), lost].filter(Boolean).join(' · ');
 }
 
 function firstLine(note: NoteRecord): string {

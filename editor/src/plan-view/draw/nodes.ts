@@ -1,4 +1,5 @@
-import { fontFamily, ink, paper } from '../palette';
+import type { LoadBand } from '../cable-look';
+import { fontFamily, ink, mix, overRed, paper } from '../palette';
 
 /** A transformer: an ink tablet with its number. A feed is the same turned over: its transformer is elsewhere. */
 export function drawTransformer(
@@ -6,11 +7,15 @@ export function drawTransformer(
   r: number,
   label: string,
   feed: boolean,
+  band: LoadBand,
 ): void {
   const half = r * 1.15;
   const wide = Math.max(half, label.length * r * 0.36 + r * 0.4);
-  rounded(ctx, -wide - 1.5, -half - 1.5, wide * 2 + 3, half * 2 + 3, 5);
-  ctx.fillStyle = feed ? ink : paper;
+  const rim = band === 'calm' ? 1.5 : 3.5;
+  rounded(ctx, -wide - rim, -half - rim, (wide + rim) * 2, (half + rim) * 2, 5);
+  // Over its limit it wears the hue of what is over; near it, a thinner part of that.
+  ctx.fillStyle =
+    band === 'over' ? overRed : band === 'near' ? mix(paper, overRed, 0.45) : feed ? ink : paper;
   ctx.fill();
   rounded(ctx, -wide, -half, wide * 2, half * 2, 4);
   ctx.fillStyle = feed ? paper : ink;

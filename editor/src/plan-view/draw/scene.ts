@@ -37,10 +37,10 @@ export function drawNodes(
     ctx.translate(p.x, p.y);
     switch (node.kind) {
       case 'transformer':
-        drawTransformer(ctx, r, node.label, false);
+        drawTransformer(ctx, r, node.label, false, node.band);
         break;
       case 'feed':
-        drawTransformer(ctx, r, node.label, true);
+        drawTransformer(ctx, r, node.label, true, node.band);
         break;
       case 'hub':
         drawHub(ctx, r);
@@ -137,6 +137,10 @@ function rankOf(fixture: SceneFixture, demand: LabelDemand, far: boolean): numbe
   }
 }
 
+function textOf(fixture: SceneFixture, demand: LabelDemand): string {
+  return demand.hoveredId === fixture.id ? fixture.fullText : fixture.text;
+}
+
 /** Draws the sparse figures beside the marks; none covers another or a mark. Returns how many were drawn. */
 export function drawLabels(
   ctx: CanvasRenderingContext2D,
@@ -161,7 +165,7 @@ export function drawLabels(
     const rank = rankOf(fixture, demand, far);
     if (rank === null) continue;
     byId.set(fixture.id, fixture);
-    wishes.push({ id: fixture.id, at, clear, size: labelSize(ctx, fixture.text), rank });
+    wishes.push({ id: fixture.id, at, clear, size: labelSize(ctx, textOf(fixture, demand)), rank });
   }
   for (const node of nodes) {
     if (node.kind === 'splice') continue;
@@ -173,7 +177,12 @@ export function drawLabels(
     const fixture = byId.get(id);
     if (fixture === undefined) continue;
     const edge = demand.hoveredId === id || demand.chosen.has(id) ? ink : grey;
-    drawLabel(ctx, box, fixture.text, labelEdge(fixture.look) === grey ? edge : labelEdge(fixture.look));
+    drawLabel(
+      ctx,
+      box,
+      textOf(fixture, demand),
+      labelEdge(fixture.look) === grey ? edge : labelEdge(fixture.look),
+    );
   }
   return placed.length;
 }

@@ -2,7 +2,13 @@ import { type Camera, markRadius, type Point, type Size, toWindow } from '../../
 import { drawArea } from '../../../plan-view/draw/areas';
 import { type CableStroke, drawCables, drawChosenCable } from '../../../plan-view/draw/cable';
 import { drawChoice } from '../../../plan-view/draw/fixture';
-import { drawFixtures, drawLabels, drawMeasurements, drawNodes } from '../../../plan-view/draw/scene';
+import {
+  drawFixtures,
+  drawLabels,
+  drawMeasurements,
+  drawNodes,
+  workingLabelAt,
+} from '../../../plan-view/draw/scene';
 import { MarkSprites } from '../../../plan-view/draw/sprites';
 import { emptyScene, type Scene, type SceneCable } from '../../../plan-view/scene';
 import type { Preview } from '../tools/tool';
@@ -135,9 +141,16 @@ export class Painter {
       return;
     }
     this.paintChoices(ctx, camera, scene);
-    if (preview !== null) {
-      drawPreview(ctx, this.state, preview, this.sprites);
-    }
+    if (preview !== null) drawPreview(ctx, this.state, preview, this.sprites);
+    else this.tellCable(ctx);
+  }
+
+  /** The figures of the cable under the pointer, at its middle. */
+  private tellCable(ctx: CanvasRenderingContext2D): void {
+    const { hoveredId, scene, camera } = this.state;
+    const cable = hoveredId === null ? undefined : scene.cables.find((c) => c.id === hoveredId);
+    if (cable === undefined || cable.text === '') return;
+    workingLabelAt(ctx, toWindow(camera, halfway(cable.points)), cable.text);
   }
 
   private paintMoving(ctx: CanvasRenderingContext2D, moving: Scene, dx: number, dy: number): void {
@@ -174,6 +187,21 @@ export class Painter {
 
 export type LayerName = 'ground' | 'cable' | 'fixtures' | 'overlay';
 export const allLayers: ReadonlySet<LayerName> = new Set(['ground', 'cable', 'fixtures', 'overlay']);
+
+/** The middle of a polyline by its length on the sheet. */
+function halfway(points: readonly Point[]): Point {
+  const lengths = points.slice(1).map((p, i) => Math.hypot(p.x - points[i]!.x, p.y - points[i]!.y));
+  let left = lengths.reduce((sum, l) => sum + l, 0) / 2;
+  for (const [i, length] of lengths.entries()) {
+    if (left <= length && length > 0) {
+      const a = points[i]!;
+      const b = points[i + 1]!;
+      return { x: a.x + ((b.x - a.x) * left) / length, y: a.y + ((b.y - a.y) * left) / length };
+    }
+    left -= length;
+  }
+  return points[0]!;
+}
 
 function movingIds(preview: Preview | null): ReadonlySet<string> | null {
   return preview?.kind === 'move' ? preview.ids : null;

@@ -117,7 +117,7 @@ function placeMark(
   ctx.translate(p.x, p.y);
   switch (mark.kind) {
     case 'transformer':
-      drawTransformer(ctx, r, 'T', false);
+      drawTransformer(ctx, r, 'T', false, 'calm');
       break;
     case 'hub':
       drawHub(ctx, r);

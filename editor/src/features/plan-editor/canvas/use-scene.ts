@@ -2,7 +2,7 @@ import { useCallback, useMemo } from 'react';
 import type { Point } from '../../../plan-view/camera';
 import { buildScene, emptyScene } from '../../../plan-view/scene';
 import { useDoc, useEstimate, useScale, useSession, useUnitSystem } from '../page/context';
-import { areaText, lengthText as lengthOf } from '../page/lengths';
+import { areaText, lengthText as lengthOf, plainLength } from '../page/lengths';
 
 /** The open sheet as drawable data; built anew only when the plan, its volts or its scale change. */
 export function useScene() {
@@ -10,6 +10,7 @@ export function useScene() {
   const sheetId = useSession((s) => s.sheetId);
   const answers = useEstimate((s) => s.answers);
   const unwired = useEstimate((s) => s.unwired);
+  const lengths = useEstimate((s) => s.lengths);
   const scale = useScale();
   const units = useUnitSystem();
   const lengthText = useCallback(
@@ -24,9 +25,13 @@ export function useScene() {
       { answers, unwired },
       {
         lengthText,
+        cableLength: (id) => {
+          const total = lengths.get(id)?.totalMeters ?? null;
+          return total === null ? '' : plainLength(total, units);
+        },
         areaText: (name, points) => [name, areaText(scale, points, units)].filter(Boolean).join(' · '),
       },
     );
-  }, [doc, sheetId, answers, unwired, scale, units, lengthText]);
+  }, [doc, sheetId, answers, unwired, lengths, scale, units, lengthText]);
   return { scene, lengthText };
 }

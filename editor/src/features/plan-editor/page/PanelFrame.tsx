@@ -8,10 +8,12 @@ interface PanelFrameProps {
   readonly title: string;
   readonly children: ReactNode;
   readonly onClose?: () => void;
+  /** The edge of the drawing that it stands at. */
+  readonly side?: 'start' | 'end';
 }
 
-/** A panel over the drawing's right edge; the drawing stays usable beside it. */
-export function PanelFrame({ title, children, onClose }: PanelFrameProps) {
+/** A panel over the drawing's edge; the drawing stays usable beside it. */
+export function PanelFrame({ title, children, onClose, side = 'end' }: PanelFrameProps) {
   const editor = useEditor();
   const id = useId();
   const heading = useRef<HTMLHeadingElement>(null);
@@ -19,7 +21,7 @@ export function PanelFrame({ title, children, onClose }: PanelFrameProps) {
     heading.current?.focus();
   }, []);
   return (
-    <section className={styles.panel} aria-labelledby={id}>
+    <section className={styles.panel} data-side={side} aria-labelledby={id}>
       <header>
         <h2 id={id} ref={heading} tabIndex={-1}>
           {title}

@@ -81,7 +81,7 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
         <Ledger />
         <Inspector entries={entries} />
       </aside>
-      <Drawers />
+      <Drawers faults={faults} />
     </div>
   );
 }
@@ -171,7 +171,7 @@ const drawers: readonly { readonly id: Exclude<Drawer, 'none'>; readonly word: s
 ];
 
 /** On a phone: what slides up over the drawing. */
-function Drawers() {
+function Drawers({ faults }: { readonly faults: Faults }) {
   const editor = useEditor();
   const drawer = useSession((s) => s.drawer);
   const chosen = useSession((s) => s.selection.size);
@@ -188,6 +188,15 @@ function Drawers() {
           {id === 'inspector' && chosen > 0 ? `${word} ${chosen}` : word}
         </button>
       ))}
+      <button
+        type="button"
+        className={styles.strong}
+        onClick={() => editor.session.setState({ panel: 'faults', drawer: 'none' })}
+      >
+        {faults.counts.fault > 0
+          ? `${faults.counts.fault} ${faults.counts.fault === 1 ? 'fault' : 'faults'}`
+          : 'No faults'}
+      </button>
     </div>
   );
 }

@@ -14,11 +14,16 @@ interface TopBarProps {
   readonly faults: Faults;
 }
 
+/** What stands in the way of moving the job on. */
+export function faultsWord({ counts: { fault, caution, advice } }: Faults): string {
+  if (fault > 0) return `${fault} ${fault === 1 ? 'fault' : 'faults'} before sharing`;
+  return caution + advice > 0 ? `No faults, ${caution + advice} to look at` : 'No faults';
+}
+
 export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {
   const editor = useEditor();
   const undoLabel = usePlan((s) => s.undoLabel);
   const redoLabel = usePlan((s) => s.redoLabel);
-  const { fault, caution, advice } = faults.counts;
   const open = (panel: 'faults' | 'history') =>
     editor.session.setState({ panel: editor.session.getState().panel === panel ? 'none' : panel });
   return (
@@ -38,7 +43,7 @@ export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {
         <span className={styles.saved}>You can look; only designers change plans.</span>
       )}
       {editor.canEdit && (
-        <>
+        <span className={styles.later}>
           <Button
             aria-disabled={undoLabel === null || undefined}
             title={undoLabel === null ? 'Nothing to undo' : `Undo: ${undoLabel}`}
@@ -53,16 +58,15 @@ export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {
           >
             Redo
           </Button>
-        </>
+        </span>
       )}
       <Button onClick={() => open('history')}>History</Button>
-      <Button kind="strong" onClick={() => open('faults')}>
-        {fault > 0
-          ? `${fault} ${fault === 1 ? 'fault' : 'faults'} before sharing`
-          : caution + advice > 0
-            ? `No faults, ${caution + advice} to look at`
-            : 'No faults'}
-      </Button>
+      <span className={styles.break} />
+      <span className={styles.faultsButton}>
+        <Button kind="strong" onClick={() => open('faults')}>
+          {faultsWord(faults)}
+        </Button>
+      </span>
     </header>
   );
 }

@@ -106,6 +106,7 @@ export class PlanEditor {
   use(tool: ToolId): void {
     if (!this.canEdit && tool !== 'select') return;
     this.tools.use(tool);
+    if (tool === 'scale') this.chooseReference();
     this.session.setState({
       message: null,
       request: null,
@@ -116,6 +117,14 @@ export class PlanEditor {
             ? 'none'
             : this.session.getState().panel,
     });
+  }
+
+  /** A photo needs a rectangle before a length says anything; a plan only takes lengths. */
+  private chooseReference(): void {
+    const sheet = recordOf(this.doc, this.session.getState().sheetId, 'sheet');
+    const hasRectangle = sheet?.references.some((r) => r.kind === 'rectangle') ?? false;
+    const reference = sheet?.view === 'photo' && !hasRectangle ? 'rectangle' : 'length';
+    this.session.setState({ choices: { ...this.session.getState().choices, reference } });
   }
 
   /** Tries an edit: commits it, or says why not; a loop or a join is asked about first. */

@@ -16,7 +16,11 @@ export function ScalePanel() {
   const sheet = useSheet();
   if (sheet === undefined) return null;
   return (
-    <PanelFrame title={`Scale of ${sheet.name || 'this sheet'}`} onClose={() => editor.use('select')}>
+    <PanelFrame
+      title={`Scale of ${sheet.name || 'this sheet'}`}
+      side="start"
+      onClose={() => editor.use('select')}
+    >
       <Verdict sheet={sheet} />
       {sheet.view === 'photo' ? <PhotoWays /> : <PlanWays sheet={sheet} />}
       <References sheet={sheet} />

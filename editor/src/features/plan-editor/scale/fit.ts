@@ -28,7 +28,7 @@ export function horizonText(scale: SolvedScale, sheet: Size, system: UnitSystem)
   const limit = trustedFrom(scale, sheet);
   if (limit === null) return `${said} No part of this photo can be trusted with lengths.`.trim();
   if (limit === 0) return said;
-  return `${said} Above ${Math.round((1 - limit) * 100)} % of the photo’s height, near the horizon, it can’t be trusted.`.trim();
+  return `${said} In the top ${Math.round(limit * 100)} % of the photo, towards the horizon, it can’t be trusted.`.trim();
 }
 
 function probe(scale: SolvedScale, sheet: Size) {
