@@ -3,8 +3,6 @@
 const tests = '\\.(spec|testkit)\\.(ts|tsx)$|(^|/)test/';
 const geometrySource = '^geometry/(src|dist)/';
 
-const pathTable = '^editor/src/app/paths\\.ts$';
-
 /** Frameworks and whatever reaches outside: geometry is plain TypeScript. */
 const frameworks =
   'node_modules/(react|react-dom|react-konva|konva|zustand|@nestjs|@radix-ui|@tanstack|express|drizzle-orm|pg|pg-boss|@aws-sdk|nodemailer|stripe)/';
@@ -43,18 +41,10 @@ module.exports = {
     {
       name: 'only-downwards-from-features',
       comment:
-        'routes → features → plan-view, components, lib: one way; features link by the table of paths.',
+        'routes → features → plan-view, components, lib: one way; routes tell features where their links lead.',
       severity: 'error',
       from: { path: '^editor/src/features/' },
-      to: { path: '^editor/src/(routes|app)/', pathNot: pathTable },
-    },
-    {
-      name: 'paths-stand-alone',
-      comment:
-        'The table of paths may be imported from anywhere above components because it imports nothing.',
-      severity: 'error',
-      from: { path: pathTable },
-      to: { path: '^editor/src/' },
+      to: { path: '^editor/src/(routes|app)/' },
     },
     {
       name: 'only-downwards-from-shared',
