@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { hashPassword } from '../src/access/password.js';
+import { type Role, roles } from '../src/access/permissions.js';
 import { type MailCatcher, startMailCatcher } from '../src/ports/mail/catcher.js';
 import { type FakeS3, startFakeS3 } from '../src/ports/storage/fake-s3.js';
 import { type Audience, hiddenElsewhere, type RouteCase, type ValidRequest } from './access/route-case.js';
@@ -25,14 +26,29 @@ async function readTables(): Promise<RouteCase[]> {
   return tables.flat();
 }
 
-const callers = ['signed out', 'no company', 'owner', 'designer', 'crew', 'other owner'] as const;
+const callers = [
+  'signed out',
+  'no company',
+  'owner',
+  'designer',
+  'crew',
+  'owner elsewhere',
+  'designer elsewhere',
+  'crew elsewhere',
+] as const;
 type Caller = (typeof callers)[number];
 
-const roles: Readonly<Record<Exclude<Audience, 'anyone' | 'signed-in'>, readonly Caller[]>> = {
+const rolesOf: Readonly<Record<Exclude<Audience, 'anyone' | 'signed-in'>, readonly Role[]>> = {
   everyone: ['owner', 'designer', 'crew'],
   planners: ['owner', 'designer'],
   owners: ['owner'],
 };
+
+/** The role of a caller, and whether it is one of our company or of another; null for no role at all. */
+function standing(caller: Caller): { role: Role; elsewhere: boolean } | null {
+  const role = roles.find((one) => caller.startsWith(one));
+  return role ? { role, elsewhere: caller.endsWith('elsewhere') } : null;
+}
 
 type Expectation = 'allowed' | 'not signed in' | 'not allowed' | 'hidden';
 
@@ -41,26 +57,19 @@ function expected(route: RouteCase, caller: Caller): Expectation {
   const { audience } = route;
   if (audience === 'anyone') return 'allowed';
   if (caller === 'signed out') return 'not signed in';
-  const outside = caller === 'other owner' || (caller === 'no company' && audience === 'signed-in');
-  if (outside && hiddenElsewhere(route)) return 'hidden';
-  if (audience === 'signed-in' || caller === 'other owner') return 'allowed';
-  return roles[audience].includes(caller) ? 'allowed' : 'not allowed';
+  const stands = standing(caller);
+  const mayUse = audience === 'signed-in' || (stands !== null && rolesOf[audience].includes(stands.role));
+  if (!mayUse) return 'not allowed';
+  const ours = stands !== null && !stands.elsewhere;
+  return !ours && hiddenElsewhere(route) ? 'hidden' : 'allowed';
 }
 
-const personOf = (world: World, caller: Caller): TestPerson | null => {
-  switch (caller) {
-    case 'signed out':
-      return null;
-    case 'no company':
-      return world.nobody;
-    case 'other owner':
-      return world.otherOwner;
-    case 'owner':
-    case 'designer':
-    case 'crew':
-      return world.members[caller];
-  }
-};
+async function personOf(world: World, caller: Caller): Promise<TestPerson | null> {
+  if (caller === 'signed out') return null;
+  const stands = standing(caller);
+  if (!stands) return world.nobody;
+  return stands.elsewhere ? world.other(stands.role) : world.members[stands.role];
+}
 
 const routeCases = await readTables();
 
@@ -101,17 +110,9 @@ describe('the access walk', () => {
   });
 
   describe.each(routeCases)('$route', (route) => {
-    /** Those who are refused leave everything as it was, so that they can share what the request is about. */
-    let untouched: Promise<{ world: World; request: ValidRequest }> | undefined;
-    const forRefused = () => {
-      untouched ??= prepare(route, null);
-      return untouched;
-    };
-
     it.each(callers)('for %s', async (caller) => {
       const expectation = expected(route, caller);
-      const { world, request } = await (expectation === 'allowed' ? prepare(route, caller) : forRefused());
-      const person = personOf(world, caller);
+      const { world, request, person } = await prepare(route, caller, expectation);
       const answer = route.endless
         ? await begin(test.url, person, addressOf(route.route, request))
         : await send(person?.agent ?? test.agent(), route.route, request);
@@ -131,12 +132,12 @@ describe('the access walk', () => {
           expect(answer.status, told).toBe(404);
           break;
       }
-      if (caller === 'no company' || caller === 'other owner') expectNothingOfOurs(route, world, answer);
+      if (caller === 'no company' || caller.endsWith('elsewhere')) expectNothingOfOurs(route, world, answer);
     });
 
     if (!route.route.startsWith('GET '))
       it('for another site’s page', async () => {
-        const { world, request } = await forRefused();
+        const { world, request } = await prepare(route, 'owner', 'not allowed');
         const { agent } = world.members.owner;
         const answer = await send(agent, route.route, request, { 'Sec-Fetch-Site': 'cross-site' });
         expect(answer.status).toBe(403);
@@ -144,10 +145,23 @@ describe('the access walk', () => {
       });
   });
 
-  async function prepare(route: RouteCase, caller: Caller | null) {
-    const world = await makeWorld(test, passwordHash);
-    const person = caller && personOf(world, caller);
-    return { world, request: (await route.request?.(world, person)) ?? {} };
+  /** Those who are refused leave everything as it was, so that they can share what their requests are about. */
+  const untouched = new Map<RouteCase, Promise<{ world: World; request: ValidRequest }>>();
+
+  async function prepare(route: RouteCase, caller: Caller, expectation: Expectation) {
+    if (expectation === 'allowed') {
+      const world = await makeWorld(test, passwordHash);
+      const person = await personOf(world, caller);
+      return { world, person, request: (await route.request?.(world, person)) ?? {} };
+    }
+    const make = async () => {
+      const world = await makeWorld(test, passwordHash);
+      return { world, request: (await route.request?.(world, null)) ?? {} };
+    };
+    const shared = untouched.get(route) ?? make();
+    untouched.set(route, shared);
+    const { world, request } = await shared;
+    return { world, request, person: await personOf(world, caller) };
   }
 });
 

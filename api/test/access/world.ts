@@ -14,6 +14,8 @@ export interface World {
   readonly companyName: string;
   readonly members: Readonly<Record<Role, TestPerson>>;
   readonly otherOwner: TestPerson;
+  /** Somebody else of that other company. */
+  other(role: Role): Promise<TestPerson>;
   readonly nobody: TestPerson;
   /** The owner of our company, to make things with. */
   readonly owner: Agent;
@@ -22,31 +24,34 @@ export interface World {
 
 /** @param passwordHash of PASSWORD: made once, since it is costly on purpose */
 export async function makeWorld(test: TestApp, passwordHash: string): Promise<World> {
+  const person = async (company: string, role: Role) => {
+    const made = await addPerson(test, company, role);
+    await test.database.executeSql('UPDATE users SET password_hash = $1 WHERE id = $2', [
+      passwordHash,
+      made.actor.userId,
+    ]);
+    return made;
+  };
   const companyName = `${MARK} company`;
   const companyId = await addCompany(test, companyName);
-  const owner = await addPerson(test, companyId, 'owner');
   const members = {
-    owner,
-    designer: await addPerson(test, companyId, 'designer'),
-    crew: await addPerson(test, companyId, 'crew'),
+    owner: await person(companyId, 'owner'),
+    designer: await person(companyId, 'designer'),
+    crew: await person(companyId, 'crew'),
   };
-  const otherOwner = await addPerson(test, await addCompany(test, 'Another company'), 'owner');
+  const otherOwner = await person(await addCompany(test, 'Another company'), 'owner');
   const gone = await addCompany(test, 'Gone');
-  const nobody = await addPerson(test, gone, 'owner');
+  const nobody = await person(gone, 'owner');
   await test.database.executeSql('DELETE FROM companies WHERE id = $1', [gone]);
-  const people = [...Object.values(members), otherOwner, nobody].map(({ actor }) => actor.userId);
-  await test.database.executeSql('UPDATE users SET password_hash = $1 WHERE id = ANY ($2)', [
-    passwordHash,
-    people,
-  ]);
   return {
     test,
     companyId,
     companyName,
     members,
     otherOwner,
+    other: async (role) => (role === 'owner' ? otherOwner : person(otherOwner.actor.companyId, role)),
     nobody,
-    owner: owner.agent,
+    owner: members.owner.agent,
     async email({ actor }) {
       const { rows } = await test.database.executeSql('SELECT email FROM users WHERE id = $1', [
         actor.userId,
@@ -55,6 +60,3 @@ export async function makeWorld(test: TestApp, passwordHash: string): Promise<Wo
     },
   };
 }
-
-/** A fresh agent, of a caller without a session. */
-export const signedOut = (world: World): Agent => world.test.agent();
