@@ -1,6 +1,8 @@
 import { mkdtemp, rm } from 'node:fs/promises';
+import type { AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { SMTPServer } from 'smtp-server';
 import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
 import { startTestApp, type TestApp } from '../../../test/harness.js';
 import { SendMail } from '../../jobs/mail.js';
@@ -10,6 +12,7 @@ import { renderLetter } from './letter.js';
 import { MailRepository } from './mail.repository.js';
 import { Mailer, type OutgoingMail } from './mailer.js';
 import { Outbox } from './outbox.js';
+import { SmtpMailer } from './smtp-mailer.js';
 
 class RecordingMailer extends Mailer {
   readonly sent: OutgoingMail[] = [];
@@ -126,7 +129,6 @@ describe('mail', () => {
     const place = await mkdtemp(join(dir, 'restart-'));
     const options = { smtpPort: 0, httpPort: 0, dir: place };
     const first = await startMailCatcher(options);
-    const { SmtpMailer } = await import('./smtp-mailer.js');
     const mailer = new SmtpMailer({ ...test.env, SMTP_URL: first.smtpUrl });
     for (const n of [1, 2])
       await mailer.send({
@@ -145,6 +147,25 @@ describe('mail', () => {
       ['Number 2 – größer', '<2@example.com>'],
       ['Number 1 – größer', '<1@example.com>'],
     ]);
+  });
+
+  it('names nobody in the error of a message that was not taken', async () => {
+    const server = new SMTPServer({
+      authOptional: true,
+      disabledCommands: ['STARTTLS'],
+      onRcptTo: ({ address }, _session, done) =>
+        done(Object.assign(new Error(`<${address}> is unknown here`), { responseCode: 550 })),
+    });
+    await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
+    const { port } = server.server.address() as AddressInfo;
+    const mail = { messageId: '<1@x>', to: 'gone@example.com', subject: 's', text: 't', html: 'h' };
+    const refused = new SmtpMailer({ ...test.env, SMTP_URL: `smtp://127.0.0.1:${port}` });
+    await expect(refused.send(mail)).rejects.toThrow(/^The mail service did not take the message \(550\)\.$/);
+    refused.close();
+    await new Promise<void>((resolve) => server.close(resolve));
+    const away = new SmtpMailer({ ...test.env, SMTP_URL: `smtp://127.0.0.1:${port}` });
+    await expect(away.send(mail)).rejects.toThrow('(ESOCKET)');
+    away.close();
   });
 
   it('can’t be made to carry somebody’s markup', () => {

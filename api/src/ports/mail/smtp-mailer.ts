@@ -2,6 +2,19 @@ import { createTransport, type Transporter } from 'nodemailer';
 import type { Env } from '../../config/env.js';
 import { Mailer, type OutgoingMail } from './mailer.js';
 
+/** What the mail service said names people; a failed job keeps its error, so only the kind of it is passed on. */
+export class MailNotTaken extends Error {
+  constructor(cause: unknown) {
+    super(`The mail service did not take the message (${kindOf(cause)}).`);
+  }
+}
+
+function kindOf(cause: unknown): string {
+  if (typeof cause !== 'object' || cause === null) return 'unknown';
+  if ('responseCode' in cause && typeof cause.responseCode === 'number') return String(cause.responseCode);
+  return 'code' in cause && typeof cause.code === 'string' ? cause.code : 'unknown';
+}
+
 /** A server that does not answer must fail the attempt well before the queue gives the job to another. */
 const PATIENCE_MS = 10_000;
 
@@ -22,16 +35,20 @@ export class SmtpMailer extends Mailer {
   }
 
   async send({ messageId, to, subject, text, html }: OutgoingMail): Promise<void> {
-    await this.transport.sendMail({
-      from: this.env.MAIL_FROM,
-      // As an object, so that nothing in an address can add another recipient.
-      to: { name: '', address: to },
-      subject,
-      text,
-      html,
-      messageId,
-      headers: { 'Auto-Submitted': 'auto-generated' },
-    });
+    try {
+      await this.transport.sendMail({
+        from: this.env.MAIL_FROM,
+        // As an object, so that nothing in an address can add another recipient.
+        to: { name: '', address: to },
+        subject,
+        text,
+        html,
+        messageId,
+        headers: { 'Auto-Submitted': 'auto-generated' },
+      });
+    } catch (error) {
+      throw new MailNotTaken(error);
+    }
   }
 
   close(): void {
