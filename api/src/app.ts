@@ -3,7 +3,7 @@ import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import cookieParser from 'cookie-parser';
 import { AppModule } from './app.module.js';
-import type { Env } from './config/env.js';
+import { type Env, isLocal } from './config/env.js';
 import { jsonBodies } from './http/bodies.js';
 import { editorFiles } from './http/editor-files.js';
 import { createLogger, NestLogger } from './http/logger.js';
@@ -27,7 +27,7 @@ export async function createApp(env: Env): Promise<NestExpressApplication> {
   app.use(securityHeaders(env));
   app.use(cookieParser());
   app.use(jsonBodies);
-  app.use(editorFiles());
+  app.use(editorFiles(isLocal(env) ? env.EDITOR_FILES : undefined));
   app.useGlobalPipes(validationPipe());
   app.useGlobalFilters(new ProblemFilter());
   app.enableShutdownHooks();

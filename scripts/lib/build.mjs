@@ -13,9 +13,13 @@ import { run } from './processes.mjs';
  * @property {string} output a file that a finished build has
  * @property {string[]} command run with npx
  * @property {string} folder where it runs
+ * @property {boolean} [onlyWhenNamed] no part of the product
+ * @property {NodeJS.ProcessEnv} [env] settings of its own
  */
 
 const everywhere = ['package-lock.json', 'tsconfig.base.json'];
+
+const editorInputs = [...everywhere, 'geometry/src', 'fonts', 'editor'];
 
 /** In the order in which they need one another. @type {Part[]} */
 export const parts = [
@@ -38,10 +42,20 @@ export const parts = [
   },
   {
     name: 'editor',
-    inputs: [...everywhere, 'geometry/src', 'fonts', 'editor'],
+    inputs: editorInputs,
     output: 'editor/dist/index.html',
     command: ['vite', 'build'],
     folder: 'editor',
+  },
+  {
+    // The same with the handle through which tests see the canvas; beside the product's own, which may be running.
+    name: 'editor-for-tests',
+    inputs: editorInputs,
+    output: 'e2e/dist/index.html',
+    command: ['vite', 'build', '--outDir', '../e2e/dist', '--emptyOutDir'],
+    folder: 'editor',
+    onlyWhenNamed: true,
+    env: { VITE_TEST_HANDLE: '1' },
   },
 ];
 
@@ -76,7 +90,7 @@ export function build({ signal, only } = {}) {
   return withLock(join(cache, 'lock'), 'building', async () => {
     const built = [];
     for (const part of parts) {
-      if (only && !only.includes(part.name)) continue;
+      if (only ? !only.includes(part.name) : part.onlyWhenNamed) continue;
       const hash = inputHash(part);
       if (isFresh(part, hash)) continue;
       await buildPart(part, signal);
@@ -94,7 +108,7 @@ async function buildPart(part, signal) {
   const wallClock = Date.now();
   rmSync(join(cache, part.name), { force: true });
   mkdirSync(cache, { recursive: true });
-  const env = { ...process.env, NODE_ENV: 'production', NO_COLOR: '1' };
+  const env = { ...process.env, NODE_ENV: 'production', NO_COLOR: '1', ...part.env };
   const [tool = '', ...args] = part.command;
   const program = inRoot('node_modules/.bin', tool);
   const result = await run(program, args, { cwd: inRoot(part.folder), env, signal });

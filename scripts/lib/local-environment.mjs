@@ -31,9 +31,10 @@ function surroundings() {
  * @param {number} local.port
  * @param {string} local.databaseUrl
  * @param {string} [local.publicUrl] where the browser goes; the API's own address by default
+ * @param {string} [local.editorFiles] another build of the editor than the product's own
  * @returns {NodeJS.ProcessEnv}
  */
-export function productEnvironment({ state, port, databaseUrl, publicUrl }) {
+export function productEnvironment({ state, port, databaseUrl, publicUrl, editorFiles }) {
   return {
     ...surroundings(),
     LAMPWRIGHT_MODE: 'local',
@@ -50,6 +51,7 @@ export function productEnvironment({ state, port, databaseUrl, publicUrl }) {
     SMTP_URL: `smtp://127.0.0.1:${state.ports.smtp}`,
     MAIL_FROM: 'Lampwright <lampwright@localhost>',
     MAIL_VIEWER_URL: `http://127.0.0.1:${state.ports.mailViewer}`,
+    ...(editorFiles === undefined ? {} : { EDITOR_FILES: editorFiles }),
   };
 }
 

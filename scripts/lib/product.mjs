@@ -22,8 +22,9 @@ const readyTimeoutMs = 60_000;
  * @param {AbortSignal} options.signal
  * @param {number} options.port of the API
  * @param {string} [options.publicUrl]
+ * @param {string} [options.editorFiles] another build of the editor than the product's own
  */
-export async function startGround({ folder, supervisor, signal, port, publicUrl }) {
+export async function startGround({ folder, supervisor, signal, port, publicUrl, editorFiles }) {
   const cluster = await openCluster(folder);
   supervisor.onStop('the database', () => cluster.stop());
   await cluster.start();
@@ -32,7 +33,7 @@ export async function startGround({ folder, supervisor, signal, port, publicUrl 
   await settleRestore(folder, cluster);
   let state = await readState(folder);
   await startFakes(folder, state, supervisor, signal);
-  const env = productEnvironment({ state, port, databaseUrl: cluster.url, publicUrl });
+  const env = productEnvironment({ state, port, databaseUrl: cluster.url, publicUrl, editorFiles });
   await runStep('Migrating the database', 'api/dist/database/migrate.js', env, signal);
   if (!state.demoLoaded) {
     say('Loading the demo company …');
@@ -82,9 +83,10 @@ async function runStep(what, script, env, signal) {
  * @param {number} options.port
  * @param {Supervisor} options.supervisor
  * @param {AbortSignal} options.signal
+ * @param {string} [options.editorFiles] another build of the editor than the product's own
  */
-export async function startProduct({ folder, port, supervisor, signal }) {
-  const { cluster, env } = await startGround({ folder, supervisor, signal, port });
+export async function startProduct({ folder, port, supervisor, signal, editorFiles }) {
+  const { cluster, env } = await startGround({ folder, supervisor, signal, port, editorFiles });
   const url = `http://127.0.0.1:${port}`;
   const service = (/** @type {string} */ script) => ({
     args: [inRoot(`api/dist/${script}.js`)],

@@ -76,9 +76,15 @@ async function generated({ signal }) {
 }
 
 /** @param {TestContext} context */
-async function buildAll({ signal }) {
+const buildAll = (context) => buildSome(context);
+
+/**
+ * @param {TestContext} context
+ * @param {readonly string[]} [only]
+ */
+async function buildSome({ signal }, only) {
   try {
-    const built = await build({ signal });
+    const built = await build(only ? { signal, only } : { signal });
     say(built.length === 0 ? 'Already built.' : `Built ${built.join(', ')}.`);
     return oneOf(true);
   } catch (error) {
@@ -129,7 +135,7 @@ const api = async (context) => vitest('api', context, { TEST_DATABASE_URL: await
 
 /** Against the built product over a data folder of its own. @param {TestContext} context */
 async function e2e(context) {
-  if ((await buildAll(context)).failed > 0) {
+  if ((await buildSome(context, ['geometry', 'api', 'editor-for-tests'])).failed > 0) {
     warn('There is nothing to test end to end without a build.');
     return oneOf(false);
   }
@@ -141,7 +147,8 @@ async function e2e(context) {
   try {
     claimDataFolder(folder, supervisor, 'npm test');
     const port = await freePort();
-    const { url } = await startProduct({ folder, port, supervisor, signal: context.signal });
+    const editorFiles = inRoot('e2e/dist');
+    const { url } = await startProduct({ folder, port, supervisor, signal: context.signal, editorFiles });
     const file = join(context.scratch, 'e2e.json');
     const more = { LAMPWRIGHT_URL: url, PLAYWRIGHT_JSON_OUTPUT_FILE: file };
     const args = ['test', '-c', 'e2e/playwright.config.ts'];

@@ -29,6 +29,8 @@ const envSchema = z.discriminatedUnion('LAMPWRIGHT_MODE', [
     ...common,
     /** The local mail catcher, shown at /dev/mail. */
     MAIL_VIEWER_URL: z.url().optional(),
+    /** The folder of another build of the editor; tests serve one of their own. */
+    EDITOR_FILES: text.optional(),
   }),
   z.object({
     LAMPWRIGHT_MODE: z.literal('production'),

@@ -2,23 +2,23 @@ import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import express, { type RequestHandler, Router } from 'express';
 
-const EDITOR = fileURLToPath(new URL('../../../editor/dist', import.meta.url));
+const OWN = fileURLToPath(new URL('../../../editor/dist', import.meta.url));
 
 /** Serves the built editor: hashed assets for good, the page itself asked for anew each time. */
-export function editorFiles(): RequestHandler {
+export function editorFiles(folder = OWN): RequestHandler {
   const router = Router();
   router.use(
     '/assets',
-    express.static(`${EDITOR}/assets`, { immutable: true, maxAge: '365d', fallthrough: false }),
+    express.static(`${folder}/assets`, { immutable: true, maxAge: '365d', fallthrough: false }),
   );
-  router.use(express.static(EDITOR, { index: false, maxAge: 0 }));
+  router.use(express.static(folder, { index: false, maxAge: 0 }));
   router.use((request, response, next) => {
     const isPage =
       (request.method === 'GET' || request.method === 'HEAD') &&
       !/^\/(api|dev)(\/|$)/.test(request.path) &&
-      existsSync(`${EDITOR}/index.html`);
+      existsSync(`${folder}/index.html`);
     if (!isPage) return next();
-    response.set('Cache-Control', 'no-cache').sendFile(`${EDITOR}/index.html`);
+    response.set('Cache-Control', 'no-cache').sendFile(`${folder}/index.html`);
   });
   return router;
 }
