@@ -18,7 +18,7 @@ export const paths = {
   newCatalogueItem: '/catalogue/new/:category',
   catalogueItem: '/catalogue/items/:itemId',
   company: '/company',
-  people: '/people',
+  people: '/company/people',
   account: '/account',
 } as const;
 

@@ -60,7 +60,7 @@ export function Choice({ label, hint, options, value, onChange, error, disabled 
   const id = useId();
   return (
     <fieldset className={styles.field} aria-describedby={hint ? `${id}-hint` : undefined} disabled={disabled}>
-      <legend className={styles.label}>{label}</legend>
+      <legend className={styles.choiceLegend}>{label}</legend>
       {hint && (
         <span id={`${id}-hint`} className={styles.hint}>
           {hint}

@@ -20,16 +20,14 @@ export function JobFacts({ job, clientHref }: { job: Job; clientHref: string }) 
       <div>
         <dt>Property</dt>
         <dd>
-          <span>{job.property.name}</span>
-          {job.property.address !== '' && job.property.address !== job.property.name && (
-            <span>{job.property.address}</span>
-          )}
+          {!job.property.address.startsWith(job.property.name) && <span>{job.property.name}</span>}
+          {job.property.address !== '' && <span>{job.property.address}</span>}
         </dd>
       </div>
       {job.property.accessNotes !== '' && (
         <div>
           <dt>Getting in</dt>
-          <dd className={styles.prose}>{job.property.accessNotes}</dd>
+          <dd className={styles.keepLines}>{job.property.accessNotes}</dd>
         </div>
       )}
       <div>

@@ -99,7 +99,6 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
               hint="At the outlet, with something drawing on it."
               unit="V"
               placeholder={lineVolts}
-              optional
             />
             <NumberField
               control={control}
@@ -107,7 +106,6 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
               label="Rating of its circuit"
               hint="As the breaker says."
               unit="A"
-              optional
             />
           </FieldRow>
           <TextField
@@ -116,14 +114,12 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
             label="Outlet"
             hint="Where it is, and whether it has an in-use cover."
             maxLength={400}
-            optional
           />
           <TextField
             control={control}
             name="otherLoadsOnCircuit"
             label="What else is on the circuit"
             maxLength={400}
-            optional
           />
           <ChoiceField
             control={control}
@@ -140,7 +136,6 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
             label="Transformer"
             hint="Rating, taps, state."
             maxLength={400}
-            optional
           />
           <TextField
             control={control}
@@ -148,7 +143,6 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
             label="Cable"
             hint="Gauge as printed, state of the splices."
             maxLength={400}
-            optional
           />
         </FieldGroup>
 
@@ -160,7 +154,7 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
             <div key={name} style={{ display: 'grid', gap: 10 }}>
               <ChoiceField control={control} name={`${name}.present`} label={`${label}?`} options={answers} />
               {form.watch(`${name}.present`) === 'yes' && (
-                <TextField control={control} name={`${name}.note`} label={note} maxLength={400} optional />
+                <TextField control={control} name={`${name}.note`} label={note} maxLength={400} />
               )}
             </div>
           ))}
@@ -173,16 +167,14 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
             label="Association rules"
             hint="Hours, brightness, what may be seen from the street."
             rows={2}
-            optional
           />
-          <AreaField control={control} name="permits" label="Permits" rows={2} optional />
+          <AreaField control={control} name="permits" label="Permits" rows={2} />
         </FieldGroup>
         <AreaField
           control={control}
           name="notes"
           label="Anything else"
           hint="What the client wants lit; trees, steps, slopes."
-          optional
         />
       </Form>
     </div>

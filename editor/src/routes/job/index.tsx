@@ -87,13 +87,15 @@ function JobPage({ job }: { job: Job }) {
         </div>
       )}
       <div className={styles.columns}>
-        <div>
+        <div className={styles.sheets}>
           <SheetsSection
             jobId={job.id}
             initial={job.sheets}
             editable={editable}
             planHref={(sheetId) => to.plan(job.id, sheetId)}
           />
+        </div>
+        <div className={styles.rest}>
           <Section
             title="Site walk"
             actions={

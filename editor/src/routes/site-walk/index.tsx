@@ -16,7 +16,7 @@ export default function SiteWalkScreen() {
     <Page
       title="Site walk"
       tabTitle={job.data ? `Site walk · ${job.data.name}` : 'Site walk'}
-      lede="Kept in this browser as you type, and sent when you save."
+      lede="Leave open what nobody has looked at yet. What you type is kept in this browser until you save it."
       back={back}
       narrow
     >
