@@ -112,8 +112,12 @@ export function workingLabelAt(ctx: CanvasRenderingContext2D, at: Point, text: s
 export interface LabelDemand {
   readonly hoveredId: string | null;
   readonly chosen: ReadonlySet<string>;
+  /** A figure that stands beside a place rather than a mark: that of the hovered cable. */
+  readonly aside: { readonly at: Point; readonly text: string } | null;
 }
 
+/** No record's id is empty. */
+const ASIDE = '';
 const RANK_HOVERED = 5;
 const RANK_CHOSEN = 4;
 const RANK_FAULT = 3;
@@ -172,8 +176,19 @@ export function drawLabels(
     const mark = around(toWindow(camera, node.at), r * 1.3);
     if (overlap(mark, view)) marks.push(mark);
   }
+  if (demand.aside !== null) {
+    const { at, text } = demand.aside;
+    wishes.push({
+      id: ASIDE,
+      at: toWindow(camera, at),
+      clear: 4,
+      size: labelSize(ctx, text),
+      rank: RANK_HOVERED,
+    });
+  }
   const placed = placeLabels(wishes, marks, window);
   for (const { id, box } of placed) {
+    if (id === ASIDE && demand.aside !== null) drawWorkingLabel(ctx, box, demand.aside.text);
     const fixture = byId.get(id);
     if (fixture === undefined) continue;
     const edge = demand.hoveredId === id || demand.chosen.has(id) ? ink : grey;

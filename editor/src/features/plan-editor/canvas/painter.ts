@@ -2,13 +2,7 @@ import { type Camera, markRadius, type Point, type Size, toWindow } from '../../
 import { drawArea } from '../../../plan-view/draw/areas';
 import { type CableStroke, drawCables, drawChosenCable } from '../../../plan-view/draw/cable';
 import { drawChoice } from '../../../plan-view/draw/fixture';
-import {
-  drawFixtures,
-  drawLabels,
-  drawMeasurements,
-  drawNodes,
-  workingLabelAt,
-} from '../../../plan-view/draw/scene';
+import { drawFixtures, drawLabels, drawMeasurements, drawNodes } from '../../../plan-view/draw/scene';
 import { MarkSprites } from '../../../plan-view/draw/sprites';
 import { emptyScene, type Scene, type SceneCable } from '../../../plan-view/scene';
 import type { Preview } from '../tools/tool';
@@ -86,6 +80,7 @@ export class Painter {
     if (state.scene !== before.scene || state.selection !== before.selection || movingBefore !== movingNow)
       for (const name of ['ground', 'cable', 'fixtures', 'overlay'] as const) dirty.add(name);
     if (state.hoveredId !== before.hoveredId || state.stale !== before.stale) {
+      dirty.add('cable');
       dirty.add('fixtures');
       dirty.add('overlay');
     }
@@ -130,7 +125,11 @@ export class Painter {
     drawNodes(ctx, camera, size, scene.nodes);
     drawFixtures(ctx, camera, size, scene.fixtures, this.sprites);
     ctx.globalAlpha = stale ? STALE_ALPHA : 1;
-    drawLabels(ctx, camera, size, scene.fixtures, scene.nodes, { hoveredId, chosen: selection });
+    drawLabels(ctx, camera, size, scene.fixtures, scene.nodes, {
+      hoveredId,
+      chosen: selection,
+      aside: this.hoveredCable(scene),
+    });
     ctx.globalAlpha = 1;
   }
 
@@ -142,15 +141,14 @@ export class Painter {
     }
     this.paintChoices(ctx, camera, scene);
     if (preview !== null) drawPreview(ctx, this.state, preview, this.sprites);
-    else this.tellCable(ctx);
   }
 
   /** The figures of the cable under the pointer, at its middle. */
-  private tellCable(ctx: CanvasRenderingContext2D): void {
-    const { hoveredId, scene, camera } = this.state;
-    const cable = hoveredId === null ? undefined : scene.cables.find((c) => c.id === hoveredId);
-    if (cable === undefined || cable.text === '') return;
-    workingLabelAt(ctx, toWindow(camera, halfway(cable.points)), cable.text);
+  private hoveredCable(scene: Scene): { at: Point; text: string } | null {
+    const { hoveredId, preview } = this.state;
+    if (hoveredId === null || preview !== null) return null;
+    const cable = scene.cables.find((c) => c.id === hoveredId);
+    return cable === undefined || cable.text === '' ? null : { at: halfway(cable.points), text: cable.text };
   }
 
   private paintMoving(ctx: CanvasRenderingContext2D, moving: Scene, dx: number, dy: number): void {

@@ -88,7 +88,9 @@ export function createPathTool(ctx: ToolContext, rules: PathRules): Tool {
           return true;
         }
         case 'double':
-          if (points.length > 0) end();
+          // The second click of a double click on the first corner has begun another polygon: it meant none.
+          if (points.length === 1) set([]);
+          else if (points.length > 0) end();
           return true;
         case 'key':
           if (event.key === 'Enter' && points.length > 0) {
