@@ -9,7 +9,7 @@ import type { SolvedRun } from './circuit.js';
 import { conductorAmpacity } from './conductors.js';
 import { UNREACHED } from './network.js';
 import { percentOf } from './percent.js';
-import { farthestShort } from './short.js';
+import { weakShort } from './short.js';
 import { aimOf, stateOf } from './state.js';
 import { TerminalTotals } from './terminals.js';
 import { collectWarnings } from './warnings.js';
@@ -42,7 +42,7 @@ export function buildAnswer(
     totals.add(run, amps, terminalVolts * amps, cableLossWatts + ofRun.leadLossWatts);
   }
   const answer = { fixtures, cables, runs, ...totals.answers() };
-  const shorts = solved.map((one) => farthestShort(one, request));
+  const shorts = solved.map((one) => weakShort(one, request));
   return { ...answer, warnings: collectWarnings(request, answer, totals, unreached, shorts) };
 }
 

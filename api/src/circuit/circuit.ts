@@ -38,7 +38,8 @@ export class RunCircuit {
     const network = buildNetwork(run, temperatureC);
     const { nodeCount, edgeLow, edgeHigh, edgeSiemens } = network;
     this.network = network;
-    this.nodeOfFixture = Int32Array.from(run.fixtures, ({ at }) => network.nodeOf.get(at) ?? UNREACHED);
+    this.nodeOfFixture = new Int32Array(run.fixtures.length);
+    for (let i = 0; i < run.fixtures.length; i++) this.nodeOfFixture[i] = network.nodeOf(run.fixtures[i]!.at);
     this.loads = buildLoads(run, this.nodeOfFixture, open, temperatureC);
     const plan = planElimination(nodeCount, edgeLow, edgeHigh);
     this.factor = new NetworkFactor(nodeCount, edgeLow, edgeHigh, edgeSiemens, plan);

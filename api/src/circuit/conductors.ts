@@ -1,4 +1,4 @@
-import type { Conductor } from '@lampwright/geometry/estimate';
+import { AWG_GAUGES, type Conductor } from '@lampwright/geometry/estimate';
 import {
   type Amperes,
   amperes,
@@ -29,12 +29,17 @@ function awgDiameterMm(gauge: number): number {
   return 0.127 * 92 ** ((36 - gauge) / 39);
 }
 
+function awgOhmsPerMeter(gauge: number): number {
+  const area = (Math.PI / 4) * awgDiameterMm(gauge) ** 2;
+  return (COPPER_OHM_SQUARE_MM_PER_METER / area) * STRAND_LAY;
+}
+
+/** Worked out once: thousands of cables share half a dozen gauges. */
+const AWG_OHMS_PER_METER = new Map(AWG_GAUGES.map((gauge) => [gauge, awgOhmsPerMeter(gauge)]));
+
 /** Ohms per metre of one conductor at 20 °C. */
 function ohmsPerMeterAt20(conductor: Conductor): number {
-  if ('awg' in conductor) {
-    const area = (Math.PI / 4) * awgDiameterMm(conductor.awg) ** 2;
-    return (COPPER_OHM_SQUARE_MM_PER_METER / area) * STRAND_LAY;
-  }
+  if ('awg' in conductor) return AWG_OHMS_PER_METER.get(conductor.awg) ?? awgOhmsPerMeter(conductor.awg);
   if ('mm2' in conductor) return CLASS_5_OHMS_PER_KM[conductor.mm2] / 1000;
   return conductor.ohmsPerKm / 1000;
 }

@@ -61,30 +61,36 @@ export function buildLoads(
   open: Volts,
   temperatureC: number,
 ): LoadTable {
-  const rows: number[] = [];
-  run.fixtures.forEach(({ load }, index) => {
+  const { fixtures } = run;
+  const fixture = new Int32Array(fixtures.length);
+  let count = 0;
+  for (let index = 0; index < fixtures.length; index++) {
+    const { load } = fixtures[index]!;
     const draws = load.kind !== 'off' && !(load.kind === 'current' && load.amps === 0);
-    if (draws && nodeOfFixture[index] !== UNREACHED) rows.push(index);
-  });
-  const count = rows.length;
-  const column = () => new Float64Array(count);
+    if (draws && nodeOfFixture[index] !== UNREACHED) fixture[count++] = index;
+  }
   const table: LoadTable = {
     count,
-    fixture: Int32Array.from(rows),
-    node: Int32Array.from(rows, (index) => nodeOfFixture[index]!),
-    quantity: Float64Array.from(rows, (index) => run.fixtures[index]!.quantity),
+    fixture: fixture.subarray(0, count),
+    node: new Int32Array(count),
+    quantity: new Float64Array(count),
     kind: new Uint8Array(count),
-    lead: Float64Array.from(rows, (index) => leadOhms(run.fixtures[index]!, temperatureC)),
-    size: column(),
-    knee: column(),
-    siemens: column(),
-    volts: column(),
-    amps: column(),
-    slope: column(),
+    lead: new Float64Array(count),
+    size: new Float64Array(count),
+    knee: new Float64Array(count),
+    siemens: new Float64Array(count),
+    volts: new Float64Array(count),
+    amps: new Float64Array(count),
+    slope: new Float64Array(count),
   };
-  rows.forEach((index, row) => {
-    describeLoad(table, row, run.fixtures[index]!, open);
-  });
+  for (let row = 0; row < count; row++) {
+    const index = fixture[row]!;
+    const one = fixtures[index]!;
+    table.node[row] = nodeOfFixture[index]!;
+    table.quantity[row] = one.quantity;
+    table.lead[row] = leadOhms(one, temperatureC);
+    describeLoad(table, row, one, open);
+  }
   return table;
 }
 

@@ -13,8 +13,10 @@ export const UNREACHED = -2;
  */
 export interface Network {
   readonly nodeCount: number;
-  /** SOURCE, UNREACHED or a node number; undefined for a name that no cable knows. */
-  readonly nodeOf: ReadonlyMap<string, number>;
+  /** SOURCE, UNREACHED (also for a name that no cable knows) or a node number. */
+  nodeOf(name: string): number;
+  /** The name of a node number. */
+  nameOf(node: number): string;
   readonly cableFrom: Int32Array;
   readonly cableTo: Int32Array;
   /** Siemens of each cable's loop, in the order of the run's cables. */
@@ -24,6 +26,8 @@ export interface Network {
   readonly edgeHigh: Int32Array;
   readonly edgeSiemens: Float64Array;
   readonly toSource: Float64Array;
+  /** Ohms from each node back to the source along one path: an upper bound of what all paths together have. */
+  readonly pathOhms: Float64Array;
 }
 
 export function buildNetwork(run: NormalizedRun, temperatureC: number): Network {
@@ -48,8 +52,7 @@ export function buildNetwork(run: NormalizedRun, temperatureC: number): Network 
       1 / loopOhms(cable.conductor, meters(cable.lengthMeters), ohms(cable.extraOhms), temperature);
   }
   const incidence = incidentCables(numberOf.size, from, to);
-  const { numbering, reached } = numberOutward(numberOf.size, from, to, incidence);
-  for (const [name, node] of numberOf) numberOf.set(name, numbering[node]!);
+  const { numbering, reached, pathOhms } = numberOutward(numberOf.size, from, to, siemens, incidence);
   const edges = mergeEdges(reached, from, to, siemens, numbering, incidence);
   for (let k = 0; k < count; k++) {
     from[k] = numbering[from[k]!]!;
@@ -57,7 +60,9 @@ export function buildNetwork(run: NormalizedRun, temperatureC: number): Network 
   }
   return {
     nodeCount: reached.length - 1,
-    nodeOf: numberOf,
+    nodeOf: (name) => numbering[numberOf.get(name) ?? -1] ?? UNREACHED,
+    nameOf: (node) => [...numberOf.keys()][reached[node + 1]!]!,
+    pathOhms,
     cableFrom: from,
     cableTo: to,
     cableSiemens: siemens,
@@ -88,9 +93,16 @@ function incidentCables(nodes: number, from: Int32Array, to: Int32Array): Incide
 }
 
 /** `reached` lists nodes in the order of the walk, the source (node 0) first. */
-function numberOutward(nodes: number, from: Int32Array, to: Int32Array, { start, cable }: Incidence) {
+function numberOutward(
+  nodes: number,
+  from: Int32Array,
+  to: Int32Array,
+  siemens: Float64Array,
+  { start, cable }: Incidence,
+) {
   const numbering = new Int32Array(nodes).fill(UNREACHED);
   const walk = new Int32Array(nodes);
+  const pathOhms = new Float64Array(nodes);
   let length = 1;
   numbering[0] = SOURCE;
   for (let head = 0; head < length; head++) {
@@ -100,10 +112,11 @@ function numberOutward(nodes: number, from: Int32Array, to: Int32Array, { start,
       const other = from[k]! === node ? to[k]! : from[k]!;
       if (numbering[other]! !== UNREACHED) continue;
       numbering[other] = length - 1;
+      pathOhms[length - 1] = (head === 0 ? 0 : pathOhms[head - 1]!) + 1 / siemens[k]!;
       walk[length++] = other;
     }
   }
-  return { numbering, reached: walk.subarray(0, length) };
+  return { numbering, reached: walk.subarray(0, length), pathOhms: pathOhms.subarray(0, length - 1) };
 }
 
 function mergeEdges(

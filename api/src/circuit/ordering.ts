@@ -55,10 +55,24 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
   let stamp = 0;
   let multiplications = 0;
   let merged = 0;
+  /** Takes eliminated nodes out of a list and marks the others with the stamp. */
+  const clean = (list: number[]): void => {
+    let kept = 0;
+    for (let i = 0; i < list.length; i++) {
+      const node = list[i]!;
+      if (position[node] !== -1) continue;
+      mark[node] = stamp;
+      list[kept++] = node;
+    }
+    list.length = kept;
+  };
   for (let p = 0; p < nodeCount; p++) {
     const node = queue.takeLeast();
     position[node] = p;
-    const touched = neighbours[node]!.filter((other) => position[other] === -1);
+    // The list is not needed as one of neighbours any more: it becomes the node's column.
+    const touched = neighbours[node]!;
+    stamp++;
+    clean(touched);
     columns.push(touched);
     const allJoined = touched.length === nodeCount - p - 1;
     multiplications += touched.length ** 2 * (allJoined ? touched.length / 3 : 1);
@@ -67,25 +81,23 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
       finishClique(touched, p + 1, position, columns);
       break;
     }
-    neighbours[node] = [];
     if (touched.length === 1) {
       // The dead entry stays in the neighbour's list; lists are cleaned when they are next merged or read.
       const only = touched[0]!;
       queue.move(only, queue.degree[only]! - 1);
       continue;
     }
-    for (const one of touched) {
-      stamp++;
+    for (let t = 0; t < touched.length; t++) {
+      const one = touched[t]!;
       const list = neighbours[one]!;
       merged += list.length + touched.length;
-      let kept = 0;
-      for (const other of list) {
-        if (position[other] !== -1) continue;
-        mark[other] = stamp;
-        list[kept++] = other;
+      stamp++;
+      clean(list);
+      mark[one] = stamp;
+      for (let i = 0; i < touched.length; i++) {
+        const other = touched[i]!;
+        if (mark[other] !== stamp) list.push(other);
       }
-      list.length = kept;
-      for (const other of touched) if (other !== one && mark[other] !== stamp) list.push(other);
       queue.move(one, list.length);
     }
   }
@@ -161,6 +173,7 @@ class DegreeQueue {
   }
 
   move(node: number, degree: number): void {
+    if (degree === this.degree[node]) return;
     this.unlink(node);
     this.degree[node] = degree;
     this.link(node);

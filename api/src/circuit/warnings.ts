@@ -10,13 +10,11 @@ import type {
   WarningSubject,
 } from '@lampwright/geometry/estimate';
 import { percentOf } from './percent.js';
-import type { FarthestShort } from './short.js';
+import type { WeakShort } from './short.js';
 import type { TerminalTotals } from './terminals.js';
 
 /** What a continuous load should stay below, by common practice (rating at 125 % of the load). */
 const TARGET_PERCENT = 80;
-/** A short must draw this many times the common's limit for its breaker to trip reliably. */
-const TRIPPING_FACTOR = 1.5;
 /** Loads that meet a limit exactly must not warn for the last bit of a sum. */
 const ROUNDING = 1 + 1e-9;
 
@@ -39,7 +37,7 @@ export function collectWarnings(
   figures: Figures,
   totals: TerminalTotals,
   unreached: readonly string[],
-  shorts: readonly (FarthestShort | null)[],
+  shorts: readonly (WeakShort | null)[],
 ): EstimateWarning[] {
   const warnings: EstimateWarning[] = [];
   const warn = (code: WarningCode, subject: WarningSubject, message: string) =>
@@ -60,7 +58,7 @@ export function collectWarnings(
   }
   request.runs.forEach(({ id }, index) => {
     const short = shorts[index];
-    if (!short || short.amps >= TRIPPING_FACTOR * short.limitAmps) return;
+    if (!short) return;
     const message =
       `A dead short at ${short.node}, the far end of run ${id}, would draw only ${amps(short.amps)}; the breaker of ` +
       `common ${short.commonId} (${amps(short.limitAmps)}) may not trip.`;
