@@ -84,6 +84,7 @@ export class Painter {
       dirty.add('fixtures');
       dirty.add('overlay');
     }
+    if (isBusy(state.preview) !== isBusy(before.preview)) dirty.add('fixtures');
     if (state.preview !== before.preview || state.lengthText !== before.lengthText) dirty.add('overlay');
     return dirty;
   }
@@ -126,7 +127,8 @@ export class Painter {
     drawFixtures(ctx, camera, size, scene.fixtures, this.sprites);
     ctx.globalAlpha = stale ? STALE_ALPHA : 1;
     drawLabels(ctx, camera, size, scene.fixtures, scene.nodes, {
-      hoveredId,
+      // The figures of the hand at work are what counts while it works.
+      hoveredId: isBusy(this.state.preview) ? null : hoveredId,
       chosen: selection,
       aside: this.hoveredCable(scene),
     });
@@ -199,6 +201,10 @@ function halfway(points: readonly Point[]): Point {
     left -= length;
   }
   return points[0]!;
+}
+
+function isBusy(preview: Preview | null): boolean {
+  return preview !== null && preview.kind !== 'place';
 }
 
 function movingIds(preview: Preview | null): ReadonlySet<string> | null {

@@ -7,6 +7,9 @@ import { ink, lamp, paper } from '../../../plan-view/palette';
 import type { PlaceMark, Preview } from '../tools/tool';
 import type { PaintState } from './painter';
 
+/** A segment shorter than this, in window pixels, is only just begun: its length would cover it. */
+const SHORTEST_TOLD = 24;
+
 /** Shows what the tool at work is about to do. */
 export function drawPreview(
   ctx: CanvasRenderingContext2D,
@@ -96,10 +99,11 @@ function segmentLabel(ctx: CanvasRenderingContext2D, state: PaintState, points: 
   const a = points.at(-2);
   const b = points.at(-1);
   if (a === undefined || b === undefined) return;
-  const text = state.lengthText([a, b]);
-  if (text === '') return;
   const p = toWindow(state.camera, a);
   const q = toWindow(state.camera, b);
+  if (Math.hypot(p.x - q.x, p.y - q.y) < SHORTEST_TOLD) return;
+  const text = state.lengthText([a, b]);
+  if (text === '') return;
   workingLabelAt(ctx, { x: (p.x + q.x) / 2, y: (p.y + q.y) / 2 }, text);
 }
 

@@ -28,6 +28,7 @@ export function CableSection({ cables, entries }: Props) {
   const slackFrom = common(cables, (c) => c.slackFromMeters);
   const slackTo = common(cables, (c) => c.slackToMeters);
   const rise = common(cables, (c) => c.riseMeters);
+  const usual = useUsualSlack(one);
   const measured = common(cables, (c) => c.measuredMeters);
   return (
     <>
@@ -55,7 +56,6 @@ export function CableSection({ cables, entries }: Props) {
         empty="null"
         placeholder="as drawn"
         disabled={locked}
-        hint="On site, in place of the drawn length."
         commit={(measuredMeters) =>
           editor.edit('Measured length', (d) => setFields(d, ids, 'cable', { measuredMeters }))
         }
@@ -65,9 +65,8 @@ export function CableSection({ cables, entries }: Props) {
         value={slackFrom ?? null}
         mixed={slackFrom === undefined}
         empty="null"
-        placeholder={one === null ? 'as the plan' : undefined}
+        placeholder={usual.from}
         disabled={locked}
-        hint={slackFrom === null ? <DefaultSlack cables={cables} end="from" /> : undefined}
         commit={(slackFromMeters) =>
           editor.edit('Change slack', (d) => setFields(d, ids, 'cable', { slackFromMeters }))
         }
@@ -78,7 +77,7 @@ export function CableSection({ cables, entries }: Props) {
         mixed={slackTo === undefined}
         empty="null"
         disabled={locked}
-        hint={slackTo === null ? <DefaultSlack cables={cables} end="to" /> : undefined}
+        placeholder={usual.to}
         commit={(slackToMeters) =>
           editor.edit('Change slack', (d) => setFields(d, ids, 'cable', { slackToMeters }))
         }
@@ -88,7 +87,6 @@ export function CableSection({ cables, entries }: Props) {
         value={rise ?? null}
         mixed={rise === undefined}
         disabled={locked}
-        hint="Up a wall or tree, or down into the trench."
         commit={(riseMeters) => {
           if (riseMeters !== null)
             editor.edit('Change rise', (d) => setFields(d, ids, 'cable', { riseMeters }));
@@ -101,7 +99,6 @@ export function CableSection({ cables, entries }: Props) {
         placeholder="several"
         inputMode="decimal"
         disabled={locked}
-        hint="Resistance of splices and terminals on it."
         commit={(text) => {
           const extraOhms = Number(text.trim().replace(',', '.'));
           if (!Number.isFinite(extraOhms) || extraOhms < 0 || extraOhms > 1000) return 'Ohms from 0 to 1000.';
@@ -113,20 +110,15 @@ export function CableSection({ cables, entries }: Props) {
   );
 }
 
-function DefaultSlack({
-  cables,
-  end,
-}: {
-  readonly cables: readonly CableRecord[];
-  readonly end: 'from' | 'to';
-}) {
+/** What the plan's settings leave over at that end, shown where the cable says nothing of its own. */
+function useUsualSlack(cable: CableRecord | null): { readonly from: string; readonly to: string } {
   const system = useUnitSystem();
-  const lengths = useEstimate((s) => s.lengths);
-  const first = lengths.get(cables[0]?.id ?? '');
-  if (first === undefined) return null;
-  return (
-    <>{plainLength(end === 'from' ? first.slackFromMeters : first.slackToMeters, system)}, as the plan says</>
-  );
+  const length = useEstimate((s) => (cable === null ? undefined : s.lengths.get(cable.id)));
+  if (length === undefined) return { from: 'as the plan', to: 'as the plan' };
+  return {
+    from: plainLength(length.slackFromMeters, system),
+    to: plainLength(length.slackToMeters, system),
+  };
 }
 
 /** What the estimate counts, part by part, and what runs through it. */

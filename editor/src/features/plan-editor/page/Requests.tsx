@@ -25,7 +25,16 @@ export function Requests() {
   if (request === null) return null;
   const done = () => editor.session.setState({ request: null });
   return (
-    <div className={styles.request}>
+    // biome-ignore lint/a11y/noStaticElementInteractions: Esc leaves what is asked from any of its fields.
+    <div
+      className={styles.request}
+      onKeyDown={(event) => {
+        if (event.key !== 'Escape') return;
+        event.preventDefault();
+        event.stopPropagation();
+        done();
+      }}
+    >
       <Ask key={keyOf(request)} request={request} done={done} />
     </div>
   );
