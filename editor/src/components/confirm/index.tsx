@@ -29,7 +29,7 @@ export function Confirm({
 }: ConfirmProps) {
   return (
     <AlertDialog.Root open={open} onOpenChange={onOpenChange}>
-      <AlertDialog.Content maxWidth="460px" className={styles.content}>
+      <AlertDialog.Content className={styles.content}>
         <AlertDialog.Title className={styles.title}>{title}</AlertDialog.Title>
         <AlertDialog.Description className={styles.text}>{children}</AlertDialog.Description>
         {error !== null && error !== undefined && <Problem error={error} />}

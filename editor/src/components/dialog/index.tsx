@@ -18,8 +18,8 @@ export function Dialog({ open, onOpenChange, title, lede, wide = false, children
   return (
     <RadixDialog.Root open={open} onOpenChange={onOpenChange}>
       <RadixDialog.Content
-        maxWidth={wide ? '860px' : '520px'}
         className={styles.content}
+        data-wide={wide ? '' : undefined}
         aria-describedby={lede ? undefined : ''}
       >
         <div className={styles.head}>

@@ -38,6 +38,7 @@ export function UploadCard({ upload, onCancel, onRetry }: UploadCardProps) {
             </div>
           )}
           <span role={step.kind === 'failed' ? 'alert' : undefined}>{wordsFor(step)}</span>
+          {step.kind === 'failed' && step.canRetry && <Button onClick={onRetry}>Try again</Button>}
         </div>
       </div>
       <div className={styles.foot}>
@@ -45,13 +46,8 @@ export function UploadCard({ upload, onCancel, onRetry }: UploadCardProps) {
           <div className={styles.name}>{upload.file.name}</div>
           <div className={styles.kind}>{(upload.file.size / 1024 / 1024).toFixed(1)} MB</div>
         </div>
-        {step.kind === 'failed' && (
-          <Button kind="bare" onClick={onRetry}>
-            Try again
-          </Button>
-        )}
         <Button kind="bare" onClick={onCancel}>
-          {step.kind === 'failed' ? 'Leave it' : 'Cancel'}
+          {step.kind === 'failed' ? 'Close' : 'Cancel'}
         </Button>
       </div>
     </li>

@@ -10,7 +10,12 @@ export const MOST_BYTES = 40 * 1024 * 1024;
 export type UploadStep =
   | { readonly kind: 'decoding' }
   | { readonly kind: 'sending'; readonly share: number }
-  | { readonly kind: 'failed'; readonly sentence: string };
+  | {
+      readonly kind: 'failed';
+      readonly sentence: string;
+      /** A file that was refused will be refused again. */
+      readonly canRetry: boolean;
+    };
 
 /** A file on its way; once the server has it, it is one of the job's sheets. */
 export interface Upload {
@@ -32,6 +37,9 @@ const tooLarge = (file: File) =>
     'too-large',
     `${file.name} has ${Math.ceil(file.size / 1024 / 1024)} MB; a sheet may have 40 MB at most.`,
   );
+
+const isRefusal = (error: unknown): boolean =>
+  error instanceof ApiProblem && (error.status === 413 || error.status === 415);
 
 /** Decodes where needed and sends one file. */
 async function sendOne(
@@ -91,7 +99,7 @@ export function useUploads(jobId: string, onReceived: () => void) {
         drop(one.id);
       } catch (error) {
         if (isAbort(error)) drop(one.id);
-        else tell({ kind: 'failed', sentence: sentenceOf(error) });
+        else tell({ kind: 'failed', sentence: sentenceOf(error), canRetry: !isRefusal(error) });
       }
     },
     [jobId, drop],

@@ -123,7 +123,7 @@ function JobPage({ job }: { job: Job }) {
             {job.notes !== '' && <p className={styles.prose}>{job.notes}</p>}
           </Section>
         </div>
-        <aside className={styles.aside} aria-label="Stage, client and dates">
+        <aside className={styles.aside} aria-label="The job at a glance">
           <StageSteps job={job} editable={editable} />
           <JobFacts job={job} clientHref={to.client(job.client.id)} />
         </aside>
