@@ -1,5 +1,5 @@
 import { Module } from '@nestjs/common';
-import { CatalogueModule } from '../catalogue/catalogue.module.js';
+import { CatalogueStoreModule } from '../catalogue/catalogue-store.module.js';
 import { CompaniesModule } from '../companies/companies.module.js';
 import { AuthController } from './auth.controller.js';
 import { AuthService } from './auth.service.js';
@@ -9,7 +9,7 @@ import { MeService } from './me.service.js';
 import { SessionsService } from './sessions.service.js';
 
 @Module({
-  imports: [CompaniesModule, CatalogueModule],
+  imports: [CompaniesModule, CatalogueStoreModule],
   controllers: [AuthController],
   providers: [AuthService, MeService, SessionsService, Callers, EmailTokensRepository],
   exports: [MeService, SessionsService, Callers, EmailTokensRepository],

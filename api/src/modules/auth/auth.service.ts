@@ -39,7 +39,11 @@ const linkDead = () =>
     'This link was used already, or its time has run out. Please ask for a new one.',
   );
 
-/** Signing up, in and out. Nothing said here tells a stranger whether an address has an account. */
+/**
+ * Signing up, in and out. No answer says whether an address has an account, nor does the time it takes. What
+ * remains is that a sign-up with a free address succeeds: whoever tries that way leaves an account and a
+ * company behind with each free address, and with each taken one a letter to its owner and a counted failure.
+ */
 @Injectable()
 export class AuthService {
   constructor(
