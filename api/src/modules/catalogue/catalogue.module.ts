@@ -1,11 +1,10 @@
 import { Module } from '@nestjs/common';
 import { CatalogueController } from './catalogue.controller.js';
-import { CatalogueRepository } from './catalogue.repository.js';
-import { CatalogueService } from './catalogue.service.js';
+import { CatalogueStoreModule } from './catalogue-store.module.js';
 
 @Module({
+  imports: [CatalogueStoreModule],
   controllers: [CatalogueController],
-  providers: [CatalogueService, CatalogueRepository],
-  exports: [CatalogueService],
+  exports: [CatalogueStoreModule],
 })
 export class CatalogueModule {}

@@ -45,6 +45,14 @@ export class CatalogueService {
   async seed(companyId: string): Promise<void> {
     await this.repository.insert(companyId, starterCatalogue);
   }
+
+  /** A company's items by their names, for building plans outside of a request. */
+  async byName(companyId: string): Promise<ReadonlyMap<string, { sourceId: string; item: CatalogueItem }>> {
+    const rows = await this.repository.list(companyId, { category: null, search: '', archived: false });
+    return new Map(
+      rows.map((row) => [row.name, { sourceId: row.id, item: catalogueItemSchema.parse(row.item) }]),
+    );
+  }
 }
 
 function found(row: CatalogueRow | null): CatalogueEntry {
