@@ -14,6 +14,7 @@ import {
   putRecords,
   recordOf,
   setFields,
+  setItem,
 } from '../../plan/index.js';
 import {
   cable12,
@@ -252,6 +253,64 @@ describe('faults of the plan', () => {
     make(moveRecords(doc(), [f2], 200, 0, ids));
     expect(planFaults(doc(), null).map((f) => f.code)).toContain('fixture-in-water');
     expect(planFaults(doc(), null).map((f) => f.code)).toContain('cable-through-water');
+  });
+
+  it('do not mind cable that goes to what hangs on a wall, or to a light in its water', () => {
+    const { doc, make, ids, t, f2, k2 } = chain();
+    const box = (x0: number, x1: number) => [
+      { x: x0, y: -50 },
+      { x: x1, y: -50 },
+      { x: x1, y: 50 },
+      { x: x0, y: 50 },
+    ];
+    make(setFields(doc(), ['settings'], 'settings', { waterClearanceMeters: 1 }, ids));
+    make(placeArea(doc(), { sheetId: 'sheet1', use: 'building', points: box(-600, 80) }, ids));
+    make(placeArea(doc(), { sheetId: 'sheet1', use: 'water', points: box(650, 900) }, ids));
+    expect(planFaults(doc(), null).map((f) => [f.code, f.recordId])).toEqual([
+      ['cable-through-water', k2],
+      ['fixture-in-water', f2],
+    ]);
+    const wet = { ...upLight, kind: 'underwater' as const, wetListed: true };
+    make(setItem(doc(), [f2], 'itemId', choice(wet), ids));
+    expect(planFaults(doc(), null)).toEqual([]);
+    make(moveRecords(doc(), [t], -200, 0, ids));
+    expect(planFaults(doc(), null).map((f) => f.code)).toEqual(['cable-through-building']);
+  });
+
+  it('put every warning of the estimate in words', () => {
+    const { doc, t, f1, k1, runId } = chain();
+    const common = { kind: 'common', id: 'C1', transformerId: t } as const;
+    const warnings: EstimateAnswer['warnings'] = [
+      { code: 'common-over-limit', subject: common, message: '' },
+      { code: 'tap-over-limit', subject: { kind: 'tap', id: '12V', transformerId: t }, message: '' },
+      { code: 'winding-over-rating', subject: { kind: 'winding', id: 'w1', transformerId: t }, message: '' },
+      { code: 'transformer-over-rating', subject: { kind: 'transformer', id: t }, message: '' },
+      { code: 'transformer-over-target', subject: { kind: 'transformer', id: t }, message: '' },
+      { code: 'cable-over-ampacity', subject: { kind: 'cable', id: k1 }, message: '' },
+      { code: 'weak-short', subject: { kind: 'run', id: runId }, message: '' },
+      { code: 'unreached', subject: { kind: 'fixture', id: f1 }, message: '' },
+      { code: 'unreached', subject: { kind: 'fixture', id: 'gone' }, message: '' },
+    ];
+    const faults = planFaults(doc(), {
+      ...noAnswer,
+      commons: [{ transformerId: t, id: 'C1', amps: 27.5, loadPercent: 110 }],
+      taps: [{ transformerId: t, id: '12V', amps: 27.5 }],
+      transformers: [{ id: t, voltAmps: 330, loadPercent: 110, lossWatts: 1 }],
+      cables: [
+        { id: k1, amps: -22, fromVolts: 12, toVolts: 11, dropVolts: 1, lossWatts: 22, ampacityPercent: 110 },
+      ],
+      warnings,
+    });
+    expect(faults.map((f) => `${f.severity} ${f.recordId === t ? 'T' : ''} ${f.message}`)).toEqual([
+      'fault T Common C1 of T1 carries too much (27.5 A, 110 % of its limit); move a run off it.',
+      'fault T Tap 12V of T1 carries more than its limit (27.5 A); move a run off it.',
+      'fault T Winding w1 of T1 is loaded beyond its rating by run 1.',
+      'fault T T1 is loaded to 110 % (330 VA), beyond its rating.',
+      'fault  A cable carries 22.0 A, 110 % of what it may; use a heavier one.',
+      'fault  No cable brings current to fixture 1.',
+      'caution T T1 is loaded to 110 % (330 VA); keep to 80 % and leave room for additions.',
+      'caution  A dead short at the far end of run 1 may draw too little to trip the breaker; use heavier cable or a shorter run.',
+    ]);
   });
 
   it('tell runs that two people joined, and loops that nobody confirmed', () => {

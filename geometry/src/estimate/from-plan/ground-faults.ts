@@ -1,12 +1,13 @@
 import { distanceToPolygon, polygonCrossing } from '../../measure/index.js';
 import {
   type AreaRecord,
+  type CableRecord,
   cablePoints,
   type FixtureRecord,
   itemOf,
   labelOf,
   type PlanDocument,
-  type PlanPoint,
+  type PlanRecord,
   recordsOf,
   type SheetRecord,
   settingsOf,
@@ -14,8 +15,12 @@ import {
 import type { SolvedScale } from '../../sheet/index.js';
 import { formatLength, type GroundPoint, meters, type UnitSystem } from '../../units/index.js';
 import type { PlanFault } from './fault.js';
-import { scaleOfSheet, sheetPoint } from './sheet-scale.js';
+import { boxOf, type GroundArea, groundArea, near, onGround } from './ground-shapes.js';
+import { scaleOfSheet } from './sheet-scale.js';
 import { capitalised } from './words.js';
+
+/** How far inside of a building's outline what hangs on its wall may be drawn. */
+const ON_THE_WALL_METERS = 1;
 
 /** What areas mean for cable and fixtures on each sheet: buildings and water in the way, water too near. */
 export function groundFaults(doc: PlanDocument, system: UnitSystem): PlanFault[] {
@@ -39,38 +44,80 @@ function sheetFaults(
 ): PlanFault[] {
   const solved = scaleOfSheet(sheet);
   const scale = solved.ok ? solved.scale : null;
+  const ground = areas.flatMap((area) => groundArea(scale, area) ?? []);
   const faults: PlanFault[] = [];
-  const ground = areas.flatMap((area) => {
-    const points = onGround(scale, area.points);
-    return points ? [{ area, points }] : [];
-  });
-  for (const cable of recordsOf(doc, 'cable')) {
-    if (cable.sheetId !== sheet.id) continue;
-    const points = cablePoints(doc, cable);
-    const line = points && onGround(scale, points);
-    if (!line) continue;
-    for (const { area, points: polygon } of ground) {
-      if (polygonCrossing(line, polygon).insideMeters <= 0) continue;
-      faults.push({
-        code: area.use === 'building' ? 'cable-through-building' : 'cable-through-water',
-        severity: 'fault',
-        recordId: cable.id,
-        otherId: area.id,
-        message: `A cable runs through ${area.name || (area.use === 'building' ? 'a building' : 'water')}; lead it around.`,
-      });
-    }
-  }
+  for (const cable of recordsOf(doc, 'cable'))
+    if (cable.sheetId === sheet.id) faults.push(...cableFaults(doc, scale, cable, ground));
   if (!scale) return faults;
   const clearance = settingsOf(doc).waterClearanceMeters;
+  const waters = ground.filter(({ area }) => area.use === 'water');
   for (const fixture of recordsOf(doc, 'fixture')) {
-    if (fixture.sheetId !== sheet.id) continue;
+    if (fixture.sheetId !== sheet.id || isWetListed(doc, fixture)) continue;
     const at = onGround(scale, [fixture.at])?.[0];
-    if (!at || itemOf(doc, fixture.itemId, 'fixture')?.wetListed) continue;
-    for (const { area, points } of ground)
-      if (area.use === 'water')
-        faults.push(...waterFaults(fixture, area, distanceToPolygon(at, points), clearance, system));
+    if (!at) continue;
+    const box = boxOf([at]);
+    for (const water of waters)
+      if (near(box, water.box, clearance))
+        faults.push(
+          ...waterFaults(fixture, water.area, distanceToPolygon(at, water.points), clearance, system),
+        );
   }
   return faults;
+}
+
+function cableFaults(
+  doc: PlanDocument,
+  scale: SolvedScale | null,
+  cable: CableRecord,
+  ground: readonly GroundArea[],
+): PlanFault[] {
+  const points = cablePoints(doc, cable);
+  const line = points && onGround(scale, points);
+  if (!line) return [];
+  const box = boxOf(line);
+  return ground
+    .filter((other) => near(box, other.box, 0) && goesThrough(doc, scale, cable, line, other))
+    .map(({ area }) => ({
+      code: area.use === 'building' ? 'cable-through-building' : 'cable-through-water',
+      severity: 'fault',
+      recordId: cable.id,
+      otherId: area.id,
+      message: `A cable runs through ${area.name || (area.use === 'building' ? 'a building' : 'water')}; lead it around.`,
+    }));
+}
+
+/**
+ * Whether a cable runs through an area rather than to something in it: a transformer or fixture that is
+ * mounted on a wall lies a little inside of the drawn outline, and a light listed for water lies in it.
+ */
+function goesThrough(
+  doc: PlanDocument,
+  scale: SolvedScale | null,
+  cable: CableRecord,
+  line: readonly GroundPoint[],
+  { area, points }: GroundArea,
+): boolean {
+  const { spans } = polygonCrossing(line, points);
+  const total = line.reduce((sum, p, i) => sum + (i === 0 ? 0 : distance(line[i - 1] ?? p, p)), 0);
+  return spans.some(({ fromMeters, toMeters }) => {
+    const atStart = fromMeters <= 0;
+    const atEnd = toMeters >= total * (1 - Number.EPSILON * line.length);
+    if (!atStart && !atEnd) return true;
+    if (area.use === 'water')
+      return (
+        !(atStart && isWetListed(doc, doc.get(cable.fromId))) &&
+        !(atEnd && isWetListed(doc, doc.get(cable.toId)))
+      );
+    return scale !== null && toMeters - fromMeters > ON_THE_WALL_METERS;
+  });
+}
+
+function distance(a: GroundPoint, b: GroundPoint): number {
+  return Math.hypot(b.x - a.x, b.y - a.y);
+}
+
+function isWetListed(doc: PlanDocument, record: PlanRecord | undefined): boolean {
+  return record?.kind === 'fixture' && itemOf(doc, record.itemId, 'fixture')?.wetListed === true;
 }
 
 function waterFaults(
@@ -102,18 +149,4 @@ function waterFaults(
       message: `${label} is ${length(distance)} from ${water}; keep ${length(clearance)} unless it is listed for less and the code allows it.`,
     },
   ];
-}
-
-/**
- * Points on the ground; null where one of them is not. Without a scale the sheet stands in: what lies inside
- * of what is the same there, only lengths mean nothing.
- */
-function onGround(scale: SolvedScale | null, points: readonly PlanPoint[]): GroundPoint[] | null {
-  const ground: GroundPoint[] = [];
-  for (const point of points) {
-    const p = scale ? scale.groundFromSheet(sheetPoint(point)) : { x: meters(point.x), y: meters(-point.y) };
-    if (!p) return null;
-    ground.push(p);
-  }
-  return ground;
 }

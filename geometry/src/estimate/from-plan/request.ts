@@ -56,8 +56,11 @@ export function estimateRequestOf(
   for (const fixture of recordsOf(doc, 'fixture')) {
     const runs = wiring.filter((run) => run.nodes.has(fixture.id));
     const run = runs.find((r) => r.reached.has(fixture.id));
-    if (run) reached.set(run.run.id, [...(reached.get(run.run.id) ?? []), fixture]);
-    else if (runs.length > 0) waitingFixtures.push(fixture.id);
+    if (run) {
+      const list = reached.get(run.run.id);
+      if (list) list.push(fixture);
+      else reached.set(run.run.id, [fixture]);
+    } else if (runs.length > 0) waitingFixtures.push(fixture.id);
     else unwired.push(fixture.id);
   }
   const runs: EstimateRun[] = [];
