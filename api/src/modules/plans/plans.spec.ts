@@ -171,6 +171,13 @@ describe('plans', () => {
     expect((await getPlan(designer.agent, jobId)).plan.get(f1)).toMatchObject({ at: { x: 115, y: 100 } });
   });
 
+  it('takes changes made on a version that a restored backup no longer knows', async () => {
+    const { jobId, plan, version, ids, f1 } = await threeFixtures();
+    const change = must(moveRecords(plan, [f1], 5, 0, ids));
+    const saved = await save(designer.agent, jobId, { baseVersion: version + 500, changes: [change] });
+    expect(saved).toMatchObject({ version: version + 1, others: [] });
+  });
+
   it('conflicts where a change needs what somebody removed', async () => {
     const { jobId, plan, version, ids, f1, f2 } = await threeFixtures();
     const stops = [f1, f2].map((id) => ({ on: 'record' as const, id }));

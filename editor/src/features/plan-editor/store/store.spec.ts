@@ -158,6 +158,26 @@ describe('saving', () => {
     expect(texts()).toEqual(['a']);
   });
 
+  it('tries again when the browser can’t read what it keeps', async () => {
+    const storage = memoryStorage();
+    let broken = false;
+    const { open, note, clock, texts } = setting({
+      ...storage,
+      get: (key) => (broken ? Promise.reject(new Error('not now')) : storage.get(key)),
+    });
+    const { store } = open();
+    await store.start();
+    broken = true;
+    store.make(note(store, 'a'), 'Note');
+    await rest();
+    expect(store.saving.getState()).toMatchObject({ phase: 'offline', unsent: 1 });
+    broken = false;
+    clock.pass();
+    await rest();
+    expect(texts()).toEqual(['a']);
+    expect(store.saving.getState()).toMatchObject({ phase: 'saved', unsent: 0 });
+  });
+
   it('follows what others do', async () => {
     const { server, open, note, ids } = setting();
     const { store } = open();

@@ -130,8 +130,9 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
     try {
       batch = nextBatch(await outbox.read(new Set(responsible())), responsible());
     } catch (error) {
-      if (!(error instanceof PlanFormError)) throw error;
-      settle({ phase: 'refused', message: error.message });
+      // Kept by a newer version of the product; or the browser can't read its storage just now.
+      if (error instanceof PlanFormError) settle({ phase: 'refused', message: error.message });
+      else await received([], { kind: 'offline' });
       return false;
     }
     if (batch.length === 0) {
@@ -228,19 +229,25 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
 
   /** Takes over what closed windows left unsent. */
   async function adoptOrphans(): Promise<void> {
-    const sessions = await outbox.sessions();
-    for (const other of sessions) {
+    const taken: string[] = [];
+    for (const other of await outbox.sessions()) {
       if (other === session || adopted.includes(other)) continue;
       const release = await locks.tryHold(`${outbox.name}${other}`);
       if (!release) continue;
       releases.push(release);
-      adopted.push(other);
+      taken.push(other);
     }
-    if (adopted.length === 0) return;
-    const left = await outbox.read(new Set(adopted));
-    left.sort((a, b) => adopted.indexOf(a.session) - adopted.indexOf(b.session) || a.order - b.order);
+    if (taken.length === 0) return;
+    adopted.push(...taken);
+    const left = await outbox.read(new Set(taken));
+    left.sort((a, b) => taken.indexOf(a.session) - taken.indexOf(b.session) || a.order - b.order);
     document.adopt(left.map((entry) => entry.change));
     settle({});
+  }
+
+  /** What can't be read stays where it is, for a version or a moment that can. */
+  function cannotAdopt(error: unknown): void {
+    if (error instanceof PlanFormError) settle({ phase: 'refused', message: error.message });
   }
 
   async function open(): Promise<void> {
@@ -267,7 +274,7 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
     const { phase } = getState();
     if (phase === 'signed-out' || phase === 'refused' || phase === 'offline')
       settle({ phase: 'saving', message: null });
-    await adoptOrphans().catch(() => undefined);
+    await adoptOrphans().catch(cannotAdopt);
     if (document.store.getState().status !== 'ready') await open();
     else {
       await catchUp();
@@ -285,12 +292,7 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
     async start(): Promise<void> {
       const release = await locks.tryHold(`${outbox.name}${session}`);
       if (release) releases.push(release);
-      try {
-        await adoptOrphans();
-      } catch (error) {
-        if (!(error instanceof PlanFormError)) throw error;
-        settle({ phase: 'refused', message: error.message });
-      }
+      await adoptOrphans().catch(cannotAdopt);
       await open();
     },
 
