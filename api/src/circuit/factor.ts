@@ -154,15 +154,20 @@ export class NetworkFactor {
         share[r] = weight[p]! / pivot[j]!;
         sum[r] = 0;
       }
+      const lastRow = begin < end ? row[end - 1]! : -1;
       for (let p = begin; p < end; p++) {
         const k = row[p]!;
-        sum[k]! += share[k]! * diagonal[k]!;
-        for (let q = start[k]!; q < start[k + 1]!; q++) {
+        const shareOfK = share[k]!;
+        let sumOfK = shareOfK * diagonal[k]!;
+        const stop = start[k + 1]!;
+        for (let q = start[k]!; q < stop; q++) {
           const r = row[q]!;
+          if (r > lastRow) break;
           if (owner[r] !== j) continue;
-          sum[r]! += share[k]! * inverse[q]!;
-          sum[k]! += share[r]! * inverse[q]!;
+          sum[r]! += shareOfK * inverse[q]!;
+          sumOfK += share[r]! * inverse[q]!;
         }
+        sum[k]! += sumOfK;
       }
       let own = 1 / pivot[j]!;
       for (let p = begin; p < end; p++) {

@@ -55,6 +55,7 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
   let stamp = 0;
   let multiplications = 0;
   let merged = 0;
+  const inner: number[] = [];
   /** Takes eliminated nodes out of a list and marks the others with the stamp. */
   const clean = (list: number[]): void => {
     let kept = 0;
@@ -66,19 +67,19 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
     }
     list.length = kept;
   };
-  for (let p = 0; p < nodeCount; p++) {
+  for (let p = 0; p < nodeCount; ) {
     const node = queue.takeLeast();
-    position[node] = p;
+    position[node] = p++;
     // The list is not needed as one of neighbours any more: it becomes the node's column.
     const touched = neighbours[node]!;
     stamp++;
     clean(touched);
     columns.push(touched);
-    const allJoined = touched.length === nodeCount - p - 1;
+    const allJoined = touched.length === nodeCount - p;
     multiplications += touched.length ** 2 * (allJoined ? touched.length / 3 : 1);
     if (multiplications > MAX_MULTIPLICATIONS || merged > MAX_MERGED) throw new TooTangled();
     if (allJoined) {
-      finishClique(touched, p + 1, position, columns);
+      finishClique(touched, p, position, columns);
       break;
     }
     if (touched.length === 1) {
@@ -87,6 +88,7 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
       queue.move(only, queue.degree[only]! - 1);
       continue;
     }
+    inner.length = 0;
     for (let t = 0; t < touched.length; t++) {
       const one = touched[t]!;
       const list = neighbours[one]!;
@@ -98,7 +100,20 @@ function planMinimumDegree(nodeCount: number, edgeLow: Int32Array, edgeHigh: Int
         const other = touched[i]!;
         if (mark[other] !== stamp) list.push(other);
       }
-      queue.move(one, list.length);
+      if (list.length === touched.length - 1) inner.push(one);
+    }
+    // Those with no neighbour outside can go at once: all of theirs are joined already, so nothing is filled in.
+    for (let t = 0; t < inner.length; t++) {
+      const one = inner[t]!;
+      queue.remove(one);
+      position[one] = p++;
+      clean(neighbours[one]!);
+      columns.push(neighbours[one]!);
+      multiplications += neighbours[one]!.length ** 2;
+    }
+    for (let t = 0; t < touched.length; t++) {
+      const one = touched[t]!;
+      if (position[one] === -1) queue.move(one, neighbours[one]!.length - inner.length);
     }
   }
   return { position, ...sortedPattern(nodeCount, columns, position) };
@@ -170,6 +185,10 @@ class DegreeQueue {
     const node = this.head[this.least]!;
     this.unlink(node);
     return node;
+  }
+
+  remove(node: number): void {
+    this.unlink(node);
   }
 
   move(node: number, degree: number): void {

@@ -60,7 +60,7 @@ export function normalizeEstimateRequest(request: EstimateRequest): NormalizedEs
     transformers: request.transformers.map(normalizeTransformer),
     runs: request.runs.map((run) => ({
       ...run,
-      cables: run.cables.map((cable) => ({ ...cable, extraOhms: cable.extraOhms ?? 0 })),
+      cables: run.cables.map(normalizeCable),
       fixtures: run.fixtures.map(normalizeFixture),
     })),
   };
@@ -83,12 +83,44 @@ function normalizeTransformer(transformer: EstimateTransformer): NormalizedTrans
   };
 }
 
-function normalizeFixture(fixture: EstimateFixture): NormalizedFixture {
-  const { load, lead, quantity = 1, ...rest } = fixture;
+// Written out key by key: all cables, and all fixtures, then have one shape in memory, which the solver's loops read
+// several times faster than objects made by spreading.
+
+function normalizeCable(cable: EstimateCable): NormalizedCable {
   return {
-    ...rest,
-    quantity,
-    load: load.kind === 'driver' ? { ...load, powerFactor: load.powerFactor ?? 1 } : load,
-    ...(lead && { lead: { ...lead, extraOhms: lead.extraOhms ?? 0 } }),
+    id: cable.id,
+    from: cable.from,
+    to: cable.to,
+    lengthMeters: cable.lengthMeters,
+    conductor: cable.conductor,
+    extraOhms: cable.extraOhms ?? 0,
+    ampacityAmps: cable.ampacityAmps,
+  };
+}
+
+function normalizeFixture(fixture: EstimateFixture): NormalizedFixture {
+  const { lead } = fixture;
+  return {
+    id: fixture.id,
+    at: fixture.at,
+    quantity: fixture.quantity ?? 1,
+    load: normalizeLoad(fixture.load),
+    lead: lead && {
+      conductor: lead.conductor,
+      lengthMeters: lead.lengthMeters,
+      extraOhms: lead.extraOhms ?? 0,
+    },
+    window: fixture.window,
+    target: fixture.target,
+  };
+}
+
+function normalizeLoad(load: Load): NormalizedLoad {
+  if (load.kind !== 'driver') return load;
+  return {
+    kind: 'driver',
+    watts: load.watts,
+    powerFactor: load.powerFactor ?? 1,
+    minVolts: load.minVolts,
   };
 }
