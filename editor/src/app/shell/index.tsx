@@ -20,7 +20,7 @@ export function Shell() {
   const { pathname } = useLocation();
   const me = useMe();
   return (
-    <div className={styles.shell}>
+    <div className={styles.shell} data-phone-foot="">
       <a href="#main" className={styles.skip}>
         Skip to the content
       </a>

@@ -86,7 +86,9 @@ export function FieldGroup({ legend, children }: { legend: string; children: Rea
   );
 }
 
-/** Short fields side by side where there is room. */
-export const FieldRow = ({ children }: { children: ReactNode }) => (
-  <div className={styles.row}>{children}</div>
+/** Short fields side by side where there is room; `tight` for many very short ones. */
+export const FieldRow = ({ tight = false, children }: { tight?: boolean; children: ReactNode }) => (
+  <div className={styles.row} data-tight={tight ? '' : undefined}>
+    {children}
+  </div>
 );

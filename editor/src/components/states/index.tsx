@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react';
-import { sentenceOf } from '../../lib/api/client';
+import { ApiProblem, sentenceOf } from '../../lib/api/client';
 import { Button } from '../button';
 import styles from './states.module.css';
 
@@ -21,12 +21,16 @@ export function Empty({ title, children, action }: EmptyProps) {
   );
 }
 
+/** Asking again would be answered the same. */
+const isFinal = (error: unknown): boolean =>
+  error instanceof ApiProblem && [403, 404, 410].includes(error.status);
+
 /** An error where its content would be, with a way to try again. */
 export function Problem({ error, onRetry }: { error: unknown; onRetry?: () => void }) {
   return (
     <div className={styles.problem} role="alert">
       <p>{typeof error === 'string' ? error : sentenceOf(error)}</p>
-      {onRetry && <Button onClick={onRetry}>Try again</Button>}
+      {onRetry && !isFinal(error) && <Button onClick={onRetry}>Try again</Button>}
     </div>
   );
 }

@@ -13,6 +13,18 @@ export type Checked =
   | { readonly ok: true; readonly item: CatalogueItem }
   | { readonly ok: false; readonly faults: ReadonlyMap<string, string> };
 
+/** For a number that is missing or unreadable; the schema's own words speak of what programs send. */
+function numberFault(draft: Draft, field: string): string | null {
+  const value = field
+    .split('.')
+    .reduce<unknown>(
+      (at, key) => (typeof at === 'object' && at !== null ? Reflect.get(at, key) : undefined),
+      draft,
+    );
+  if (value === null) return 'Please fill in a number.';
+  return Number.isNaN(value) ? 'Please write a number, such as 12 or 12.5.' : null;
+}
+
 /** Checks a form against the catalogue's own schema; faults by the form's field. */
 export function check(draft: Draft, category: CatalogueCategory): Checked {
   const parsed = catalogueItemSchema.safeParse(itemOf(draft, category), { error: sentenceFor });
@@ -20,7 +32,7 @@ export function check(draft: Draft, category: CatalogueCategory): Checked {
   const faults = new Map<string, string>();
   for (const issue of parsed.error.issues) {
     const field = fieldOf(issue.path.join('.'), category);
-    if (!faults.has(field)) faults.set(field, issue.message);
+    if (!faults.has(field)) faults.set(field, numberFault(draft, field) ?? issue.message);
   }
   return { ok: false, faults };
 }

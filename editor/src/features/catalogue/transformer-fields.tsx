@@ -111,6 +111,7 @@ function Terminals({ form }: { form: ItemForm }) {
   const fault = form.formState.errors.terminals?.root?.message ?? form.formState.errors.terminals?.message;
   return (
     <FieldGroup legend="Terminals, left to right as they sit on the unit">
+      <p className="quiet">Holds: how many conductors fit. A limit left empty is none.</p>
       {fields.map((field, i) => {
         const tap = terminals[i]?.type === 'tap';
         const called = `${tap ? 'tap' : 'common'} ${terminals[i]?.id ?? ''}`;
@@ -142,21 +143,11 @@ function Terminals({ form }: { form: ItemForm }) {
                 </Button>
               </div>
             </div>
-            <FieldRow>
+            <FieldRow tight>
               <TextField control={control} name={`terminals.${i}.id`} label="Label" maxLength={24} />
-              {tap && <NumberField control={control} name={`terminals.${i}.volts`} label="Volts" unit="V" />}
-              <NumberField
-                control={control}
-                name={`terminals.${i}.limitAmps`}
-                label="Limit"
-                unit="A"
-                optional
-              />
-              <NumberField
-                control={control}
-                name={`terminals.${i}.maxConductors`}
-                label="Conductors that fit"
-              />
+              {tap && <NumberField control={control} name={`terminals.${i}.volts`} label="Volts" />}
+              <NumberField control={control} name={`terminals.${i}.limitAmps`} label="Limit, A" />
+              <NumberField control={control} name={`terminals.${i}.maxConductors`} label="Holds" />
               {several && (
                 <SelectField
                   control={control}

@@ -6,12 +6,12 @@ import styles from './sheets.module.css';
 const kinds = {
   photo: {
     title: 'Add yard photos',
-    text: 'JPEG, PNG, WebP or HEIC, up to 40 MB',
+    text: 'JPEG, PNG, WebP or HEIC, up to 40\u00a0MB',
     accept: 'image/jpeg,image/png,image/webp,image/heic,image/heif,.heic,.heif',
   },
   plan: {
     title: 'Add a plot plan',
-    text: 'PDF of up to 50 pages, or an image, up to 40 MB',
+    text: 'PDF of up to 50 pages, or an image, up to 40\u00a0MB',
     accept: 'application/pdf,image/jpeg,image/png,image/webp,.pdf',
   },
 } as const satisfies Record<SheetView, { title: string; text: string; accept: string }>;

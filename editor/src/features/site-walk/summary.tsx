@@ -1,4 +1,3 @@
-import { count } from '../../lib/format';
 import type { SiteWalk } from '../../lib/site-walk';
 import styles from './summary.module.css';
 
@@ -33,8 +32,13 @@ export function rowsOf(walk: SiteWalk, device: string): readonly Row[] {
 }
 
 /** Buried lines that nobody has asked about yet: worth saying before anybody digs. */
-export function notAsked(walk: SiteWalk): number {
-  return [walk.irrigation, walk.gas, walk.petFence].filter(({ present }) => present === 'unknown').length;
+export function notAsked({ irrigation, gas, petFence }: SiteWalk): readonly string[] {
+  const lines = [
+    ['irrigation', irrigation],
+    ['gas', gas],
+    ['pet fence', petFence],
+  ] as const;
+  return lines.flatMap(([name, { present }]) => (present === 'unknown' ? [name] : []));
 }
 
 export function SiteWalkSummary({ walk, device }: { walk: SiteWalk; device: string }) {
@@ -52,10 +56,8 @@ export function SiteWalkSummary({ walk, device }: { walk: SiteWalk; device: stri
           ))}
         </dl>
       )}
-      {open > 0 && (
-        <p className={styles.open}>
-          {count(open, 'kind')} of private line not asked about yet: irrigation, gas and pet fence.
-        </p>
+      {open.length > 0 && (
+        <p className={styles.open}>Private lines not asked about yet: {open.join(', ')}.</p>
       )}
     </>
   );
