@@ -117,6 +117,9 @@ export const planSummarySchema = z.object({
   counts: z.object({ fault: z.number().int(), caution: z.number().int(), advice: z.number().int() }),
   lowestVolts: volts,
   highestVolts: volts,
+  /** Of all cable, slack and rise in; and of what runs under paving, as drawn. */
+  cableMeters: z.number(),
+  conduitMeters: z.number(),
   /** Why there are no volts, where that is so although there is cable. */
   failure: z.string().nullable(),
   transformers: z.array(

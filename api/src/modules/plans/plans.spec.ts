@@ -415,6 +415,8 @@ describe('plans', () => {
       unwired: 2,
       waiting: 0,
       failure: null,
+      cableMeters: expect.closeTo(1 + 0.9144 + 0.6096, 6),
+      conduitMeters: 0,
       counts: { fault: 0, caution: 2 },
     });
     // 1 m drawn and the slack of US settings, 3 W at 0.9: some millivolts below 12 V.

@@ -1,4 +1,6 @@
 import {
+  cableLengths,
+  conduitLengths,
   countBySeverity,
   type EstimateAnswer,
   type EstimateRequest,
@@ -18,9 +20,10 @@ const FAULTS_LISTED = 100;
 
 /** What the server makes of a plan: its own request, its own solver, never what a client claims. */
 export function summarise(plan: PlanDocument, planVersion: number, system: UnitSystem): PlanSummary {
-  const estimate = estimateRequestOf(plan);
+  const lengths = cableLengths(plan);
+  const estimate = estimateRequestOf(plan, lengths);
   const { answer, failure } = solve(estimate.request);
-  const faults = planFaults(plan, answer, { estimate, system });
+  const faults = planFaults(plan, answer, { estimate, lengths, system });
   const label = (id: string) => {
     const record = plan.get(id);
     return record ? labelOf(record) : id;
@@ -41,6 +44,8 @@ export function summarise(plan: PlanDocument, planVersion: number, system: UnitS
       runs.map((run) => run.highestVolts),
       Math.max,
     ),
+    cableMeters: sum([...lengths.values()].map((length) => length.totalMeters ?? 0)),
+    conduitMeters: sum([...conduitLengths(plan).values()]),
     failure,
     transformers: (answer?.transformers ?? []).map(({ id, voltAmps, loadPercent }) => ({
       id,
@@ -71,6 +76,8 @@ function solve(request: EstimateRequest | null): { answer: EstimateAnswer | null
     return { answer: null, failure: error.message };
   }
 }
+
+const sum = (values: readonly number[]) => values.reduce((total, value) => total + value, 0);
 
 function bound(volts: readonly (number | null)[], of: (...values: number[]) => number): number | null {
   const known = volts.filter((v) => v !== null);

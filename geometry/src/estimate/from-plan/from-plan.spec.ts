@@ -29,7 +29,14 @@ import {
   upLight,
 } from '../../plan/plan.testkit.js';
 import { type EstimateAnswer, parseEstimateRequest } from '../contract/index.js';
-import { cableLengths, countBySeverity, estimateRequestOf, planFaults, voltsInWords } from './index.js';
+import {
+  cableLengths,
+  conduitLengths,
+  countBySeverity,
+  estimateRequestOf,
+  planFaults,
+  voltsInWords,
+} from './index.js';
 
 /** A transformer at 0, 0, and two fixtures at 4 m and 7 m, chained, on a sheet of 100 px to the metre. */
 function chain() {
@@ -109,6 +116,39 @@ describe('cable lengths', () => {
       ),
     );
     expect(cableLengths(doc()).get(k1)?.plan?.meters).toBeCloseTo(8, 9);
+  });
+});
+
+describe('conduit', () => {
+  it('is the cable under paving, overlapping paving once', () => {
+    const { doc, make, ids, k1, k2 } = chain();
+    const pave = (x0: number, x1: number) =>
+      make(
+        placeArea(
+          doc(),
+          {
+            sheetId: 'sheet1',
+            use: 'paved',
+            points: [
+              { x: x0, y: -20 },
+              { x: x1, y: -20 },
+              { x: x1, y: 20 },
+              { x: x0, y: 20 },
+            ],
+          },
+          ids,
+        ),
+      );
+    expect(conduitLengths(doc()).size).toBe(0);
+    pave(100, 200);
+    pave(150, 250);
+    pave(300, 500);
+    pave(2000, 2100);
+    const lengths = conduitLengths(doc());
+    expect(lengths.get(k1)).toBeCloseTo(1.5 + 1, 9);
+    expect(lengths.get(k2)).toBeCloseTo(1, 9);
+    make(putRecords(doc(), [{ ...sheet(), references: [] }], ids));
+    expect(conduitLengths(doc()).size).toBe(0);
   });
 });
 

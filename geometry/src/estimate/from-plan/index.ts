@@ -1,4 +1,5 @@
 export * from './cable-lengths.js';
+export * from './conduit.js';
 export * from './fault.js';
 export * from './plan-faults.js';
 export * from './request.js';
