@@ -836,6 +836,22 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/api/estimates": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Estimates_estimate"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
 }
 export type webhooks = Record<string, never>;
 export interface components {
@@ -3240,6 +3256,8 @@ export interface operations {
                     /** @enum {string} */
                     view: "photo" | "plan";
                     name?: string;
+                    /** Format: binary */
+                    file: string;
                 };
             };
         };
@@ -3830,6 +3848,8 @@ export interface operations {
                             };
                             lowestVolts: number | null;
                             highestVolts: number | null;
+                            cableMeters: number;
+                            conduitMeters: number;
                             failure: string | null;
                             transformers: {
                                 id: string;
@@ -5437,6 +5457,186 @@ export interface operations {
                         /** Format: date-time */
                         updatedAt: string;
                         archivedAt: string | null;
+                    };
+                };
+            };
+        };
+    };
+    Estimates_estimate: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    conductorTemperatureC?: number;
+                    transformers: {
+                        id: string;
+                        ratedVA: number;
+                        lineVolts?: number;
+                        nominalLineVolts?: number;
+                        regulationPercent?: number;
+                        /** @enum {string} */
+                        ratedAt?: "open" | "load";
+                        windings?: {
+                            id: string;
+                            ratedVA: number;
+                        }[];
+                        taps: {
+                            id: string;
+                            volts: number;
+                            winding?: string;
+                            limitAmps?: number;
+                        }[];
+                        commons: {
+                            id: string;
+                            limitAmps?: number;
+                            winding?: string;
+                        }[];
+                    }[];
+                    runs: {
+                        id: string;
+                        transformerId: string;
+                        tapId: string;
+                        commonId: string;
+                        source: string;
+                        cables: {
+                            id: string;
+                            from: string;
+                            to: string;
+                            lengthMeters: number;
+                            conductor: {
+                                /** @enum {number} */
+                                awg: 8 | 10 | 12 | 14 | 16 | 18;
+                            } | {
+                                /** @enum {number} */
+                                mm2: 1.5 | 2.5 | 4 | 6 | 10 | 16;
+                            } | {
+                                ohmsPerKm: number;
+                            };
+                            extraOhms?: number;
+                            ampacityAmps?: number;
+                        }[];
+                        fixtures: {
+                            id: string;
+                            at: string;
+                            quantity?: number;
+                            load: {
+                                /** @constant */
+                                kind: "driver";
+                                watts: number;
+                                powerFactor?: number;
+                                minVolts: number;
+                            } | {
+                                /** @constant */
+                                kind: "filament";
+                                watts: number;
+                                ratedVolts: number;
+                            } | {
+                                /** @constant */
+                                kind: "resistive";
+                                watts: number;
+                                ratedVolts: number;
+                            } | {
+                                /** @constant */
+                                kind: "current";
+                                amps: number;
+                            } | {
+                                /** @constant */
+                                kind: "off";
+                            };
+                            lead?: {
+                                conductor: {
+                                    /** @enum {number} */
+                                    awg: 8 | 10 | 12 | 14 | 16 | 18;
+                                } | {
+                                    /** @enum {number} */
+                                    mm2: 1.5 | 2.5 | 4 | 6 | 10 | 16;
+                                } | {
+                                    ohmsPerKm: number;
+                                };
+                                lengthMeters: number;
+                                extraOhms?: number;
+                            };
+                            window: {
+                                minVolts: number;
+                                maxVolts: number;
+                            };
+                            target?: {
+                                minVolts: number;
+                                maxVolts: number;
+                            };
+                        }[];
+                    }[];
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        fixtures: {
+                            id: string;
+                            volts: number;
+                            amps: number;
+                            voltAmps: number;
+                            dropPercent: number;
+                            /** @enum {string} */
+                            state: "off" | "unwired" | "dark" | "dim" | "overdriven" | "in-window";
+                            aim: ("below" | "inside" | "above") | null;
+                        }[];
+                        cables: {
+                            id: string;
+                            amps: number;
+                            fromVolts: number;
+                            toVolts: number;
+                            dropVolts: number;
+                            lossWatts: number;
+                            ampacityPercent: number | null;
+                        }[];
+                        runs: {
+                            id: string;
+                            terminalVolts: number;
+                            amps: number;
+                            voltAmps: number;
+                            lowestVolts: number | null;
+                            highestVolts: number | null;
+                            lengthMeters: number;
+                        }[];
+                        commons: {
+                            transformerId: string;
+                            id: string;
+                            amps: number;
+                            loadPercent: number | null;
+                        }[];
+                        taps: {
+                            transformerId: string;
+                            id: string;
+                            amps: number;
+                        }[];
+                        transformers: {
+                            id: string;
+                            voltAmps: number;
+                            loadPercent: number;
+                            lossWatts: number;
+                        }[];
+                        warnings: {
+                            /** @enum {string} */
+                            code: "common-over-limit" | "tap-over-limit" | "cable-over-ampacity" | "transformer-over-target" | "transformer-over-rating" | "winding-over-rating" | "unreached" | "weak-short";
+                            subject: {
+                                /** @enum {string} */
+                                kind: "common" | "tap" | "winding" | "transformer" | "cable" | "fixture" | "run";
+                                id: string;
+                                transformerId?: string;
+                            };
+                            message: string;
+                        }[];
                     };
                 };
             };
