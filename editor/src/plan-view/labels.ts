@@ -7,6 +7,8 @@ export interface LabelWish {
   /** Distance from the mark's middle that the label keeps. */
   readonly clear: number;
   readonly size: Size;
+  /** Stands on its place instead of beside it: the name of an area. */
+  readonly centred?: boolean;
   /** Higher ones are placed first; what finds no room is left out, never squeezed in. */
   readonly rank: number;
 }
@@ -77,12 +79,13 @@ function inside(box: Box, view: Box): boolean {
   return box.left >= view.left && box.right <= view.right && box.top >= view.top && box.bottom <= view.bottom;
 }
 
-function candidates({ at, clear, size }: LabelWish): Box[] {
+function candidates({ at, clear, size, centred }: LabelWish): Box[] {
   const dx = clear + GAP;
   const dy = clear + GAP;
   const { width: w, height: h } = size;
   const corner = dx * Math.SQRT1_2;
   const at0 = (left: number, top: number): Box => ({ left, top, right: left + w, bottom: top + h });
+  if (centred) return [at0(at.x - w / 2, at.y - h / 2)];
   return [
     at0(at.x + dx, at.y - h / 2),
     at0(at.x - dx - w, at.y - h / 2),

@@ -1,7 +1,9 @@
 import type { AreaUse } from '@lampwright/geometry/plan';
-import { type Camera, type Point, toWindow } from '../camera';
+import { boxAround, type Camera, type Point, type Size, toWindow } from '../camera';
 import { fontFamily, ink, paper } from '../palette';
 import { trace } from './cable';
+
+const AREA_FONT = `500 12px ${fontFamily}`;
 
 /** Ground is drawn as a wash: it says where, and never competes with the marks on it. */
 function washOf(use: AreaUse): string | null {
@@ -53,15 +55,36 @@ export function drawArea(
   ctx.setLineDash(area.use === 'lot-line' ? [14, 5, 3, 5] : area.use === 'canopy' ? [2, 4] : []);
   ctx.stroke();
   ctx.setLineDash([]);
-  const at = toWindow(camera, middle(area.points));
-  ctx.font = `500 12px ${fontFamily}`;
+}
+
+/** The name of an area, ink with a paper casing, in its place. */
+export function drawAreaName(ctx: CanvasRenderingContext2D, at: Point, text: string): void {
+  ctx.font = AREA_FONT;
   ctx.textAlign = 'center';
   ctx.textBaseline = 'middle';
+  ctx.lineJoin = 'round';
   ctx.lineWidth = 3.5;
   ctx.strokeStyle = paper;
-  ctx.strokeText(area.label, at.x, at.y);
+  ctx.strokeText(text, at.x, at.y);
   ctx.fillStyle = ink;
-  ctx.fillText(area.label, at.x, at.y);
+  ctx.fillText(text, at.x, at.y);
+}
+
+export function areaNameSize(ctx: CanvasRenderingContext2D, text: string): Size {
+  ctx.font = AREA_FONT;
+  return { width: Math.ceil(ctx.measureText(text).width) + 6, height: 16 };
+}
+
+/** Where the name of an area stands, and how wide the area is in the window; a lot line is named at its top. */
+export function areaNamePlace(
+  camera: Camera,
+  area: AreaShape,
+): { readonly at: Point; readonly width: number } {
+  const box = boxAround(area.points)!;
+  const width = (box.right - box.left) * camera.zoom;
+  if (area.use !== 'lot-line') return { at: toWindow(camera, middle(area.points)), width };
+  const top = toWindow(camera, { x: (box.left + box.right) / 2, y: box.top });
+  return { at: { x: top.x, y: top.y - 12 }, width };
 }
 
 /** Centroid of a polygon by the shoelace sums; the mean of its corners where it has no area. */

@@ -2,6 +2,7 @@ import { type Box, type Camera, markRadius, overlap, type Point, type Size, toWi
 import { type LabelWish, placeLabels } from '../labels';
 import { grey, ink, paper } from '../palette';
 import { labelEdge, type SceneFixture, type SceneMeasurement, type SceneNode } from '../scene';
+import { type AreaShape, areaNamePlace, areaNameSize, drawAreaName } from './areas';
 import { trace } from './cable';
 import { markReach } from './fixture';
 import { drawLabel, drawWorkingLabel, LABEL_HEIGHT, labelSize } from './labels';
@@ -62,7 +63,7 @@ export function drawMeasurements(
   measurements: readonly SceneMeasurement[],
   chosen: (id: string) => boolean,
 ): void {
-  for (const m of measurements) drawMeasurement(ctx, camera, m.points, m.text, chosen(m.id));
+  for (const m of measurements) drawMeasurement(ctx, camera, m.points, '', chosen(m.id));
 }
 
 export function drawMeasurement(
@@ -109,20 +110,25 @@ export function workingLabelAt(ctx: CanvasRenderingContext2D, at: Point, text: s
   drawWorkingLabel(ctx, { left, top, right: left + size.width, bottom: top + size.height }, text);
 }
 
+export interface Aside {
+  readonly id: string;
+  readonly at: Point;
+  readonly text: string;
+}
+
 export interface LabelDemand {
   readonly hoveredId: string | null;
   readonly chosen: ReadonlySet<string>;
-  /** A figure that stands beside a place rather than a mark: that of the hovered cable. */
-  readonly aside: { readonly at: Point; readonly text: string } | null;
+  /** Figures that stand beside a place rather than a mark: of the hovered cable, of measurements. */
+  readonly asides: readonly Aside[];
 }
 
-/** No record's id is empty. */
-const ASIDE = '';
 const RANK_HOVERED = 5;
 const RANK_CHOSEN = 4;
 const RANK_FAULT = 3;
 const RANK_WORST = 2;
 const RANK_UNWIRED = 1;
+const RANK_AREA = 0;
 /** Marks seen from so far away are small; then only faults and what is asked for keep their labels. */
 const FAR_RADIUS = 6.5;
 
@@ -152,6 +158,7 @@ export function drawLabels(
   window: Size,
   fixtures: readonly SceneFixture[],
   nodes: readonly SceneNode[],
+  areas: readonly AreaShape[],
   demand: LabelDemand,
 ): number {
   const r = markRadius(camera);
@@ -176,19 +183,32 @@ export function drawLabels(
     const mark = around(toWindow(camera, node.at), r * 1.3);
     if (overlap(mark, view)) marks.push(mark);
   }
-  if (demand.aside !== null) {
-    const { at, text } = demand.aside;
+  const asides = new Map(demand.asides.map((aside) => [aside.id, aside]));
+  for (const { id, at, text } of demand.asides) {
+    const asked = id === demand.hoveredId || demand.chosen.has(id);
     wishes.push({
-      id: ASIDE,
+      id,
       at: toWindow(camera, at),
       clear: 4,
       size: labelSize(ctx, text),
-      rank: RANK_HOVERED,
+      rank: asked ? RANK_HOVERED : RANK_WORST,
     });
+  }
+  const names = new Map<string, { text: string; at: Point }>();
+  for (const area of areas) {
+    const { at, width } = areaNamePlace(camera, area);
+    const size = areaNameSize(ctx, area.label);
+    // A name wider than its area would seem to be that of its neighbour.
+    if (size.width > width && demand.hoveredId !== area.id) continue;
+    names.set(area.id, { text: area.label, at });
+    wishes.push({ id: area.id, at, clear: 0, size, rank: RANK_AREA, centred: true });
   }
   const placed = placeLabels(wishes, marks, window);
   for (const { id, box } of placed) {
-    if (id === ASIDE && demand.aside !== null) drawWorkingLabel(ctx, box, demand.aside.text);
+    const aside = asides.get(id);
+    if (aside !== undefined) drawWorkingLabel(ctx, box, aside.text);
+    const name = names.get(id);
+    if (name !== undefined) drawAreaName(ctx, name.at, name.text);
     const fixture = byId.get(id);
     if (fixture === undefined) continue;
     const edge = demand.hoveredId === id || demand.chosen.has(id) ? ink : grey;

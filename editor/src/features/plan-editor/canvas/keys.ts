@@ -1,4 +1,5 @@
 import type { PlanEditor } from '../page/editor';
+import { pickByDigit } from '../page/items';
 
 /** Window pixels that an arrow key moves the view. */
 const PAN_STEP = 60;
@@ -11,6 +12,7 @@ export function canvasKey(editor: PlanEditor, e: KeyboardEvent): boolean {
     return true;
   // With Alt, arrows move what is chosen; the page hears that, from the ledger as well.
   if (e.altKey) return false;
+  if (/^[1-9]$/.test(e.key) && pickByDigit(editor, Number(e.key))) return true;
   switch (e.key) {
     case 'ArrowLeft':
       editor.camera.pan(PAN_STEP, 0);

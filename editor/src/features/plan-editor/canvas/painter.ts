@@ -2,7 +2,13 @@ import { type Camera, markRadius, type Point, type Size, toWindow } from '../../
 import { drawArea } from '../../../plan-view/draw/areas';
 import { type CableStroke, drawCables, drawChosenCable } from '../../../plan-view/draw/cable';
 import { drawChoice } from '../../../plan-view/draw/fixture';
-import { drawFixtures, drawLabels, drawMeasurements, drawNodes } from '../../../plan-view/draw/scene';
+import {
+  type Aside,
+  drawFixtures,
+  drawLabels,
+  drawMeasurements,
+  drawNodes,
+} from '../../../plan-view/draw/scene';
 import { MarkSprites } from '../../../plan-view/draw/sprites';
 import { emptyScene, type Scene, type SceneCable } from '../../../plan-view/scene';
 import type { Preview } from '../tools/tool';
@@ -126,11 +132,11 @@ export class Painter {
     drawNodes(ctx, camera, size, scene.nodes);
     drawFixtures(ctx, camera, size, scene.fixtures, this.sprites);
     ctx.globalAlpha = stale ? STALE_ALPHA : 1;
-    drawLabels(ctx, camera, size, scene.fixtures, scene.nodes, {
+    drawLabels(ctx, camera, size, scene.fixtures, scene.nodes, scene.areas, {
       // The figures of the hand at work are what counts while it works.
       hoveredId: isBusy(this.state.preview) ? null : hoveredId,
       chosen: selection,
-      aside: this.hoveredCable(scene),
+      asides: this.asides(scene),
     });
     ctx.globalAlpha = 1;
   }
@@ -145,12 +151,16 @@ export class Painter {
     if (preview !== null) drawPreview(ctx, this.state, preview, this.sprites);
   }
 
-  /** The figures of the cable under the pointer, at its middle. */
-  private hoveredCable(scene: Scene): { at: Point; text: string } | null {
+  /** Figures beside places: of each measurement, and of the cable under the pointer. */
+  private asides(scene: Scene): Aside[] {
     const { hoveredId, preview } = this.state;
-    if (hoveredId === null || preview !== null) return null;
-    const cable = scene.cables.find((c) => c.id === hoveredId);
-    return cable === undefined || cable.text === '' ? null : { at: halfway(cable.points), text: cable.text };
+    const asides: Aside[] = [];
+    for (const { id, points, text } of scene.measurements)
+      if (text !== '') asides.push({ id, at: halfway(points), text });
+    const cable = isBusy(preview) ? undefined : scene.cables.find((c) => c.id === hoveredId);
+    if (cable !== undefined && cable.text !== '')
+      asides.push({ id: cable.id, at: halfway(cable.points), text: cable.text });
+    return asides;
   }
 
   private paintMoving(ctx: CanvasRenderingContext2D, moving: Scene, dx: number, dy: number): void {

@@ -2,7 +2,7 @@ import { itemOf, setFields, setItem, type TransformerRecord } from '@lampwright/
 import { percentText, voltAmpsText } from '../../../plan-view/words';
 import { useDoc, useEditor, useEstimate } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
-import { type CatalogueEntry, pickItems } from '../page/items';
+import { type CatalogueEntry, transformerPicks } from '../page/items';
 import styles from './inspector.module.css';
 import { common, idsOf } from './shared';
 
@@ -18,7 +18,7 @@ export function TransformerSection({ transformers, entries }: Props) {
   const ids = idsOf(transformers);
   const one = transformers.length === 1 ? transformers[0]! : null;
   const locked = !editor.canEdit;
-  const picks = pickItems(doc, entries, 'transformer').sort((a, b) => a.item.ratedVA - b.item.ratedVA);
+  const picks = transformerPicks(doc, entries);
   const itemId = common(transformers, (t) => t.itemId);
   const current = itemId === undefined ? undefined : doc.get(itemId);
   const key = current?.kind === 'item' ? (current.sourceId ?? current.id) : '';

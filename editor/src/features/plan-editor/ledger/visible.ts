@@ -1,12 +1,12 @@
 import type { OutlineRow } from './outline';
 
-/** With more lines than this, runs begin folded. */
-export const FOLD_FROM = 60;
+/** With more fixtures than this, runs begin folded. */
+export const FOLD_FROM = 40;
 
 /** Lines that begin folded: cable always, since it is seldom looked at; runs where the plan is long. */
-export function foldedAtFirst(row: OutlineRow, total: number): boolean {
+export function foldedAtFirst(row: OutlineRow, fixtures: number): boolean {
   if (row.kind === 'group' && row.key.endsWith('/cable')) return true;
-  return row.kind === 'run' && total > FOLD_FROM;
+  return row.kind === 'run' && fixtures > FOLD_FROM;
 }
 
 /**
@@ -20,11 +20,12 @@ export function visibleRows(
 ): { readonly row: OutlineRow; readonly open: boolean }[] {
   const words = search.trim().toLowerCase().split(/\s+/).filter(Boolean);
   if (words.length > 0) return matching(rows, words);
+  const fixtures = rows.filter((row) => row.kind === 'fixture').length;
   const hidden = new Set<string>();
   const shown: { row: OutlineRow; open: boolean }[] = [];
   for (const row of rows) {
     const under = row.parent !== null && hidden.has(row.parent);
-    const open = foldedAtFirst(row, rows.length) === toggled.has(row.key);
+    const open = foldedAtFirst(row, fixtures) === toggled.has(row.key);
     if (under || !open) hidden.add(row.key);
     if (!under) shown.push({ row, open });
   }

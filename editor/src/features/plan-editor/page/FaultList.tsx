@@ -1,5 +1,7 @@
 import type { FaultSeverity, PlanFault } from '@lampwright/geometry/estimate';
-import { useEditor } from './context';
+import { labelOf, type PlanDocument } from '@lampwright/geometry/plan';
+import { tagOf } from '../../../plan-view/names';
+import { useDoc, useEditor } from './context';
 import { PanelFrame } from './PanelFrame';
 import styles from './page.module.css';
 
@@ -12,6 +14,7 @@ const order: readonly FaultSeverity[] = ['fault', 'caution', 'advice'];
 
 export function FaultList({ faults }: { readonly faults: readonly PlanFault[] }) {
   const editor = useEditor();
+  const doc = useDoc();
   return (
     <PanelFrame title={faults.some((f) => f.severity === 'fault') ? 'What stands in the way' : 'No faults'}>
       {faults.length === 0 && <p className={styles.calm}>Every fixture that is wired sits in its window.</p>}
@@ -27,7 +30,7 @@ export function FaultList({ faults }: { readonly faults: readonly PlanFault[] })
               {some.map((fault) => (
                 <li key={`${fault.code}${fault.recordId}${fault.otherId ?? ''}`}>
                   <button type="button" onClick={() => editor.reveal(fault.recordId)}>
-                    {fault.message}
+                    {withTag(doc, fault)}
                   </button>
                 </li>
               ))}
@@ -37,4 +40,15 @@ export function FaultList({ faults }: { readonly faults: readonly PlanFault[] })
       })}
     </PanelFrame>
   );
+}
+
+/** The message in the words of the drawing: a nameless fixture goes by its tag there, P6 and not fixture 6. */
+export function withTag(doc: PlanDocument, { recordId, message }: PlanFault): string {
+  const record = doc.get(recordId);
+  if (record?.kind !== 'fixture' || record.name !== '') return message;
+  const label = labelOf(record);
+  const capital = label.charAt(0).toUpperCase() + label.slice(1);
+  return message.startsWith(`${capital} `)
+    ? `${tagOf(doc, record)}${message.slice(capital.length)}`
+    : message;
 }

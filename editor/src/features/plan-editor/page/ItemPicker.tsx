@@ -14,6 +14,11 @@ interface ItemPickerProps<C extends CatalogueCategory> {
 /** From this many on, a list has a field to search it. */
 const SEARCH_FROM = 6;
 
+/** The first nine are chosen by their digit. */
+function digitOf(index: number): string {
+  return index < 9 ? String(index + 1) : '';
+}
+
 /** A short list to choose an item from; the first nine answer to their digits. */
 export function ItemPicker<C extends CatalogueCategory>({
   label,
@@ -47,6 +52,7 @@ export function ItemPicker<C extends CatalogueCategory>({
               checked={pick.key === chosen?.key}
               onChange={() => onPick(pick)}
             />
+            <kbd className={styles.digit}>{digitOf(picks.indexOf(pick))}</kbd>
             <span className={styles.name}>{pick.item.name}</span>
             <span className={styles.detail}>{detail(pick)}</span>
           </label>

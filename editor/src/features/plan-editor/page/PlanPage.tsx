@@ -49,6 +49,7 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
   // biome-ignore lint/correctness/useExhaustiveDependencies: the first choices are made once the catalogue is there.
   useEffect(() => {
     const { choices } = editor.session.getState();
+    editor.entries = entries;
     editor.session.setState({ choices: firstChoices(doc, entries, choices) });
   }, [editor, entries]);
 

@@ -5,7 +5,15 @@ import { CableEntry } from './CableEntry';
 import { useDoc, useEditor, useSession, useTools } from './context';
 import { SelectField } from './controls';
 import { ItemPicker } from './ItemPicker';
-import { type CatalogueEntry, fixtureChoice, lampsFor, pickItems, pickOf, wattsOf } from './items';
+import {
+  type CatalogueEntry,
+  fixtureChoice,
+  lampsFor,
+  pickItems,
+  pickOf,
+  transformerPicks,
+  wattsOf,
+} from './items';
 import styles from './page.module.css';
 
 /** What the tool at work puts down, and how to use it without a pointer. */
@@ -116,7 +124,7 @@ function TransformerOptions({ entries }: { readonly entries: readonly CatalogueE
   const doc = useDoc();
   const choices = useSession((s) => s.choices);
   const sheetId = useSession((s) => s.sheetId);
-  const picks = pickItems(doc, entries, 'transformer').sort((a, b) => a.item.ratedVA - b.item.ratedVA);
+  const picks = transformerPicks(doc, entries);
   const choice = choices.transformer;
   const elsewhere = [...recordsOf(doc, 'transformer')].filter((t) => t.sheetId !== sheetId);
   return (

@@ -40,19 +40,21 @@ export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {
       {editor.canEdit ? (
         <SaveNote />
       ) : (
-        <span className={styles.saved}>You can look; only designers change plans.</span>
+        <span className={styles.saved} title="Owners and designers change plans">
+          View only
+        </span>
       )}
       {editor.canEdit && (
         <span className={styles.later}>
           <Button
-            aria-disabled={undoLabel === null || undefined}
+            disabled={undoLabel === null}
             title={undoLabel === null ? 'Nothing to undo' : `Undo: ${undoLabel}`}
             onClick={() => editor.undo()}
           >
             Undo
           </Button>
           <Button
-            aria-disabled={redoLabel === null || undefined}
+            disabled={redoLabel === null}
             title={redoLabel === null ? 'Nothing to redo' : `Redo: ${redoLabel}`}
             onClick={() => editor.redo()}
           >

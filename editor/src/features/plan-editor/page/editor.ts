@@ -17,6 +17,7 @@ import { EstimateController, type EstimateDeps } from '../estimate/controller';
 import { boxOfRecords, extentOf } from '../tools/hit';
 import { ToolHost } from '../tools/host';
 import { settle, type ToolContext, type ToolId } from '../tools/tool';
+import type { CatalogueEntry } from './items';
 import type { PlanPort } from './plan-port';
 import { createSession, type SessionState } from './session';
 
@@ -29,6 +30,8 @@ export class PlanEditor {
   readonly session: StoreApi<SessionState>;
   readonly estimate: EstimateController;
   readonly tools: ToolHost;
+  /** The company's catalogue, as far as it has come. */
+  entries: readonly CatalogueEntry[] = [];
   private readonly undoers: (() => void)[] = [];
   private readonly context: ToolContext;
 

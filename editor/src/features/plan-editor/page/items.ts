@@ -4,8 +4,9 @@ import {
   type FixtureItem,
   fixtureInitial,
 } from '@lampwright/geometry/catalogue';
-import { type ItemChoice, type PlanDocument, recordsOf } from '@lampwright/geometry/plan';
+import { type ItemChoice, type PlanDocument, recordsOf, settingsOf } from '@lampwright/geometry/plan';
 import type { Choices } from '../tools/tool';
+import type { PlanEditor } from './editor';
 
 /** An entry of the company's catalogue, as far as the plan needs it. */
 export interface CatalogueEntry {
@@ -80,28 +81,75 @@ export function fixtureChoice(
   };
 }
 
-const isTwelve = (pick: PickItem<'cable'>): boolean =>
-  ('awg' in pick.item.conductor && pick.item.conductor.awg === 12) ||
-  ('mm2' in pick.item.conductor && pick.item.conductor.mm2 === 4);
+/** Below this the mains are American, and cable is sold by gauge. */
+const GAUGE_BELOW_VOLTS = 180;
 
-/** What the tools put down before anybody has chosen: the first of each kind, and everyday cable (12 AWG, 4 mm²). */
+/** The cable that the plan uses most; before it uses any, everyday cable: 12 AWG, or 4 mm² where cable is metric. */
+function usualCable(doc: PlanDocument, cables: readonly PickItem<'cable'>[]): ItemChoice | undefined {
+  const uses = new Map<string, number>();
+  for (const cable of recordsOf(doc, 'cable')) uses.set(cable.itemId, (uses.get(cable.itemId) ?? 0) + 1);
+  const [most] = [...uses].sort((a, b) => b[1] - a[1]);
+  if (most !== undefined) {
+    const copy = doc.get(most[0]);
+    const pick = cables.find((c) => copy?.kind === 'item' && c.key === (copy.sourceId ?? copy.id));
+    return pick?.choice ?? { itemId: most[0] };
+  }
+  const byGauge = settingsOf(doc).lineVolts < GAUGE_BELOW_VOLTS;
+  const everyday = cables.find(({ item: { conductor } }) =>
+    byGauge ? 'awg' in conductor && conductor.awg === 12 : 'mm2' in conductor && conductor.mm2 === 4,
+  );
+  return (everyday ?? cables[0])?.choice;
+}
+
+/** What the tools put down before anybody has chosen: a path light, the smallest transformer, the usual cable. */
 export function firstChoices(
   doc: PlanDocument,
   entries: readonly CatalogueEntry[],
   before: Choices,
 ): Choices {
   const lamps = pickItems(doc, entries, 'lamp');
-  const fixture = pickItems(doc, entries, 'fixture')[0];
+  const fixtures = pickItems(doc, entries, 'fixture');
+  const fixture = fixtures.find((f) => f.item.kind === 'path') ?? fixtures[0];
   const cables = pickItems(doc, entries, 'cable');
-  const cable = cables.find(isTwelve) ?? cables[0];
   const transformer = pickItems(doc, entries, 'transformer').sort(
     (a, b) => a.item.ratedVA - b.item.ratedVA,
   )[0];
   return {
     ...before,
     fixture: before.fixture ?? (fixture === undefined ? null : fixtureChoice(fixture, lamps)),
-    cable: before.cable ?? cable?.choice ?? null,
+    cable: before.cable ?? usualCable(doc, cables) ?? null,
     transformer:
       before.transformer ?? (transformer === undefined ? null : { kind: 'new', item: transformer.choice }),
   };
+}
+
+/** Chooses the nth item of the tool's list; false where the tool has no list, or none so long. */
+export function pickByDigit(editor: PlanEditor, digit: number): boolean {
+  const { choices } = editor.session.getState();
+  switch (editor.tools.state.getState().toolId) {
+    case 'fixture': {
+      const pick = pickItems(editor.doc, editor.entries, 'fixture')[digit - 1];
+      if (pick === undefined) return false;
+      const lamps = pickItems(editor.doc, editor.entries, 'lamp');
+      editor.session.setState({ choices: { ...choices, fixture: fixtureChoice(pick, lamps) } });
+      editor.tools.refresh();
+      return true;
+    }
+    case 'transformer': {
+      const pick = transformerPicks(editor.doc, editor.entries)[digit - 1];
+      if (pick === undefined) return false;
+      editor.session.setState({ choices: { ...choices, transformer: { kind: 'new', item: pick.choice } } });
+      return true;
+    }
+    default:
+      return false;
+  }
+}
+
+/** Transformers, smallest first. */
+export function transformerPicks(
+  doc: PlanDocument,
+  entries: readonly CatalogueEntry[],
+): PickItem<'transformer'>[] {
+  return pickItems(doc, entries, 'transformer').sort((a, b) => a.item.ratedVA - b.item.ratedVA);
 }
