@@ -1,13 +1,24 @@
 import {
   apply,
   type Change,
+  moveRecords,
   type PlanDocument,
   type PlanRecord,
+  placeFixture,
+  placeNote,
   planOf,
   rebase,
   sameData,
 } from '@lampwright/geometry/plan';
+import {
+  choice,
+  countedIds,
+  must,
+  pathLight,
+  startPlan,
+} from '../../../../../geometry/src/plan/plan.testkit.js';
 import type { Clock } from './clock';
+import { createPlanStore, type PlanStore } from './index';
 import type { PlanLocks } from './locks';
 import type { OutboxStorage } from './outbox';
 import type { CommittedChange, PlanTransport, SaveAnswer, SaveRequest } from './transport';
@@ -197,3 +208,43 @@ export async function rest(rounds = 200): Promise<void> {
   await new Promise<void>((resolve) => setImmediate(resolve));
   for (let i = 0; i < rounds; i += 1) await Promise.resolve();
 }
+
+let planCount = 0;
+
+/** A server with an empty sheet, and a browser with storage that outlives its windows. */
+export function setting(storage = memoryStorage()) {
+  const server = new MemoryServer(startPlan().values());
+  const ids = countedIds(`p${++planCount}-`);
+  const windows = browser();
+  const clock = manualClock();
+  const owner = { userId: 'u', companyId: 'c', planId: `plan${planCount}` };
+  function open() {
+    const { locks, close } = windows.openWindow();
+    const store = createPlanStore({ owner, transport: server.transport(), storage, locks, clock, ids });
+    return {
+      store,
+      /** As closing or killing the window does: nothing more runs, its locks are free. */
+      kill() {
+        store.stop();
+        close();
+      },
+    };
+  }
+  const note = (store: PlanStore, text: string) =>
+    must(placeNote(store.present(), { sheetId: 'sheet1', at: { x: 1, y: 1 }, text }, ids));
+  const fixture = (store: PlanStore, x: number): string => {
+    const placing = { sheetId: 'sheet1', at: { x, y: 0 }, fixture: choice(pathLight), lamp: null };
+    const edit = placeFixture(store.present(), placing, ids);
+    store.make(must(edit), 'Place fixture');
+    return edit.kind === 'change' ? (edit.selected[0] ?? '') : '';
+  };
+  const move = (store: PlanStore, id: string, dx: number) =>
+    store.make(must(moveRecords(store.present(), [id], dx, 0, ids)), 'Move');
+  const texts = () =>
+    [...server.plan.values()].flatMap((record) => (record.kind === 'note' ? [record.text] : [])).sort();
+  return { server, ids, clock, storage, open, note, fixture, move, texts };
+}
+
+/** The x of a placed record. */
+export const xOf = (plan: ReadonlyMap<string, unknown>, id: string) =>
+  (plan.get(id) as { at: { x: number } } | undefined)?.at.x;
