@@ -1,32 +1,18 @@
 import {
   apply,
-  type Change,
   deleteRecords,
   drawCable,
   moveRecords,
   PLAN_SCHEMA_VERSION,
   type PlanDocument,
-  placeFixture,
   placeNote,
-  placeTransformer,
-  rebase,
   resolveConflicts,
 } from '@lampwright/geometry/plan';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import {
-  cable12,
-  choice,
-  countedIds,
-  must,
-  pathLight,
-  randomEdit,
-  seeded,
-  transformer300,
-} from '../../../../geometry/src/plan/plan.testkit.js';
+import { cable12, choice, countedIds, must } from '../../../../geometry/src/plan/plan.testkit.js';
 import { startTestApp, type TestApp } from '../../../test/harness.js';
 import { addCompany, addPerson, type TestPerson } from '../../../test/people.js';
-import { PlanDocuments } from './plan-documents.js';
-import { addJob, addSheet, getPlan, save, saveInConflict } from './plans.testkit.js';
+import { getPlan, plantThree, save, saveInConflict } from './plans.testkit.js';
 
 const asObject = (plan: PlanDocument) => Object.fromEntries(plan);
 
@@ -46,28 +32,7 @@ describe('plans', () => {
   });
   afterAll(() => test?.close());
 
-  /** A job with a sheet and three fixtures, placed by the designer. */
-  async function threeFixtures() {
-    const jobId = await addJob(designer);
-    await addSheet(test, designer, jobId);
-    const ids = countedIds(`${jobId.slice(0, 8)}-`);
-    let { plan, version } = await getPlan(designer.agent, jobId);
-    const fixtures: string[] = [];
-    for (const x of [100, 200, 300]) {
-      const placing = { sheetId: 'sheet1', at: { x, y: 100 }, fixture: choice(pathLight), lamp: null };
-      const edit = placeFixture(plan, placing, ids);
-      const change = must(edit);
-      ({ version } = await save(designer.agent, jobId, {
-        session: 'a',
-        baseVersion: version,
-        changes: [change],
-      }));
-      plan = apply(plan, change);
-      if (edit.kind === 'change') fixtures.push(...edit.selected);
-    }
-    const [f1 = '', f2 = '', f3 = ''] = fixtures;
-    return { jobId, ids, plan, version, f1, f2, f3 };
-  }
+  const threeFixtures = () => plantThree(test, designer);
 
   it('begins with the settings of the company, and keeps what is saved', async () => {
     const { jobId, plan, version } = await threeFixtures();
@@ -283,101 +248,6 @@ describe('plans', () => {
     await designer.agent.post(`${path}/restore`).send({ version: 999 }).expect(404);
   });
 
-  it.each([21, 22])(
-    'seed %i: two clients in random order converge, and the plan is its changes replayed',
-    async (seed) => {
-      const jobId = await addJob(designer, `Seed ${seed}`);
-      await addSheet(test, designer, jobId);
-      const random = seeded(seed);
-      const start = await getPlan(designer.agent, jobId);
-      const clients = [designer, second].map((person, i) => ({
-        person,
-        ids: countedIds(`s${seed}c${i}-`),
-        session: `session-${i}`,
-        version: start.version,
-        view: start.plan,
-        unsent: [] as Change[],
-      }));
-      let conflicts = 0;
-      const send = async (client: (typeof clients)[number]) => {
-        const { person, session } = client;
-        if (client.unsent.length > 0) {
-          const body = { session, baseVersion: client.version, changes: client.unsent };
-          const answer = await person.agent.post(`/api/jobs/${jobId}/plan/changes`).send(body);
-          if (answer.status === 409) {
-            conflicts += 1;
-            // Decides at random, change by change, on what the server now has.
-            let { plan, version } = await getPlan(person.agent, jobId);
-            for (const change of client.unsent) {
-              const choices = new Map(
-                answer.body.conflicts.map((c: { recordId: string }) => [
-                  c.recordId,
-                  random() < 0.5 ? 'mine' : 'theirs',
-                ]),
-              ) as Map<string, 'mine' | 'theirs'>;
-              const rebased = rebase(plan, plan, change);
-              const own = rebased.kind === 'conflict' ? rebased.conflicts : [];
-              const told = answer.body.conflicts.filter(
-                (c: { recordId: string }) => change.put[c.recordId] ?? change.remove.includes(c.recordId),
-              );
-              const decided = resolveConflicts(plan, change, [...told, ...own], choices, client.ids());
-              ({ version } = await save(person.agent, jobId, {
-                session,
-                baseVersion: version,
-                changes: [decided],
-              }));
-              plan = apply(plan, decided);
-            }
-          } else expect(answer.status, answer.text).toBe(200);
-        }
-        const { plan, version } = await getPlan(person.agent, jobId);
-        Object.assign(client, { view: plan, version, unsent: [] });
-      };
-      for (let i = 0; i < 150; i += 1) {
-        const client = clients[random() < 0.5 ? 0 : 1]!;
-        if (random() < 0.15) await send(client);
-        else {
-          const change = randomEdit(client.view, random, client.ids);
-          if (!change) continue;
-          client.unsent.push(change);
-          client.view = apply(client.view, change);
-        }
-      }
-      for (const client of [...clients, ...clients]) await send(client);
-      expect(asObject(clients[0]!.view)).toEqual(asObject(clients[1]!.view));
-      expect(conflicts).toBeGreaterThan(0);
-      const documents = test.app.get(PlanDocuments, { strict: false });
-      const key = { companyId: designer.actor.companyId, jobId };
-      const { version, plan } = (await documents.read(key))!;
-      expect(asObject(await documents.at(key, version))).toEqual(asObject(plan));
-      expect(version).toBeGreaterThan(30);
-    },
-  );
-
-  it('keeps snapshots, and replays from them to the same plan', async () => {
-    const jobId = await addJob(designer, 'Long history');
-    await addSheet(test, designer, jobId);
-    let { plan, version } = await getPlan(designer.agent, jobId);
-    const ids = countedIds('long-');
-    const views = new Map([[version, plan]]);
-    while (version < 430) {
-      const changes = Array.from({ length: 50 }, (_, i) => {
-        const change = must(placeNote(plan, { sheetId: 'sheet1', at: { x: i, y: version }, text: 'x' }, ids));
-        plan = apply(plan, change);
-        return change;
-      });
-      ({ version } = await save(designer.agent, jobId, { baseVersion: version, changes }));
-      views.set(version, plan);
-    }
-    const documents = test.app.get(PlanDocuments, { strict: false });
-    const key = { companyId: designer.actor.companyId, jobId };
-    const { rows } = await test.database.executeSql('SELECT version FROM plan_snapshots WHERE job_id = $1', [
-      jobId,
-    ]);
-    expect(rows).toHaveLength(2);
-    for (const [at, view] of views) expect(asObject(await documents.at(key, at))).toEqual(asObject(view));
-  });
-
   it('lets many writers of one plan through, one at a time', async () => {
     const { jobId, plan, version } = await threeFixtures();
     const saves = Array.from({ length: 12 }, async (_, i) => {
@@ -390,53 +260,4 @@ describe('plans', () => {
     expect(versions.sort((a, b) => a - b)).toEqual(Array.from({ length: 12 }, (_, i) => version + 1 + i));
     expect((await getPlan(designer.agent, jobId)).plan.size).toBe(plan.size + 12);
   });
-
-  it('makes a summary on the server after a save, with the volts of its own solver', async () => {
-    const { jobId, ids, f1, ...rest } = await threeFixtures();
-    let { plan, version } = rest;
-    const place = { sheetId: 'sheet1', at: { x: 0, y: 100 } };
-    const placed = placeTransformer(plan, { ...place, transformer: choice(transformer300) }, ids);
-    const [t = ''] = placed.kind === 'change' ? placed.selected : [];
-    plan = apply(plan, must(placed));
-    const stops = [t, f1].map((id) => ({ on: 'record' as const, id }));
-    const wired = must(drawCable(plan, { sheetId: 'sheet1', stops, cable: choice(cable12) }, ids));
-    const changes = [must(placed), wired];
-    ({ version } = await save(designer.agent, jobId, { baseVersion: version, changes }));
-    const worker = await test.startWorker();
-    const path = `/api/jobs/${jobId}/plan/summary`;
-    const { body } = await until(
-      () => crew.agent.get(path),
-      (r) => r.body.summary?.planVersion === version,
-    );
-    await worker.close();
-    expect(body.version).toBe(version);
-    expect(body.summary).toMatchObject({
-      fixtures: 3,
-      unwired: 2,
-      waiting: 0,
-      failure: null,
-      cableMeters: expect.closeTo(1 + 0.9144 + 0.6096, 6),
-      conduitMeters: 0,
-      counts: { fault: 0, caution: 2 },
-    });
-    // 1 m drawn and the slack of US settings, 3 W at 0.9: some millivolts below 12 V.
-    expect(body.summary.lowestVolts).toBeGreaterThan(11.95);
-    expect(body.summary.lowestVolts).toBeLessThan(12);
-    expect(body.summary.runs).toMatchObject([
-      { label: 'run 1', lengthMeters: expect.closeTo(1 + 0.9144 + 0.6096, 6) },
-    ]);
-    const { body: list } = await crew.agent.get('/api/jobs?pageSize=100').expect(200);
-    const job = list.items.find((item: { id: string }) => item.id === jobId);
-    expect(JSON.stringify(job)).toContain('"fixtures":3');
-  });
 });
-
-/** Asks until the answer is as wanted, for ten seconds at most. */
-async function until<T>(ask: () => PromiseLike<T>, done: (answer: T) => boolean): Promise<T> {
-  for (let i = 0; i < 100; i += 1) {
-    const answer = await ask();
-    if (done(answer)) return answer;
-    await new Promise((resolve) => setTimeout(resolve, 100));
-  }
-  throw new Error('no such answer came in ten seconds');
-}

@@ -1,6 +1,13 @@
-import type { Change, PlanConflict, PlanDocument, PlanRecord } from '@lampwright/geometry/plan';
-import { planOf } from '@lampwright/geometry/plan';
-import { sheet } from '../../../../geometry/src/plan/plan.testkit.js';
+import {
+  apply,
+  type Change,
+  type PlanConflict,
+  type PlanDocument,
+  type PlanRecord,
+  placeFixture,
+  planOf,
+} from '@lampwright/geometry/plan';
+import { choice, countedIds, must, pathLight, sheet } from '../../../../geometry/src/plan/plan.testkit.js';
 import type { Agent, TestApp } from '../../../test/harness.js';
 import type { TestPerson } from '../../../test/people.js';
 import { PlacedSheets } from './placed-sheets.js';
@@ -58,4 +65,27 @@ export async function save(agent: Agent, jobId: string, body: SaveBody): Promise
 export async function saveInConflict(agent: Agent, jobId: string, body: SaveBody): Promise<ConflictBody> {
   const answer = await agent.post(`/api/jobs/${jobId}/plan/changes`).send(body).expect(409);
   return answer.body as ConflictBody;
+}
+
+/** A job with a sheet and three fixtures, placed by the designer. */
+export async function plantThree(test: TestApp, designer: TestPerson) {
+  const jobId = await addJob(designer);
+  await addSheet(test, designer, jobId);
+  const ids = countedIds(`${jobId.slice(0, 8)}-`);
+  let { plan, version } = await getPlan(designer.agent, jobId);
+  const fixtures: string[] = [];
+  for (const x of [100, 200, 300]) {
+    const placing = { sheetId: 'sheet1', at: { x, y: 100 }, fixture: choice(pathLight), lamp: null };
+    const edit = placeFixture(plan, placing, ids);
+    const change = must(edit);
+    ({ version } = await save(designer.agent, jobId, {
+      session: 'a',
+      baseVersion: version,
+      changes: [change],
+    }));
+    plan = apply(plan, change);
+    if (edit.kind === 'change') fixtures.push(...edit.selected);
+  }
+  const [f1 = '', f2 = '', f3 = ''] = fixtures;
+  return { jobId, ids, plan, version, f1, f2, f3 };
 }
