@@ -8,12 +8,10 @@ import {
   Param,
   Patch,
   Post,
-  UploadedFile,
   UseInterceptors,
 } from '@nestjs/common';
 import {
   ApiAcceptedResponse,
-  ApiBody,
   ApiConsumes,
   ApiNoContentResponse,
   ApiOkResponse,
@@ -33,9 +31,8 @@ import {
   sheetPageSchema,
   sheetSchema,
   sheetUploadSchema,
-  sheetViews,
 } from './sheets.dto.js';
-import { type ReceivedFile, SheetsService } from './sheets.service.js';
+import { SheetsService } from './sheets.service.js';
 import { UploadInterceptor } from './upload.interceptor.js';
 
 const id = { schema: z.uuid() };
@@ -57,25 +54,13 @@ export class SheetsController {
   @Permit('sheets.edit')
   @UseInterceptors(UploadInterceptor)
   @ApiConsumes('multipart/form-data')
-  @ApiBody({
-    schema: {
-      type: 'object',
-      required: ['file', 'view'],
-      properties: {
-        file: { type: 'string', format: 'binary' },
-        view: { type: 'string', enum: [...sheetViews] },
-        name: { type: 'string' },
-      },
-    },
-  })
   @ApiAcceptedResponse({ standardSchema: sheetSchema })
   upload(
     @CurrentActor() actor: Actor,
     @Param('id', id) jobId: string,
-    @Body({ schema: sheetUploadSchema }) fields: SheetUpload,
-    @UploadedFile() file: ReceivedFile,
+    @Body({ schema: sheetUploadSchema }) form: SheetUpload,
   ): Promise<Sheet> {
-    return this.sheets.upload(actor, jobId, file, fields);
+    return this.sheets.upload(actor, jobId, form);
   }
 
   @Get('sheets/:id')

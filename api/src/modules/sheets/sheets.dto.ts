@@ -5,8 +5,23 @@ const name = z.string().trim().min(1, { error: 'Please enter a name for the shee
 export const sheetViews = ['photo', 'plan'] as const;
 export type SheetView = (typeof sheetViews)[number];
 
-/** The text fields that go with an uploaded file. */
-export const sheetUploadSchema = z.strictObject({ view: z.enum(sheetViews), name: name.optional() });
+/** A file as it lies in the temporary folder. */
+export interface ReceivedFile {
+  readonly path: string;
+  readonly size: number;
+  readonly originalname: string;
+}
+const isReceived = (file: unknown): file is ReceivedFile =>
+  typeof file === 'object' && file !== null && 'path' in file && 'size' in file && 'originalname' in file;
+
+/** The form of an upload, with the file as the interceptor received it. */
+export const sheetUploadSchema = z.strictObject({
+  view: z.enum(sheetViews),
+  name: name.optional(),
+  file: z
+    .custom<ReceivedFile>(isReceived, { error: 'Please choose a file.' })
+    .meta({ type: 'string', format: 'binary' }),
+});
 export type SheetUpload = z.infer<typeof sheetUploadSchema>;
 
 export const sheetEditSchema = z.strictObject({ name });

@@ -16,13 +16,6 @@ import { type SheetRow, SheetsRepository } from './sheets.repository.js';
 
 const NAME_LENGTH = 120;
 
-/** A file as it lies in the temporary folder. */
-export interface ReceivedFile {
-  readonly path: string;
-  readonly size: number;
-  readonly originalname: string;
-}
-
 @Injectable()
 export class SheetsService {
   constructor(
@@ -46,7 +39,7 @@ export class SheetsService {
   }
 
   /** Stores the file as it came and leaves the rest to the worker. */
-  async upload(actor: Actor, jobId: string, file: ReceivedFile, fields: SheetUpload): Promise<Sheet> {
+  async upload(actor: Actor, jobId: string, { file, view, name }: SheetUpload): Promise<Sheet> {
     demand(actor, 'sheets.edit');
     const { companyId, userId } = actor;
     const state = await this.repository.jobState(companyId, jobId);
@@ -55,7 +48,7 @@ export class SheetsService {
       throw conflict('job-archived', 'This job is archived. Restore it before adding a sheet.');
     const kind = await judgeFile(file.path, file.size);
     if (typeof kind === 'object') throw new AppError(415, kind.code, kind.message);
-    if (kind === 'pdf' && fields.view === 'photo')
+    if (kind === 'pdf' && view === 'photo')
       throw new AppError(415, 'pdf-is-no-photo', 'A PDF can be a plot plan, but not a yard photo.');
 
     const id = randomUUID();
@@ -67,8 +60,8 @@ export class SheetsService {
         const row = await this.repository.insert(companyId, {
           id,
           jobId,
-          name: fields.name ?? nameFrom(file.originalname, fields.view),
-          view: fields.view,
+          name: name ?? nameFrom(file.originalname, view),
+          view,
           originalKey: key,
           uploadedBy: userId,
         });

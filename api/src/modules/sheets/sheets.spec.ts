@@ -196,6 +196,42 @@ describe('sheets with a worker', () => {
   });
 });
 
+describe('a sheet that is no longer wanted', () => {
+  let test: SheetTest;
+  let owner: TestPerson;
+  beforeAll(async () => {
+    test = await startSheetTest();
+    owner = await addPerson(test, await addCompany(test), 'owner');
+    await test.startWorker();
+  });
+  afterAll(() => test?.close());
+
+  it('stops while it is being made, and leaves nothing behind', async () => {
+    const jobId = await newJob(owner.agent);
+    // Every page of it is drawn for the picker: that takes a while.
+    const sent = await owner.agent
+      .post(`/api/jobs/${jobId}/sheets`)
+      .field('view', 'plan')
+      .attach('file', pdf(50, 3000, 3000), 'a.pdf')
+      .expect(202);
+    const { id } = sent.body;
+    const status = async () => (await owner.agent.get(`/api/sheets/${id}`).expect(200)).body.status;
+    await until(async () => (await status()) === 'processing');
+    await owner.agent.delete(`/api/sheets/${id}`).expect(204);
+    // The worker is free for the next one at once.
+    const next = await owner.agent
+      .post(`/api/jobs/${jobId}/sheets`)
+      .field('view', 'photo')
+      .attach('file', await phonePhoto(), 'b.jpg')
+      .expect(202);
+    expect(await settled(owner.agent, next.body.id)).toMatchObject({ status: 'ready' });
+    await until(async () => (await test.stored()).every((key) => !key.includes(id)));
+    const [row] = await test.database.queries.select().from(sheets).where(eq(sheets.id, id));
+    expect(row).toMatchObject({ status: 'processing', pageCount: null, imageKey: null });
+    expect(row?.archivedAt).not.toBeNull();
+  });
+});
+
 describe('sheets without a worker', () => {
   let test: SheetTest;
   let owner: TestPerson;

@@ -52,8 +52,13 @@ export class UploadInterceptor implements NestInterceptor, OnModuleDestroy {
       throw new AppError(415, 'not-multipart', 'Send the file as multipart/form-data.');
     await this.receive(request, http.getResponse<Response>());
     const { file } = request;
-    if (!file) throw badInput([{ pointer: `/${FIELD}`, detail: 'Please choose a file.' }]);
-    return next.handle().pipe(finalize(() => void rm(file.path, { force: true })));
+    // One form to the route: the file among its fields. What a field of that name said is overwritten.
+    request.body = { ...request.body, [FIELD]: file };
+    return next.handle().pipe(
+      finalize(() => {
+        if (file) void rm(file.path, { force: true });
+      }),
+    );
   }
 
   async onModuleDestroy(): Promise<void> {
