@@ -49,7 +49,22 @@ function known(error: unknown): Problem | null {
     if (status === 404) return plain(404, 'not-found', 'There is nothing at this address.');
     if (status < 500) return plain(status, 'refused', error.message);
   }
+  if (UNSTORABLE_TEXT.has(databaseCode(error)))
+    return plain(
+      400,
+      'bad-text',
+      'A text holds a character that cannot be stored (U+0000 or half of a pair).',
+    );
   return null;
+}
+
+/** PostgreSQL's codes for text that it cannot hold, as a column or inside of JSON. */
+const UNSTORABLE_TEXT = new Set(['22021', '22P05']);
+
+/** The database's own code, which the query builder keeps as the error's cause; empty for other errors. */
+function databaseCode(error: unknown): string {
+  const cause = error instanceof Error && error.cause instanceof Error ? error.cause : error;
+  return cause instanceof Error && 'code' in cause && typeof cause.code === 'string' ? cause.code : '';
 }
 
 /** Every error leaves as problem details (RFC 9457); what is unforeseen is logged, and told without detail. */
@@ -91,10 +106,8 @@ export class ProblemFilter implements ExceptionFilter {
 }
 
 /** Name and stack only: messages of database errors hold parameters, which may be personal. */
-function describe(error: unknown): { name: string; where: string; code?: string } {
-  if (!(error instanceof Error)) return { name: typeof error, where: '' };
+function describe(error: unknown): { name: string; where: string; code: string } {
+  if (!(error instanceof Error)) return { name: typeof error, where: '', code: '' };
   const frames = (error.stack ?? '').split('\n').filter((line) => line.trimStart().startsWith('at '));
-  const cause = error.cause instanceof Error ? error.cause : error;
-  const code = 'code' in cause && typeof cause.code === 'string' ? { code: cause.code } : {};
-  return { name: error.name, where: frames.slice(0, 8).join('\n'), ...code };
+  return { name: error.name, where: frames.slice(0, 8).join('\n'), code: databaseCode(error) };
 }

@@ -72,7 +72,7 @@ export const planChanges = pgTable(
     schemaVersion: integer('schema_version').notNull(),
     put: jsonb('put').notNull(),
     remove: jsonb('remove').notNull(),
-    /** Null for the system's own changes and for deleted people. */
+    /** Null for the system's own changes; of a deleted person only this id is left. */
     authorId: uuid('author_id'),
     /** The editing session that made it, whose later changes know it; empty for the system's own. */
     session: text('session').notNull().default(''),

@@ -32,6 +32,12 @@ describe('clients and properties', () => {
     expect((await designer.agent.post(`${path}/restore`).expect(200)).body.archivedAt).toBeNull();
   });
 
+  it('refuses text that the database cannot hold, in words', async () => {
+    const refused = await designer.agent.post('/api/clients').send({ name: 'Ida\u0000' }).expect(400);
+    expect(refused.body.code).toBe('bad-text');
+    await designer.agent.get('/api/clients?search=%00').expect(400);
+  });
+
   it('lists with the number of live jobs', async () => {
     const client = await create('Tom Brook');
     const property = { name: 'Front', address: '1 Weir Walk' };

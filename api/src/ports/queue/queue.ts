@@ -62,7 +62,13 @@ export class Queue implements OnModuleInit, OnApplicationShutdown {
     handle: (data: QueuePayloads[N], jobId: string) => Promise<void>,
   ): Promise<void> {
     await this.boss.work<QueuePayloads[N]>(name, { pollingIntervalSeconds: POLL_SECONDS }, async (jobs) => {
-      for (const job of jobs) await handle(job.data, job.id);
+      for (const job of jobs) {
+        try {
+          await handle(job.data, job.id);
+        } catch (error) {
+          throw withoutParameters(error);
+        }
+      }
     });
   }
 
@@ -76,4 +82,17 @@ export class Queue implements OnModuleInit, OnApplicationShutdown {
     this.stopped = true;
     await this.boss.stop({ graceful: true, wait: true, timeout: 8000 });
   }
+}
+
+/** The queue stores what a handler threw; messages of database errors hold parameters, maybe personal ones. */
+function withoutParameters(error: unknown): Error {
+  if (!(error instanceof Error)) return new Error('The handler threw something that is no error.');
+  if (!(error.cause instanceof Error)) return error;
+  const code = 'code' in error.cause ? ` (${String(error.cause.code)})` : '';
+  const told = new Error(`${error.name}${code}`);
+  told.stack = (error.stack ?? '')
+    .split('\n')
+    .filter((line) => line.trimStart().startsWith('at '))
+    .join('\n');
+  return told;
 }
