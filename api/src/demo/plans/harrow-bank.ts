@@ -129,7 +129,7 @@ function drawGround(plan: PlanBuilder): void {
     ],
     2.7,
   );
-  plan.area('water', 'the pond', pond);
+  plan.area('water', 'Pond', pond);
 }
 
 function rectangle(id: string, corners: Quad, widthMeters: number, depthMeters: number) {

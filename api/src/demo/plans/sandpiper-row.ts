@@ -112,7 +112,7 @@ function drawGround(plan: PlanBuilder): void {
   );
   plan.area('paved', 'Patio', box(30, 44, 60, 58));
   plan.area('paved', 'Pool deck', [...box(33, 19, 61, 39)]);
-  plan.area('water', 'the pool', box(36, 22, 58, 36));
+  plan.area('water', 'Pool', box(36, 22, 58, 36));
   plan.area('bed', 'North bed', box(1, 1, 81, 14));
   plan.area('bed', 'West bed', box(1, 20, 10, 88));
   plan.area('bed', 'Front bed', box(14, 92.4, 31, 98));
