@@ -4,7 +4,8 @@ import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { addCompany, addPerson, endSessions, type TestPerson } from '../../../test/people.js';
 import { planChanges, sheets } from '../../database/schema/index.js';
 import { lockedPdf, pdf, phonePhoto, quarters } from '../../media/files.testkit.js';
-import { MAX_UPLOAD_BYTES } from '../../media/limits.js';
+import { ObjectStorage } from '../../ports/storage/storage.js';
+import { SheetsRepository } from './sheets.repository.js';
 import { newJob, type SheetTest, settled, startSheetTest, until } from './sheets.testkit.js';
 
 describe('sheets with a worker', () => {
@@ -153,7 +154,6 @@ describe('sheets with a worker', () => {
     const { companyId } = owner.actor;
     const original = `${companyId}/sheets/${id}/original`;
     await until(async () => !(await test.stored()).includes(original));
-    const { ObjectStorage } = await import('../../ports/storage/storage.js');
     await test.app.get(ObjectStorage, { strict: false }).put(original, await phonePhoto(1), 'image/jpeg');
     await test.database.queries
       .update(sheets)
@@ -192,7 +192,6 @@ describe('sheets with a worker', () => {
     await post(stranger).expect(404);
     await owner.agent.post(`/api/jobs/${jobId}/archive`).expect(200);
     expect((await post(owner).expect(409)).body.code).toBe('job-archived');
-    expect(MAX_UPLOAD_BYTES).toBe(40 * 1024 * 1024);
   });
 });
 
@@ -249,6 +248,30 @@ describe('sheets without a worker', () => {
       .expect(202);
     return answer.body.id as string;
   };
+
+  it('lets one worker at a time at a sheet, and others at others', async () => {
+    const repository = test.app.get(SheetsRepository, { strict: false });
+    const done: string[] = [];
+    await repository.alone('one', async () => {
+      await repository.alone('one', async () => {
+        done.push('one, meanwhile');
+      });
+      await repository.alone('another', async () => {
+        done.push('another');
+      });
+      done.push('one');
+    });
+    await repository.alone('one', async () => {
+      done.push('one, afterwards');
+    });
+    await expect(repository.alone('one', () => Promise.reject(new Error('failed')))).rejects.toThrow(
+      'failed',
+    );
+    await repository.alone('one', async () => {
+      done.push('one, after a failure');
+    });
+    expect(done).toEqual(['another', 'one', 'one, afterwards', 'one, after a failure']);
+  });
 
   it('cancels a sheet that waits, deletes its file, and takes up what a killed worker left', async () => {
     const cancelled = await upload();
