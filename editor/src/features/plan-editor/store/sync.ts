@@ -9,6 +9,7 @@ import {
 import { createStore } from 'zustand/vanilla';
 import type { Clock } from './clock';
 import type { DocumentStore } from './document';
+import { createFollower } from './follower';
 import type { PlanLocks } from './locks';
 import type { Outbox, Unsent } from './outbox';
 import { decide, nextBatch, saveRequest } from './sender';
@@ -31,7 +32,6 @@ export interface SaveState {
 
 const FIRST_RETRY_MILLISECONDS = 1000;
 const LONGEST_RETRY_MILLISECONDS = 30_000;
-const CATCH_UP_RETRY_MILLISECONDS = 5000;
 
 export interface SyncParts {
   readonly document: DocumentStore;
@@ -62,17 +62,19 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
   const releases: (() => void)[] = [];
   let order = 0;
   let stopped = false;
-  let stopFollowing: (() => void) | null = null;
   let cancelRetry: (() => void) | null = null;
-  let cancelCatchUp: (() => void) | null = null;
   let failures = 0;
   let flushing: Promise<void> | null = null;
   let flushAgain = false;
   let disputed: readonly Unsent[] = [];
-  let catching: Promise<void> | null = null;
-  let newestHeard = 0;
   const writes = new Set<Promise<unknown>>();
+  /** Ids of pending changes that are this session's own. */
+  const madeHere = new Set<string>();
 
+  const follower = createFollower(document, transport, clock, (changes) => {
+    for (const { change } of changes) madeHere.delete(change.id);
+    settle({});
+  });
   const responsible = () => [...adopted, session];
   const paused = () => ['conflict', 'refused', 'signed-out'].includes(getState().phase);
 
@@ -96,9 +98,6 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
     track(write);
     void write.then(flush);
   }
-  /** Ids of pending changes that are this session's own. */
-  const madeHere = new Set<string>();
-
   function track(write: Promise<unknown>): void {
     writes.add(write);
     void write.finally(() => writes.delete(write));
@@ -156,14 +155,14 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
         });
         // The server has them: only now may the browser forget them.
         await outbox.clear(batch.filter(({ change }) => version.has(change.id)));
-        if (!document.committed([...mine, ...answer.others])) await catchUp();
+        if (!document.committed([...mine, ...answer.others])) await follower.catchUp();
         for (const { change } of mine) madeHere.delete(change.id);
         settle({ message: null });
         return true;
       }
       case 'conflict':
         failures = 0;
-        if (!document.committed(answer.others)) await catchUp();
+        if (!document.committed(answer.others)) await follower.catchUp();
         disputed = batch;
         settle({ phase: 'conflict', conflicts: answer.conflicts, choices: new Map(), message: null });
         return false;
@@ -191,42 +190,6 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
     });
   }
 
-  /** Takes all versions since the newest known one, one request at a time; tries again where that fails. */
-  function catchUp(): Promise<void> {
-    catching ??= takeVersions().finally(() => {
-      catching = null;
-    });
-    return catching;
-  }
-
-  async function takeVersions(): Promise<void> {
-    cancelCatchUp?.();
-    cancelCatchUp = null;
-    try {
-      do {
-        const changes = await transport.changesSince(document.store.getState().serverVersion);
-        if (stopped) return;
-        if (!document.committed(changes)) await reload();
-        for (const { change } of changes) madeHere.delete(change.id);
-        settle({});
-        if (changes.length === 0) return;
-      } while (newestHeard > document.store.getState().serverVersion);
-    } catch {
-      if (stopped) return;
-      cancelCatchUp = clock.after(CATCH_UP_RETRY_MILLISECONDS, () => void catchUp());
-    }
-  }
-
-  async function reload(): Promise<void> {
-    const { version, records } = await transport.load();
-    if (!stopped) document.loaded(version, records);
-  }
-
-  function heard(version: number): void {
-    newestHeard = Math.max(newestHeard, version);
-    if (version > document.store.getState().serverVersion) void catchUp();
-  }
-
   /** Takes over what closed windows left unsent. */
   async function adoptOrphans(): Promise<void> {
     const taken: string[] = [];
@@ -252,7 +215,7 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
 
   async function open(): Promise<void> {
     try {
-      await reload();
+      await follower.load();
       failures = 0;
     } catch (error) {
       if (stopped) return;
@@ -261,7 +224,7 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
       return;
     }
     if (stopped) return;
-    stopFollowing ??= transport.follow(heard);
+    follower.follow();
     await flush();
   }
 
@@ -277,7 +240,7 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
     await adoptOrphans().catch(cannotAdopt);
     if (document.store.getState().status !== 'ready') await open();
     else {
-      await catchUp();
+      await follower.catchUp();
       await flush();
     }
   }
@@ -335,8 +298,7 @@ export function createSync({ document, outbox, transport, locks, clock, ids }: S
     stop(): void {
       stopped = true;
       cancelRetry?.();
-      cancelCatchUp?.();
-      stopFollowing?.();
+      follower.stop();
       for (const release of releases) release();
     },
   };
