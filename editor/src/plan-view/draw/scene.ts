@@ -121,6 +121,8 @@ export interface LabelDemand {
   readonly chosen: ReadonlySet<string>;
   /** Figures that stand beside a place rather than a mark: of the hovered cable, of measurements. */
   readonly asides: readonly Aside[];
+  /** How plainly fixtures' figures are shown: 1, or less while they are of an older plan. */
+  readonly alpha: number;
 }
 
 const RANK_HOVERED = 5;
@@ -205,12 +207,14 @@ export function drawLabels(
   }
   const placed = placeLabels(wishes, marks, window);
   for (const { id, box } of placed) {
+    ctx.globalAlpha = 1;
     const aside = asides.get(id);
     if (aside !== undefined) drawWorkingLabel(ctx, box, aside.text);
     const name = names.get(id);
     if (name !== undefined) drawAreaName(ctx, name.at, name.text);
     const fixture = byId.get(id);
     if (fixture === undefined) continue;
+    ctx.globalAlpha = demand.alpha;
     const edge = demand.hoveredId === id || demand.chosen.has(id) ? ink : grey;
     drawLabel(
       ctx,
@@ -219,6 +223,7 @@ export function drawLabels(
       labelEdge(fixture.look) === grey ? edge : labelEdge(fixture.look),
     );
   }
+  ctx.globalAlpha = 1;
   return placed.length;
 }
 

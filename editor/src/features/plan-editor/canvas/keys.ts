@@ -1,5 +1,5 @@
 import type { PlanEditor } from '../page/editor';
-import { pickByDigit } from '../page/items';
+import { pickByDigit } from '../page/pick-by-digit';
 
 /** Window pixels that an arrow key moves the view. */
 const PAN_STEP = 60;

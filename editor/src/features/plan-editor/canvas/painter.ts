@@ -1,4 +1,4 @@
-import { type Camera, markRadius, type Point, type Size, toWindow } from '../../../plan-view/camera';
+import { type Camera, markRadius, type Point, toWindow } from '../../../plan-view/camera';
 import { drawArea } from '../../../plan-view/draw/areas';
 import { type CableStroke, drawCables, drawChosenCable } from '../../../plan-view/draw/cable';
 import { drawChoice } from '../../../plan-view/draw/fixture';
@@ -12,19 +12,8 @@ import {
 import { MarkSprites } from '../../../plan-view/draw/sprites';
 import { emptyScene, type Scene, type SceneCable } from '../../../plan-view/scene';
 import type { Preview } from '../tools/tool';
+import type { PaintState } from './paint-state';
 import { drawPreview } from './preview';
-
-export interface PaintState {
-  readonly scene: Scene;
-  readonly camera: Camera;
-  readonly size: Size;
-  readonly selection: ReadonlySet<string>;
-  readonly hoveredId: string | null;
-  readonly preview: Preview | null;
-  /** The figures shown are of the plan before the last change. */
-  readonly stale: boolean;
-  readonly lengthText: (points: readonly Point[]) => string;
-}
 
 const nobody: ReadonlySet<string> = new Set();
 
@@ -131,14 +120,13 @@ export class Painter {
     const { camera, size, selection, hoveredId, stale } = this.state;
     drawNodes(ctx, camera, size, scene.nodes);
     drawFixtures(ctx, camera, size, scene.fixtures, this.sprites);
-    ctx.globalAlpha = stale ? STALE_ALPHA : 1;
     drawLabels(ctx, camera, size, scene.fixtures, scene.nodes, scene.areas, {
       // The figures of the hand at work are what counts while it works.
       hoveredId: isBusy(this.state.preview) ? null : hoveredId,
       chosen: selection,
       asides: this.asides(scene),
+      alpha: stale ? STALE_ALPHA : 1,
     });
-    ctx.globalAlpha = 1;
   }
 
   private paintOverlay(ctx: CanvasRenderingContext2D): void {

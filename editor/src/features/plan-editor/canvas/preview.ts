@@ -5,7 +5,7 @@ import { drawMeasurement, workingLabelAt } from '../../../plan-view/draw/scene';
 import type { MarkSprites } from '../../../plan-view/draw/sprites';
 import { ink, lamp, paper } from '../../../plan-view/palette';
 import type { PlaceMark, Preview } from '../tools/tool';
-import type { PaintState } from './painter';
+import type { PaintState } from './paint-state';
 
 /** A segment shorter than this, in window pixels, is only just begun: its length would cover it. */
 const SHORTEST_TOLD = 24;

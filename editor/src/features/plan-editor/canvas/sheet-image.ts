@@ -43,6 +43,12 @@ export function useSheetImage(url: string | null): SheetImageState {
       image.src = '';
     };
   }, [url, attempt]);
+  // What failed for want of a network loads when it is back.
+  useEffect(() => {
+    if (state.is !== 'failed') return;
+    window.addEventListener('online', state.retry);
+    return () => window.removeEventListener('online', state.retry);
+  }, [state]);
   return state;
 }
 

@@ -1,7 +1,8 @@
-import { type ConflictChoice, labelOf, type PlanConflict, type PlanRecord } from '@lampwright/geometry/plan';
+import type { ConflictChoice, PlanConflict, PlanRecord } from '@lampwright/geometry/plan';
 import { Button } from '../../../components/button';
-import { useEditor, usePlan } from './context';
-import { describeRecord } from './describe';
+import { tagOf } from '../../../plan-view/names';
+import { useDoc, useEditor, usePlan } from './context';
+import { describeName, describeRecord } from './describe';
 import { PanelFrame } from './PanelFrame';
 import styles from './page.module.css';
 
@@ -44,8 +45,9 @@ interface ConflictProps {
 }
 
 function Conflict({ conflict, choice, choose }: ConflictProps) {
+  const doc = useDoc();
   const record = conflict.mine ?? conflict.theirs ?? conflict.base;
-  const name = record === null ? 'Something removed' : labelOf(record);
+  const name = record === null ? 'Something removed' : `${tagOf(doc, record)} ${describeName(record)}`.trim();
   const side = (label: string, which: ConflictChoice, value: PlanRecord | null) => (
     <div className={styles.side}>
       <h4>{label}</h4>

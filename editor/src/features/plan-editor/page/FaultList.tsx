@@ -4,6 +4,7 @@ import { tagOf } from '../../../plan-view/names';
 import { useDoc, useEditor } from './context';
 import { PanelFrame } from './PanelFrame';
 import styles from './page.module.css';
+import type { Faults } from './use-faults';
 
 const heads: Readonly<Record<FaultSeverity, string>> = {
   fault: 'Faults',
@@ -12,12 +13,26 @@ const heads: Readonly<Record<FaultSeverity, string>> = {
 };
 const order: readonly FaultSeverity[] = ['fault', 'caution', 'advice'];
 
-export function FaultList({ faults }: { readonly faults: readonly PlanFault[] }) {
+export function FaultList({ faults: { list: faults, voltsKnown } }: { readonly faults: Faults }) {
   const editor = useEditor();
   const doc = useDoc();
   return (
-    <PanelFrame title={faults.some((f) => f.severity === 'fault') ? 'What stands in the way' : 'No faults'}>
-      {faults.length === 0 && <p className={styles.calm}>Every fixture that is wired sits in its window.</p>}
+    <PanelFrame
+      title={
+        faults.some((f) => f.severity === 'fault')
+          ? 'What stands in the way'
+          : voltsKnown
+            ? 'No faults'
+            : 'Volts not known yet'
+      }
+    >
+      {faults.length === 0 && (
+        <p className={styles.calm}>
+          {voltsKnown
+            ? 'Every fixture that is wired sits in its window.'
+            : 'The volts are not known yet, so nothing can be said of them.'}
+        </p>
+      )}
       {order.map((severity) => {
         const some = faults.filter((f) => f.severity === severity);
         if (some.length === 0) return null;

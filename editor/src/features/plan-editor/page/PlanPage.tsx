@@ -15,7 +15,7 @@ import type { Drawer } from './session';
 import { pageKey } from './shortcuts';
 import { ToolOptions } from './ToolOptions';
 import { ToolStrip } from './ToolStrip';
-import { TopBar } from './TopBar';
+import { faultsShort, TopBar } from './TopBar';
 import { type Faults, useFaults } from './use-faults';
 import { ZoomBar } from './ZoomBar';
 
@@ -95,7 +95,7 @@ function Panels({ faults, history }: { readonly faults: Faults; readonly history
     case 'scale':
       return <ScalePanel />;
     case 'faults':
-      return <FaultList faults={faults.list} />;
+      return <FaultList faults={faults} />;
     case 'history':
       return history;
     case 'conflicts':
@@ -125,6 +125,7 @@ function Messages() {
   const hasCable = useEstimate((s) => (s.plan?.waiting.length ?? 0) > 0);
   const toolId = useTools((s) => s.toolId);
   const conflicts = usePlan((s) => s.conflicts.length);
+  const panel = useSession((s) => s.panel);
   return (
     <div className={styles.messages} aria-live="polite">
       {message !== null && (
@@ -135,7 +136,7 @@ function Messages() {
           </button>
         </p>
       )}
-      {conflicts > 0 && (
+      {conflicts > 0 && panel !== 'conflicts' && (
         <p>
           Somebody else changed what you changed.
           <button type="button" onClick={() => editor.session.setState({ panel: 'conflicts' })}>
@@ -177,7 +178,7 @@ function Drawers({ faults }: { readonly faults: Faults }) {
   const drawer = useSession((s) => s.drawer);
   const chosen = useSession((s) => s.selection.size);
   return (
-    <div className={styles.drawers} role="toolbar" aria-label="Panels">
+    <section className={styles.drawers} aria-label="Panels">
       {drawers.map(({ id, word }) => (
         <button
           key={id}
@@ -194,10 +195,8 @@ function Drawers({ faults }: { readonly faults: Faults }) {
         className={styles.strong}
         onClick={() => editor.session.setState({ panel: 'faults', drawer: 'none' })}
       >
-        {faults.counts.fault > 0
-          ? `${faults.counts.fault} ${faults.counts.fault === 1 ? 'fault' : 'faults'}`
-          : 'No faults'}
+        {faultsShort(faults)}
       </button>
-    </div>
+    </section>
   );
 }

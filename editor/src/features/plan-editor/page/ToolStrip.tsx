@@ -13,7 +13,7 @@ export function ToolStrip() {
   const toolId = useTools((s) => s.toolId);
   const tools = editor.canEdit ? toolIds : (['select'] as const);
   return (
-    <div className={styles.strip} role="toolbar" aria-label="Tools" aria-orientation="vertical">
+    <section className={styles.strip} aria-label="Tools">
       {tools.map((id) => (
         <button
           key={id}
@@ -28,6 +28,6 @@ export function ToolStrip() {
           <span>{toolWord(id)}</span>
         </button>
       ))}
-    </div>
+    </section>
   );
 }

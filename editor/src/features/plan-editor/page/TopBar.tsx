@@ -15,9 +15,17 @@ interface TopBarProps {
 }
 
 /** What stands in the way of moving the job on. */
-export function faultsWord({ counts: { fault, caution, advice } }: Faults): string {
+export function faultsWord(faults: Faults): string {
+  const { fault, caution, advice } = faults.counts;
   if (fault > 0) return `${fault} ${fault === 1 ? 'fault' : 'faults'} before sharing`;
+  if (!faults.voltsKnown) return 'Volts not known yet';
   return caution + advice > 0 ? `No faults, ${caution + advice} to look at` : 'No faults';
+}
+
+/** The same for where there is little room. */
+export function faultsShort({ counts: { fault }, voltsKnown }: Faults): string {
+  if (fault > 0) return `${fault} ${fault === 1 ? 'fault' : 'faults'}`;
+  return voltsKnown ? 'No faults' : 'No volts yet';
 }
 
 export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {

@@ -58,3 +58,17 @@ function isPoint(value: unknown): value is { x: number; y: number } {
 function same(a: unknown, b: unknown): boolean {
   return JSON.stringify(a) === JSON.stringify(b);
 }
+
+/** The name that a person gave a record; empty where it has none. */
+export function describeName(record: PlanRecord): string {
+  switch (record.kind) {
+    case 'transformer':
+    case 'feed':
+    case 'fixture':
+    case 'junction':
+    case 'run':
+      return record.name;
+    default:
+      return '';
+  }
+}

@@ -6,8 +6,7 @@ import {
 } from '@lampwright/geometry/estimate';
 import { changeSchema, planRecordSchema } from '@lampwright/geometry/plan';
 import { z } from 'zod';
-import { ApiProblem } from '../../../lib/api/client';
-import { fetchOrProblem } from '../../../lib/api/transport';
+import { ApiProblem, server } from '../../../lib/api/client';
 import type { PlanTransport, SaveAnswer } from '../store';
 
 /** The plan's routes. Answers are parsed with the plan's own schemas, which the OpenAPI document does not repeat. */
@@ -50,50 +49,40 @@ const historySchema = z.object({
 });
 export type HistoryPage = z.infer<typeof historySchema>;
 
-async function call<T>(schema: z.ZodType<T>, path: string, init: RequestInit = {}): Promise<T> {
-  const response = await fetchOrProblem(
-    new Request(new URL(path, location.origin), {
-      credentials: 'same-origin',
-      ...init,
-      headers: {
-        Accept: 'application/json',
-        ...(init.body === undefined ? {} : { 'Content-Type': 'application/json' }),
-      },
-    }),
-  );
-  const parsed = schema.safeParse(await response.json());
+/** The body of an answer, of the plan's own shape. */
+async function read<T>(schema: z.ZodType<T>, call: Promise<{ data?: unknown }>): Promise<T> {
+  const parsed = schema.safeParse((await call).data);
   if (parsed.success) return parsed.data;
   throw new ApiProblem(
-    response.status,
+    200,
     'unreadable-answer',
     'The server answered in a way that this window does not understand. Reload the page: it may be out of date.',
   );
 }
 
-const post = (body: unknown, signal?: AbortSignal): RequestInit => ({
-  method: 'POST',
-  body: JSON.stringify(body),
-  ...(signal === undefined ? {} : { signal }),
-});
-
-const planPath = (jobId: string) => `/api/jobs/${encodeURIComponent(jobId)}/plan`;
+const at = (jobId: string) => ({ params: { path: { jobId } } });
 
 /** How long to wait before listening again after the server turned a listener away. */
 const LISTEN_AGAIN_MS = 10_000;
 
 export function httpTransport(jobId: string): PlanTransport {
-  const path = planPath(jobId);
   return {
-    load: () => call(planSchema, path),
-    changesSince: async (since) => (await call(changesSchema, `${path}/changes?since=${since}`)).changes,
-    async save(request) {
+    load: () => read(planSchema, server.GET('/api/jobs/{jobId}/plan', at(jobId))),
+    async changesSince(since) {
+      const params = { path: { jobId }, query: { since } };
+      const page = await read(changesSchema, server.GET('/api/jobs/{jobId}/plan/changes', { params }));
+      return page.changes;
+    },
+    async save({ session, baseVersion, own, changes }) {
+      const body = { session, baseVersion, own: [...own], changes: [...changes] };
       try {
-        return { kind: 'saved', ...(await call(savedSchema, `${path}/changes`, post(request))) };
+        const saved = server.POST('/api/jobs/{jobId}/plan/changes', { ...at(jobId), body });
+        return { kind: 'saved', ...(await read(savedSchema, saved)) };
       } catch (error) {
         return failedSave(error);
       }
     },
-    follow: (heard) => followVersions(`${path}/events`, heard),
+    follow: (heard) => followVersions(`/api/jobs/${encodeURIComponent(jobId)}/plan/events`, heard),
   };
 }
 
@@ -142,18 +131,20 @@ function parseJson(data: unknown): unknown {
 }
 
 export const askEstimate = (request: EstimateRequest, signal: AbortSignal): Promise<EstimateAnswer> =>
-  call(estimateAnswerSchema, '/api/estimates', post(request, signal));
+  read(estimateAnswerSchema, server.POST('/api/estimates', { body: request, signal }));
 
-export const readHistory = (jobId: string, before: number | null): Promise<HistoryPage> =>
-  call(historySchema, `${planPath(jobId)}/history${before === null ? '' : `?before=${before}`}`);
+export const readHistory = (jobId: string, before: number | null): Promise<HistoryPage> => {
+  const params = { path: { jobId }, query: before === null ? {} : { before } };
+  return read(historySchema, server.GET('/api/jobs/{jobId}/plan/history', { params }));
+};
 
 /** Makes the plan what it was at that version, as a new change; the page hears of it like of any other. */
-export async function restoreVersion(jobId: string, to: number): Promise<void> {
-  await call(savedSchema, `${planPath(jobId)}/restore`, post({ version: to }));
+export async function restoreVersion(jobId: string, version: number): Promise<void> {
+  await server.POST('/api/jobs/{jobId}/plan/restore', { ...at(jobId), body: { version } });
 }
 
 const catalogueSchema = z.object({ items: z.array(z.object({ id: z.string(), item: catalogueItemSchema })) });
 
 export async function readCatalogue(): Promise<{ readonly id: string; readonly item: CatalogueItem }[]> {
-  return (await call(catalogueSchema, '/api/catalogue')).items;
+  return (await read(catalogueSchema, server.GET('/api/catalogue'))).items;
 }

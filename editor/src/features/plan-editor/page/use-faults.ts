@@ -5,6 +5,8 @@ import { useDoc, useEstimate, useUnitSystem } from './context';
 export interface Faults {
   readonly list: readonly PlanFault[];
   readonly counts: ReturnType<typeof countBySeverity>;
+  /** False while there is cable to reckon with and no answer yet: then no faults mean nothing. */
+  readonly voltsKnown: boolean;
 }
 
 /** Everything wrong with the plan, worst first, as the last answer and the plan say it. */
@@ -18,6 +20,7 @@ export function useFaults(): Faults {
   return useMemo(() => {
     const known = plan !== null && estimated === doc ? { lengths, estimate: plan } : {};
     const list = planFaults(doc, answer, { system, ...known });
-    return { list, counts: countBySeverity(list) };
+    const voltsKnown = answer !== null || plan === null || plan.request === null;
+    return { list, counts: countBySeverity(list), voltsKnown };
   }, [doc, system, answer, estimated, plan, lengths]);
 }

@@ -55,7 +55,9 @@ export function usePlanEditor(
     };
     const stopLooking = store.document.subscribe(look);
     const resume = () => {
-      if (document.visibilityState === 'visible') void store.resume();
+      if (document.visibilityState !== 'visible') return;
+      void store.resume();
+      if (editor !== null && editor.estimate.state.getState().problem !== null) editor.estimate.retry();
     };
     window.addEventListener('online', resume);
     document.addEventListener('visibilitychange', resume);

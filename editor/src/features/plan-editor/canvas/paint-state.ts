@@ -1,0 +1,16 @@
+import type { Camera, Point, Size } from '../../../plan-view/camera';
+import type { Scene } from '../../../plan-view/scene';
+import type { Preview } from '../tools/tool';
+
+/** All that the painted layers depend on. */
+export interface PaintState {
+  readonly scene: Scene;
+  readonly camera: Camera;
+  readonly size: Size;
+  readonly selection: ReadonlySet<string>;
+  readonly hoveredId: string | null;
+  readonly preview: Preview | null;
+  /** The figures shown are of the plan before the last change. */
+  readonly stale: boolean;
+  readonly lengthText: (points: readonly Point[]) => string;
+}
