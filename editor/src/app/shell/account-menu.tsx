@@ -29,7 +29,8 @@ export function AccountMenu() {
   return (
     <DropdownMenu.Root>
       <DropdownMenu.Trigger>
-        <button type="button" className={styles.account} aria-label={`Account of ${me.user.name}`}>
+        <button type="button" className={styles.account}>
+          <span className="visually-hidden">Account of {me.user.name}, </span>
           <span className={styles.company}>{me.company?.name ?? me.user.name}</span>
           <span className={styles.initials} aria-hidden="true">
             {initialsOf(me.user.name)}

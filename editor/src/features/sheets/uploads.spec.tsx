@@ -83,7 +83,8 @@ it('can be cancelled, and then nothing is received', async () => {
 
 it('keeps a failed upload with its reason, and sends it again when asked', async () => {
   const { result, received } = await begin();
-  await act(async () => (await nth(0)).onerror?.());
+  const request = await nth(0);
+  act(() => request.onerror?.());
   await waitFor(() => expect(result.current.uploads[0]?.step.kind).toBe('failed'));
   expect(result.current.uploads[0]?.step).toMatchObject({ canRetry: true });
   act(() => void result.current.retry(result.current.uploads[0]!));
