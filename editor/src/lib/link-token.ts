@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 
 /** The token of a mail link, from the part of the address that is never sent to a server or logged. */
 export function tokenOf(hash: string): string {
@@ -7,15 +7,12 @@ export function tokenOf(hash: string): string {
 
 /** Reads the token once, and takes it out of the address bar and the history. */
 export function useLinkToken(): string {
-  const [token] = useState(() => {
-    const found = tokenOf(window.location.hash);
-    if (found !== '')
-      window.history.replaceState(
-        window.history.state,
-        '',
-        window.location.pathname + window.location.search,
-      );
-    return found;
-  });
+  const [token] = useState(() => tokenOf(window.location.hash));
+  // Not while rendering: a rendering that React throws away would take the token with it.
+  useEffect(() => {
+    if (token === '') return;
+    const { pathname, search } = window.location;
+    window.history.replaceState(window.history.state, '', `${pathname}${search}`);
+  }, [token]);
   return token;
 }

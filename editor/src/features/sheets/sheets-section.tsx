@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { useEffect, useRef } from 'react';
 import { Section } from '../../components/page';
 import { Problem } from '../../components/states';
 import type { Sheet } from '../../lib/sheets';
@@ -17,12 +18,23 @@ interface SheetsSectionProps {
   readonly planHref: (sheetId: string) => string;
 }
 
+const countReady = (sheets: readonly Sheet[]): number =>
+  sheets.filter(({ status }) => status === 'ready').length;
+
 /** The job's yard photos and plot plans, those on their way, and where to add more. */
 export function SheetsSection({ jobId, initial, editable, planHref }: SheetsSectionProps) {
   const sheets = useQuery(sheetsQuery(jobId, initial));
   const refresh = useRefreshSheets(jobId);
   const { uploads, add, cancel, retry } = useUploads(jobId, () => void refresh());
   const shown = sheets.data ?? initial;
+  // The job tells of its sheets too: once one is ready there, the page offers the plan.
+  const ready = countReady(shown);
+  const known = countReady(initial);
+  const refreshed = useRef(refresh);
+  refreshed.current = refresh;
+  useEffect(() => {
+    if (ready !== known) void refreshed.current();
+  }, [ready, known]);
   const none = shown.length === 0 && uploads.length === 0;
   return (
     <Section
