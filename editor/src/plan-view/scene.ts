@@ -1,5 +1,6 @@
 import type { CableAnswer } from '@lampwright/geometry/estimate';
 import {
+  type AreaRecord,
   cablePoints,
   itemOf,
   type NoteRecord,
@@ -67,7 +68,7 @@ export const emptyScene: Scene = { fixtures: [], cables: [], nodes: [], areas: [
 
 /** Words that need the sheet's scale and the person's units. */
 export interface SceneWords {
-  readonly areaText: (name: string, points: readonly PlanPoint[]) => string;
+  readonly areaText: (area: AreaRecord) => string;
   readonly lengthText: (points: readonly PlanPoint[]) => string;
   /** The length of a cable as the estimate counts it; empty while it has none. */
   readonly cableLength: (cableId: string) => string;
@@ -171,7 +172,7 @@ export function buildScene(
           id: record.id,
           use: record.use,
           points: record.points,
-          label: words.areaText(record.name, record.points),
+          label: words.areaText(record),
         });
         break;
       case 'measurement':

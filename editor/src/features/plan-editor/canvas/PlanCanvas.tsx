@@ -8,6 +8,7 @@ import { useEditor, useSheet } from '../page/context';
 import styles from './canvas.module.css';
 import { canvasKey } from './keys';
 import { type LayerName, Painter } from './painter';
+import { requestPreview } from './request-preview';
 import { drawSheet, useSheetImage } from './sheet-image';
 import { usePointerInput } from './use-pointer-input';
 import { useScene } from './use-scene';
@@ -16,6 +17,15 @@ import { useScene } from './use-scene';
 const MAX_PIXEL_RATIO = 2;
 const pixelRatio = Math.min(MAX_PIXEL_RATIO, globalThis.devicePixelRatio || 1);
 const layerNames: readonly LayerName[] = ['ground', 'cable', 'fixtures', 'overlay'];
+
+/** The same preview for the same request, so that nothing is painted anew without need. */
+function rememberLast<A, R>(make: (a: A) => R): (a: A) => R {
+  let last: { readonly of: A; readonly made: R } | null = null;
+  return (of) => {
+    if (last === null || last.of !== of) last = { of, made: make(of) };
+    return last.made;
+  };
+}
 
 /**
  * The drawing. Five layers, none of which listens: what lies under the pointer is found by the tools, from
@@ -63,12 +73,13 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
 
   useEffect(() => {
     const { camera, session, tools, estimate } = editor;
+    const keptPreview = rememberLast(requestPreview);
     const all = () =>
       update({
         ...camera.state.getState(),
         selection: session.getState().selection,
         hoveredId: session.getState().hoveredId,
-        preview: tools.state.getState().preview,
+        preview: keptPreview(session.getState().request) ?? tools.state.getState().preview,
         stale: estimate.state.getState().stale,
       });
     all();

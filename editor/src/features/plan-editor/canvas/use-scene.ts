@@ -1,8 +1,18 @@
 import { useCallback, useMemo } from 'react';
 import type { Point } from '../../../plan-view/camera';
 import { buildScene, emptyScene } from '../../../plan-view/scene';
-import { useDoc, useEstimate, useScale, useSession, useUnitSystem } from '../page/context';
+import { areaWord } from '../page/area-words';
+import {
+  useDoc,
+  useEstimate,
+  useScale,
+  useSession,
+  useSheet,
+  useTools,
+  useUnitSystem,
+} from '../page/context';
 import { areaText, lengthText as lengthOf, plainLength } from '../page/lengths';
+import { referenceLines } from '../scale/reference-lines';
 
 /** The open sheet as drawable data; built anew only when the plan, its volts or its scale change. */
 export function useScene() {
@@ -29,9 +39,17 @@ export function useScene() {
           const total = lengths.get(id)?.totalMeters ?? null;
           return total === null ? '' : plainLength(total, units);
         },
-        areaText: (name, points) => [name, areaText(scale, points, units)].filter(Boolean).join(' · '),
+        areaText: ({ name, use, points }) =>
+          [name || areaWord(use), areaText(scale, points, units)].filter(Boolean).join(' · '),
       },
     );
   }, [doc, sheetId, answers, unwired, lengths, scale, units, lengthText]);
-  return { scene, lengthText };
+  const sheet = useSheet();
+  const scaling = useTools((s) => s.toolId === 'scale');
+  const shown = useMemo(() => {
+    if (!scaling || sheet === undefined) return scene;
+    const lines = referenceLines(sheet, (m) => plainLength(m, units));
+    return { ...scene, measurements: [...scene.measurements, ...lines] };
+  }, [scene, scaling, sheet, units]);
+  return { scene: shown, lengthText };
 }

@@ -37,6 +37,7 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
   const sheet = useSheet();
   const faults = useFaults();
   const drawer = useSession((s) => s.drawer);
+  const asking = useSession((s) => s.request !== null);
 
   useEffect(() => {
     const onKeyDown = (event: KeyboardEvent) => {
@@ -62,7 +63,7 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
         {sheet === undefined ? <NoSheet jobTo={jobTo} /> : <PlanCanvas imageUrl={imageUrl(sheet.id)} />}
         <ToolOptions entries={entries} />
         <Requests />
-        <Messages />
+        {!asking && <Messages />}
         <div className={styles.foot}>
           <Legend />
           <span className={styles.spring} />

@@ -23,7 +23,7 @@ export function horizonText(scale: SolvedScale, sheet: Size, system: UnitSystem)
   const said =
     sample === null
       ? ''
-      : `In the middle of the ground, ${formatLengthWithError(sample.meters, sample.sigmaMeters, { system })}.`;
+      : `In the middle of the ground a length reads ${formatLengthWithError(sample.meters, sample.sigmaMeters, { system })}.`;
   if (scale.view === 'plan') return said;
   const limit = trustedFrom(scale, sheet);
   if (limit === null) return `${said} No part of this photo can be trusted with lengths.`.trim();
