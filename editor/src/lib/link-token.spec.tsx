@@ -17,22 +17,23 @@ it('gives the empty text where there is none', () => {
   expect(tokenOf('#top')).toBe('');
 });
 
+/** What waits on its first rendering loses its state: the token has to be found again. */
+function Page({ later }: { later: Promise<string> }) {
+  const token = useLinkToken();
+  return <p>{`${use(later)} ${token}`}</p>;
+}
+
 it('keeps the token through a rendering that is thrown away, and clears the address', async () => {
   window.history.replaceState(null, '', '/reset-password#token=abc');
   let release = (_value: string) => {};
   const later = new Promise<string>((resolve) => {
     release = resolve;
   });
-  // What waits on its first rendering loses its state: the token has to be found again.
-  function Page() {
-    const token = useLinkToken();
-    return <p>{`${use(later)} ${token}`}</p>;
-  }
   await act(async () => {
     render(
       <StrictMode>
         <Suspense fallback="waiting">
-          <Page />
+          <Page later={later} />
         </Suspense>
       </StrictMode>,
     );

@@ -88,15 +88,17 @@ it('keeps a failed upload with its reason, and sends it again when asked', async
   await waitFor(() => expect(result.current.uploads[0]?.step.kind).toBe('failed'));
   expect(result.current.uploads[0]?.step).toMatchObject({ canRetry: true });
   act(() => void result.current.retry(result.current.uploads[0]!));
-  await act(async () => (await nth(1)).answer(202, { id: 's' }));
+  const again = await nth(1);
+  await act(async () => again.answer(202, { id: 's' }));
   await waitFor(() => expect(result.current.uploads).toEqual([]));
   expect(received).toHaveBeenCalledTimes(1);
 });
 
 it('offers no second try for a file that was refused', async () => {
   const { result } = await begin();
+  const request = await nth(0);
   await act(async () =>
-    (await nth(0)).answer(415, { code: 'unknown-kind', detail: 'This file could not be recognised.' }),
+    request.answer(415, { code: 'unknown-kind', detail: 'This file could not be recognised.' }),
   );
   await waitFor(() =>
     expect(result.current.uploads[0]?.step).toEqual({
