@@ -118,9 +118,9 @@ function Terminals({ form }: { form: ItemForm }) {
         return (
           <div key={field.id} className={styles.terminal}>
             <div className={styles.terminalHead}>
-              <h3>
+              <strong>
                 {i + 1}. {tap ? 'Tap' : 'Common'}
-              </h3>
+              </strong>
               <div className={styles.rowActions}>
                 <Button
                   kind="bare"
