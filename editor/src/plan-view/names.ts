@@ -1,7 +1,6 @@
-import { fixtureInitial } from '@lampwright/geometry/catalogue';
 import {
   type FixtureRecord,
-  itemOf,
+  initialOf,
   lightOf,
   type PlanDocument,
   type PlanRecord,
@@ -38,11 +37,6 @@ export function tagOf(doc: PlanDocument, record: PlanRecord): string {
     case 'settings':
       return 'Settings';
   }
-}
-
-export function initialOf(doc: PlanDocument, fixture: FixtureRecord): string {
-  const item = itemOf(doc, fixture.itemId, 'fixture');
-  return item === undefined ? '?' : fixtureInitial(item.kind);
 }
 
 /** The volts it is rated for. */

@@ -2,6 +2,7 @@ import type { CableAnswer } from '@lampwright/geometry/estimate';
 import {
   type AreaRecord,
   cablePoints,
+  initialOf,
   itemOf,
   type NoteRecord,
   type PlanDocument,
@@ -14,7 +15,7 @@ import type { Point } from './camera';
 import type { AreaShape } from './draw/areas';
 import type { CableStroke } from './draw/cable';
 import { type FixtureLook, fixtureLook, isFault, unwiredLook } from './fixture-look';
-import { initialOf, tagOf, windowOf } from './names';
+import { tagOf, windowOf } from './names';
 import { dimBlue, grey, ink, overRed } from './palette';
 import { ampsText, voltsText } from './words';
 

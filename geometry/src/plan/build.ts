@@ -1,5 +1,6 @@
-import type { CatalogueCategory, CatalogueItem } from '../catalogue/index.js';
+import { type CatalogueCategory, type CatalogueItem, fixtureInitial } from '../catalogue/index.js';
 import {
+  type FixtureRecord,
   type ItemRecord,
   type PlanDocument,
   type PlanRecord,
@@ -78,7 +79,7 @@ function isCategory<C extends CatalogueCategory>(
   return item.category === category;
 }
 
-export type NumberedKind = 'transformer' | 'fixture' | 'junction' | 'run';
+export type NumberedKind = 'transformer' | 'junction' | 'run';
 
 /** One more than the highest number of that kind, so that a number once printed is not given again lightly. */
 export function nextNumber(doc: PlanDocument, kind: NumberedKind): number {
@@ -87,13 +88,27 @@ export function nextNumber(doc: PlanDocument, kind: NumberedKind): number {
   return highest + 1;
 }
 
-/** What a person reads for a numbered record: T1, run 2, fixture 14 (or the name it was given). */
-export function labelOf(record: PlanRecord): string {
+/** The letter that a fixture wears on the plan, by its item's kind; ? while the item is missing. */
+export function initialOf(doc: PlanDocument, fixture: FixtureRecord): string {
+  const item = itemOf(doc, fixture.itemId, 'fixture');
+  return item === undefined ? '?' : fixtureInitial(item.kind);
+}
+
+/** One more than the highest number among the fixtures that wear the same letter. */
+export function nextFixtureNumber(doc: PlanDocument, initial: string): number {
+  let highest = 0;
+  for (const fixture of recordsOf(doc, 'fixture'))
+    if (fixture.number > highest && initialOf(doc, fixture) === initial) highest = fixture.number;
+  return highest + 1;
+}
+
+/** What a person reads for a numbered record: T1, run 2, P4 (or the name it was given). */
+export function labelOf(record: PlanRecord, doc: PlanDocument): string {
   switch (record.kind) {
     case 'transformer':
       return record.name || `T${record.number}`;
     case 'fixture':
-      return record.name || `fixture ${record.number}`;
+      return record.name || `${initialOf(doc, record)}${record.number}`;
     case 'junction':
       return record.name || `${record.style} ${record.number}`;
     case 'run':

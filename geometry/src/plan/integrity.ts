@@ -105,13 +105,13 @@ export function recordProblems(doc: PlanDocument, record: PlanRecord): Integrity
     problems.push({ code, recordId: record.id, refersTo, message });
   const wantKind = (id: string, kind: 'sheet' | 'transformer' | 'run') => {
     if (!recordOf(doc, id, kind))
-      add('dangling-reference', `The ${kind} that ${labelOf(record)} belongs to is gone.`, id);
+      add('dangling-reference', `The ${kind} that ${labelOf(record, doc)} belongs to is gone.`, id);
   };
   const wantItem = (id: string, category: CatalogueCategory) => {
     if (!recordOf(doc, id, 'item'))
-      add('dangling-reference', `The plan's copy of the item of ${labelOf(record)} is gone.`, id);
+      add('dangling-reference', `The plan's copy of the item of ${labelOf(record, doc)} is gone.`, id);
     else if (!itemOf(doc, id, category))
-      add('wrong-item', `The item of ${labelOf(record)} must be from the category ${category}.`, id);
+      add('wrong-item', `The item of ${labelOf(record, doc)} must be from the category ${category}.`, id);
   };
   if ('sheetId' in record) wantKind(record.sheetId, 'sheet');
   switch (record.kind) {
@@ -156,13 +156,17 @@ function terminalFaults(doc: PlanDocument, run: RunRecord, add: Add): void {
   if (!item) return;
   const tap = item.terminals.find((t) => t.type === 'tap' && t.id === run.tapId);
   const common = item.terminals.find((t) => t.type === 'common' && t.id === run.commonId);
-  if (!tap) add('unknown-tap', `${labelOf(transformer)} has no tap ${run.tapId} for ${labelOf(run)}.`);
+  if (!tap)
+    add('unknown-tap', `${labelOf(transformer, doc)} has no tap ${run.tapId} for ${labelOf(run, doc)}.`);
   if (!common)
-    add('unknown-common', `${labelOf(transformer)} has no common ${run.commonId} for ${labelOf(run)}.`);
+    add(
+      'unknown-common',
+      `${labelOf(transformer, doc)} has no common ${run.commonId} for ${labelOf(run, doc)}.`,
+    );
   if (tap && common && tap.winding !== common.winding)
     add(
       'different-windings',
-      `Tap ${tap.id} and common ${common.id} of ${labelOf(transformer)} are on different windings, so ${labelOf(run)} would not light.`,
+      `Tap ${tap.id} and common ${common.id} of ${labelOf(transformer, doc)} are on different windings, so ${labelOf(run, doc)} would not light.`,
     );
 }
 
@@ -175,7 +179,11 @@ function cableFaults(doc: PlanDocument, cable: CableRecord, add: Add): void {
       return undefined;
     }
     if (end.sheetId !== cable.sheetId)
-      add('cable-across-sheets', `A cable and what it ends at (${labelOf(end)}) must be on one sheet.`, id);
+      add(
+        'cable-across-sheets',
+        `A cable and what it ends at (${labelOf(end, doc)}) must be on one sheet.`,
+        id,
+      );
     return end;
   });
   if (ends.every((end) => sourceTransformerId(end) !== null))

@@ -13,6 +13,7 @@ import {
   changeProblems,
   defaultSettings,
   itemOf,
+  labelOf,
   type PlanDocument,
   type PlanPoint,
   planOf,
@@ -69,11 +70,12 @@ function drawn(
   return { plan, builder, answer, faults: planFaults(plan, answer, { estimate }) };
 }
 
-const numbersWith = ({ plan, faults }: Drawn, code: PlanFault['code']) =>
+/** Labels of the fixtures with that fault, as they stand on the plan. */
+const labelsWith = ({ plan, faults }: Drawn, code: PlanFault['code']) =>
   faults
     .filter((fault) => fault.code === code)
-    .map((fault) => recordOf(plan, fault.recordId, 'fixture')?.number)
-    .sort((a, b) => (a ?? 0) - (b ?? 0));
+    .map((fault) => labelOf(recordOf(plan, fault.recordId, 'fixture')!, plan))
+    .sort();
 
 const ids = (plan: PlanDocument, kind: RecordKind) => [...recordsOf(plan, kind)].map(({ id }) => id);
 
@@ -140,12 +142,12 @@ describe.each([
 describe('what the demo plans are there to show', () => {
   it('Harrow Bank: the far halogen lamps are dim, the wall wash near the transformer is overdriven', () => {
     const demo = drawn(drawHarrowBank, HARROW_BANK_SHEET);
-    expect(numbersWith(demo, 'dim')).toEqual([4, 5]);
-    expect(numbersWith(demo, 'overdriven')).toEqual([10]);
+    expect(labelsWith(demo, 'dim')).toEqual(['P4', 'P5']);
+    expect(labelsWith(demo, 'overdriven')).toEqual(['F1']);
     expect(demo.faults.filter(({ severity }) => severity === 'fault')).toHaveLength(3);
     // The reasons are the ones told: halogen lamps, and the highest tap.
-    for (const number of [4, 5, 10]) {
-      const fixture = [...recordsOf(demo.plan, 'fixture')].find((record) => record.number === number);
+    for (const label of ['P4', 'P5', 'F1']) {
+      const fixture = [...recordsOf(demo.plan, 'fixture')].find((f) => labelOf(f, demo.plan) === label);
       expect(itemOf(demo.plan, fixture!.lampId, 'lamp')?.technology).toBe('halogen');
     }
     const tree = [...recordsOf(demo.plan, 'run')].find((run) => run.name === 'Wall and tree');
@@ -159,7 +161,7 @@ describe('what the demo plans are there to show', () => {
       plan.set([tree!.id], 'run', { tapId: '12V' });
       const led = plan.fixture('Copper path light, G4 lamp', [1100, 1300], 'LED lamp G4, 3 W');
       const { lampId } = recordOf(plan.plan, led, 'fixture')!;
-      const path = [...recordsOf(plan.plan, 'fixture')].filter(({ number }) => number <= 5);
+      const path = [...recordsOf(plan.plan, 'fixture')].filter((f) => /^P[1-5]$/.test(labelOf(f, plan.plan)));
       plan.set(
         path.map(({ id }) => id),
         'fixture',
@@ -171,7 +173,7 @@ describe('what the demo plans are there to show', () => {
 
   it('Sandpiper Row: the end of the long feed to the front walk is dim', () => {
     const demo = drawn(drawSandpiperRow, SANDPIPER_ROW_SHEET);
-    expect(numbersWith(demo, 'dim')).toEqual([6, 7]);
+    expect(labelsWith(demo, 'dim')).toEqual(['P4', 'P5']);
     expect(demo.faults.filter(({ severity }) => severity === 'fault')).toHaveLength(2);
     const walk = [...recordsOf(demo.plan, 'run')].find((run) => run.name === 'Front walk');
     const { lengthMeters = 0 } = demo.answer.runs.find(({ id }) => id === walk?.id) ?? {};

@@ -36,7 +36,9 @@ export class JobListRepository {
 
   /** Only the jobs of the page are looked into further, so that the length of the whole list costs little. */
   async page(companyId: string, filter: JobFilter, order: JobOrder, limit: number, offset: number) {
-    const updated = sql<Date>`greatest(${jobs.updatedAt}, ${plans.updatedAt})`;
+    // A plan's first version is only its beginning, made when somebody first looks at it.
+    const planEdited = sql`case when ${plans.version} > 1 then ${plans.updatedAt} end`;
+    const updated = sql<Date>`greatest(${jobs.updatedAt}, ${planEdited})`;
     const chosen = this.database.queries
       .select({
         id: jobs.id,

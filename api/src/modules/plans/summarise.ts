@@ -26,7 +26,7 @@ export function summarise(plan: PlanDocument, planVersion: number, system: UnitS
   const faults = planFaults(plan, answer, { estimate, lengths, system });
   const label = (id: string) => {
     const record = plan.get(id);
-    return record ? labelOf(record) : id;
+    return record ? labelOf(record, plan) : id;
   };
   const runs = answer?.runs ?? [];
   return {

@@ -59,7 +59,7 @@ function sheetFaults(
     for (const water of waters)
       if (near(box, water.box, clearance))
         faults.push(
-          ...waterFaults(fixture, water.area, distanceToPolygon(at, water.points), clearance, system),
+          ...waterFaults(doc, fixture, water.area, distanceToPolygon(at, water.points), clearance, system),
         );
   }
   return faults;
@@ -121,6 +121,7 @@ function isWetListed(doc: PlanDocument, record: PlanRecord | undefined): boolean
 }
 
 function waterFaults(
+  doc: PlanDocument,
   fixture: FixtureRecord,
   area: AreaRecord,
   distance: number,
@@ -129,7 +130,7 @@ function waterFaults(
 ): PlanFault[] {
   if (distance >= clearance) return [];
   const about = { recordId: fixture.id, otherId: area.id };
-  const label = capitalised(labelOf(fixture));
+  const label = capitalised(labelOf(fixture, doc));
   const water = area.name || 'water';
   if (distance === 0)
     return [

@@ -45,8 +45,8 @@ describe('faults of the plan', () => {
       fixtures: [answer(f1, 10.2, 'in-window', 'below'), answer(f2, 9.96, 'dim', 'below')],
     });
     expect(faults.map((f) => [f.severity, f.message])).toEqual([
-      ['fault', 'Fixture 2 gets 9.96 V; it needs 10 V.'],
-      ['advice', 'Fixture 1 gets 10.2 V, below the 10.5 V aimed at.'],
+      ['fault', 'U1 gets 9.96 V; it needs 10 V.'],
+      ['advice', 'P1 gets 10.2 V, below the 10.5 V aimed at.'],
     ]);
     expect(countBySeverity(faults)).toEqual({ fault: 1, caution: 0, advice: 1 });
   });
@@ -70,7 +70,7 @@ describe('faults of the plan', () => {
       [
         'near-water',
         f2,
-        'Fixture 2 is 1.50 m from water; keep 3.05 m unless it is listed for less and the code allows it.',
+        'U1 is 1.50 m from water; keep 3.05 m unless it is listed for less and the code allows it.',
       ],
     ]);
     make(moveRecords(doc(), [f2], 200, 0, ids));
@@ -130,7 +130,7 @@ describe('faults of the plan', () => {
       'fault T Winding w1 of T1 is loaded beyond its rating by run 1.',
       'fault T T1 is loaded to 110 % (330 VA), beyond its rating.',
       'fault  A cable carries 22.0 A, 110 % of what it may; use a heavier one.',
-      'fault  No cable brings current to fixture 1.',
+      'fault  No cable brings current to P1.',
       'caution T T1 is loaded to 110 % (330 VA); keep to 80 % and leave room for additions.',
       'caution  A dead short at the far end of run 1 may draw too little to trip the breaker; use heavier cable or a shorter run.',
     ]);
@@ -160,9 +160,15 @@ describe('faults of the plan', () => {
   });
 
   it('tell numbers used twice and terminals with too many conductors', () => {
-    const { doc, make, ids, t, f1, f2, runId } = chain();
-    make(setFields(doc(), [f2], 'fixture', { number: 1 }, ids));
-    expect(planFaults(doc(), null)).toMatchObject([{ code: 'number-used-twice', recordId: f2, otherId: f1 }]);
+    const { doc, make, ids, t, f1, runId } = chain();
+    const twice = () => planFaults(doc(), null).filter((f) => f.code === 'number-used-twice');
+    // P1 and U1 are two numbers; a second P1 is not.
+    expect(twice()).toEqual([]);
+    const placing = { sheetId: 'sheet1', at: { x: 5, y: 490 }, fixture: choice(pathLight), lamp: null };
+    const [second = ''] = make(placeFixture(doc(), placing, ids));
+    make(setFields(doc(), [second], 'fixture', { number: 1 }, ids));
+    expect(twice()).toMatchObject([{ recordId: second, otherId: f1 }]);
+    expect(twice()[0]?.message).toContain('Number P1');
     for (const n of [1, 2, 3]) {
       const at = { x: 10 * n, y: 500 };
       const [f = ''] = make(

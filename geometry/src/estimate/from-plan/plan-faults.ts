@@ -50,7 +50,7 @@ function notWired(doc: PlanDocument, id: string): PlanFault[] {
       severity: 'caution',
       recordId: id,
       otherId: null,
-      message: `${capitalised(labelOf(fixture))} is not wired yet.`,
+      message: `${capitalised(labelOf(fixture, doc))} is not wired yet.`,
     },
   ];
 }
@@ -64,7 +64,7 @@ function distrusted(doc: PlanDocument, lengths: ReadonlyMap<string, CableLength>
     if (!cable) continue;
     const ends = [cable.fromId, cable.toId].flatMap((end) => {
       const record = doc.get(end);
-      return record ? [labelOf(record)] : [];
+      return record ? [labelOf(record, doc)] : [];
     });
     const why =
       length.plan.reason === 'near-horizon' ? 'runs near the horizon' : 'may be off by more than 10 %';

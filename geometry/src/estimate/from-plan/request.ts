@@ -81,7 +81,7 @@ export function estimateRequestOf(
       fixtures,
     });
   }
-  for (const wired of wiring) faults.push(...runWaits(wired, lengths));
+  for (const wired of wiring) faults.push(...runWaits(doc, wired, lengths));
   for (const fixture of recordsOf(doc, 'fixture')) faults.push(...lightFaults(doc, fixture));
   const request: EstimateRequest = {
     conductorTemperatureC: settings.conductorTemperatureC,
@@ -235,10 +235,14 @@ function fixtureAsked(doc: PlanDocument, fixture: FixtureRecord): EstimateFixtur
   };
 }
 
-function runWaits({ run, cables, waits }: RunWiring, lengths: ReadonlyMap<string, CableLength>): PlanFault[] {
+function runWaits(
+  doc: PlanDocument,
+  { run, cables, waits }: RunWiring,
+  lengths: ReadonlyMap<string, CableLength>,
+): PlanFault[] {
   if (waits.length === 0) return [];
-  const label = capitalised(labelOf(run));
-  const what = waits.length === cables.length ? label : `Part of ${labelOf(run)}`;
+  const label = capitalised(labelOf(run, doc));
+  const what = waits.length === cables.length ? label : `Part of ${labelOf(run, doc)}`;
   const reasons = new Set(waits.map((cable) => lengths.get(cable.id)?.waitsFor));
   const remedy = reasons.has('scale')
     ? 'set the scale of the sheet, or type measured lengths'
@@ -258,7 +262,7 @@ function lightFaults(doc: PlanDocument, fixture: FixtureRecord): PlanFault[] {
   const item = itemOf(doc, fixture.itemId, 'fixture');
   if (item?.light !== 'lamp') return [];
   const lamp = itemOf(doc, fixture.lampId, 'lamp');
-  const label = capitalised(labelOf(fixture));
+  const label = capitalised(labelOf(fixture, doc));
   const about = { recordId: fixture.id, otherId: null };
   if (!lamp)
     return [

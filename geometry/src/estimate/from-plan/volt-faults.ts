@@ -24,7 +24,7 @@ function fixtureFaults(doc: PlanDocument, answer: FixtureAnswer): PlanFault[] {
   const light = fixture && lightOf(doc, fixture);
   // The plan may have moved on since the answer was asked for.
   if (!fixture || !light) return [];
-  const label = capitalised(labelOf(fixture));
+  const label = capitalised(labelOf(fixture, doc));
   const fault = (code: PlanFaultCode, severity: FaultSeverity, message: string): PlanFault[] => [
     { code, severity, recordId: fixture.id, otherId: null, message },
   ];
@@ -74,7 +74,7 @@ function warningFaults(doc: PlanDocument, warning: EstimateWarning, answer: Esti
     { code, severity, recordId: record.id, otherId: null, message },
   ];
   const transformer = recordOf(doc, subject.transformerId ?? subject.id, 'transformer');
-  const of = transformer ? ` of ${labelOf(transformer)}` : '';
+  const of = transformer ? ` of ${labelOf(transformer, doc)}` : '';
   switch (code) {
     case 'common-over-limit': {
       const common = answer.commons.find(
@@ -89,19 +89,19 @@ function warningFaults(doc: PlanDocument, warning: EstimateWarning, answer: Esti
       return fault('fault', `Tap ${subject.id}${of} carries more than its limit${load}; move a run off it.`);
     }
     case 'winding-over-rating': {
-      const runs = runsOn(doc, transformer, subject.id).map(labelOf);
+      const runs = runsOn(doc, transformer, subject.id).map((record) => labelOf(record, doc));
       const by = runs.length > 0 ? ` by ${listed(runs)}` : '';
       return fault('fault', `Winding ${subject.id}${of} is loaded beyond its rating${by}.`);
     }
     case 'transformer-over-rating':
       return fault(
         'fault',
-        `${capitalised(labelOf(record))} ${loadOf(answer, record.id)}, beyond its rating.`,
+        `${capitalised(labelOf(record, doc))} ${loadOf(answer, record.id)}, beyond its rating.`,
       );
     case 'transformer-over-target':
       return fault(
         'caution',
-        `${capitalised(labelOf(record))} ${loadOf(answer, record.id)}; keep to 80 % and leave room for additions.`,
+        `${capitalised(labelOf(record, doc))} ${loadOf(answer, record.id)}; keep to 80 % and leave room for additions.`,
       );
     case 'cable-over-ampacity': {
       const cable = answer.cables.find((c) => c.id === subject.id);
@@ -111,10 +111,10 @@ function warningFaults(doc: PlanDocument, warning: EstimateWarning, answer: Esti
     case 'weak-short':
       return fault(
         'caution',
-        `A dead short at the far end of ${labelOf(record)} may draw too little to trip the breaker; use heavier cable or a shorter run.`,
+        `A dead short at the far end of ${labelOf(record, doc)} may draw too little to trip the breaker; use heavier cable or a shorter run.`,
       );
     case 'unreached':
-      return fault('fault', `No cable brings current to ${labelOf(record)}.`);
+      return fault('fault', `No cable brings current to ${labelOf(record, doc)}.`);
   }
 }
 

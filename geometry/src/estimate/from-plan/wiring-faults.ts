@@ -1,9 +1,9 @@
 import {
   feedingRuns,
+  initialOf,
   itemOf,
   labelOf,
   type Network,
-  type NumberedKind,
   networks,
   type PlanDocument,
   type RunRecord,
@@ -31,7 +31,7 @@ function networkFaults(doc: PlanDocument, network: Network): PlanFault[] {
   if (transformers.size > 1) {
     const labels = [...transformers].flatMap((id) => {
       const record = doc.get(id);
-      return record ? [labelOf(record)] : [];
+      return record ? [labelOf(record, doc)] : [];
     });
     const cable = network.attachments[0]?.cableId ?? '';
     return [
@@ -45,7 +45,7 @@ function networkFaults(doc: PlanDocument, network: Network): PlanFault[] {
     ];
   }
   if (first && second) return [joined(doc, first, second, runs)];
-  return loopFaults(network, first);
+  return loopFaults(doc, network, first);
 }
 
 /** Two people may each do their part of a join that neither could have made alone. */
@@ -58,7 +58,7 @@ function joined(
   const alike = runs.every(
     (run) => run.tapId === first.tapId && windingOf(doc, run) === windingOf(doc, first),
   );
-  const labels = listed(runs.map(labelOf));
+  const labels = listed(runs.map((record) => labelOf(record, doc)));
   return {
     code: 'joined-runs',
     severity: alike ? 'caution' : 'fault',
@@ -71,7 +71,7 @@ function joined(
 }
 
 /** Every independent loop must be closed by a cable that somebody confirmed marked-to-marked. */
-function loopFaults(network: Network, run: RunRecord | undefined): PlanFault[] {
+function loopFaults(doc: PlanDocument, network: Network, run: RunRecord | undefined): PlanFault[] {
   const nodes = network.nodes.length + (network.attachments.length > 0 ? 1 : 0);
   const loops = network.cables.length - nodes + 1;
   const confirmed = network.cables.filter((cable) => cable.markedToMarked).length;
@@ -82,7 +82,7 @@ function loopFaults(network: Network, run: RunRecord | undefined): PlanFault[] {
       severity: 'caution',
       recordId: run?.id ?? network.cables[0]?.id ?? '',
       otherId: null,
-      message: `${run ? `${capitalised(labelOf(run))} closes a loop` : 'Cable closes a loop'} that nobody has confirmed marked-to-marked. Check it with a meter before closing.`,
+      message: `${run ? `${capitalised(labelOf(run, doc))} closes a loop` : 'Cable closes a loop'} that nobody has confirmed marked-to-marked. Check it with a meter before closing.`,
     },
   ];
 }
@@ -116,7 +116,7 @@ function crowdedTerminals(doc: PlanDocument): PlanFault[] {
           severity: 'caution',
           recordId: transformer.id,
           otherId: null,
-          message: `${capitalised(type)} ${id} of ${labelOf(transformer)} holds ${maxConductors} conductors; ${count} are landed on it. Splice them outside, or use another.`,
+          message: `${capitalised(type)} ${id} of ${labelOf(transformer, doc)} holds ${maxConductors} conductors; ${count} are landed on it. Splice them outside, or use another.`,
         });
     }
   return faults;
@@ -130,26 +130,28 @@ function direct(doc: PlanDocument): PlanFault[] {
       severity: 'advice',
       recordId: t.id,
       otherId: null,
-      message: `${capitalised(labelOf(t))} gives DC: polarity matters at every fixture, marked conductor to the common.`,
+      message: `${capitalised(labelOf(t, doc))} gives DC: polarity matters at every fixture, marked conductor to the common.`,
     }));
 }
 
 /** Two people who place things at the same time may give the same number. */
 function numbersUsedTwice(doc: PlanDocument): PlanFault[] {
-  const kinds: NumberedKind[] = ['transformer', 'fixture', 'junction', 'run'];
+  const kinds = ['transformer', 'fixture', 'junction', 'run'] as const;
   return kinds.flatMap((kind) => {
-    const byNumber = new Map<number, string>();
+    const byNumber = new Map<string, string>();
     const faults: PlanFault[] = [];
     for (const record of recordsOf(doc, kind)) {
-      const other = byNumber.get(record.number);
-      if (other === undefined) byNumber.set(record.number, record.id);
+      // Fixtures are counted by their letter: P1 and U1 are two numbers.
+      const number = `${record.kind === 'fixture' ? initialOf(doc, record) : ''}${record.number}`;
+      const other = byNumber.get(number);
+      if (other === undefined) byNumber.set(number, record.id);
       else
         faults.push({
           code: 'number-used-twice',
           severity: 'advice',
           recordId: record.id,
           otherId: other,
-          message: `Number ${record.number} is used twice among the ${kind}s; give one another number.`,
+          message: `Number ${number} is used twice among the ${kind}s; give one another number.`,
         });
     }
     return faults;

@@ -30,7 +30,7 @@ export function deleteRecords(
       return refuse('in-use', 'The settings of the plan can be changed, not deleted.');
     if (record?.kind !== 'item') continue;
     const user = [...doc.values()].find((r) => !chosen.has(r.id) && referencesOf(r).includes(id));
-    if (user) return refuse('in-use', `${labelOf(record)} is in use by ${labelOf(user)}.`);
+    if (user) return refuse('in-use', `${labelOf(record, doc)} is in use by ${labelOf(user, doc)}.`);
   }
   const loosened = new Set<string>();
   for (const cable of recordsOf(doc, 'cable'))

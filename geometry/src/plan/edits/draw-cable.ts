@@ -101,7 +101,10 @@ function nodeAt(draft: Draft, sheetId: string, stop: CableStop): string | Refuse
       const record = draft.get(stop.id);
       if (!isNode(record)) return missing('end of this cable');
       if (record.sheetId !== sheetId)
-        return refuse('wrong-kind', `${labelOf(record)} is on another sheet; feed that sheet instead.`);
+        return refuse(
+          'wrong-kind',
+          `${labelOf(record, draft.plan)} is on another sheet; feed that sheet instead.`,
+        );
       return record.id;
     }
     case 'cable': {
@@ -161,7 +164,7 @@ function joinSource(
   if (run)
     return {
       runId: run.id,
-      closes: `This closes a loop back to the transformer: ${labelOf(run)} is then fed from both ends. Join marked to marked and check with a meter before closing, or the tap is shorted.`,
+      closes: `This closes a loop back to the transformer: ${labelOf(run, draft.plan)} is then fed from both ends. Join marked to marked and check with a meter before closing, or the tap is shorted.`,
     };
   if (drawing.runId !== undefined) {
     const chosen = draft.of(drawing.runId, 'run');
@@ -190,7 +193,7 @@ function joinNodes(draft: Draft, leg: Leg, notes: string[]): Joined | Refused {
   if (a.id !== b.id) merge(draft, a, b, notes);
   return {
     runId: a.id,
-    closes: `This joins two fed ends (${labelOf(a)}${a.id === b.id ? '' : ` and ${labelOf(b)}`}). Join marked to marked and check with a meter before closing, or the tap is shorted.`,
+    closes: `This joins two fed ends (${labelOf(a, draft.plan)}${a.id === b.id ? '' : ` and ${labelOf(b, draft.plan)}`}). Join marked to marked and check with a meter before closing, or the tap is shorted.`,
   };
 }
 
@@ -199,12 +202,12 @@ function whyNotJoin(draft: Draft, a: RunRecord, b: RunRecord): Refused | undefin
   if (a.tapId !== b.tapId)
     return refuse(
       'joins-taps',
-      `${labelOf(a)} is on tap ${a.tapId} and ${labelOf(b)} on tap ${b.tapId}: joining them would short the volts between the taps.`,
+      `${labelOf(a, draft.plan)} is on tap ${a.tapId} and ${labelOf(b, draft.plan)} on tap ${b.tapId}: joining them would short the volts between the taps.`,
     );
   if (windingOfCommon(draft, a) !== windingOfCommon(draft, b))
     return refuse(
       'joins-windings',
-      `${labelOf(a)} and ${labelOf(b)} are on commons of different windings and must not be joined.`,
+      `${labelOf(a, draft.plan)} and ${labelOf(b, draft.plan)} are on commons of different windings and must not be joined.`,
     );
   return undefined;
 }
@@ -226,11 +229,10 @@ function otherTransformer(): Refused {
 function merge(draft: Draft, a: RunRecord, b: RunRecord, notes: string[]): void {
   for (const cable of [...recordsOf(draft.plan, 'cable')])
     if (cable.runId === b.id) draft.put({ ...cable, runId: a.id });
+  const joined = `${labelOf(b, draft.plan)} became part of ${labelOf(a, draft.plan)}`;
   draft.remove(b.id);
   notes.push(
-    a.commonId === b.commonId
-      ? `${labelOf(b)} became part of ${labelOf(a)}.`
-      : `${labelOf(b)} became part of ${labelOf(a)}; both ends now land on common ${a.commonId}.`,
+    a.commonId === b.commonId ? `${joined}.` : `${joined}; both ends now land on common ${a.commonId}.`,
   );
 }
 
@@ -261,5 +263,5 @@ function putCable(
 
 function nameOf(draft: Draft, id: string): string {
   const record = draft.get(id);
-  return record ? labelOf(record) : 'it';
+  return record ? labelOf(record, draft.plan) : 'it';
 }

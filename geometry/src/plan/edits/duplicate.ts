@@ -1,4 +1,11 @@
-import { type IdSource, newId, nextNumber, sourceTransformerId } from '../build.js';
+import {
+  type IdSource,
+  initialOf,
+  newId,
+  nextFixtureNumber,
+  nextNumber,
+  sourceTransformerId,
+} from '../build.js';
 import type { PlanDocument, PlanRecord } from '../records.js';
 import { Draft } from './draft.js';
 import { moved } from './move.js';
@@ -72,8 +79,11 @@ function runFor(
 function copyOf(draft: Draft, record: PlanRecord, dx: number, dy: number): PlanRecord | undefined {
   const id = draft.ids();
   switch (record.kind) {
+    case 'fixture': {
+      const number = nextFixtureNumber(draft.plan, initialOf(draft.plan, record));
+      return { ...moved(record, dx, dy), id, number } as PlanRecord;
+    }
     case 'transformer':
-    case 'fixture':
     case 'junction':
       return { ...moved(record, dx, dy), id, number: nextNumber(draft.plan, record.kind) } as PlanRecord;
     case 'feed':

@@ -1,4 +1,5 @@
-import { type IdSource, itemOf, labelOf, newId, nextNumber, recordsOf } from '../build.js';
+import { fixtureInitial } from '../../catalogue/index.js';
+import { type IdSource, itemOf, labelOf, newId, nextFixtureNumber, nextNumber, recordsOf } from '../build.js';
 import type { AreaUse, PlanDocument, PlanPoint, SheetRecord } from '../records.js';
 import { Draft } from './draft.js';
 import { ensureItem, type ItemChoice } from './items.js';
@@ -46,7 +47,7 @@ export function placeFixture(doc: PlanDocument, placing: FixturePlacing, ids: Id
     id,
     sheetId: placing.sheetId,
     at,
-    number: nextNumber(doc, 'fixture'),
+    number: nextFixtureNumber(doc, fixtureInitial(item.kind)),
     name: '',
     itemId,
     lampId,
@@ -92,7 +93,7 @@ export function placeFeed(
   const transformer = draft.of(placing.transformerId, 'transformer');
   if (!transformer) return missing('transformer');
   if (transformer.sheetId === placing.sheetId)
-    return refuse('wrong-kind', `${labelOf(transformer)} is on this sheet itself; draw cable from it.`);
+    return refuse('wrong-kind', `${labelOf(transformer, doc)} is on this sheet itself; draw cable from it.`);
   const { sheetId, at, transformerId } = placing;
   const record = draft.put({ kind: 'feed', id: draft.ids(), sheetId, at, transformerId, name: '' });
   return made(draft, [record.id]);

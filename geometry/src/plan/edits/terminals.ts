@@ -115,14 +115,21 @@ export function startRun(draft: Draft, transformerId: string): RunRecord | Refus
   const transformer = draft.of(transformerId, 'transformer');
   if (!transformer) return missing('transformer');
   const item = itemOf(draft.plan, transformer.itemId, 'transformer');
-  if (!item) return refuse('wrong-item', `${labelOf(transformer)} has no item to take its terminals from.`);
+  if (!item)
+    return refuse(
+      'wrong-item',
+      `${labelOf(transformer, draft.plan)} has no item to take its terminals from.`,
+    );
   const commonWindings = new Set(commonsOf(item).map((common) => common.winding));
   const taps = tapsOf(item).filter((tap) => commonWindings.has(tap.winding));
   const usual = taps.filter((tap) => tap.volts >= USUAL_TAP_VOLTS);
   const tap = usual.length > 0 ? usual.reduce((a, b) => (b.volts < a.volts ? b : a)) : taps[0];
   const common = tap && roomiestCommon(draft.plan, transformerId, item, tap);
   if (!tap || !common)
-    return refuse('no-terminals', `${labelOf(transformer)} has no tap with a common on the same winding.`);
+    return refuse(
+      'no-terminals',
+      `${labelOf(transformer, draft.plan)} has no tap with a common on the same winding.`,
+    );
   return draft.put({
     kind: 'run',
     id: draft.ids(),
@@ -154,7 +161,7 @@ export function setRunTerminals(
   if (!tap || !common)
     return refuse(
       'unknown-terminal',
-      `${labelOf(transformer)} has no ${tap ? `common ${terminals.commonId ?? run.commonId}` : `tap ${terminals.tapId ?? run.tapId}`}.`,
+      `${labelOf(transformer, doc)} has no ${tap ? `common ${terminals.commonId ?? run.commonId}` : `tap ${terminals.tapId ?? run.tapId}`}.`,
     );
   const draft = new Draft(doc, ids);
   if (tap.winding === common.winding) {

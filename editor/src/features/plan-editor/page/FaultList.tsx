@@ -1,7 +1,5 @@
-import type { FaultSeverity, PlanFault } from '@lampwright/geometry/estimate';
-import { labelOf, type PlanDocument } from '@lampwright/geometry/plan';
-import { tagOf } from '../../../plan-view/names';
-import { useDoc, useEditor } from './context';
+import type { FaultSeverity } from '@lampwright/geometry/estimate';
+import { useEditor } from './context';
 import { PanelFrame } from './PanelFrame';
 import styles from './page.module.css';
 import type { Faults } from './use-faults';
@@ -15,7 +13,6 @@ const order: readonly FaultSeverity[] = ['fault', 'caution', 'advice'];
 
 export function FaultList({ faults: { list: faults, voltsKnown } }: { readonly faults: Faults }) {
   const editor = useEditor();
-  const doc = useDoc();
   return (
     <PanelFrame
       title={
@@ -45,7 +42,7 @@ export function FaultList({ faults: { list: faults, voltsKnown } }: { readonly f
               {some.map((fault) => (
                 <li key={`${fault.code}${fault.recordId}${fault.otherId ?? ''}`}>
                   <button type="button" onClick={() => editor.reveal(fault.recordId)}>
-                    {withTag(doc, fault)}
+                    {fault.message}
                   </button>
                 </li>
               ))}
@@ -55,15 +52,4 @@ export function FaultList({ faults: { list: faults, voltsKnown } }: { readonly f
       })}
     </PanelFrame>
   );
-}
-
-/** The message in the words of the drawing: a nameless fixture goes by its tag there, P6 and not fixture 6. */
-export function withTag(doc: PlanDocument, { recordId, message }: PlanFault): string {
-  const record = doc.get(recordId);
-  if (record?.kind !== 'fixture' || record.name !== '') return message;
-  const label = labelOf(record);
-  const capital = label.charAt(0).toUpperCase() + label.slice(1);
-  return message.startsWith(`${capital} `)
-    ? `${tagOf(doc, record)}${message.slice(capital.length)}`
-    : message;
 }
