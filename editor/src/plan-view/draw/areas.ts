@@ -3,6 +3,8 @@ import { boxAround, type Camera, type Point, type Size, toWindow } from '../came
 import { fontFamily, ink, paper } from '../palette';
 import { trace } from './cable';
 
+const FAINT_PAPER = 'rgba(251, 248, 242, 0.5)';
+const FAINT_INK = 'rgba(22, 32, 46, 0.45)';
 const AREA_FONT = `500 12px ${fontFamily}`;
 
 /** Ground is drawn as a wash: it says where, and never competes with the marks on it. */
@@ -47,10 +49,12 @@ export function drawArea(
     ctx.fill();
   }
   ctx.lineJoin = 'round';
-  ctx.strokeStyle = paper;
-  ctx.lineWidth = chosen ? 6 : 3;
+  // Unchosen outlines stay fainter than any cable, which is ink in a white casing too.
+  const faint = !chosen && area.use !== 'lot-line';
+  ctx.strokeStyle = faint ? FAINT_PAPER : paper;
+  ctx.lineWidth = chosen ? 6 : 2.5;
   ctx.stroke();
-  ctx.strokeStyle = ink;
+  ctx.strokeStyle = faint ? FAINT_INK : ink;
   ctx.lineWidth = chosen ? 3 : 1;
   ctx.setLineDash(area.use === 'lot-line' ? [14, 5, 3, 5] : area.use === 'canopy' ? [2, 4] : []);
   ctx.stroke();

@@ -31,7 +31,7 @@ export function ZoomBar() {
         onClick={() => editor.zoomToSelection()}
         title="Zoom to what is chosen, else to the plan (2)"
       >
-        Closer
+        Focus
       </button>
     </fieldset>
   );
