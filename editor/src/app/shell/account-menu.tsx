@@ -73,7 +73,7 @@ export function AccountMenu() {
         <DropdownMenu.Separator />
         <DropdownMenu.Item
           onSelect={() =>
-            signOut.mutate(undefined, { onSuccess: () => navigate(paths.signIn), onError: complain })
+            void signOut.mutateAsync().then(() => navigate(paths.signIn, { replace: true }), complain)
           }
         >
           Sign out

@@ -1,6 +1,7 @@
 import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
 import { type Answer, answer, server } from '../../lib/api/client';
 import { type Me, meKey } from '../../lib/me';
+import { forgetPerson } from '../../lib/session';
 
 export type Session = Answer<'/api/account/sessions', 'get'>['items'][number];
 const sessionsKey = ['sessions'] as const;
@@ -52,10 +53,7 @@ function useLeave<V>(leave: (value: V) => Promise<unknown>) {
   const cache = useQueryClient();
   return useMutation({
     mutationFn: leave,
-    onSuccess: () => {
-      cache.clear();
-      cache.setQueryData(meKey, null);
-    },
+    onSuccess: () => forgetPerson(cache),
   });
 }
 
