@@ -39,6 +39,8 @@ export default defineConfig({
   reporter: report ? [['list'], ['json', { outputFile: report }]] : [['list']],
   use: {
     baseURL,
+    // What a person would wait for a control before calling it broken.
+    actionTimeout: 10_000,
     viewport: desktop,
     locale: 'en-US',
     timezoneId: 'America/New_York',
