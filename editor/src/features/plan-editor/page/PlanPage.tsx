@@ -1,4 +1,5 @@
 import { type ReactNode, useEffect } from 'react';
+import { Link } from 'react-router-dom';
 import { PlanCanvas } from '../canvas/PlanCanvas';
 import { Inspector } from '../inspector/Inspector';
 import { Ledger } from '../ledger/Ledger';
@@ -64,11 +65,13 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
         <ToolOptions entries={entries} />
         <Requests />
         {!asking && <Messages />}
-        <div className={styles.foot}>
-          <Legend />
-          <span className={styles.spring} />
-          <ZoomBar />
-        </div>
+        {sheet !== undefined && (
+          <div className={styles.foot}>
+            <Legend />
+            <span className={styles.spring} />
+            <ZoomBar />
+          </div>
+        )}
         <Panels faults={faults} history={history} />
       </main>
       <aside className={styles.profile} data-open={drawer === 'profile' || undefined} aria-label="Profile">
@@ -109,9 +112,9 @@ function NoSheet({ jobTo }: { readonly jobTo: string }) {
     <div className={styles.nothing}>
       <h2>No sheet yet</h2>
       <p>A plan is drawn over a photo of the yard or a plot plan.</p>
-      <a className={styles.primary} href={jobTo}>
+      <Link className={styles.primary} to={jobTo}>
         Add a photo or a plot plan
-      </a>
+      </Link>
     </div>
   );
 }

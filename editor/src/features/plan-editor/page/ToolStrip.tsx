@@ -1,6 +1,6 @@
 import { type KeyboardEvent, useRef } from 'react';
 import { type ToolId, toolIds } from '../tools/tool';
-import { useEditor, useTools } from './context';
+import { useEditor, useSheet, useTools } from './context';
 import { ToolIcon, toolKeys, toolWord } from './icons';
 import styles from './page.module.css';
 
@@ -16,7 +16,9 @@ export function ToolStrip() {
   const editor = useEditor();
   const toolId = useTools((s) => s.toolId);
   const bar = useRef<HTMLDivElement>(null);
-  const tools: readonly ToolId[] = editor.canEdit ? toolIds : ['select'];
+  const sheet = useSheet();
+  // Without a sheet there is nothing to draw on.
+  const tools: readonly ToolId[] = editor.canEdit && sheet !== undefined ? toolIds : ['select'];
   // One tab stop, its tool at work; arrows go on from there.
   const onKeyDown = (event: KeyboardEvent) => {
     const step = steps[event.key];
