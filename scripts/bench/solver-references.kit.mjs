@@ -3,6 +3,11 @@ import { joints } from './solver.kit.mjs';
 
 const math = create(/** @type {import('mathjs').FactoryFunctionMap} */ (all));
 
+/** Public, but left out of the library's own types. */
+const { SparseMatrix } = /** @type {{ SparseMatrix: new (data: object) => import('mathjs').Matrix }} */ (
+  /** @type {unknown} */ (math)
+);
+
 /**
  * What the solver is measured against, on the same network.
  * @typedef {import('./solver.kit.mjs').Shape} Shape
@@ -40,8 +45,7 @@ export function sparseLu(shape, count, siemens, openVolts, va) {
     }
     ptr.push(values.length);
   }
-  // @ts-expect-error: the class is public, its constructor is not typed.
-  const matrix = new math.SparseMatrix({ values, index, ptr, size: [count, count], datatype: 'number' });
+  const matrix = new SparseMatrix({ values, index, ptr, size: [count, count], datatype: 'number' });
   return () => math.lusolve(math.slu(matrix, 1, 1), right);
 }
 

@@ -30,8 +30,8 @@ export function joints(shape, count) {
 
 const nodeName = (/** @type {number} */ i) => (i === 0 ? 's' : `n${i}`);
 
-/** Loop ohms of every joint: a chain's add up, so its joints are the shorter the more there are. */
-const metersOf = (/** @type {Shape} */ shape, /** @type {number} */ count) =>
+/** Length of every joint: a chain's add up, so its joints are the shorter the more there are. */
+export const metersOf = (/** @type {Shape} */ shape, /** @type {number} */ count) =>
   shape === 'chain' ? 40 / count : shape === 'hub' ? 4 : 6;
 
 /** @param {Shape} shape @param {number} count */

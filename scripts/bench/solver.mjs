@@ -1,9 +1,9 @@
 import { pathToFileURL } from 'node:url';
-import { medianMicroseconds, requestOf, shapes, sizes } from './solver.kit.mjs';
+import { medianMicroseconds, metersOf, requestOf, shapes, sizes } from './solver.kit.mjs';
 import { bareSweep, sparseLu } from './solver-references.kit.mjs';
 
-/** mathjs takes seconds for these; more would only make people wait. */
-const LARGEST_FOR_MATHJS = 5000;
+/** As the product runs it; types come from its source. */
+const BUILT_CIRCUIT = new URL('../../api/dist/circuit/index.js', import.meta.url).href;
 const SERVER_ROUNDS = 60;
 const SERVER_FIXTURES = 200;
 
@@ -15,8 +15,11 @@ const SERVER_FIXTURES = 200;
  * @param {{ baseUrl?: () => Promise<string> }} [context]
  */
 export async function run(print, context = {}) {
-  const { solveEstimate, loopOhms } = await import('../../api/dist/circuit/index.js');
+  const { solveEstimate, loopOhms } = /** @type {typeof import('../../api/src/circuit/index.js')} */ (
+    await import(BUILT_CIRCUIT)
+  );
   const { normalizeEstimateRequest } = await import('@lampwright/geometry/estimate');
+  const { celsius, meters, ohms } = await import('@lampwright/geometry/units');
   const columns = [
     'shape',
     'fixtures',
@@ -36,25 +39,20 @@ export async function run(print, context = {}) {
       solveEstimate(request, statistics);
       const took = medianMicroseconds(() => solveEstimate(request));
       times.push(took);
-      const { cables } = /** @type {{ cables: { lengthMeters: number }[] }} */ (request.runs[0]);
-      const siemens =
-        1 /
-        loopOhms(
-          { awg: 10 },
-          /** @type {never} */ (cables[0]?.lengthMeters),
-          /** @type {never} */ (0),
-          /** @type {never} */ (25),
-        );
+      const siemens = 1 / loopOhms({ awg: 10 }, meters(metersOf(shape, count)), ohms(0), celsius(25));
       const va = 150 / 0.95 / count;
-      const lu =
-        count <= LARGEST_FOR_MATHJS ? medianMicroseconds(sparseLu(shape, count, siemens, 13, va)) : null;
+      const lu = medianMicroseconds(sparseLu(shape, count, siemens, 13, va));
       const sweep = shape === 'mesh' ? null : medianMicroseconds(bareSweep(shape, count, siemens, 13, va));
       const cells = [shape, count, took.toFixed(0), (took / count).toFixed(2), statistics.iterations];
       const references = [lu, sweep].map((time) => (time === null ? '–' : time.toFixed(0)));
       print([...cells, ...references].map((cell) => String(cell).padStart(14)).join(''));
     }
-    const growth = Math.log((times.at(-1) ?? 1) / (times[1] ?? 1)) / Math.log(sizes[3] / sizes[1]);
-    print(`${shape.padStart(14)}  grows as fixtures^${growth.toFixed(2)} from ${sizes[1]} to ${sizes[3]}`);
+    const [, hundred = 1, thousand = 1, fiveThousand = 1] = times;
+    const middle = Math.log(thousand / hundred) / Math.log(10);
+    const upper = Math.log(fiveThousand / thousand) / Math.log(5);
+    print(
+      `${shape.padStart(14)}  grows as fixtures^${middle.toFixed(2)} from 100 to 1000, ^${upper.toFixed(2)} from there to 5000`,
+    );
   }
   if (context.baseUrl) await measureServer(print, await context.baseUrl());
 }

@@ -19,7 +19,9 @@ const settings = z
   .safeParse(process.env);
 if (!settings.success) {
   const lines = settings.error.issues.map((issue) => `  ${issue.path.join('.')}: ${issue.message}`);
-  console.error(`The local storage and mail can't start; these settings need attention:\n${lines.join('\n')}`);
+  console.error(
+    `The local storage and mail can't start; these settings need attention:\n${lines.join('\n')}`,
+  );
   process.exit(1);
 }
 

@@ -8,10 +8,7 @@ it('shows nothing of a form that nobody filled in', () => {
 });
 
 it('speaks the words of the region and tells no from not known', () => {
-  const rows = rowsOf(
-    { ...emptySiteWalk, protected: 'no', gas: { present: 'no', note: '' } },
-    'RCD',
-  );
+  const rows = rowsOf({ ...emptySiteWalk, protected: 'no', gas: { present: 'no', note: '' } }, 'RCD');
   expect(rows).toEqual([
     ['RCD', 'No'],
     ['Private gas line', 'No'],
