@@ -2,7 +2,9 @@ import { useId } from 'react';
 import { Select } from '../../components/select';
 import { showProblem, showToast } from '../../components/toast';
 import { sentenceOf } from '../../lib/api/client';
+import { stageCautions } from '../../lib/cautions';
 import type { Job } from '../../lib/jobs';
+import { useMe } from '../../lib/me';
 import { type Stage, stageLabel, stageMeaning, stageOptions, stageSchema, stages } from '../../lib/stages';
 import { useEditJob } from './api';
 import styles from './job-page.module.css';
@@ -10,6 +12,7 @@ import styles from './job-page.module.css';
 /** How far the job is, and the way to say that it has moved; with undo rather than a question. */
 export function StageSteps({ job, editable }: { job: Job; editable: boolean }) {
   const id = useId();
+  const device = useMe().company?.words.protectiveDevice ?? 'GFCI';
   const edit = useEditJob(job.id);
   const at = stages.indexOf(job.stage);
 
@@ -57,6 +60,11 @@ export function StageSteps({ job, editable }: { job: Job; editable: boolean }) {
         ))}
       </div>
       <p className={styles.meaning}>{stageMeaning(job.stage)}</p>
+      <ul className={styles.cautions} aria-label="Cautions">
+        {stageCautions(job.stage, device).map((caution) => (
+          <li key={caution}>{caution}</li>
+        ))}
+      </ul>
     </div>
   );
 }

@@ -11,6 +11,7 @@ import {
   useZodForm,
 } from '../../components/form';
 import { Note, Problem } from '../../components/states';
+import { transformerCautions } from '../../lib/cautions';
 import { formatMoment } from '../../lib/format';
 import type { Job } from '../../lib/jobs';
 import { useMe } from '../../lib/me';
@@ -91,6 +92,11 @@ export function SiteWalkForm({ job, onSaved }: SiteWalkFormProps) {
         }}
       >
         <FieldGroup legend="Power">
+          {transformerCautions(device).map((caution) => (
+            <p key={caution} className="quiet">
+              {caution}
+            </p>
+          ))}
           <FieldRow>
             <NumberField
               control={control}

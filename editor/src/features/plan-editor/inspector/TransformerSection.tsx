@@ -1,4 +1,6 @@
 import { itemOf, setFields, setItem, type TransformerRecord } from '@lampwright/geometry/plan';
+import { transformerCautions } from '../../../lib/cautions';
+import { useMe } from '../../../lib/me';
 import { percentText, voltAmpsText } from '../../../plan-view/words';
 import { useDoc, useEditor, useEstimate } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
@@ -18,6 +20,7 @@ export function TransformerSection({ transformers, entries }: Props) {
   const ids = idsOf(transformers);
   const one = transformers.length === 1 ? transformers[0]! : null;
   const locked = !editor.canEdit;
+  const device = useMe().company?.words.protectiveDevice ?? 'GFCI';
   const picks = transformerPicks(doc, entries);
   const itemId = common(transformers, (t) => t.itemId);
   const current = itemId === undefined ? undefined : doc.get(itemId);
@@ -102,6 +105,11 @@ export function TransformerSection({ transformers, entries }: Props) {
           }}
         />
       )}
+      {transformerCautions(device).map((caution) => (
+        <p key={caution} className={styles.facts}>
+          {caution}
+        </p>
+      ))}
     </>
   );
 }

@@ -1,4 +1,5 @@
 import type { FaultSeverity } from '@lampwright/geometry/estimate';
+import { estimateCaution } from '../../../lib/cautions';
 import { useEditor } from './context';
 import { PanelFrame } from './PanelFrame';
 import styles from './page.module.css';
@@ -50,6 +51,7 @@ export function FaultList({ faults: { list: faults, voltsKnown } }: { readonly f
           </section>
         );
       })}
+      <p className={styles.quiet}>{estimateCaution}</p>
     </PanelFrame>
   );
 }
