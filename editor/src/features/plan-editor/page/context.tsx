@@ -7,10 +7,10 @@ import { createContext, useContext } from 'react';
 import { useStore } from 'zustand';
 import type { CameraState } from '../canvas/camera-store';
 import type { EstimateState } from '../estimate/controller';
+import type { SessionState } from '../store/session';
 import type { ToolHostState } from '../tools/host';
 import type { PlanEditor } from './editor';
 import type { PlanPortState } from './plan-port';
-import type { SessionState } from './session';
 
 export interface EditorContextValue {
   readonly editor: PlanEditor;

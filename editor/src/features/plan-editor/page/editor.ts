@@ -14,12 +14,12 @@ import type { StoreApi } from 'zustand/vanilla';
 import { markRadius } from '../../../plan-view/camera';
 import { CameraStore } from '../canvas/camera-store';
 import { EstimateController, type EstimateDeps } from '../estimate/controller';
+import { createSession, type SessionState } from '../store/session';
 import { boxOfRecords, extentOf } from '../tools/hit';
 import { ToolHost } from '../tools/host';
 import { settle, type ToolContext, type ToolId } from '../tools/tool';
 import type { CatalogueEntry } from './items';
 import type { PlanPort } from './plan-port';
-import { createSession, type SessionState } from './session';
 
 /** How far a copy stands from what it is a copy of, in window pixels. */
 const COPY_OFFSET = 28;

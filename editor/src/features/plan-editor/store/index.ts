@@ -4,14 +4,12 @@ import { createDocument } from './document';
 import { createHistory } from './history';
 import { type PlanLocks, webLocks, windowLocks } from './locks';
 import { createOutbox, indexedDbStorage, type OutboxOwner, type OutboxStorage } from './outbox';
-import { createSession } from './session';
 import { createSync } from './sync';
 import type { PlanTransport } from './transport';
 
 export type { DocumentState } from './document';
 export type { Gesture, HistoryState, Reverted } from './history';
 export type { OutboxOwner } from './outbox';
-export type { SessionState } from './session';
 export type { SavePhase, SaveState } from './sync';
 export type { CommittedChange, PlanTransport, SaveAnswer, SaveRequest } from './transport';
 
@@ -27,13 +25,12 @@ export interface PlanStoreOptions {
 export type PlanStore = ReturnType<typeof createPlanStore>;
 
 /**
- * One person's editing of one plan: the document, undo and redo, what is chosen, and the saving. Call
+ * One person's editing of one plan: the document, undo and redo, and the saving. Call
  * `start` once, `stop` when the page goes; `resume` when the network or the window comes back.
  */
 export function createPlanStore(options: PlanStoreOptions) {
   const ids = options.ids ?? newId;
   const document = createDocument();
-  const session = createSession();
   const sync = createSync({
     document,
     outbox: createOutbox(options.owner, options.storage ?? indexedDbStorage()),
@@ -43,14 +40,10 @@ export function createPlanStore(options: PlanStoreOptions) {
     ids,
   });
   const history = createHistory({ present: document.present, make: sync.make }, ids);
-  const unfollow = document.store.subscribe((state, before) => {
-    if (state.present !== before.present) session.follow(state.present);
-  });
 
   return {
     document: document.store,
     history: history.store,
-    session,
     saving: sync.store,
 
     present: document.present,
@@ -65,10 +58,7 @@ export function createPlanStore(options: PlanStoreOptions) {
     resolveConflict: sync.resolveConflict,
     /** Resolves when everything made so far is kept by the browser. */
     written: sync.written,
-    stop(): void {
-      unfollow();
-      sync.stop();
-    },
+    stop: sync.stop,
   };
 }
 

@@ -1,4 +1,4 @@
-import { apply, type Change, deleteRecords, PLAN_SCHEMA_VERSION, placeNote } from '@lampwright/geometry/plan';
+import { type Change, PLAN_SCHEMA_VERSION, placeNote } from '@lampwright/geometry/plan';
 import { describe, expect, it } from 'vitest';
 import { must, startPlan } from '../../../../../geometry/src/plan/plan.testkit.js';
 import { memoryStorage, rest, setting, toObject } from './store.testkit';
@@ -147,21 +147,5 @@ describe('an outbox from a newer version of the product', () => {
       message: expect.stringMatching(/Reload the page/),
     });
     expect(storage.kept.size).toBe(1);
-  });
-});
-
-describe('the session', () => {
-  it('forgets what leaves the plan, and opens the first sheet', async () => {
-    const { open, fixture, ids } = setting();
-    const { store } = open();
-    await store.start();
-    expect(store.session.store.getState().sheetId).toBe('sheet1');
-    const f = fixture(store, 1);
-    store.session.select([f, f]);
-    store.session.hover(f);
-    expect(store.session.store.getState()).toMatchObject({ selection: [f], hoverId: f });
-    store.make(must(deleteRecords(store.present(), [f], ids)), 'Delete');
-    expect(store.session.store.getState()).toMatchObject({ selection: [], hoverId: null });
-    expect(apply(store.present(), { put: {}, remove: [] })).toBe(store.present());
   });
 });

@@ -152,6 +152,7 @@ CREATE TABLE "plan_changes" (
 	"put" jsonb NOT NULL,
 	"remove" jsonb NOT NULL,
 	"author_id" uuid,
+	"session" text DEFAULT '' NOT NULL,
 	"label" text DEFAULT '' NOT NULL,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "plan_changes_company_id_job_id_version_pk" PRIMARY KEY("company_id","job_id","version"),

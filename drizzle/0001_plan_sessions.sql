@@ -1,1 +1,0 @@
-ALTER TABLE "plan_changes" ADD COLUMN "session" text DEFAULT '' NOT NULL;
