@@ -47,7 +47,8 @@ export default defineConfig({
     colorScheme: 'light',
     reducedMotion: 'reduce',
     screenshot: 'only-on-failure',
-    trace: 'retain-on-failure',
+    // Without its film, which costs a good part of the run; the picture of the failure is taken anyway.
+    trace: { mode: 'retain-on-failure', screenshots: false },
     launchOptions,
   },
   projects: [{ name: 'desktop' }],
