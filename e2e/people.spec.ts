@@ -59,7 +59,7 @@ test('signing out everywhere ends every other session', async ({ page, browser }
   const context = await anotherBrowser(browser);
   const phone = await context.newPage();
   await signIn(phone, owner);
-  await expect(phone.getByRole('heading', { name: 'Jobs' })).toBeVisible();
+  await expect(phone.getByRole('heading', { name: 'Jobs', level: 1 })).toBeVisible();
 
   await page.goto('/account');
   await page.getByRole('button', { name: 'Sign out everywhere' }).click();

@@ -55,6 +55,10 @@ test('a plot plan is true to its typed drawing scale', async ({ page }) => {
   await plan.clickClose(pool.farRight);
   await page.keyboard.press('Enter');
   await expect.poll(() => plan.ofKind('measurement')).toHaveLength(1);
+  await test.step('and as it was measured', async () => {
+    const told = plan.inspector.getByText(/′ .*±/);
+    expect(Math.abs(shownFeet((await told.textContent()) ?? '').feet - 22)).toBeLessThanOrEqual(0.1);
+  });
   await plan.saved();
   await page.reload();
   await plan.isOpen();

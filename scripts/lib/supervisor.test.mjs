@@ -80,3 +80,19 @@ test('services stop by themselves when their starter was killed', async () => {
   await until(() => notes().length === 2);
   assert.deepEqual(notes(), ['start orphan', 'stop orphan']);
 });
+
+test('a service that comes up when its starter is dead already stops too', async () => {
+  const { args } = service('late');
+  const starter = `import { Supervisor } from '${pathToFileURL(inRoot('scripts/lib/supervisor.mjs'))}';
+    import { writeSync } from 'node:fs';
+    const { pid } = new Supervisor().start({ name: 'late', args: ${JSON.stringify(args)}, env: process.env, logFile: '/dev/null' });
+    writeSync(1, String(pid));
+    process.kill(process.pid, 'SIGKILL');`;
+  const { stdout } = await run(process.execPath, ['--input-type=module', '-e', starter]);
+  const pid = Number(stdout);
+  assert.ok(pid > 0);
+  // An ended process that nobody has asked after yet has no command line any more.
+  const command = () =>
+    existsSync(`/proc/${pid}/cmdline`) ? readFileSync(`/proc/${pid}/cmdline`, 'utf8') : '';
+  await until(() => !command().includes('late.mjs'));
+});

@@ -8,7 +8,7 @@ import { AreaSection } from './AreaSection';
 import { CableSection } from './CableSection';
 import { FixtureSection } from './FixtureSection';
 import styles from './inspector.module.css';
-import { JunctionSection, NoteSection } from './OtherSections';
+import { JunctionSection, MeasurementSection, NoteSection } from './OtherSections';
 import { RunSection } from './RunSection';
 import { ofKind } from './shared';
 import { TransformerSection } from './TransformerSection';
@@ -31,6 +31,7 @@ export function Inspector({ entries }: { readonly entries: readonly CatalogueEnt
   const junctions = ofKind(records, 'junction');
   const areas = ofKind(records, 'area');
   const notes = ofKind(records, 'note');
+  const measurements = ofKind(records, 'measurement');
   const [only] = records;
   return (
     <section className={styles.inspector} aria-label="What is chosen">
@@ -41,6 +42,7 @@ export function Inspector({ entries }: { readonly entries: readonly CatalogueEnt
       {runs.length > 0 && <RunSection runs={runs} />}
       {junctions.length > 0 && <JunctionSection junctions={junctions} />}
       {areas.length > 0 && <AreaSection areas={areas} />}
+      {measurements.length === 1 && <MeasurementSection measurement={measurements[0]!} />}
       {notes.length === 1 && <NoteSection note={notes[0]!} />}
       {editor.canEdit && (
         <>

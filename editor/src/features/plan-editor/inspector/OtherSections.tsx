@@ -1,7 +1,13 @@
-import { type JunctionRecord, type NoteRecord, setFields } from '@lampwright/geometry/plan';
+import {
+  type JunctionRecord,
+  type MeasurementRecord,
+  type NoteRecord,
+  setFields,
+} from '@lampwright/geometry/plan';
 import { useEffect, useId, useState } from 'react';
-import { useEditor } from '../page/context';
+import { useEditor, useScale, useUnitSystem } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
+import { lengthText } from '../page/lengths';
 import styles from './inspector.module.css';
 import { common, idsOf } from './shared';
 
@@ -45,6 +51,19 @@ export function JunctionSection({ junctions }: { readonly junctions: readonly Ju
           )
         }
       />
+    </>
+  );
+}
+
+export function MeasurementSection({ measurement }: { readonly measurement: MeasurementRecord }) {
+  const scale = useScale();
+  const system = useUnitSystem();
+  return (
+    <>
+      <h2>Measurement</h2>
+      <p className={styles.facts}>
+        {lengthText(scale, measurement.points, system) || 'Its length waits for the sheet’s scale.'}
+      </p>
     </>
   );
 }

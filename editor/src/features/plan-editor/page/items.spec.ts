@@ -2,7 +2,7 @@ import type { CatalogueItem } from '@lampwright/geometry/catalogue';
 import { defaultSettings, planOf } from '@lampwright/geometry/plan';
 import { describe, expect, it } from 'vitest';
 import { cable12, choices, pathLight, transformer300, yardWith } from '../tools/driver.testkit';
-import { firstChoices, lampsFor, pickItems } from './items';
+import { firstChoices, lampsFor, pickItems, transformerPicks } from './items';
 
 const halogen = (base: string, watts: number): CatalogueItem => ({
   category: 'lamp',
@@ -71,6 +71,15 @@ describe('first choices', () => {
     expect(us.cable).toMatchObject({ sourceId: 'c12' });
     const iec = firstChoices(planOf([defaultSettings('iec')]), entries, nothing);
     expect(iec.cable).toMatchObject({ sourceId: 'metric' });
+  });
+
+  it('are a transformer for the plan’s line volts, though others are smaller', () => {
+    const foreign = { ...transformer300, ratedVA: 60, nominalLineVolts: 230 };
+    const both = [{ id: 't60', item: foreign }, ...entries];
+    expect(firstChoices(empty, both, nothing).transformer).toMatchObject({ item: { sourceId: 't300' } });
+    const iec = planOf([defaultSettings('iec')]);
+    expect(firstChoices(iec, both, nothing).transformer).toMatchObject({ item: { sourceId: 't60' } });
+    expect(transformerPicks(iec, both).map((pick) => pick.key)).toEqual(['t60', 't300']);
   });
 
   it('take the cable that the plan uses most', () => {

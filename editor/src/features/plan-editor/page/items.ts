@@ -100,7 +100,7 @@ function usualCable(doc: PlanDocument, cables: readonly PickItem<'cable'>[]): It
   return (everyday ?? cables[0])?.choice;
 }
 
-/** What the tools put down before anybody has chosen: a path light, the smallest transformer, the usual cable. */
+/** What the tools put down before anybody has chosen: a path light, the smallest transformer for the line, the usual cable. */
 export function firstChoices(
   doc: PlanDocument,
   entries: readonly CatalogueEntry[],
@@ -110,9 +110,7 @@ export function firstChoices(
   const fixtures = pickItems(doc, entries, 'fixture');
   const fixture = fixtures.find((f) => f.item.kind === 'path') ?? fixtures[0];
   const cables = pickItems(doc, entries, 'cable');
-  const transformer = pickItems(doc, entries, 'transformer').sort(
-    (a, b) => a.item.ratedVA - b.item.ratedVA,
-  )[0];
+  const transformer = transformerPicks(doc, entries)[0];
   return {
     ...before,
     fixture: before.fixture ?? (fixture === undefined ? null : fixtureChoice(fixture, lamps)),
@@ -122,10 +120,18 @@ export function firstChoices(
   };
 }
 
-/** Transformers, smallest first. */
+/** Line volts differ this much from the nameplate's by tolerance; more is another country's line. */
+const SAME_LINE = 0.2;
+
+/** Transformers for the plan's line volts, smallest first, then those for another line. */
 export function transformerPicks(
   doc: PlanDocument,
   entries: readonly CatalogueEntry[],
 ): PickItem<'transformer'>[] {
-  return pickItems(doc, entries, 'transformer').sort((a, b) => a.item.ratedVA - b.item.ratedVA);
+  const { lineVolts } = settingsOf(doc);
+  const foreign = ({ item }: PickItem<'transformer'>) =>
+    Math.abs(item.nominalLineVolts / lineVolts - 1) > SAME_LINE ? 1 : 0;
+  return pickItems(doc, entries, 'transformer').sort(
+    (a, b) => foreign(a) - foreign(b) || a.item.ratedVA - b.item.ratedVA,
+  );
 }
