@@ -96,7 +96,7 @@ test('from a yard photo to eight lamps in their window', async ({ page, browser 
 
   await test.step('a chain, and the home run to its middle', async () => {
     await plan.tool('Cable');
-    await plan.chooseCable('Landscape cable, 12 AWG, 2-core');
+    await plan.chooseCable('12 AWG landscape cable, 2-core');
     await plan.drawCable(row.map(pixelOf));
     await plan.tool('Cable');
     await plan.fit();
@@ -149,7 +149,7 @@ test('from a yard photo to eight lamps in their window', async ({ page, browser 
     await plan.line(/^Cable, \d+ lengths/).click();
     await plan.line(/^T1 to /).click();
     expect(await plan.selection()).toEqual([homeRun!.id]);
-    await plan.inspector.getByLabel('Gauge').selectOption({ label: 'Landscape cable, 8 AWG, 2-core' });
+    await plan.inspector.getByLabel('Gauge').selectOption({ label: '8 AWG landscape cable, 2-core' });
     await expect(plan.faultsButton).toHaveText(/^No faults/);
     await expect(theirs.getByRole('list', { name: 'Fixtures on this sheet' })).toHaveText('In window 8');
     const byHand = voltsByHand(supply, runByHand(8), lamp);

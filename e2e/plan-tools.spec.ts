@@ -118,6 +118,18 @@ test('ground means something: a lamp near water, cable through a building', asyn
   await ask.getByLabel('Name').fill('Shed');
   await ask.getByRole('button', { name: 'Add area' }).click();
 
+  await plan.fit();
+  await plan.tool('Area');
+  for (const corner of [feet(2, 4), feet(6, 4), feet(6, 16), feet(2, 16)]) await plan.clickClose(corner, 0.5);
+  await page.keyboard.press('Enter');
+  await ask.getByRole('combobox', { name: 'Is' }).selectOption({ label: 'Paved' });
+  await ask.getByLabel('Name').fill('Walk');
+  await ask.getByRole('button', { name: 'Add area' }).click();
+  await plan.tool('Select');
+  await plan.click(feet(4, 10));
+  // Four feet of paving, to the click.
+  await expect(plan.inspector).toContainText(/(3′ 1[01]″|4′ [01]″) of it runs under paving: conduit/);
+
   await plan.faultsButton.click();
   const near = page.getByRole('button', { name: /from Pool; keep 10′ 0″/ });
   await expect(near).toBeVisible();

@@ -120,7 +120,7 @@ test('a company at work', async ({ page }) => {
   for (const [name, category, item] of [
     ['catalogue-fixture', 'fixture', 'Brass path light, 3 W'],
     ['catalogue-transformer', 'transformer', 'Multi-tap transformer, 300 VA'],
-    ['catalogue-cable', 'cable', 'Landscape cable, 12 AWG, 2-core'],
+    ['catalogue-cable', 'cable', '12 AWG landscape cable, 2-core'],
   ] as const) {
     await page.goto(`/catalogue?category=${category}`);
     await page.getByRole('link', { name: item, exact: true }).click();

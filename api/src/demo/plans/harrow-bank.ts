@@ -5,7 +5,7 @@ export const HARROW_BANK_SHEET = { widthPx: 2400, heightPx: 1600, view: 'photo' 
 
 const HALOGEN = 'Halogen lamp G4, 20 W';
 const LED = 'LED lamp GU5.3, 4 W, 36°';
-const CABLE = 'Landscape cable, 12 AWG, 2-core';
+const CABLE = '12 AWG landscape cable, 2-core';
 
 /** Corners as clicked on the photo, nearest left first, round by the right. */
 const patio: Quad = [

@@ -23,8 +23,8 @@ const box = (west: number, north: number, east: number, south: number): Point[] 
 
 const HALOGEN = 'Halogen lamp G4, 20 W';
 const LED = 'LED lamp GU5.3, 7 W, 24°';
-const HEAVY = 'Landscape cable, 10 AWG, 2-core';
-const USUAL = 'Landscape cable, 12 AWG, 2-core';
+const HEAVY = '10 AWG landscape cable, 2-core';
+const USUAL = '12 AWG landscape cable, 2-core';
 
 /**
  * A plot plan with an older system: the front walk is fed from behind the house and still has halogen lamps,

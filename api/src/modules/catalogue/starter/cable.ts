@@ -3,7 +3,7 @@ import type { CableItem } from '@lampwright/geometry/catalogue';
 /** Ampacities are those that the estimate contract assumes (60 °C copper, common practice). */
 const byGauge = ([awg, ampacityAmps]: readonly [8 | 10 | 12 | 14 | 16 | 18, number]): CableItem => ({
   category: 'cable',
-  name: `Landscape cable, ${awg} AWG, 2-core`,
+  name: `${awg} AWG landscape cable, 2-core`,
   conductor: { awg },
   ampacityAmps,
   directBurial: true,
@@ -11,7 +11,7 @@ const byGauge = ([awg, ampacityAmps]: readonly [8 | 10 | 12 | 14 | 16 | 18, numb
 
 const bySection = ([mm2, ampacityAmps]: readonly [1.5 | 2.5 | 4 | 6, number]): CableItem => ({
   category: 'cable',
-  name: `Garden cable, 2 × ${mm2} mm²`,
+  name: `2 × ${mm2} mm² garden cable`,
   conductor: { mm2 },
   ampacityAmps,
   directBurial: true,

@@ -1,5 +1,7 @@
+import { conduitLengths } from '@lampwright/geometry/estimate';
 import { type CableRecord, setFields, setItem } from '@lampwright/geometry/plan';
 import { formatLengthWithError } from '@lampwright/geometry/units';
+import { useMemo } from 'react';
 import { percentText } from '../../../plan-view/words';
 import { endsText } from '../ledger/outline';
 import { useDoc, useEditor, useEstimate, useUnitSystem } from '../page/context';
@@ -124,6 +126,8 @@ function useUsualSlack(cable: CableRecord | null): { readonly from: string; read
 /** What the estimate counts, part by part, and what runs through it. */
 function CableFacts({ cable }: { readonly cable: CableRecord }) {
   const system = useUnitSystem();
+  const doc = useDoc();
+  const conduit = useMemo(() => conduitLengths(doc).get(cable.id), [doc, cable.id]);
   const length = useEstimate((s) => s.lengths.get(cable.id));
   const reading = useEstimate((s) => s.answers?.cables.get(cable.id));
   if (length === undefined) return null;
@@ -142,6 +146,9 @@ function CableFacts({ cable }: { readonly cable: CableRecord }) {
         {drawn} + {plainLength(slack, system)} slack + {plainLength(length.riseMeters, system)} rise ={' '}
         <strong>{plainLength(length.totalMeters, system)}</strong>
       </p>
+      {conduit !== undefined && (
+        <p className={styles.facts}>{plainLength(conduit, system)} of it runs under paving: conduit.</p>
+      )}
       {length.plan !== null && !length.plan.trusted && length.measuredMeters === null && (
         <p className={styles.facts}>
           {length.plan.reason === 'near-horizon'

@@ -1,3 +1,4 @@
+import { conduitLengths } from '@lampwright/geometry/estimate';
 import {
   commonsOf,
   itemOf,
@@ -9,9 +10,12 @@ import {
   setRunTerminals,
   tapsOf,
 } from '@lampwright/geometry/plan';
+import { meters } from '@lampwright/geometry/units';
+import { useMemo } from 'react';
 import { ampsText, voltAmpsText, voltsText } from '../../../plan-view/words';
-import { useDoc, useEditor, useEstimate } from '../page/context';
+import { useDoc, useEditor, useEstimate, useUnitSystem } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
+import { plainLength } from '../page/lengths';
 import styles from './inspector.module.css';
 
 export function RunSection({ runs }: { readonly runs: readonly RunRecord[] }) {
@@ -28,6 +32,9 @@ function OneRun({ run }: { readonly run: RunRecord }) {
   const item = transformer && itemOf(doc, transformer.itemId, 'transformer');
   const locked = !editor.canEdit;
   const cables = [...recordsOf(doc, 'cable')].filter((c) => c.runId === run.id);
+  const system = useUnitSystem();
+  const conduits = useMemo(() => conduitLengths(doc), [doc]);
+  const conduit = cables.reduce((sum, cable) => sum + (conduits.get(cable.id) ?? 0), 0);
   const own = [...recordsOf(doc, 'item')].filter((r) => r.item.category === 'cable');
   const gauges = new Set(cables.map((c) => c.itemId));
   return (
@@ -40,6 +47,11 @@ function OneRun({ run }: { readonly run: RunRecord }) {
           {reading.lowestVolts !== null &&
             reading.highestVolts !== null &&
             ` · fixtures from ${voltsText(reading.lowestVolts, null)} to ${voltsText(reading.highestVolts, null)}`}
+        </p>
+      )}
+      {conduit > 0 && (
+        <p className={styles.facts}>
+          {plainLength(meters(conduit), system)} of its cable runs under paving: conduit.
         </p>
       )}
       <CommitField
