@@ -22,7 +22,6 @@ import { StorageModule } from './ports/storage/storage.module.js';
 
 /** What the HTTP process is made of. */
 @Module({})
-// biome-ignore lint/complexity/noStaticOnlyClass: Nest modules are classes
 export class AppModule {
   static with(env: Env): DynamicModule {
     return {

@@ -9,7 +9,6 @@ import { StorageModule } from './ports/storage/storage.module.js';
 
 /** What the worker process is made of. */
 @Module({})
-// biome-ignore lint/complexity/noStaticOnlyClass: Nest modules are classes
 export class WorkerModule {
   static with(env: Env): DynamicModule {
     return {

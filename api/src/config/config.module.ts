@@ -6,7 +6,6 @@ export const ENV = Symbol('env');
 /** Gives the parsed environment to whoever injects `ENV`. */
 @Global()
 @Module({})
-// biome-ignore lint/complexity/noStaticOnlyClass: Nest modules are classes
 export class ConfigModule {
   static with(env: Env): DynamicModule {
     return {

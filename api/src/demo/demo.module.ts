@@ -15,7 +15,6 @@ import { DemoService } from './demo.service.js';
 
 /** What loading the demo company needs of the product. */
 @Module({})
-// biome-ignore lint/complexity/noStaticOnlyClass: Nest modules are classes
 export class DemoModule {
   static with(env: Env): DynamicModule {
     return {

@@ -68,11 +68,11 @@ export function drawHarrowBank(plan: PlanBuilder): void {
   const [toBed] = plan.cable(CABLE, [transformer, [1411, 801], [774, 793], ...bed]);
   plan.land(toBed!, 'Shrub bed', '12V', 'C2');
 
-  const wall = plan.fixture('Wall wash, G4 lamp', [1478, 730], HALOGEN);
+  const wall = plan.fixture('Wall wash, G4 lamp', [1512, 731], HALOGEN);
   const shrubs = plan.fixtures(
     'Bullet up-light, GU5.3 lamp',
     [
-      [1553, 752],
+      [1614, 755],
       [1793, 758],
     ],
     LED,

@@ -18,6 +18,7 @@ import { Database } from '../../database/database.js';
 import { clients, jobs, planSummaries, plans, properties, sheets } from '../../database/schema/index.js';
 import { containing } from '../../database/search.js';
 import type { JobStage } from './jobs.dto.js';
+import { lastEdit } from './jobs.repository.js';
 
 export interface JobFilter {
   readonly search: string;
@@ -36,9 +37,6 @@ export class JobListRepository {
 
   /** Only the jobs of the page are looked into further, so that the length of the whole list costs little. */
   async page(companyId: string, filter: JobFilter, order: JobOrder, limit: number, offset: number) {
-    // A plan's first version is only its beginning, made when somebody first looks at it.
-    const planEdited = sql`case when ${plans.version} > 1 then ${plans.updatedAt} end`;
-    const updated = sql<Date>`greatest(${jobs.updatedAt}, ${planEdited})`;
     const chosen = this.database.queries
       .select({
         id: jobs.id,
@@ -48,12 +46,12 @@ export class JobListRepository {
         existingSystem: jobs.existingSystem,
         createdAt: jobs.createdAt,
         archivedAt: jobs.archivedAt,
-        updatedAt: updated.mapWith(jobs.updatedAt).as('last_updated'),
+        updatedAt: lastEdit.mapWith(jobs.updatedAt).as('last_updated'),
       })
       .from(jobs)
       .leftJoin(plans, and(eq(plans.companyId, jobs.companyId), eq(plans.jobId, jobs.id)))
       .where(this.matching(companyId, filter))
-      .orderBy(...ordering({ ...jobs, updatedAt: updated }, order))
+      .orderBy(...ordering({ ...jobs, updatedAt: lastEdit }, order))
       .limit(limit)
       .offset(offset)
       .as('chosen');

@@ -1,11 +1,14 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { and, eq, sql } from 'drizzle-orm';
 import { Database } from '../../database/database.js';
-import { jobs } from '../../database/schema/index.js';
+import { jobs, plans } from '../../database/schema/index.js';
 import type { SiteWalk } from './site-walk.dto.js';
 
 export type JobRow = typeof jobs.$inferSelect;
 type Editable = Pick<JobRow, 'name' | 'stage' | 'notes' | 'siteWalkOn' | 'installOn' | 'existingSystem'>;
+
+/** The later of the job's last edit and its plan's; a plan's first version is only its beginning. */
+export const lastEdit = sql<Date>`greatest(${jobs.updatedAt}, case when ${plans.version} > 1 then ${plans.updatedAt} end)`;
 
 @Injectable()
 export class JobsRepository {
@@ -17,6 +20,16 @@ export class JobsRepository {
       .from(jobs)
       .where(and(eq(jobs.companyId, companyId), eq(jobs.id, id)));
     return row ?? null;
+  }
+
+  /** When the job or its plan was last edited. */
+  async editedAt(companyId: string, id: string): Promise<Date | null> {
+    const [row] = await this.database.queries
+      .select({ at: lastEdit.mapWith(jobs.updatedAt) })
+      .from(jobs)
+      .leftJoin(plans, and(eq(plans.companyId, jobs.companyId), eq(plans.jobId, jobs.id)))
+      .where(and(eq(jobs.companyId, companyId), eq(jobs.id, id)));
+    return row?.at ?? null;
   }
 
   async insert(

@@ -107,6 +107,7 @@ export class JobsService {
     const property = await this.properties.get(actor, row.propertyId);
     const client = await this.clients.get(actor, property.clientId);
     const sheets = await this.sheets.listOfJob(actor, row.id);
+    const editedAt = (await this.repository.editedAt(actor.companyId, row.id)) ?? row.updatedAt;
     const siteWalk = siteWalkSchema.safeParse(row.siteWalk);
     return {
       id: row.id,
@@ -121,7 +122,7 @@ export class JobsService {
       siteWalk: siteWalk.success ? siteWalk.data : null,
       sheets: sheets.items,
       createdAt: row.createdAt.toISOString(),
-      updatedAt: row.updatedAt.toISOString(),
+      updatedAt: editedAt.toISOString(),
       archivedAt: row.archivedAt?.toISOString() ?? null,
     };
   }

@@ -220,6 +220,14 @@ describe('the list of jobs', () => {
     const list = await owner.agent.get('/api/jobs').expect(200);
     expect(list.body.items[0]).toMatchObject({ name: 'alder court', faults: 3, cautions: 1, fixtures: 14 });
     expect(list.body.items[1]).toMatchObject({ faults: null, cautions: null, fixtures: null });
+    const opened = await owner.agent.get(`/api/jobs/${jobId}`).expect(200);
+    expect(opened.body.updatedAt).toBe(list.body.items[0].updatedAt);
+    expect(Date.parse(opened.body.updatedAt)).toBeGreaterThan(Date.parse(opened.body.createdAt));
+
+    // A plan that only began is no edit.
+    await queries.update(plans).set({ version: 1 }).where(sql`${plans.jobId} = ${jobId}`);
+    const began = await owner.agent.get(`/api/jobs/${jobId}`).expect(200);
+    expect(Date.parse(began.body.updatedAt)).toBeLessThan(Date.parse(opened.body.updatedAt));
     await queries.delete(jobs).where(sql`${jobs.id} = ${jobId}`);
   });
 });

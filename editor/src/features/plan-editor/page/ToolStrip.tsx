@@ -1,4 +1,4 @@
-import { type KeyboardEvent, useRef } from 'react';
+import { type KeyboardEvent, useEffect, useRef } from 'react';
 import { type ToolId, toolIds } from '../tools/tool';
 import { useEditor, useSheet, useTools } from './context';
 import { ToolIcon, toolKeys, toolWord } from './icons';
@@ -19,6 +19,13 @@ export function ToolStrip() {
   const sheet = useSheet();
   // Without a sheet there is nothing to draw on.
   const tools: readonly ToolId[] = editor.canEdit && sheet !== undefined ? toolIds : ['select'];
+  // On a phone the strip is wider than the window.
+  // biome-ignore lint/correctness/useExhaustiveDependencies: another tool is at work.
+  useEffect(() => {
+    bar.current
+      ?.querySelector('[aria-pressed="true"]')
+      ?.scrollIntoView({ block: 'nearest', inline: 'nearest' });
+  }, [toolId]);
   // One tab stop, its tool at work; arrows go on from there.
   const onKeyDown = (event: KeyboardEvent) => {
     const step = steps[event.key];
