@@ -14,7 +14,13 @@ export function JobFacts({ job, clientHref }: { job: Job; clientHref: string }) 
           {job.client.phone && (
             <a href={`tel:${job.client.phone.replace(/[^+\d]/g, '')}`}>{job.client.phone}</a>
           )}
-          {job.client.email && <a href={`mailto:${job.client.email}`}>{job.client.email}</a>}
+          {job.client.email && (
+            <a href={`mailto:${job.client.email}`}>
+              {job.client.email.slice(0, job.client.email.indexOf('@'))}
+              <wbr />
+              {job.client.email.slice(job.client.email.indexOf('@'))}
+            </a>
+          )}
         </dd>
       </div>
       <div>
