@@ -13,9 +13,15 @@ import { EstimatesModule } from './modules/estimates/estimates.module.js';
 import { HealthModule } from './modules/health/health.module.js';
 import { JobsModule } from './modules/jobs/jobs.module.js';
 import { MembersModule } from './modules/members/members.module.js';
+import { PaymentsModule } from './modules/payments/payments.module.js';
 import { PlansModule } from './modules/plans/plans.module.js';
+import { PricingModule } from './modules/pricing/pricing.module.js';
 import { PropertiesModule } from './modules/properties/properties.module.js';
+import { ProposalsModule } from './modules/proposals/proposals.module.js';
+import { QuestionsModule } from './modules/questions/questions.module.js';
+import { ShareModule } from './modules/share/share.module.js';
 import { SheetsModule } from './modules/sheets/sheets.module.js';
+import { TimelineModule } from './modules/timeline/timeline.module.js';
 import { MailModule } from './ports/mail/mail.module.js';
 import { QueueModule } from './ports/queue/queue.module.js';
 import { StorageModule } from './ports/storage/storage.module.js';
@@ -46,6 +52,12 @@ export class AppModule {
         PlansModule,
         CatalogueModule,
         EstimatesModule,
+        PricingModule,
+        ProposalsModule,
+        QuestionsModule,
+        ShareModule,
+        PaymentsModule,
+        TimelineModule,
       ],
     };
   }

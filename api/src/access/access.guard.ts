@@ -4,13 +4,17 @@ import { AuthGuard } from '@nestjs/passport';
 import type { Request, Response } from 'express';
 import { notAllowed, notSignedIn } from '../http/app-error.js';
 import { ACCESS, type Access } from './decorators.js';
+import { LinkGate } from './link-gate.js';
 import { allows } from './permissions.js';
 import type { LiveSession } from './session.repository.js';
 
 /** Stands before every route. A route that says nothing about access is denied to all. */
 @Injectable()
 export class AccessGuard extends AuthGuard('jwt') {
-  constructor(private readonly reflector: Reflector) {
+  constructor(
+    private readonly reflector: Reflector,
+    private readonly links: LinkGate,
+  ) {
     super();
   }
 
@@ -22,8 +26,13 @@ export class AccessGuard extends AuthGuard('jwt') {
     if (!access) throw notAllowed('This address is not open to anyone.');
     if (access.kind === 'public') return true;
 
-    await super.canActivate(context);
     const request = context.switchToHttp().getRequest<Request>();
+    if (access.kind === 'shared') {
+      context.switchToHttp().getResponse<Response>().setHeader('Cache-Control', 'no-store');
+      request.guest = await this.links.guestOf(request);
+      return true;
+    }
+    await super.canActivate(context);
     // Whatever is behind a sign-in stays in no cache, unless the route has a better rule of its own.
     context.switchToHttp().getResponse<Response>().setHeader('Cache-Control', 'no-store');
     const session = request.user as LiveSession;

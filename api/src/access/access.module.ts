@@ -7,6 +7,8 @@ import type { Env } from '../config/env.js';
 import { SameSiteGuard } from '../http/same-site.guard.js';
 import { AccessGuard } from './access.guard.js';
 import { JwtStrategy } from './jwt.strategy.js';
+import { LinkGate } from './link-gate.js';
+import { LinksRepository } from './links.repository.js';
 import { MembershipsRepository } from './memberships.repository.js';
 import { PasswordAttemptsRepository } from './password-attempts.repository.js';
 import { PasswordGate } from './password-gate.js';
@@ -14,7 +16,15 @@ import { SessionRepository } from './session.repository.js';
 import { SessionCookie } from './session-cookie.js';
 import { UsersRepository } from './users.repository.js';
 
-const shared = [SessionRepository, SessionCookie, UsersRepository, MembershipsRepository, PasswordGate];
+const shared = [
+  SessionRepository,
+  SessionCookie,
+  UsersRepository,
+  MembershipsRepository,
+  PasswordGate,
+  LinksRepository,
+  LinkGate,
+];
 
 @Global()
 @Module({

@@ -1,12 +1,14 @@
 import { createParamDecorator, type ExecutionContext, SetMetadata } from '@nestjs/common';
 import type { Request } from 'express';
-import { notSignedIn } from '../http/app-error.js';
+import { notFound, notSignedIn } from '../http/app-error.js';
 import type { Actor, Person } from './actor.js';
+import type { Guest } from './guest.js';
 import type { Permission } from './permissions.js';
 
 export type Access =
   | { readonly kind: 'public' }
   | { readonly kind: 'signed-in' }
+  | { readonly kind: 'shared' }
   | { readonly kind: 'permission'; readonly permission: Permission };
 
 export const ACCESS = 'lampwright:access';
@@ -15,6 +17,8 @@ export const ACCESS = 'lampwright:access';
 export const Public = () => SetMetadata(ACCESS, { kind: 'public' } satisfies Access);
 /** Open to anyone signed in, whatever their company and role: their own account. */
 export const SignedIn = () => SetMetadata(ACCESS, { kind: 'signed-in' } satisfies Access);
+/** Open to whoever holds the link of a proposal; the route names it as `linkId`. */
+export const Shared = () => SetMetadata(ACCESS, { kind: 'shared' } satisfies Access);
 /** Open to the roles that the permission table gives this permission. */
 export const Permit = (permission: Permission) =>
   SetMetadata(ACCESS, { kind: 'permission', permission } satisfies Access);
@@ -25,6 +29,7 @@ declare global {
       /** Set by the access guard. */
       person?: Person;
       actor?: Actor;
+      guest?: Guest;
     }
   }
 }
@@ -39,4 +44,10 @@ export const CurrentPerson = createParamDecorator((_: unknown, context: Executio
   const { person } = context.switchToHttp().getRequest<Request>();
   if (!person) throw notSignedIn();
   return person;
+});
+
+export const CurrentGuest = createParamDecorator((_: unknown, context: ExecutionContext): Guest => {
+  const { guest } = context.switchToHttp().getRequest<Request>();
+  if (!guest) throw notFound('This proposal');
+  return guest;
 });

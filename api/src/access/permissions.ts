@@ -26,6 +26,21 @@ export const permissions = {
   'catalogue.read': everyone,
   'catalogue.edit': planners,
   'estimates.run': everyone,
+  /** Prices of items and jobs. Costs and margins only where the company lets designers see them. */
+  'prices.read': planners,
+  'prices.edit': planners,
+  /** The price book: rates, overhead, markup, taxes, stages. */
+  'price-book.edit': owners,
+  'proposals.read': planners,
+  'proposals.edit': planners,
+  'questions.answer': planners,
+  'payments.read': planners,
+  'payments.record': planners,
+  'payments.refund': owners,
+  'payments.export': owners,
+  'timeline.read': everyone,
+  'board.read': everyone,
+  'numbers.read': owners,
 } as const satisfies Record<string, readonly Role[]>;
 
 export type Permission = keyof typeof permissions;

@@ -198,6 +198,14 @@ export const controlItemSchema = z.strictObject({
   inrushAmps: positive.nullable(),
 });
 
+/** What holds a fixture or a transformer in its place, and what protects its cable. */
+export const partItemSchema = z.strictObject({
+  category: z.literal('part'),
+  name,
+  note: note.optional(),
+  use: z.enum(['ground-stake', 'tree-mount', 'surface-mount', 'transformer-mount', 'conduit', 'other']),
+});
+
 export const catalogueItemSchema = z.discriminatedUnion('category', [
   fixtureItemSchema,
   lampItemSchema,
@@ -206,6 +214,7 @@ export const catalogueItemSchema = z.discriminatedUnion('category', [
   hubItemSchema,
   connectorItemSchema,
   controlItemSchema,
+  partItemSchema,
 ]);
 export type CatalogueItem = z.infer<typeof catalogueItemSchema>;
 export type CatalogueCategory = CatalogueItem['category'];
@@ -214,3 +223,6 @@ export type LampItem = z.infer<typeof lampItemSchema>;
 export type CableItem = z.infer<typeof cableItemSchema>;
 export type TransformerItem = z.infer<typeof transformerItemSchema>;
 export type HubItem = z.infer<typeof hubItemSchema>;
+export type ConnectorItem = z.infer<typeof connectorItemSchema>;
+export type ControlItem = z.infer<typeof controlItemSchema>;
+export type PartItem = z.infer<typeof partItemSchema>;

@@ -1,4 +1,4 @@
-import { index, integer, pgTable, text, uuid } from 'drizzle-orm/pg-core';
+import { index, integer, jsonb, pgTable, text, uuid } from 'drizzle-orm/pg-core';
 import { at, createdAt, id } from './columns.js';
 import { companies } from './people.js';
 
@@ -12,6 +12,10 @@ export const mailMessages = pgTable(
     subject: text('subject').notNull(),
     text: text('text').notNull(),
     html: text('html').notNull(),
+    /** Files in object storage to send with it: key, name and type of each. */
+    attachments: jsonb('attachments').notNull().default([]),
+    /** Where an answer goes, if not to the product. */
+    replyTo: text('reply_to'),
     attempts: integer('attempts').notNull().default(0),
     createdAt: createdAt(),
     sentAt: at('sent_at'),

@@ -9,6 +9,7 @@ export const catalogueCategories = [
   'hub',
   'connector',
   'control',
+  'part',
 ] as const;
 
 export const catalogueQuerySchema = z.strictObject({

@@ -10,6 +10,7 @@ const LEFT_OUT = ['sessions'];
 const HIDDEN_COLUMNS: Readonly<Record<string, readonly string[]>> = {
   invitations: ['token_hash'],
   mail_messages: ['text', 'html'],
+  proposal_links: ['token_hash', 'sealed_token'],
 };
 
 const MEMBERS = `SELECT jsonb_build_object('user_id', u.id, 'name', u.name, 'email', u.email, 'role', m.role, 'since', m.created_at)::text AS row

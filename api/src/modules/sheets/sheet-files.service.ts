@@ -1,15 +1,10 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { type Actor, demand } from '../../access/actor.js';
 import { notFound } from '../../http/app-error.js';
-import { ObjectStorage, type StoredObject } from '../../ports/storage/storage.js';
+import type { StoredFile } from '../../http/send-file.js';
+import { ObjectStorage } from '../../ports/storage/storage.js';
 import { pageKey } from './sheet-keys.js';
 import { type SheetRow, SheetsRepository } from './sheets.repository.js';
-
-/** A file to be sent, with the tag that names its content. */
-export interface SheetFile {
-  readonly etag: string;
-  open(): Promise<StoredObject>;
-}
 
 /** The files of sheets, for those who may see the job they belong to. */
 @Injectable()
@@ -19,16 +14,16 @@ export class SheetFilesService {
     @Inject(ObjectStorage) private readonly storage: ObjectStorage,
   ) {}
 
-  async image(actor: Actor, id: string): Promise<SheetFile> {
+  async image(actor: Actor, id: string): Promise<StoredFile> {
     return this.file((await this.row(actor, id)).imageKey);
   }
 
-  async thumbnail(actor: Actor, id: string): Promise<SheetFile> {
+  async thumbnail(actor: Actor, id: string): Promise<StoredFile> {
     return this.file((await this.row(actor, id)).thumbnailKey);
   }
 
   /** A small picture of a page that may be chosen. */
-  async pagePreview(actor: Actor, id: string, page: number): Promise<SheetFile> {
+  async pagePreview(actor: Actor, id: string, page: number): Promise<StoredFile> {
     const row = await this.row(actor, id);
     const offered = row.status === 'choose-page' && page <= (row.pageCount ?? 0);
     return this.file(offered ? pageKey(actor.companyId, id, page) : null);
@@ -42,7 +37,7 @@ export class SheetFilesService {
     return row;
   }
 
-  private file(key: string | null): SheetFile {
+  private file(key: string | null): StoredFile {
     if (key === null) throw notFound('This picture');
     return {
       // An object is never overwritten: its key names its content.

@@ -8,6 +8,14 @@ export interface QueuePayloads {
   'storage.delete': { readonly prefix: string };
   /** Recompute the stored summary of a plan. */
   'plan.summarise': { readonly companyId: string; readonly jobId: string };
+  /** Keep a revision's pictures and make its PDF; send it if that was asked for. */
+  'proposal.prepare': { readonly companyId: string; readonly revisionId: string };
+  /** Remind somebody who has not answered; does nothing if they have by then. */
+  'proposal.remind': { readonly companyId: string; readonly linkId: string; readonly revisionId: string };
+  /** Make the signed PDF of an approval and mail it to both sides. */
+  'approval.sign': { readonly companyId: string; readonly approvalId: string };
+  /** Make the PDF of an invoice, receipt or note of a refund, and mail it. */
+  'money-document.make': { readonly companyId: string; readonly documentId: string };
 }
 export type QueueName = keyof QueuePayloads;
 
@@ -20,6 +28,15 @@ interface QueueSettings {
   /** A job that a dead worker held is taken up again after this long. */
   readonly expireInSeconds: number;
 }
+
+/** Papers are made and mailed by patient tries: a PDF takes seconds, storage may be away for minutes. */
+const paper: QueueSettings = {
+  policy: 'standard',
+  retryLimit: 8,
+  retryDelay: 3,
+  retryBackoff: true,
+  expireInSeconds: 180,
+};
 
 export const queues: Readonly<Record<QueueName, QueueSettings>> = {
   'mail.send': { policy: 'standard', retryLimit: 12, retryDelay: 5, retryBackoff: true, expireInSeconds: 60 },
@@ -44,4 +61,8 @@ export const queues: Readonly<Record<QueueName, QueueSettings>> = {
     retryBackoff: true,
     expireInSeconds: 60,
   },
+  'proposal.prepare': paper,
+  'proposal.remind': paper,
+  'approval.sign': paper,
+  'money-document.make': paper,
 };

@@ -852,6 +852,678 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/api/price-book": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["PriceBook_get"];
+        put: operations["PriceBook_replace"];
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/catalogue-prices": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["PriceBook_cataloguePrices"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/catalogue/{itemId}/price": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put: operations["PriceBook_setPrice"];
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/catalogue/{itemId}/prices": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["PriceBook_history"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/pricing": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["JobPricing_get"];
+        put: operations["JobPricing_replace"];
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/quote": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["JobPricing_quote"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/materials": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["JobPricing_materials"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/fault-acceptances": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["JobPricing_accept"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/fault-acceptances/{acceptanceId}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post?: never;
+        delete: operations["JobPricing_withdrawAcceptance"];
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Proposals_get"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/words": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put: operations["Proposals_setWords"];
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/revisions": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Proposals_freeze"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/revisions/{revisionId}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Proposals_detail"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/revisions/{revisionId}/pdf": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Proposals_pdf"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/revisions/{revisionId}/signed-pdf": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Proposals_signedPdf"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/revisions/{revisionId}/send": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Proposals_send"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/revisions/{revisionId}/withdraw": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Proposals_withdraw"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/revisions/{revisionId}/release": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Proposals_release"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/links/{linkId}/resend": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Proposals_resend"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/proposal/links/{linkId}/revoke": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Proposals_revoke"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/proposal-texts": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["ProposalTexts_get"];
+        put: operations["ProposalTexts_replace"];
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/questions": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Questions_list"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/questions/{questionId}/messages": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Questions_answer"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/questions/{questionId}/resolve": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Questions_resolve"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/questions/{questionId}/reopen": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Questions_reopen"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Share_page"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/opened": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Share_opened"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/pictures/{sheetId}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Share_picture"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/papers/{paperId}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Share_paper"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/questions": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Share_ask"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/questions/{questionId}/messages": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Share_reply"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/approve": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Share_approve"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/decline": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Share_decline"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/share/{linkId}/dues/{dueId}/checkout": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Share_checkout"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/payments": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Payments_ofJob"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/dues/{dueId}/request": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Payments_request"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/dues/{dueId}/payments": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Payments_record"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/payments/{paymentId}/refunds": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["Payments_refund"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/money-documents/{documentId}/pdf": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Payments_documentPdf"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/jobs/{jobId}/timeline": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Timeline_ofJob"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/board": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Timeline_board"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/numbers": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Timeline_numbers"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
 }
 export type webhooks = Record<string, never>;
 export interface components {
@@ -3901,7 +4573,7 @@ export interface operations {
     Catalogue_list: {
         parameters: {
             query?: {
-                category?: "fixture" | "lamp" | "cable" | "transformer" | "hub" | "connector" | "control";
+                category?: "fixture" | "lamp" | "cable" | "transformer" | "hub" | "connector" | "control" | "part";
                 search?: string;
                 archived?: "true" | "false";
             };
@@ -4120,6 +4792,13 @@ export interface operations {
                                 kind: "timer" | "photocell" | "smart-plug";
                                 ratedVA: number;
                                 inrushAmps: number | null;
+                            } | {
+                                /** @enum {string} */
+                                category: "part";
+                                name: string;
+                                note?: string;
+                                /** @enum {string} */
+                                use: "ground-stake" | "tree-mount" | "surface-mount" | "transformer-mount" | "conduit" | "other";
                             };
                             /** Format: date-time */
                             createdAt: string;
@@ -4342,6 +5021,13 @@ export interface operations {
                         kind: "timer" | "photocell" | "smart-plug";
                         ratedVA: number;
                         inrushAmps: number | null;
+                    } | {
+                        /** @enum {string} */
+                        category: "part";
+                        name: string;
+                        note?: string;
+                        /** @enum {string} */
+                        use: "ground-stake" | "tree-mount" | "surface-mount" | "transformer-mount" | "conduit" | "other";
                     };
                 };
             };
@@ -4555,6 +5241,13 @@ export interface operations {
                             kind: "timer" | "photocell" | "smart-plug";
                             ratedVA: number;
                             inrushAmps: number | null;
+                        } | {
+                            /** @enum {string} */
+                            category: "part";
+                            name: string;
+                            note?: string;
+                            /** @enum {string} */
+                            use: "ground-stake" | "tree-mount" | "surface-mount" | "transformer-mount" | "conduit" | "other";
                         };
                         /** Format: date-time */
                         createdAt: string;
@@ -4778,6 +5471,13 @@ export interface operations {
                         kind: "timer" | "photocell" | "smart-plug";
                         ratedVA: number;
                         inrushAmps: number | null;
+                    } | {
+                        /** @enum {string} */
+                        category: "part";
+                        name: string;
+                        note?: string;
+                        /** @enum {string} */
+                        use: "ground-stake" | "tree-mount" | "surface-mount" | "transformer-mount" | "conduit" | "other";
                     };
                 };
             };
@@ -4991,6 +5691,13 @@ export interface operations {
                             kind: "timer" | "photocell" | "smart-plug";
                             ratedVA: number;
                             inrushAmps: number | null;
+                        } | {
+                            /** @enum {string} */
+                            category: "part";
+                            name: string;
+                            note?: string;
+                            /** @enum {string} */
+                            use: "ground-stake" | "tree-mount" | "surface-mount" | "transformer-mount" | "conduit" | "other";
                         };
                         /** Format: date-time */
                         createdAt: string;
@@ -5221,6 +5928,13 @@ export interface operations {
                             kind: "timer" | "photocell" | "smart-plug";
                             ratedVA: number;
                             inrushAmps: number | null;
+                        } | {
+                            /** @enum {string} */
+                            category: "part";
+                            name: string;
+                            note?: string;
+                            /** @enum {string} */
+                            use: "ground-stake" | "tree-mount" | "surface-mount" | "transformer-mount" | "conduit" | "other";
                         };
                         /** Format: date-time */
                         createdAt: string;
@@ -5451,6 +6165,13 @@ export interface operations {
                             kind: "timer" | "photocell" | "smart-plug";
                             ratedVA: number;
                             inrushAmps: number | null;
+                        } | {
+                            /** @enum {string} */
+                            category: "part";
+                            name: string;
+                            note?: string;
+                            /** @enum {string} */
+                            use: "ground-stake" | "tree-mount" | "surface-mount" | "transformer-mount" | "conduit" | "other";
                         };
                         /** Format: date-time */
                         createdAt: string;
@@ -5637,6 +6358,3368 @@ export interface operations {
                             };
                             message: string;
                         }[];
+                    };
+                };
+            };
+        };
+    };
+    PriceBook_get: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        book: {
+                            locale: string;
+                            rates: {
+                                perFixture: {
+                                    path: number;
+                                    up: number;
+                                    down: number;
+                                    flood: number;
+                                    "wall-wash": number;
+                                    step: number;
+                                    "in-grade": number;
+                                    bollard: number;
+                                    linear: number;
+                                    underwater: number;
+                                };
+                                /** @enum {string} */
+                                lengthUnit: "foot" | "meter";
+                                perTrenched: number;
+                                perBored: number;
+                                perTransformer: number;
+                                perTreeMount: number;
+                                perAimingVisit: number;
+                                aimingVisits: number;
+                            };
+                            overheadPercent: number;
+                            materials: {
+                                /** @enum {string} */
+                                by: "markup";
+                                percent: number;
+                            } | {
+                                /** @enum {string} */
+                                by: "margin";
+                                percent: number;
+                            };
+                            labour: {
+                                /** @enum {string} */
+                                by: "markup";
+                                percent: number;
+                            } | {
+                                /** @enum {string} */
+                                by: "margin";
+                                percent: number;
+                            };
+                            cableWastePercent: number;
+                            conduitWastePercent: number;
+                            taxes: {
+                                id: string;
+                                name: string;
+                                jurisdiction: string;
+                                percent: number;
+                                onMaterials: boolean;
+                                onLabour: boolean;
+                            }[];
+                            defaultTaxId: string | null;
+                            stages: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                due: "approval" | "start" | "finish";
+                                percent: number;
+                            }[];
+                            depositCap: {
+                                percent: number | null;
+                                amountMinor: number | null;
+                            };
+                            designersSeeCosts: boolean;
+                            showLinePrices: boolean;
+                            parts: {
+                                "ground-stake": string | null;
+                                "tree-mount": string | null;
+                                "surface-mount": string | null;
+                                "transformer-mount": string | null;
+                                conduit: string | null;
+                            };
+                            controlItemId: string | null;
+                            validDays: number;
+                        };
+                        currency: string;
+                    };
+                };
+            };
+        };
+    };
+    PriceBook_replace: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    baseVersion: number;
+                    book: {
+                        locale: string;
+                        rates: {
+                            perFixture: {
+                                path: number;
+                                up: number;
+                                down: number;
+                                flood: number;
+                                "wall-wash": number;
+                                step: number;
+                                "in-grade": number;
+                                bollard: number;
+                                linear: number;
+                                underwater: number;
+                            };
+                            /** @enum {string} */
+                            lengthUnit: "foot" | "meter";
+                            perTrenched: number;
+                            perBored: number;
+                            perTransformer: number;
+                            perTreeMount: number;
+                            perAimingVisit: number;
+                            aimingVisits: number;
+                        };
+                        overheadPercent: number;
+                        materials: {
+                            /** @enum {string} */
+                            by: "markup";
+                            percent: number;
+                        } | {
+                            /** @enum {string} */
+                            by: "margin";
+                            percent: number;
+                        };
+                        labour: {
+                            /** @enum {string} */
+                            by: "markup";
+                            percent: number;
+                        } | {
+                            /** @enum {string} */
+                            by: "margin";
+                            percent: number;
+                        };
+                        cableWastePercent: number;
+                        conduitWastePercent: number;
+                        taxes: {
+                            id: string;
+                            name: string;
+                            jurisdiction: string;
+                            percent: number;
+                            onMaterials: boolean;
+                            onLabour: boolean;
+                        }[];
+                        defaultTaxId: string | null;
+                        stages: {
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            percent: number;
+                        }[];
+                        depositCap: {
+                            percent: number | null;
+                            amountMinor: number | null;
+                        };
+                        designersSeeCosts: boolean;
+                        showLinePrices: boolean;
+                        parts: {
+                            "ground-stake": string | null;
+                            "tree-mount": string | null;
+                            "surface-mount": string | null;
+                            "transformer-mount": string | null;
+                            conduit: string | null;
+                        };
+                        controlItemId: string | null;
+                        validDays: number;
+                    };
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        book: {
+                            locale: string;
+                            rates: {
+                                perFixture: {
+                                    path: number;
+                                    up: number;
+                                    down: number;
+                                    flood: number;
+                                    "wall-wash": number;
+                                    step: number;
+                                    "in-grade": number;
+                                    bollard: number;
+                                    linear: number;
+                                    underwater: number;
+                                };
+                                /** @enum {string} */
+                                lengthUnit: "foot" | "meter";
+                                perTrenched: number;
+                                perBored: number;
+                                perTransformer: number;
+                                perTreeMount: number;
+                                perAimingVisit: number;
+                                aimingVisits: number;
+                            };
+                            overheadPercent: number;
+                            materials: {
+                                /** @enum {string} */
+                                by: "markup";
+                                percent: number;
+                            } | {
+                                /** @enum {string} */
+                                by: "margin";
+                                percent: number;
+                            };
+                            labour: {
+                                /** @enum {string} */
+                                by: "markup";
+                                percent: number;
+                            } | {
+                                /** @enum {string} */
+                                by: "margin";
+                                percent: number;
+                            };
+                            cableWastePercent: number;
+                            conduitWastePercent: number;
+                            taxes: {
+                                id: string;
+                                name: string;
+                                jurisdiction: string;
+                                percent: number;
+                                onMaterials: boolean;
+                                onLabour: boolean;
+                            }[];
+                            defaultTaxId: string | null;
+                            stages: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                due: "approval" | "start" | "finish";
+                                percent: number;
+                            }[];
+                            depositCap: {
+                                percent: number | null;
+                                amountMinor: number | null;
+                            };
+                            designersSeeCosts: boolean;
+                            showLinePrices: boolean;
+                            parts: {
+                                "ground-stake": string | null;
+                                "tree-mount": string | null;
+                                "surface-mount": string | null;
+                                "transformer-mount": string | null;
+                                conduit: string | null;
+                            };
+                            controlItemId: string | null;
+                            validDays: number;
+                        };
+                        currency: string;
+                    };
+                };
+            };
+        };
+    };
+    PriceBook_cataloguePrices: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        seesCosts: boolean;
+                        items: {
+                            /** Format: uuid */
+                            itemId: string;
+                            price: {
+                                costMinor: number | null;
+                                priceMinor: number | null;
+                                per: number;
+                                /** @enum {string} */
+                                unit: "each" | "foot" | "meter";
+                                increment: number;
+                                taxable: boolean;
+                                supplier: string;
+                                orderNumber: string;
+                            };
+                            /** Format: date-time */
+                            since: string;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    PriceBook_setPrice: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                itemId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    price: {
+                        costMinor: number | null;
+                        priceMinor: number | null;
+                        per: number;
+                        /** @enum {string} */
+                        unit: "each" | "foot" | "meter";
+                        increment: number;
+                        taxable: boolean;
+                        supplier: string;
+                        orderNumber: string;
+                    };
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        seesCosts: boolean;
+                        items: {
+                            /** Format: uuid */
+                            itemId: string;
+                            price: {
+                                costMinor: number | null;
+                                priceMinor: number | null;
+                                per: number;
+                                /** @enum {string} */
+                                unit: "each" | "foot" | "meter";
+                                increment: number;
+                                taxable: boolean;
+                                supplier: string;
+                                orderNumber: string;
+                            };
+                            /** Format: date-time */
+                            since: string;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    PriceBook_history: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                itemId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        items: {
+                            price: {
+                                costMinor: number | null;
+                                priceMinor: number | null;
+                                per: number;
+                                /** @enum {string} */
+                                unit: "each" | "foot" | "meter";
+                                increment: number;
+                                taxable: boolean;
+                                supplier: string;
+                                orderNumber: string;
+                            };
+                            /** Format: date-time */
+                            since: string;
+                            by: string;
+                            importedFrom: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    JobPricing_get: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        pricing: {
+                            groups: {
+                                id: string;
+                                name: string;
+                                description: string;
+                                on: boolean;
+                            }[];
+                            members: {
+                                [key: string]: string;
+                            };
+                            taxId: string | null;
+                            taxExempt: boolean;
+                            discount: {
+                                /** @enum {string} */
+                                kind: "none";
+                            } | {
+                                /** @enum {string} */
+                                kind: "percent";
+                                percent: number;
+                                name: string;
+                            } | {
+                                /** @enum {string} */
+                                kind: "amount";
+                                amountMinor: number;
+                                name: string;
+                            };
+                            manualLines: {
+                                id: string;
+                                groupId: string | null;
+                                /** @enum {string} */
+                                kind: "material" | "labour";
+                                name: string;
+                                quantity: number;
+                                /** @enum {string} */
+                                unit: "each" | "foot" | "meter" | "visit";
+                                costMinor: number | null;
+                                priceMinor: number | null;
+                                taxable: boolean;
+                            }[];
+                            overrides: {
+                                [key: string]: {
+                                    quantity: number | null;
+                                    priceMinor: number | null;
+                                    note: string;
+                                };
+                            };
+                            controls: {
+                                [key: string]: string | null;
+                            };
+                            aimingVisits: number | null;
+                            stages: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                due: "approval" | "start" | "finish";
+                                percent: number;
+                            }[] | null;
+                        };
+                    };
+                };
+            };
+        };
+    };
+    JobPricing_replace: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    baseVersion: number;
+                    pricing: {
+                        groups: {
+                            id: string;
+                            name: string;
+                            description: string;
+                            on: boolean;
+                        }[];
+                        members: {
+                            [key: string]: string;
+                        };
+                        taxId: string | null;
+                        taxExempt: boolean;
+                        discount: {
+                            /** @enum {string} */
+                            kind: "none";
+                        } | {
+                            /** @enum {string} */
+                            kind: "percent";
+                            percent: number;
+                            name: string;
+                        } | {
+                            /** @enum {string} */
+                            kind: "amount";
+                            amountMinor: number;
+                            name: string;
+                        };
+                        manualLines: {
+                            id: string;
+                            groupId: string | null;
+                            /** @enum {string} */
+                            kind: "material" | "labour";
+                            name: string;
+                            quantity: number;
+                            /** @enum {string} */
+                            unit: "each" | "foot" | "meter" | "visit";
+                            costMinor: number | null;
+                            priceMinor: number | null;
+                            taxable: boolean;
+                        }[];
+                        overrides: {
+                            [key: string]: {
+                                quantity: number | null;
+                                priceMinor: number | null;
+                                note: string;
+                            };
+                        };
+                        controls: {
+                            [key: string]: string | null;
+                        };
+                        aimingVisits: number | null;
+                        stages: {
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            percent: number;
+                        }[] | null;
+                    };
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        pricing: {
+                            groups: {
+                                id: string;
+                                name: string;
+                                description: string;
+                                on: boolean;
+                            }[];
+                            members: {
+                                [key: string]: string;
+                            };
+                            taxId: string | null;
+                            taxExempt: boolean;
+                            discount: {
+                                /** @enum {string} */
+                                kind: "none";
+                            } | {
+                                /** @enum {string} */
+                                kind: "percent";
+                                percent: number;
+                                name: string;
+                            } | {
+                                /** @enum {string} */
+                                kind: "amount";
+                                amountMinor: number;
+                                name: string;
+                            };
+                            manualLines: {
+                                id: string;
+                                groupId: string | null;
+                                /** @enum {string} */
+                                kind: "material" | "labour";
+                                name: string;
+                                quantity: number;
+                                /** @enum {string} */
+                                unit: "each" | "foot" | "meter" | "visit";
+                                costMinor: number | null;
+                                priceMinor: number | null;
+                                taxable: boolean;
+                            }[];
+                            overrides: {
+                                [key: string]: {
+                                    quantity: number | null;
+                                    priceMinor: number | null;
+                                    note: string;
+                                };
+                            };
+                            controls: {
+                                [key: string]: string | null;
+                            };
+                            aimingVisits: number | null;
+                            stages: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                due: "approval" | "start" | "finish";
+                                percent: number;
+                            }[] | null;
+                        };
+                    };
+                };
+            };
+        };
+    };
+    JobPricing_quote: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        planVersion: number;
+                        pricingVersion: number;
+                        seesCosts: boolean;
+                        quote: {
+                            currency: string;
+                            locale: string;
+                            groups: {
+                                id: string | null;
+                                name: string;
+                                description: string;
+                                on: boolean;
+                                fixtures: number;
+                                priceMinor: number;
+                            }[];
+                            lines: {
+                                key: string;
+                                groupId: string | null;
+                                /** @enum {string} */
+                                section: "fixtures" | "lamps" | "cable" | "connectors" | "mounting" | "conduit" | "hubs" | "transformers" | "controls" | "labour" | "other";
+                                /** @enum {string} */
+                                kind: "material" | "labour";
+                                name: string;
+                                quantity: number;
+                                /** @enum {string} */
+                                unit: "each" | "foot" | "meter" | "visit";
+                                source: string;
+                                recordIds: string[];
+                                itemId: string | null;
+                                priceMinor: number | null;
+                                costMinor: number | null;
+                                taxable: boolean;
+                                /** @enum {string} */
+                                origin: "plan" | "manual" | "overridden";
+                                planned: {
+                                    quantity: number;
+                                    priceMinor: number | null;
+                                } | null;
+                                note: string;
+                            }[];
+                            discountName: string;
+                            tax: {
+                                name: string;
+                                jurisdiction: string;
+                                percent: number;
+                            } | null;
+                            combinations: {
+                                groups: string[];
+                                subtotalMinor: number;
+                                discountMinor: number;
+                                taxableMinor: number;
+                                taxMinor: number;
+                                totalMinor: number;
+                                stages: {
+                                    id: string;
+                                    name: string;
+                                    /** @enum {string} */
+                                    due: "approval" | "start" | "finish";
+                                    percent: number | null;
+                                    amountMinor: number;
+                                    capped: boolean;
+                                }[];
+                            }[];
+                            margin: {
+                                costMinor: number;
+                                overheadMinor: number;
+                                profitMinor: number;
+                                profitPercent: number | null;
+                            } | null;
+                            warnings: {
+                                /** @enum {string} */
+                                code: "no-price" | "no-part" | "no-connector" | "no-control" | "length-unknown" | "override-without-line" | "deposit-capped" | "no-tax" | "empty-group" | "item-not-in-catalogue";
+                                message: string;
+                                lineKey: string | null;
+                                recordIds: string[];
+                            }[];
+                        };
+                        faults: {
+                            key: string;
+                            code: string;
+                            recordId: string;
+                            message: string;
+                            acceptance: {
+                                /** Format: uuid */
+                                id: string;
+                                reason: string;
+                                by: string;
+                                /** Format: date-time */
+                                at: string;
+                            } | null;
+                        }[];
+                        checks: {
+                            groups: string[];
+                            offerable: boolean;
+                            faults: string[];
+                        }[];
+                        obstacles: string[];
+                    };
+                };
+            };
+        };
+    };
+    JobPricing_materials: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        planVersion: number;
+                        lines: {
+                            key: string;
+                            groupId: string | null;
+                            section: string;
+                            name: string;
+                            quantity: number;
+                            unit: string;
+                            source: string;
+                            recordIds: string[];
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    JobPricing_accept: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    faultKey: string;
+                    message: string;
+                    reason: string;
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        reason: string;
+                        by: string;
+                        /** Format: date-time */
+                        at: string;
+                    };
+                };
+            };
+        };
+    };
+    JobPricing_withdrawAcceptance: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                acceptanceId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            204: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+        };
+    };
+    Proposals_get: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        number: number | null;
+                        /** @enum {string} */
+                        state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                        currency: string;
+                        locale: string;
+                        stale: boolean;
+                        words: {
+                            scope: string;
+                            exclusions: string;
+                            timeline: string;
+                            locate: string;
+                            warranty: string;
+                            terms: string;
+                            cancellation: string;
+                        };
+                        own: string[];
+                        revisions: {
+                            /** Format: uuid */
+                            id: string;
+                            revision: number;
+                            /** @enum {string} */
+                            state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                            changeOrder: boolean;
+                            planVersion: number;
+                            hash: string;
+                            totalMinor: number;
+                            progress: number;
+                            failure: string | null;
+                            pdfUrl: string | null;
+                            /** Format: date */
+                            validUntil: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            createdBy: string;
+                            sentAt: string | null;
+                            releasedAt: string | null;
+                            approval: {
+                                typedName: string;
+                                /** Format: date-time */
+                                at: string;
+                                groups: string[];
+                                totalMinor: number;
+                                signedPdfUrl: string | null;
+                            } | null;
+                            decline: {
+                                reason: string;
+                                /** Format: date-time */
+                                at: string;
+                            } | null;
+                        }[];
+                        links: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            email: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            /** Format: date-time */
+                            expiresAt: string;
+                            revokedAt: string | null;
+                            openedAt: string | null;
+                            remindersSent: number;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Proposals_setWords: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    scope?: string;
+                    exclusions?: string;
+                    timeline?: string;
+                    locate?: string;
+                    warranty?: string;
+                    terms?: string;
+                    cancellation?: string;
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        number: number | null;
+                        /** @enum {string} */
+                        state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                        currency: string;
+                        locale: string;
+                        stale: boolean;
+                        words: {
+                            scope: string;
+                            exclusions: string;
+                            timeline: string;
+                            locate: string;
+                            warranty: string;
+                            terms: string;
+                            cancellation: string;
+                        };
+                        own: string[];
+                        revisions: {
+                            /** Format: uuid */
+                            id: string;
+                            revision: number;
+                            /** @enum {string} */
+                            state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                            changeOrder: boolean;
+                            planVersion: number;
+                            hash: string;
+                            totalMinor: number;
+                            progress: number;
+                            failure: string | null;
+                            pdfUrl: string | null;
+                            /** Format: date */
+                            validUntil: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            createdBy: string;
+                            sentAt: string | null;
+                            releasedAt: string | null;
+                            approval: {
+                                typedName: string;
+                                /** Format: date-time */
+                                at: string;
+                                groups: string[];
+                                totalMinor: number;
+                                signedPdfUrl: string | null;
+                            } | null;
+                            decline: {
+                                reason: string;
+                                /** Format: date-time */
+                                at: string;
+                            } | null;
+                        }[];
+                        links: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            email: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            /** Format: date-time */
+                            expiresAt: string;
+                            revokedAt: string | null;
+                            openedAt: string | null;
+                            remindersSent: number;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Proposals_freeze: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        revision: number;
+                        /** @enum {string} */
+                        state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                        changeOrder: boolean;
+                        planVersion: number;
+                        hash: string;
+                        totalMinor: number;
+                        progress: number;
+                        failure: string | null;
+                        pdfUrl: string | null;
+                        /** Format: date */
+                        validUntil: string;
+                        /** Format: date-time */
+                        createdAt: string;
+                        createdBy: string;
+                        sentAt: string | null;
+                        releasedAt: string | null;
+                        approval: {
+                            typedName: string;
+                            /** Format: date-time */
+                            at: string;
+                            groups: string[];
+                            totalMinor: number;
+                            signedPdfUrl: string | null;
+                        } | null;
+                        decline: {
+                            reason: string;
+                            /** Format: date-time */
+                            at: string;
+                        } | null;
+                    };
+                };
+            };
+        };
+    };
+    Proposals_detail: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                revisionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        revision: {
+                            /** Format: uuid */
+                            id: string;
+                            revision: number;
+                            /** @enum {string} */
+                            state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                            changeOrder: boolean;
+                            planVersion: number;
+                            hash: string;
+                            totalMinor: number;
+                            progress: number;
+                            failure: string | null;
+                            pdfUrl: string | null;
+                            /** Format: date */
+                            validUntil: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            createdBy: string;
+                            sentAt: string | null;
+                            releasedAt: string | null;
+                            approval: {
+                                typedName: string;
+                                /** Format: date-time */
+                                at: string;
+                                groups: string[];
+                                totalMinor: number;
+                                signedPdfUrl: string | null;
+                            } | null;
+                            decline: {
+                                reason: string;
+                                /** Format: date-time */
+                                at: string;
+                            } | null;
+                        };
+                        document: {
+                            /** @enum {number} */
+                            form: 1;
+                            number: number;
+                            revision: number;
+                            changes: {
+                                revision: number;
+                                hash: string;
+                                totalMinor: number;
+                            } | null;
+                            /** Format: date-time */
+                            madeAt: string;
+                            /** Format: date */
+                            validUntil: string;
+                            currency: string;
+                            locale: string;
+                            region: string;
+                            /** @enum {string} */
+                            units: "imperial" | "metric";
+                            company: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                                licence: string;
+                            };
+                            client: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                            };
+                            job: {
+                                id: string;
+                                name: string;
+                                property: string;
+                            };
+                            plan: {
+                                version: number;
+                                records: ({
+                                    kind: string;
+                                    id: string;
+                                } & {
+                                    [key: string]: unknown;
+                                })[];
+                            };
+                            sheets: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                view: "plan" | "photo";
+                                widthPx: number;
+                                heightPx: number;
+                            }[];
+                            lights: {
+                                recordId: string;
+                                sheetId: string;
+                                x: number;
+                                y: number;
+                                tag: string;
+                                initial: string;
+                                kind: string;
+                                name: string;
+                                lights: string;
+                                quantity: number;
+                                groupId: string | null;
+                                technical: {
+                                    volts: number | null;
+                                    watts: number | null;
+                                    lumens: number | null;
+                                    beamDegrees: number | null;
+                                    cctKelvin: number | null;
+                                };
+                            }[];
+                            price: {
+                                groups: {
+                                    id: string | null;
+                                    name: string;
+                                    description: string;
+                                    on: boolean;
+                                    fixtures: number;
+                                    priceMinor: number;
+                                }[];
+                                lines: {
+                                    key: string;
+                                    groupId: string | null;
+                                    section: string;
+                                    /** @enum {string} */
+                                    kind: "material" | "labour";
+                                    name: string;
+                                    quantity: number;
+                                    /** @enum {string} */
+                                    unit: "each" | "foot" | "meter" | "visit";
+                                    priceMinor: number | null;
+                                }[];
+                                discountName: string;
+                                tax: {
+                                    name: string;
+                                    jurisdiction: string;
+                                    percent: number;
+                                } | null;
+                                stages: {
+                                    id: string;
+                                    name: string;
+                                    /** @enum {string} */
+                                    due: "approval" | "start" | "finish";
+                                    percent: number;
+                                }[];
+                                combinations: {
+                                    groups: string[];
+                                    subtotalMinor: number;
+                                    discountMinor: number;
+                                    taxableMinor: number;
+                                    taxMinor: number;
+                                    totalMinor: number;
+                                    stages: {
+                                        id: string;
+                                        name: string;
+                                        /** @enum {string} */
+                                        due: "approval" | "start" | "finish";
+                                        percent: number | null;
+                                        amountMinor: number;
+                                        capped: boolean;
+                                    }[];
+                                    offerable: boolean;
+                                    reason: string;
+                                }[];
+                            };
+                            words: {
+                                scope: string;
+                                exclusions: string;
+                                timeline: string;
+                                locate: string;
+                                warranty: string;
+                                terms: string;
+                                cancellation: string;
+                            };
+                            cautions: string[];
+                            acceptedFaults: {
+                                message: string;
+                                reason: string;
+                                by: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        };
+                        differences: {
+                            added: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            removed: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            moved: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                                meters: number | null;
+                            }[];
+                            replaced: {
+                                recordId: string;
+                                tag: string;
+                                was: string;
+                                now: string;
+                            }[];
+                            lines: {
+                                name: string;
+                                wasQuantity: number;
+                                nowQuantity: number;
+                                unit: string;
+                                byMinor: number | null;
+                            }[];
+                            wasTotalMinor: number;
+                            nowTotalMinor: number;
+                        } | null;
+                    };
+                };
+            };
+        };
+    };
+    Proposals_pdf: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                revisionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The file. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": string;
+                };
+            };
+        };
+    };
+    Proposals_signedPdf: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                revisionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The file. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": string;
+                };
+            };
+        };
+    };
+    Proposals_send: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                revisionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    recipients: {
+                        name: string;
+                        /** Format: email */
+                        email: string;
+                    }[];
+                    message: string;
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        revision: number;
+                        /** @enum {string} */
+                        state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                        changeOrder: boolean;
+                        planVersion: number;
+                        hash: string;
+                        totalMinor: number;
+                        progress: number;
+                        failure: string | null;
+                        pdfUrl: string | null;
+                        /** Format: date */
+                        validUntil: string;
+                        /** Format: date-time */
+                        createdAt: string;
+                        createdBy: string;
+                        sentAt: string | null;
+                        releasedAt: string | null;
+                        approval: {
+                            typedName: string;
+                            /** Format: date-time */
+                            at: string;
+                            groups: string[];
+                            totalMinor: number;
+                            signedPdfUrl: string | null;
+                        } | null;
+                        decline: {
+                            reason: string;
+                            /** Format: date-time */
+                            at: string;
+                        } | null;
+                    };
+                };
+            };
+        };
+    };
+    Proposals_withdraw: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                revisionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        revision: number;
+                        /** @enum {string} */
+                        state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                        changeOrder: boolean;
+                        planVersion: number;
+                        hash: string;
+                        totalMinor: number;
+                        progress: number;
+                        failure: string | null;
+                        pdfUrl: string | null;
+                        /** Format: date */
+                        validUntil: string;
+                        /** Format: date-time */
+                        createdAt: string;
+                        createdBy: string;
+                        sentAt: string | null;
+                        releasedAt: string | null;
+                        approval: {
+                            typedName: string;
+                            /** Format: date-time */
+                            at: string;
+                            groups: string[];
+                            totalMinor: number;
+                            signedPdfUrl: string | null;
+                        } | null;
+                        decline: {
+                            reason: string;
+                            /** Format: date-time */
+                            at: string;
+                        } | null;
+                    };
+                };
+            };
+        };
+    };
+    Proposals_release: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                revisionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        revision: number;
+                        /** @enum {string} */
+                        state: "draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn";
+                        changeOrder: boolean;
+                        planVersion: number;
+                        hash: string;
+                        totalMinor: number;
+                        progress: number;
+                        failure: string | null;
+                        pdfUrl: string | null;
+                        /** Format: date */
+                        validUntil: string;
+                        /** Format: date-time */
+                        createdAt: string;
+                        createdBy: string;
+                        sentAt: string | null;
+                        releasedAt: string | null;
+                        approval: {
+                            typedName: string;
+                            /** Format: date-time */
+                            at: string;
+                            groups: string[];
+                            totalMinor: number;
+                            signedPdfUrl: string | null;
+                        } | null;
+                        decline: {
+                            reason: string;
+                            /** Format: date-time */
+                            at: string;
+                        } | null;
+                    };
+                };
+            };
+        };
+    };
+    Proposals_resend: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        name: string;
+                        email: string;
+                        /** Format: date-time */
+                        createdAt: string;
+                        /** Format: date-time */
+                        expiresAt: string;
+                        revokedAt: string | null;
+                        openedAt: string | null;
+                        remindersSent: number;
+                    };
+                };
+            };
+        };
+    };
+    Proposals_revoke: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        name: string;
+                        email: string;
+                        /** Format: date-time */
+                        createdAt: string;
+                        /** Format: date-time */
+                        expiresAt: string;
+                        revokedAt: string | null;
+                        openedAt: string | null;
+                        remindersSent: number;
+                    };
+                };
+            };
+        };
+    };
+    ProposalTexts_get: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        texts: {
+                            words: {
+                                scope: string;
+                                exclusions: string;
+                                timeline: string;
+                                locate: string;
+                                warranty: string;
+                                terms: string;
+                                cancellation: string;
+                            };
+                            company: {
+                                email: string | "";
+                                phone: string;
+                                address: string;
+                                licence: string;
+                            };
+                            reminderDays: number[];
+                        };
+                    };
+                };
+            };
+        };
+    };
+    ProposalTexts_replace: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    baseVersion: number;
+                    texts: {
+                        words: {
+                            scope: string;
+                            exclusions: string;
+                            timeline: string;
+                            locate: string;
+                            warranty: string;
+                            terms: string;
+                            cancellation: string;
+                        };
+                        company: {
+                            email: string | "";
+                            phone: string;
+                            address: string;
+                            licence: string;
+                        };
+                        reminderDays: number[];
+                    };
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        version: number;
+                        texts: {
+                            words: {
+                                scope: string;
+                                exclusions: string;
+                                timeline: string;
+                                locate: string;
+                                warranty: string;
+                                terms: string;
+                                cancellation: string;
+                            };
+                            company: {
+                                email: string | "";
+                                phone: string;
+                                address: string;
+                                licence: string;
+                            };
+                            reminderDays: number[];
+                        };
+                    };
+                };
+            };
+        };
+    };
+    Questions_list: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        items: {
+                            /** Format: uuid */
+                            id: string;
+                            recordId: string | null;
+                            sheetId: string | null;
+                            x: number | null;
+                            y: number | null;
+                            revision: number;
+                            resolvedAt: string | null;
+                            messages: {
+                                /** Format: uuid */
+                                id: string;
+                                /** @enum {string} */
+                                side: "homeowner" | "company";
+                                authorName: string;
+                                text: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Questions_answer: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                questionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    text: string;
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        recordId: string | null;
+                        sheetId: string | null;
+                        x: number | null;
+                        y: number | null;
+                        revision: number;
+                        resolvedAt: string | null;
+                        messages: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            side: "homeowner" | "company";
+                            authorName: string;
+                            text: string;
+                            /** Format: date-time */
+                            at: string;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Questions_resolve: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                questionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        recordId: string | null;
+                        sheetId: string | null;
+                        x: number | null;
+                        y: number | null;
+                        revision: number;
+                        resolvedAt: string | null;
+                        messages: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            side: "homeowner" | "company";
+                            authorName: string;
+                            text: string;
+                            /** Format: date-time */
+                            at: string;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Questions_reopen: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                questionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        recordId: string | null;
+                        sheetId: string | null;
+                        x: number | null;
+                        y: number | null;
+                        revision: number;
+                        resolvedAt: string | null;
+                        messages: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            side: "homeowner" | "company";
+                            authorName: string;
+                            text: string;
+                            /** Format: date-time */
+                            at: string;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Share_page: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** @enum {string} */
+                        state: "open" | "approved" | "declined" | "expired" | "withdrawn";
+                        recipient: string;
+                        /** Format: uuid */
+                        revisionId: string;
+                        document: {
+                            /** @enum {number} */
+                            form: 1;
+                            number: number;
+                            revision: number;
+                            changes: {
+                                revision: number;
+                                hash: string;
+                                totalMinor: number;
+                            } | null;
+                            /** Format: date-time */
+                            madeAt: string;
+                            /** Format: date */
+                            validUntil: string;
+                            currency: string;
+                            locale: string;
+                            region: string;
+                            /** @enum {string} */
+                            units: "imperial" | "metric";
+                            company: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                                licence: string;
+                            };
+                            client: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                            };
+                            job: {
+                                id: string;
+                                name: string;
+                                property: string;
+                            };
+                            sheets: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                view: "plan" | "photo";
+                                widthPx: number;
+                                heightPx: number;
+                            }[];
+                            lights: {
+                                recordId: string;
+                                sheetId: string;
+                                x: number;
+                                y: number;
+                                tag: string;
+                                initial: string;
+                                kind: string;
+                                name: string;
+                                lights: string;
+                                quantity: number;
+                                groupId: string | null;
+                                technical: {
+                                    volts: number | null;
+                                    watts: number | null;
+                                    lumens: number | null;
+                                    beamDegrees: number | null;
+                                    cctKelvin: number | null;
+                                };
+                            }[];
+                            price: {
+                                groups: {
+                                    id: string | null;
+                                    name: string;
+                                    description: string;
+                                    on: boolean;
+                                    fixtures: number;
+                                    priceMinor: number;
+                                }[];
+                                lines: {
+                                    key: string;
+                                    groupId: string | null;
+                                    section: string;
+                                    /** @enum {string} */
+                                    kind: "material" | "labour";
+                                    name: string;
+                                    quantity: number;
+                                    /** @enum {string} */
+                                    unit: "each" | "foot" | "meter" | "visit";
+                                    priceMinor: number | null;
+                                }[];
+                                discountName: string;
+                                tax: {
+                                    name: string;
+                                    jurisdiction: string;
+                                    percent: number;
+                                } | null;
+                                stages: {
+                                    id: string;
+                                    name: string;
+                                    /** @enum {string} */
+                                    due: "approval" | "start" | "finish";
+                                    percent: number;
+                                }[];
+                                combinations: {
+                                    groups: string[];
+                                    subtotalMinor: number;
+                                    discountMinor: number;
+                                    taxableMinor: number;
+                                    taxMinor: number;
+                                    totalMinor: number;
+                                    stages: {
+                                        id: string;
+                                        name: string;
+                                        /** @enum {string} */
+                                        due: "approval" | "start" | "finish";
+                                        percent: number | null;
+                                        amountMinor: number;
+                                        capped: boolean;
+                                    }[];
+                                    offerable: boolean;
+                                    reason: string;
+                                }[];
+                            };
+                            words: {
+                                scope: string;
+                                exclusions: string;
+                                timeline: string;
+                                locate: string;
+                                warranty: string;
+                                terms: string;
+                                cancellation: string;
+                            };
+                            cautions: string[];
+                            acceptedFaults: {
+                                message: string;
+                                reason: string;
+                                by: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        };
+                        hash: string;
+                        pictures: {
+                            sheetId: string;
+                            url: string;
+                            widthPx: number;
+                            heightPx: number;
+                        }[];
+                        differences: {
+                            added: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            removed: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            moved: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                                meters: number | null;
+                            }[];
+                            replaced: {
+                                recordId: string;
+                                tag: string;
+                                was: string;
+                                now: string;
+                            }[];
+                            lines: {
+                                name: string;
+                                wasQuantity: number;
+                                nowQuantity: number;
+                                unit: string;
+                                byMinor: number | null;
+                            }[];
+                            wasTotalMinor: number;
+                            nowTotalMinor: number;
+                        } | null;
+                        approval: {
+                            typedName: string;
+                            /** Format: date-time */
+                            at: string;
+                            groups: string[];
+                            totalMinor: number;
+                            revision: number;
+                        } | null;
+                        decline: {
+                            reason: string;
+                            /** Format: date-time */
+                            at: string;
+                        } | null;
+                        sentences: {
+                            approval: string;
+                            consent: string;
+                        };
+                        questions: {
+                            /** Format: uuid */
+                            id: string;
+                            recordId: string | null;
+                            sheetId: string | null;
+                            x: number | null;
+                            y: number | null;
+                            revision: number;
+                            resolvedAt: string | null;
+                            messages: {
+                                /** Format: uuid */
+                                id: string;
+                                /** @enum {string} */
+                                side: "homeowner" | "company";
+                                authorName: string;
+                                text: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        }[];
+                        dues: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            outstandingMinor: number;
+                            amountMinor: number;
+                            paidMinor: number;
+                            payable: boolean;
+                            pending: boolean;
+                        }[];
+                        papers: {
+                            id: string;
+                            name: string;
+                            url: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Share_opened: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            204: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+        };
+    };
+    Share_picture: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+                sheetId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The file. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": string;
+                };
+            };
+        };
+    };
+    Share_paper: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+                paperId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The file. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": string;
+                };
+            };
+        };
+    };
+    Share_ask: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    text: string;
+                    recordId: string | null;
+                    point: {
+                        sheetId: string;
+                        x: number;
+                        y: number;
+                    } | null;
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        recordId: string | null;
+                        sheetId: string | null;
+                        x: number | null;
+                        y: number | null;
+                        revision: number;
+                        resolvedAt: string | null;
+                        messages: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            side: "homeowner" | "company";
+                            authorName: string;
+                            text: string;
+                            /** Format: date-time */
+                            at: string;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Share_reply: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+                questionId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    text: string;
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        recordId: string | null;
+                        sheetId: string | null;
+                        x: number | null;
+                        y: number | null;
+                        revision: number;
+                        resolvedAt: string | null;
+                        messages: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            side: "homeowner" | "company";
+                            authorName: string;
+                            text: string;
+                            /** Format: date-time */
+                            at: string;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Share_approve: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    /** Format: uuid */
+                    revisionId: string;
+                    hash: string;
+                    groups: string[];
+                    totalMinor: number;
+                    typedName: string;
+                    /** @enum {boolean} */
+                    agreed: true;
+                    /** @enum {boolean} */
+                    consented: true;
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** @enum {string} */
+                        state: "open" | "approved" | "declined" | "expired" | "withdrawn";
+                        recipient: string;
+                        /** Format: uuid */
+                        revisionId: string;
+                        document: {
+                            /** @enum {number} */
+                            form: 1;
+                            number: number;
+                            revision: number;
+                            changes: {
+                                revision: number;
+                                hash: string;
+                                totalMinor: number;
+                            } | null;
+                            /** Format: date-time */
+                            madeAt: string;
+                            /** Format: date */
+                            validUntil: string;
+                            currency: string;
+                            locale: string;
+                            region: string;
+                            /** @enum {string} */
+                            units: "imperial" | "metric";
+                            company: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                                licence: string;
+                            };
+                            client: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                            };
+                            job: {
+                                id: string;
+                                name: string;
+                                property: string;
+                            };
+                            sheets: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                view: "plan" | "photo";
+                                widthPx: number;
+                                heightPx: number;
+                            }[];
+                            lights: {
+                                recordId: string;
+                                sheetId: string;
+                                x: number;
+                                y: number;
+                                tag: string;
+                                initial: string;
+                                kind: string;
+                                name: string;
+                                lights: string;
+                                quantity: number;
+                                groupId: string | null;
+                                technical: {
+                                    volts: number | null;
+                                    watts: number | null;
+                                    lumens: number | null;
+                                    beamDegrees: number | null;
+                                    cctKelvin: number | null;
+                                };
+                            }[];
+                            price: {
+                                groups: {
+                                    id: string | null;
+                                    name: string;
+                                    description: string;
+                                    on: boolean;
+                                    fixtures: number;
+                                    priceMinor: number;
+                                }[];
+                                lines: {
+                                    key: string;
+                                    groupId: string | null;
+                                    section: string;
+                                    /** @enum {string} */
+                                    kind: "material" | "labour";
+                                    name: string;
+                                    quantity: number;
+                                    /** @enum {string} */
+                                    unit: "each" | "foot" | "meter" | "visit";
+                                    priceMinor: number | null;
+                                }[];
+                                discountName: string;
+                                tax: {
+                                    name: string;
+                                    jurisdiction: string;
+                                    percent: number;
+                                } | null;
+                                stages: {
+                                    id: string;
+                                    name: string;
+                                    /** @enum {string} */
+                                    due: "approval" | "start" | "finish";
+                                    percent: number;
+                                }[];
+                                combinations: {
+                                    groups: string[];
+                                    subtotalMinor: number;
+                                    discountMinor: number;
+                                    taxableMinor: number;
+                                    taxMinor: number;
+                                    totalMinor: number;
+                                    stages: {
+                                        id: string;
+                                        name: string;
+                                        /** @enum {string} */
+                                        due: "approval" | "start" | "finish";
+                                        percent: number | null;
+                                        amountMinor: number;
+                                        capped: boolean;
+                                    }[];
+                                    offerable: boolean;
+                                    reason: string;
+                                }[];
+                            };
+                            words: {
+                                scope: string;
+                                exclusions: string;
+                                timeline: string;
+                                locate: string;
+                                warranty: string;
+                                terms: string;
+                                cancellation: string;
+                            };
+                            cautions: string[];
+                            acceptedFaults: {
+                                message: string;
+                                reason: string;
+                                by: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        };
+                        hash: string;
+                        pictures: {
+                            sheetId: string;
+                            url: string;
+                            widthPx: number;
+                            heightPx: number;
+                        }[];
+                        differences: {
+                            added: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            removed: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            moved: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                                meters: number | null;
+                            }[];
+                            replaced: {
+                                recordId: string;
+                                tag: string;
+                                was: string;
+                                now: string;
+                            }[];
+                            lines: {
+                                name: string;
+                                wasQuantity: number;
+                                nowQuantity: number;
+                                unit: string;
+                                byMinor: number | null;
+                            }[];
+                            wasTotalMinor: number;
+                            nowTotalMinor: number;
+                        } | null;
+                        approval: {
+                            typedName: string;
+                            /** Format: date-time */
+                            at: string;
+                            groups: string[];
+                            totalMinor: number;
+                            revision: number;
+                        } | null;
+                        decline: {
+                            reason: string;
+                            /** Format: date-time */
+                            at: string;
+                        } | null;
+                        sentences: {
+                            approval: string;
+                            consent: string;
+                        };
+                        questions: {
+                            /** Format: uuid */
+                            id: string;
+                            recordId: string | null;
+                            sheetId: string | null;
+                            x: number | null;
+                            y: number | null;
+                            revision: number;
+                            resolvedAt: string | null;
+                            messages: {
+                                /** Format: uuid */
+                                id: string;
+                                /** @enum {string} */
+                                side: "homeowner" | "company";
+                                authorName: string;
+                                text: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        }[];
+                        dues: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            outstandingMinor: number;
+                            amountMinor: number;
+                            paidMinor: number;
+                            payable: boolean;
+                            pending: boolean;
+                        }[];
+                        papers: {
+                            id: string;
+                            name: string;
+                            url: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Share_decline: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    /** Format: uuid */
+                    revisionId: string;
+                    reason: string;
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** @enum {string} */
+                        state: "open" | "approved" | "declined" | "expired" | "withdrawn";
+                        recipient: string;
+                        /** Format: uuid */
+                        revisionId: string;
+                        document: {
+                            /** @enum {number} */
+                            form: 1;
+                            number: number;
+                            revision: number;
+                            changes: {
+                                revision: number;
+                                hash: string;
+                                totalMinor: number;
+                            } | null;
+                            /** Format: date-time */
+                            madeAt: string;
+                            /** Format: date */
+                            validUntil: string;
+                            currency: string;
+                            locale: string;
+                            region: string;
+                            /** @enum {string} */
+                            units: "imperial" | "metric";
+                            company: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                                licence: string;
+                            };
+                            client: {
+                                name: string;
+                                email: string;
+                                phone: string;
+                                address: string;
+                            };
+                            job: {
+                                id: string;
+                                name: string;
+                                property: string;
+                            };
+                            sheets: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                view: "plan" | "photo";
+                                widthPx: number;
+                                heightPx: number;
+                            }[];
+                            lights: {
+                                recordId: string;
+                                sheetId: string;
+                                x: number;
+                                y: number;
+                                tag: string;
+                                initial: string;
+                                kind: string;
+                                name: string;
+                                lights: string;
+                                quantity: number;
+                                groupId: string | null;
+                                technical: {
+                                    volts: number | null;
+                                    watts: number | null;
+                                    lumens: number | null;
+                                    beamDegrees: number | null;
+                                    cctKelvin: number | null;
+                                };
+                            }[];
+                            price: {
+                                groups: {
+                                    id: string | null;
+                                    name: string;
+                                    description: string;
+                                    on: boolean;
+                                    fixtures: number;
+                                    priceMinor: number;
+                                }[];
+                                lines: {
+                                    key: string;
+                                    groupId: string | null;
+                                    section: string;
+                                    /** @enum {string} */
+                                    kind: "material" | "labour";
+                                    name: string;
+                                    quantity: number;
+                                    /** @enum {string} */
+                                    unit: "each" | "foot" | "meter" | "visit";
+                                    priceMinor: number | null;
+                                }[];
+                                discountName: string;
+                                tax: {
+                                    name: string;
+                                    jurisdiction: string;
+                                    percent: number;
+                                } | null;
+                                stages: {
+                                    id: string;
+                                    name: string;
+                                    /** @enum {string} */
+                                    due: "approval" | "start" | "finish";
+                                    percent: number;
+                                }[];
+                                combinations: {
+                                    groups: string[];
+                                    subtotalMinor: number;
+                                    discountMinor: number;
+                                    taxableMinor: number;
+                                    taxMinor: number;
+                                    totalMinor: number;
+                                    stages: {
+                                        id: string;
+                                        name: string;
+                                        /** @enum {string} */
+                                        due: "approval" | "start" | "finish";
+                                        percent: number | null;
+                                        amountMinor: number;
+                                        capped: boolean;
+                                    }[];
+                                    offerable: boolean;
+                                    reason: string;
+                                }[];
+                            };
+                            words: {
+                                scope: string;
+                                exclusions: string;
+                                timeline: string;
+                                locate: string;
+                                warranty: string;
+                                terms: string;
+                                cancellation: string;
+                            };
+                            cautions: string[];
+                            acceptedFaults: {
+                                message: string;
+                                reason: string;
+                                by: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        };
+                        hash: string;
+                        pictures: {
+                            sheetId: string;
+                            url: string;
+                            widthPx: number;
+                            heightPx: number;
+                        }[];
+                        differences: {
+                            added: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            removed: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                            }[];
+                            moved: {
+                                recordId: string;
+                                tag: string;
+                                name: string;
+                                meters: number | null;
+                            }[];
+                            replaced: {
+                                recordId: string;
+                                tag: string;
+                                was: string;
+                                now: string;
+                            }[];
+                            lines: {
+                                name: string;
+                                wasQuantity: number;
+                                nowQuantity: number;
+                                unit: string;
+                                byMinor: number | null;
+                            }[];
+                            wasTotalMinor: number;
+                            nowTotalMinor: number;
+                        } | null;
+                        approval: {
+                            typedName: string;
+                            /** Format: date-time */
+                            at: string;
+                            groups: string[];
+                            totalMinor: number;
+                            revision: number;
+                        } | null;
+                        decline: {
+                            reason: string;
+                            /** Format: date-time */
+                            at: string;
+                        } | null;
+                        sentences: {
+                            approval: string;
+                            consent: string;
+                        };
+                        questions: {
+                            /** Format: uuid */
+                            id: string;
+                            recordId: string | null;
+                            sheetId: string | null;
+                            x: number | null;
+                            y: number | null;
+                            revision: number;
+                            resolvedAt: string | null;
+                            messages: {
+                                /** Format: uuid */
+                                id: string;
+                                /** @enum {string} */
+                                side: "homeowner" | "company";
+                                authorName: string;
+                                text: string;
+                                /** Format: date-time */
+                                at: string;
+                            }[];
+                        }[];
+                        dues: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            outstandingMinor: number;
+                            amountMinor: number;
+                            paidMinor: number;
+                            payable: boolean;
+                            pending: boolean;
+                        }[];
+                        papers: {
+                            id: string;
+                            name: string;
+                            url: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Share_checkout: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+                dueId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        url: string;
+                    };
+                };
+            };
+        };
+    };
+    Payments_ofJob: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        agreedMinor: number;
+                        paidMinor: number;
+                        outstandingMinor: number;
+                        creditMinor: number;
+                        dues: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            amountMinor: number;
+                            reducedMinor: number;
+                            paidMinor: number;
+                            outstandingMinor: number;
+                            requestedAt: string | null;
+                        }[];
+                        payments: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            dueId: string;
+                            /** @enum {string} */
+                            method: "card" | "cheque" | "transfer" | "cash";
+                            /** @enum {string} */
+                            status: "open" | "succeeded" | "failed" | "expired";
+                            amountMinor: number;
+                            refundedMinor: number;
+                            receivedOn: string | null;
+                            note: string;
+                            recordedBy: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            settledAt: string | null;
+                        }[];
+                        refunds: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            paymentId: string;
+                            amountMinor: number;
+                            reason: string;
+                            /** @enum {string} */
+                            status: "pending" | "succeeded" | "failed";
+                            /** Format: date-time */
+                            createdAt: string;
+                        }[];
+                        documents: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            kind: "invoice" | "receipt" | "refund";
+                            number: number;
+                            amountMinor: number;
+                            /** Format: date-time */
+                            createdAt: string;
+                            mailedAt: string | null;
+                            pdfUrl: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Payments_request: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                dueId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        agreedMinor: number;
+                        paidMinor: number;
+                        outstandingMinor: number;
+                        creditMinor: number;
+                        dues: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            amountMinor: number;
+                            reducedMinor: number;
+                            paidMinor: number;
+                            outstandingMinor: number;
+                            requestedAt: string | null;
+                        }[];
+                        payments: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            dueId: string;
+                            /** @enum {string} */
+                            method: "card" | "cheque" | "transfer" | "cash";
+                            /** @enum {string} */
+                            status: "open" | "succeeded" | "failed" | "expired";
+                            amountMinor: number;
+                            refundedMinor: number;
+                            receivedOn: string | null;
+                            note: string;
+                            recordedBy: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            settledAt: string | null;
+                        }[];
+                        refunds: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            paymentId: string;
+                            amountMinor: number;
+                            reason: string;
+                            /** @enum {string} */
+                            status: "pending" | "succeeded" | "failed";
+                            /** Format: date-time */
+                            createdAt: string;
+                        }[];
+                        documents: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            kind: "invoice" | "receipt" | "refund";
+                            number: number;
+                            amountMinor: number;
+                            /** Format: date-time */
+                            createdAt: string;
+                            mailedAt: string | null;
+                            pdfUrl: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Payments_record: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                dueId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    /** @enum {string} */
+                    method: "cheque" | "transfer" | "cash";
+                    amountMinor: number;
+                    /** Format: date */
+                    receivedOn: string;
+                    note: string;
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        agreedMinor: number;
+                        paidMinor: number;
+                        outstandingMinor: number;
+                        creditMinor: number;
+                        dues: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            amountMinor: number;
+                            reducedMinor: number;
+                            paidMinor: number;
+                            outstandingMinor: number;
+                            requestedAt: string | null;
+                        }[];
+                        payments: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            dueId: string;
+                            /** @enum {string} */
+                            method: "card" | "cheque" | "transfer" | "cash";
+                            /** @enum {string} */
+                            status: "open" | "succeeded" | "failed" | "expired";
+                            amountMinor: number;
+                            refundedMinor: number;
+                            receivedOn: string | null;
+                            note: string;
+                            recordedBy: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            settledAt: string | null;
+                        }[];
+                        refunds: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            paymentId: string;
+                            amountMinor: number;
+                            reason: string;
+                            /** @enum {string} */
+                            status: "pending" | "succeeded" | "failed";
+                            /** Format: date-time */
+                            createdAt: string;
+                        }[];
+                        documents: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            kind: "invoice" | "receipt" | "refund";
+                            number: number;
+                            amountMinor: number;
+                            /** Format: date-time */
+                            createdAt: string;
+                            mailedAt: string | null;
+                            pdfUrl: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Payments_refund: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                paymentId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    amountMinor: number;
+                    reason: string;
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        agreedMinor: number;
+                        paidMinor: number;
+                        outstandingMinor: number;
+                        creditMinor: number;
+                        dues: {
+                            /** Format: uuid */
+                            id: string;
+                            name: string;
+                            /** @enum {string} */
+                            due: "approval" | "start" | "finish";
+                            amountMinor: number;
+                            reducedMinor: number;
+                            paidMinor: number;
+                            outstandingMinor: number;
+                            requestedAt: string | null;
+                        }[];
+                        payments: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            dueId: string;
+                            /** @enum {string} */
+                            method: "card" | "cheque" | "transfer" | "cash";
+                            /** @enum {string} */
+                            status: "open" | "succeeded" | "failed" | "expired";
+                            amountMinor: number;
+                            refundedMinor: number;
+                            receivedOn: string | null;
+                            note: string;
+                            recordedBy: string;
+                            /** Format: date-time */
+                            createdAt: string;
+                            settledAt: string | null;
+                        }[];
+                        refunds: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: uuid */
+                            paymentId: string;
+                            amountMinor: number;
+                            reason: string;
+                            /** @enum {string} */
+                            status: "pending" | "succeeded" | "failed";
+                            /** Format: date-time */
+                            createdAt: string;
+                        }[];
+                        documents: {
+                            /** Format: uuid */
+                            id: string;
+                            /** @enum {string} */
+                            kind: "invoice" | "receipt" | "refund";
+                            number: number;
+                            amountMinor: number;
+                            /** Format: date-time */
+                            createdAt: string;
+                            mailedAt: string | null;
+                            pdfUrl: string | null;
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Payments_documentPdf: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+                documentId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The file. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": string;
+                };
+            };
+        };
+    };
+    Timeline_ofJob: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                jobId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        items: {
+                            /** Format: uuid */
+                            id: string;
+                            /** Format: date-time */
+                            at: string;
+                            kind: string;
+                            actor: string;
+                            sentence: string;
+                            amountMinor: number | null;
+                        }[];
+                        currency: string;
+                        locale: string;
+                    };
+                };
+            };
+        };
+    };
+    Timeline_board: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        columns: {
+                            /** @enum {string} */
+                            stage: "enquiry" | "plan" | "prove" | "propose" | "prepare" | "install" | "commission" | "aftercare";
+                            count: number;
+                            cards: {
+                                /** Format: uuid */
+                                jobId: string;
+                                name: string;
+                                client: string;
+                                /** @enum {string} */
+                                stage: "enquiry" | "plan" | "prove" | "propose" | "prepare" | "install" | "commission" | "aftercare";
+                                proposal: ("draft" | "preparing" | "ready" | "sent" | "opened" | "commented" | "approved" | "declined" | "expired" | "withdrawn") | null;
+                                next: {
+                                    /** @enum {string} */
+                                    by: "company" | "homeowner";
+                                    what: string;
+                                };
+                                openQuestions: number;
+                                totalMinor: number | null;
+                                outstandingMinor: number | null;
+                                /** Format: date-time */
+                                updatedAt: string;
+                            }[];
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    Timeline_numbers: {
+        parameters: {
+            query?: {
+                from?: string;
+                to?: string;
+            };
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        currency: string;
+                        locale: string;
+                        /** Format: date */
+                        from: string;
+                        /** Format: date */
+                        to: string;
+                        sent: number;
+                        won: number;
+                        declined: number;
+                        waiting: number;
+                        wonShare: number | null;
+                        sentMinor: number;
+                        wonMinor: number;
+                        medianDaysToYes: number | null;
+                        outstandingMinor: number;
+                        receivedMinor: number;
                     };
                 };
             };

@@ -1,0 +1,38 @@
+import type { Readable } from 'node:stream';
+import { pipeline } from 'node:stream/promises';
+import type { Request, Response } from 'express';
+
+/** A file to be sent, with the tag that names its content. */
+export interface StoredFile {
+  readonly etag: string;
+  /** What a browser calls it when it is saved: plain letters, digits and dashes. */
+  readonly name?: string;
+  open(): Promise<{ readonly stream: Readable; readonly length: number; readonly type: string }>;
+}
+
+/**
+ * Streams a file. `no-cache` has the browser ask before each use, and only its own cache may keep a copy:
+ * after sign-out or on a shared proxy the picture is not to be had, yet an unchanged one is sent only once.
+ */
+export async function sendFile(file: StoredFile, request: Request, response: Response): Promise<void> {
+  response.set({
+    'Cache-Control': 'private, no-cache',
+    Vary: 'Cookie',
+    ETag: file.etag,
+    'X-Content-Type-Options': 'nosniff',
+    'Content-Security-Policy': "default-src 'none'; sandbox",
+    'Content-Disposition': file.name === undefined ? 'inline' : `inline; filename="${file.name}"`,
+  });
+  if (request.fresh) {
+    response.status(304).end();
+    return;
+  }
+  const { stream, length, type } = await file.open();
+  response.set({ 'Content-Type': type, 'Content-Length': String(length) });
+  try {
+    await pipeline(stream, response);
+  } catch (error) {
+    // A reader who went away is no failure of ours.
+    if (!request.destroyed && !response.destroyed) throw error;
+  }
+}
