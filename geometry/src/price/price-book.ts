@@ -29,6 +29,14 @@ export const saleUnits = ['each', 'foot', 'meter', 'visit'] as const;
 export const saleUnitSchema = z.enum(saleUnits);
 export type SaleUnit = z.infer<typeof saleUnitSchema>;
 
+const wholeThousandths = (n: number) => Math.abs(n * 1000 - Math.round(n * 1000)) < 1e-6;
+/** How many units a sum or a package is for: at most three decimals, so that lines are exact. */
+const unitCountSchema = z
+  .number()
+  .min(0.001)
+  .max(100_000)
+  .refine(wholeThousandths, { error: 'At most three decimals, please.' });
+
 /** What one catalogue item costs, and how it is bought. */
 export const itemPriceSchema = z.strictObject({
   /** What the company pays for `per` units; null: not known. */
@@ -36,10 +44,10 @@ export const itemPriceSchema = z.strictObject({
   /** What it sells `per` units for; null: made from the cost by overhead and markup. */
   priceMinor: amountSchema.nullable(),
   /** How many units the two sums are for, such as 250 for a spool of 250 ft. */
-  per: z.number().positive().max(100_000),
+  per: unitCountSchema,
   unit: z.enum(['each', 'foot', 'meter']),
   /** It is bought in whole multiples of this many units. */
-  increment: z.number().positive().max(100_000),
+  increment: unitCountSchema,
   taxable: z.boolean(),
   supplier: z.string().trim().max(120),
   /** The supplier's number for it. */
