@@ -136,5 +136,6 @@ export const everyForm: readonly CatalogueItem[] = [
     smallestAwg: 18,
     directBurial: true,
   },
+  { category: 'part', name: 'Conduit', use: 'conduit' },
   { category: 'control', name: 'Timer', kind: 'timer', ratedVA: 1800, inrushAmps: null },
 ];

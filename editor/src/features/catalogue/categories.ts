@@ -1,6 +1,15 @@
-import type { CatalogueCategory, FixtureKind } from '@lampwright/geometry/catalogue';
+import type { CatalogueCategory, FixtureKind, PartItem } from '@lampwright/geometry/catalogue';
 
-export const categories = ['fixture', 'lamp', 'cable', 'transformer', 'hub', 'connector', 'control'] as const;
+export const categories = [
+  'fixture',
+  'lamp',
+  'cable',
+  'transformer',
+  'hub',
+  'connector',
+  'control',
+  'part',
+] as const;
 
 export const categoryOf = (text: string | null | undefined): CatalogueCategory | null =>
   categories.find((category) => category === text) ?? null;
@@ -21,6 +30,8 @@ export function categoryLabel(category: CatalogueCategory): string {
       return 'Connectors';
     case 'control':
       return 'Controls';
+    case 'part':
+      return 'Parts';
   }
 }
 
@@ -57,6 +68,33 @@ export function controlLabel(kind: 'timer' | 'photocell' | 'smart-plug'): string
       return 'Photocell';
     case 'smart-plug':
       return 'Smart plug';
+  }
+}
+
+type PartItemUse = PartItem['use'];
+export const partItemUses = [
+  'ground-stake',
+  'tree-mount',
+  'surface-mount',
+  'transformer-mount',
+  'conduit',
+  'other',
+] as const satisfies readonly PartItemUse[];
+
+export function partUseLabel(use: PartItemUse): string {
+  switch (use) {
+    case 'ground-stake':
+      return 'Ground stake';
+    case 'tree-mount':
+      return 'Tree mount';
+    case 'surface-mount':
+      return 'Surface mount';
+    case 'transformer-mount':
+      return 'Transformer mount';
+    case 'conduit':
+      return 'Conduit';
+    case 'other':
+      return 'Something else';
   }
 }
 

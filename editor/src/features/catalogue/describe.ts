@@ -1,6 +1,6 @@
 import type { CatalogueItem, Conductor, Load, VoltWindow } from '@lampwright/geometry/catalogue';
 import { count } from '../../lib/format';
-import { controlLabel, kindLabel, technologyLabel } from './categories';
+import { controlLabel, kindLabel, partUseLabel, technologyLabel } from './categories';
 
 export function conductorLabel(conductor: Conductor): string {
   if ('awg' in conductor) return `${conductor.awg} AWG`;
@@ -100,5 +100,7 @@ export function describe(item: CatalogueItem): Description {
         figures: `${item.ratedVA} VA`,
         rating: item.inrushAmps === null ? '' : `${item.inrushAmps} A inrush`,
       };
+    case 'part':
+      return { sort: partUseLabel(item.use), figures: '', rating: '' };
   }
 }

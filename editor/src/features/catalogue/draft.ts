@@ -4,6 +4,7 @@ import type {
   Conductor,
   FixtureKind,
   Load,
+  PartItem,
   Terminal,
   VoltWindow,
 } from '@lampwright/geometry/catalogue';
@@ -54,7 +55,7 @@ export interface Draft {
   supply: 'ac' | 'dc';
   windings: { id: string; ratedVA: number | null }[];
   terminals: DraftTerminal[];
-  // hubs, connectors, controls
+  // hubs, connectors, controls, parts
   ways: number | null;
   minConductors: number | null;
   maxConductors: number | null;
@@ -62,6 +63,7 @@ export interface Draft {
   smallestAwg: number | null;
   controlKind: 'timer' | 'photocell' | 'smart-plug';
   inrushAmps: number | null;
+  use: PartItem['use'];
 }
 
 export interface DraftTerminal {
@@ -121,6 +123,7 @@ export const emptyDraft: Draft = {
   smallestAwg: 18,
   controlKind: 'timer',
   inrushAmps: null,
+  use: 'ground-stake',
 };
 
 export const gauges = [8, 10, 12, 14, 16, 18].map((awg) => ({ value: `awg ${awg}`, label: `${awg} AWG` }));
@@ -236,6 +239,8 @@ export function draftOf(item: CatalogueItem): Draft {
     }
     case 'control':
       return { ...draft, controlKind: item.kind, ratedVA: item.ratedVA, inrushAmps: item.inrushAmps };
+    case 'part':
+      return { ...draft, use: item.use };
   }
 }
 

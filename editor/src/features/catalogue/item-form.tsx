@@ -12,7 +12,7 @@ import {
   SelectField,
   TextField,
 } from '../../components/form';
-import { controlLabel, kindLabel, technologyLabel } from './categories';
+import { controlLabel, kindLabel, partItemUses, partUseLabel, technologyLabel } from './categories';
 import { ConductorFields } from './conductor-fields';
 import { type Draft, fieldOf } from './draft';
 import { type ItemForm, LightFields } from './light-fields';
@@ -28,6 +28,7 @@ const controls = (['timer', 'photocell', 'smart-plug'] as const).map((value) => 
   value,
   label: controlLabel(value),
 }));
+const uses = partItemUses.map((value) => ({ value, label: partUseLabel(value) }));
 
 interface CatalogueFormProps {
   readonly category: CatalogueCategory;
@@ -115,6 +116,16 @@ function CategoryFields({ category, form }: { category: CatalogueCategory; form:
             <NumberField control={control} name="inrushAmps" label="Inrush" unit="A" optional />
           </FieldRow>
         </>
+      );
+    case 'part':
+      return (
+        <SelectField
+          control={control}
+          name="use"
+          label="What it is for"
+          hint="Materials take stakes, mounts and conduit from here."
+          options={uses}
+        />
       );
   }
 }

@@ -83,6 +83,8 @@ function body(draft: Draft, category: CatalogueCategory): Unchecked {
     }
     case 'control':
       return { kind: draft.controlKind, ratedVA: draft.ratedVA, inrushAmps: draft.inrushAmps };
+    case 'part':
+      return { use: draft.use };
   }
 }
 
