@@ -1,29 +1,16 @@
-import {
-  cableLengths,
-  conduitLengths,
-  countBySeverity,
-  type EstimateAnswer,
-  type EstimateRequest,
-  estimateRequestOf,
-  normalizeEstimateRequest,
-  type PlanFault,
-  parseEstimateRequest,
-  planFaults,
-} from '@lampwright/geometry/estimate';
+import { conduitLengths, countBySeverity, type PlanFault } from '@lampwright/geometry/estimate';
 import { labelOf, type PlanDocument, recordsOf } from '@lampwright/geometry/plan';
 import type { UnitSystem } from '@lampwright/geometry/units';
-import { NoConvergence, solveEstimate, solverVersion } from '../../circuit/index.js';
+import { solverVersion } from '../../circuit/index.js';
 import type { PlanSummary } from './plans.dto.js';
+import { solvePlan } from './solve-plan.js';
 
 /** Faults told in a summary; all are counted. */
 const FAULTS_LISTED = 100;
 
-/** What the server makes of a plan: its own request, its own solver, never what a client claims. */
+/** What is kept of a plan for lists and for those who only look. */
 export function summarise(plan: PlanDocument, planVersion: number, system: UnitSystem): PlanSummary {
-  const lengths = cableLengths(plan);
-  const estimate = estimateRequestOf(plan, lengths);
-  const { answer, failure } = solve(estimate.request);
-  const faults = planFaults(plan, answer, { estimate, lengths, system });
+  const { lengths, estimate, answer, failure, faults } = solvePlan(plan, system);
   const label = (id: string) => {
     const record = plan.get(id);
     return record ? labelOf(record, plan) : id;
@@ -62,19 +49,6 @@ export function summarise(plan: PlanDocument, planVersion: number, system: UnitS
     })),
     faults: faults.slice(0, FAULTS_LISTED).map(told),
   };
-}
-
-function solve(request: EstimateRequest | null): { answer: EstimateAnswer | null; failure: string | null } {
-  if (!request) return { answer: null, failure: null };
-  const parsed = parseEstimateRequest(request);
-  if (!parsed.ok)
-    return { answer: null, failure: parsed.errors[0]?.detail ?? 'The plan could not be estimated.' };
-  try {
-    return { answer: solveEstimate(normalizeEstimateRequest(parsed.request)), failure: null };
-  } catch (error) {
-    if (!(error instanceof NoConvergence)) throw error;
-    return { answer: null, failure: error.message };
-  }
 }
 
 const sum = (values: readonly number[]) => values.reduce((total, value) => total + value, 0);

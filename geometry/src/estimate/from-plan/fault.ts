@@ -43,6 +43,8 @@ export interface PlanFault {
   readonly recordId: string;
   /** Another record that it is about, such as the water or the second run; null where there is none. */
   readonly otherId: string | null;
+  /** The terminal or winding of the record that it is about, where it is about one of several. */
+  readonly part?: string;
   readonly message: string;
 }
 

@@ -70,8 +70,10 @@ function warningFaults(doc: PlanDocument, warning: EstimateWarning, answer: Esti
   const { subject, code } = warning;
   const record = doc.get(subject.transformerId ?? subject.id);
   if (!record) return [];
+  const about = { code, recordId: record.id, otherId: null };
+  const part = subject.transformerId === undefined ? {} : { part: subject.id };
   const fault = (severity: FaultSeverity, message: string): PlanFault[] => [
-    { code, severity, recordId: record.id, otherId: null, message },
+    { ...about, severity, ...part, message },
   ];
   const transformer = recordOf(doc, subject.transformerId ?? subject.id, 'transformer');
   const of = transformer ? ` of ${labelOf(transformer, doc)}` : '';
