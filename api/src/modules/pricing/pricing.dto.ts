@@ -80,6 +80,15 @@ export const combinationCheckSchema = z.strictObject({
 });
 export type CombinationCheck = z.infer<typeof combinationCheckSchema>;
 
+/** Something in the way of a proposal. */
+export const obstacleSchema = z.strictObject({
+  /** As a sentence. */
+  message: z.string(),
+  /** Where it is mended: on the plan, or in a part of the price screen. */
+  mend: z.enum(['plan', 'faults', 'lines', 'groups', 'terms']),
+});
+export type Obstacle = z.infer<typeof obstacleSchema>;
+
 export const quoteAnswerSchema = z.strictObject({
   planVersion: version,
   pricingVersion: version,
@@ -88,8 +97,8 @@ export const quoteAnswerSchema = z.strictObject({
   /** Of the whole plan. */
   faults: z.array(openFaultSchema),
   checks: z.array(combinationCheckSchema),
-  /** What stands in the way of a proposal, as sentences; empty when nothing does. */
-  obstacles: z.array(z.string()),
+  /** What stands in the way of a proposal; empty when nothing does. */
+  obstacles: z.array(obstacleSchema),
 });
 export type QuoteAnswer = z.infer<typeof quoteAnswerSchema>;
 

@@ -2,7 +2,7 @@ import type { PlanDocument } from '@lampwright/geometry/plan';
 import type { JobPricing, PriceBook, Quote } from '@lampwright/geometry/price';
 import { Injectable } from '@nestjs/common';
 import { AppError } from '../../http/app-error.js';
-import type { CombinationCheck, QuoteAnswer } from './pricing.dto.js';
+import type { CombinationCheck, Obstacle, QuoteAnswer } from './pricing.dto.js';
 
 /** The price of a job as it is now, with all that the company itself may know. */
 export interface WorkedQuote {
@@ -15,7 +15,7 @@ export interface WorkedQuote {
   readonly quote: Quote;
   readonly faults: QuoteAnswer['faults'];
   readonly checks: readonly CombinationCheck[];
-  readonly obstacles: readonly string[];
+  readonly obstacles: readonly Obstacle[];
   /** Volts of each fixture in the whole plan, by record; none where there is no answer. */
   readonly volts: ReadonlyMap<string, number>;
 }
