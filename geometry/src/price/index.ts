@@ -1,7 +1,14 @@
+export type { Bill, BillLine, QuoteInput } from './bill-input.js';
 export * from './combinations.js';
 export * from './job-pricing.js';
+export { lightsInWords } from './labour.js';
 export * from './money.js';
+export * from './plan-with.js';
 export * from './price-book.js';
 export * from './quote.js';
+export * from './quote-of.js';
+export * from './record-groups.js';
+export * from './schedule.js';
 export * from './totals.js';
 export * from './usual.js';
+export * from './words.js';
