@@ -3,6 +3,7 @@ import { AccessModule } from './access/access.module.js';
 import { ConfigModule } from './config/config.module.js';
 import { type Env, isLocal } from './config/env.js';
 import { DatabaseModule } from './database/database.module.js';
+import { OnceModule } from './http/once.module.js';
 import { AccountModule } from './modules/account/account.module.js';
 import { AuthModule } from './modules/auth/auth.module.js';
 import { CatalogueModule } from './modules/catalogue/catalogue.module.js';
@@ -39,6 +40,7 @@ export class AppModule {
         StorageModule,
         MailModule,
         AccessModule,
+        OnceModule,
         AuthModule,
         AccountModule,
         CompaniesModule,

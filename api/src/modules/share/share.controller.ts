@@ -132,7 +132,7 @@ export class ShareController {
   @Post('dues/:dueId/checkout')
   @HttpCode(200)
   @Shared()
-  @Once()
+  @Once('in-steps')
   @ApiOkResponse({ standardSchema: checkoutSchema })
   checkout(
     @CurrentGuest() guest: Guest,
