@@ -6,7 +6,7 @@ import { labourOf } from './labour.js';
 import { lengthsOf } from './lengths.js';
 import { piecesOf } from './materials.js';
 import { amountFor, percentOf, priceFor } from './money.js';
-import type { Tax } from './price-book.js';
+import type { SaleUnit, Tax } from './price-book.js';
 import { lineSections, type Quote, type QuoteLine, type QuoteWarning } from './quote.js';
 import { recordGroups } from './record-groups.js';
 import { type Terms, totalsOf } from './totals.js';
@@ -178,6 +178,13 @@ function pricedManual(line: ManualLine, { book }: QuoteInput, tax: Tax | null): 
 const taxed = (kind: QuoteLine['kind'], taxable: boolean, tax: Tax | null): boolean =>
   taxable && tax !== null && (kind === 'labour' ? tax.onLabour : tax.onMaterials);
 
+const unitNames: Readonly<Record<SaleUnit, string>> = {
+  each: 'piece',
+  foot: 'foot',
+  meter: 'metre',
+  visit: 'visit',
+};
+
 function lineWarnings(lines: readonly QuoteLine[], { pricing, prices }: QuoteInput): QuoteWarning[] {
   const warnings: QuoteWarning[] = [];
   for (const { key, name, priceMinor, recordIds, itemId, unit, origin } of lines) {
@@ -196,7 +203,7 @@ function lineWarnings(lines: readonly QuoteLine[], { pricing, prices }: QuoteInp
       warnings.push(
         warningOf(
           'no-price',
-          `${name} is priced by the ${price.unit}, but counted here by the ${unit}.`,
+          `${name} is priced by the ${unitNames[price.unit]}, but counted here by the ${unitNames[unit]}.`,
           recordIds,
           key,
         ),
