@@ -1,4 +1,5 @@
 import { catalogueItemSchema, fixtureKinds } from '@lampwright/geometry/catalogue';
+import { partUses } from '@lampwright/geometry/price';
 import { describe, expect, it } from 'vitest';
 import { starterCatalogue } from './index.js';
 
@@ -34,6 +35,13 @@ describe('the starter catalogue', () => {
     const sizes = starterCatalogue.flatMap((item) => (item.category === 'transformer' ? [item.ratedVA] : []));
     for (const size of [150, 300, 600, 900]) expect(sizes).toContain(size);
     for (const category of ['hub', 'connector', 'control']) expect(of(category).length).toBeGreaterThan(1);
+  });
+
+  it('has a part for everything that a bill asks for', () => {
+    const uses = new Set<string>(
+      starterCatalogue.flatMap((item) => (item.category === 'part' ? [item.use] : [])),
+    );
+    expect(partUses.filter((use) => !uses.has(use))).toEqual([]);
   });
 
   it('has an LED lamp of 4 W that draws 5.5 VA', () => {
