@@ -7119,7 +7119,11 @@ export interface operations {
                             offerable: boolean;
                             faults: string[];
                         }[];
-                        obstacles: string[];
+                        obstacles: {
+                            message: string;
+                            /** @enum {string} */
+                            mend: "plan" | "faults" | "lines" | "groups" | "terms";
+                        }[];
                     };
                 };
             };
