@@ -18,7 +18,7 @@ const seed = Date.now() % 1_000_000_007;
 const checked = <T>(property: fc.IProperty<T>) => fc.assert(property, { seed, numRuns: 500 });
 
 /** Decimal arithmetic of mathjs with 64 digits: the reference for every rounding here. */
-const exact = create(all, { number: 'BigNumber', precision: 64 });
+const exact = create(all ?? {}, { number: 'BigNumber', precision: 64 });
 const big = (n: number | string) => exact.bignumber(n) as BigNumber;
 /** Half away from nothing, as decimal.js rounds by default. */
 const whole = (n: unknown) => Number((n as BigNumber).toDecimalPlaces(0, 4).toString());
