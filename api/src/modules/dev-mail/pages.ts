@@ -14,6 +14,7 @@ a:focus-visible { outline: 2px solid; outline-offset: 2px }
 table { width: 100%; border-collapse: collapse }
 th, td { text-align: left; padding: 10px 12px 10px 0; border-bottom: 1px solid var(--chalk); vertical-align: top; overflow-wrap: anywhere }
 th { font-weight: 600 }
+ul { margin: 0 0 24px; padding: 0; list-style: none } li a { display: inline-block; min-height: 24px }
 td a { display: inline-block; min-height: 24px }
 dl { display: grid; grid-template-columns: max-content 1fr; gap: 4px 16px; margin: 0 0 24px }
 dt { color: var(--quiet) } dd { margin: 0; overflow-wrap: anywhere }
@@ -72,12 +73,29 @@ export function mailPage(mail: CaughtMail): string {
 <dl>
 <dt>From</dt><dd>${escapeHtml(mail.from)}</dd>
 <dt>To</dt><dd>${escapeHtml(mail.to.join(', '))}</dd>
+${mail.replyTo ? `<dt>Answers go to</dt><dd>${escapeHtml(mail.replyTo)}</dd>` : ''}
 <dt>Message-ID</dt><dd>${escapeHtml(mail.messageId)}</dd>
 </dl>
+${attachments(mail)}
 <pre>${withLinks(mail.text)}</pre>
 ${mail.html ? htmlPart(mail.html) : ''}`,
   );
 }
+
+const attachments = ({ id, attachments: files }: CaughtMail): string =>
+  files.length === 0
+    ? ''
+    : `<h2>Attachments</h2>
+<ul>
+${files
+  .map(
+    ({ fileName, type, bytes }, index) =>
+      `<li><a href="/dev/mail/messages/${encodeURIComponent(id)}/attachments/${index}">${escapeHtml(
+        fileName || `Attachment ${index + 1}`,
+      )}</a> <span class="quiet">${escapeHtml(type)}, ${Math.ceil(bytes / 1024)} KiB</span></li>`,
+  )
+  .join('\n')}
+</ul>`;
 
 /** The HTML part in a frame of its own, where no script runs; its links open in this window. */
 const htmlPart = (html: string): string => `<h2>As HTML</h2>

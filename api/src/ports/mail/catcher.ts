@@ -5,7 +5,7 @@ import { SMTPServer } from 'smtp-server';
 import { CaughtMailStore } from './caught-mail-store.js';
 
 const LOOPBACK = '127.0.0.1';
-const MOST_BYTES = 10 * 1024 * 1024;
+const MOST_BYTES = 40 * 1024 * 1024;
 
 export interface MailCatcherOptions {
   /** 0 takes a free one. */
@@ -17,7 +17,7 @@ export interface MailCatcherOptions {
 
 export interface MailCatcher {
   readonly smtpUrl: string;
-  /** Lists the messages as JSON at /messages, and one at /messages/:id. */
+  /** Lists the messages as JSON at /messages, one at /messages/:id, its files at /messages/:id/attachments/:index. */
   readonly httpUrl: string;
   close(): Promise<void>;
 }
@@ -74,8 +74,16 @@ function smtpServer(store: CaughtMailStore): SMTPServer {
 }
 
 function listing(store: CaughtMailStore): Server {
-  return createServer((request, response) => {
+  return createServer(async (request, response) => {
     const { pathname } = new URL(request.url ?? '/', `http://${LOOPBACK}`);
+    const file = /^\/messages\/([\w-]+)\/attachments\/(\d{1,4})$/.exec(pathname);
+    const attachment = file && (await store.attachment(file[1]!, Number(file[2])).catch(() => undefined));
+    if (attachment) {
+      response
+        .writeHead(200, { 'Content-Type': attachment.type, 'Cache-Control': 'no-store' })
+        .end(attachment.body);
+      return;
+    }
     const id = /^\/messages\/([\w-]+)$/.exec(pathname)?.[1];
     const found = pathname === '/messages' ? { items: store.list() } : id && store.get(id);
     response

@@ -34,10 +34,20 @@ export class CaughtMailStore {
       subject: parsed.subject ?? '',
       text: parsed.text ?? '',
       html: parsed.html || '',
+      replyTo: parsed.replyTo?.text ?? '',
+      attachments: parsed.attachments.map(({ filename, contentType, content }) => ({
+        fileName: filename ?? '',
+        type: contentType,
+        bytes: content.length,
+      })),
     };
     this.count += 1;
     // Numbered, so that the order of arrival can be read from the names.
     const path = join(this.dir, `${String(this.count).padStart(8, '0')}-${mail.id}.json`);
+    // The attachments first: a message that is listed has them.
+    await Promise.all(
+      parsed.attachments.map(({ content }, index) => writeFile(this.attachmentPath(mail.id, index), content)),
+    );
     await writeFile(`${path}.new`, JSON.stringify(mail, null, 1));
     await rename(`${path}.new`, path);
     this.mails.set(mail.id, mail);
@@ -50,5 +60,15 @@ export class CaughtMailStore {
 
   get(id: string): CaughtMail | undefined {
     return this.mails.get(id);
+  }
+
+  /** The bytes of an attachment, counted from 0; undefined when there is no such one. */
+  async attachment(id: string, index: number): Promise<{ type: string; body: Buffer } | undefined> {
+    const attachment = this.mails.get(id)?.attachments[index];
+    return attachment && { type: attachment.type, body: await readFile(this.attachmentPath(id, index)) };
+  }
+
+  private attachmentPath(id: string, index: number): string {
+    return join(this.dir, `${id}.${index}.attachment`);
   }
 }

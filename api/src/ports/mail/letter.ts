@@ -1,3 +1,13 @@
+/** A file in object storage that goes with a letter. */
+export interface LetterAttachment {
+  /** Its key in object storage. */
+  readonly key: string;
+  /** What the recipient sees it called, with its extension. */
+  readonly fileName: string;
+  /** Media type: "application/pdf". */
+  readonly type: string;
+}
+
 /** A plain letter: a few paragraphs, at most one thing to do. */
 export interface Letter {
   readonly subject: string;
@@ -6,6 +16,12 @@ export interface Letter {
   readonly action?: { readonly label: string; readonly url: string };
   /** Said after the link: how long it lasts, what to do if it was not you. */
   readonly afterwards?: readonly string[];
+  /** Must be in object storage when the letter is sent: it never goes out without one of them. */
+  readonly attachments?: readonly LetterAttachment[];
+  /** Where an answer goes, such as the company that sends it. */
+  readonly replyTo?: string;
+  /** At the foot, in place of the product's name: the company that sends it. */
+  readonly signature?: string;
 }
 
 const escapes: Readonly<Record<string, string>> = {
@@ -21,16 +37,12 @@ export const escapeHtml = (text: string): string => text.replace(/[&<>"']/g, (si
 const paragraph = (text: string) => `<p style="margin:0 0 16px">${escapeHtml(text)}</p>`;
 
 /** The letter as plain text and as HTML. Mail programs know little CSS: all of it is on the elements. */
-export function renderLetter({ subject, paragraphs, action, afterwards = [] }: Letter): {
+export function renderLetter({ subject, paragraphs, action, afterwards = [], signature }: Letter): {
   text: string;
   html: string;
 } {
-  const text = [
-    ...paragraphs,
-    ...(action ? [`${action.label}:\n${action.url}`] : []),
-    ...afterwards,
-    'Lampwright',
-  ];
+  const foot = signature?.trim() || 'Lampwright';
+  const text = [...paragraphs, ...(action ? [`${action.label}:\n${action.url}`] : []), ...afterwards, foot];
   const button = action
     ? `<p style="margin:24px 0"><a href="${escapeHtml(action.url)}" style="display:inline-block;padding:12px 20px;background:#E8A33D;color:#16202E;font-weight:600;text-decoration:none;border-radius:4px">${escapeHtml(action.label)}</a></p>
 <p style="margin:0 0 16px">If the button does not work, copy this address into your browser:<br><a href="${escapeHtml(action.url)}" style="color:#16202E;word-break:break-all">${escapeHtml(action.url)}</a></p>`
@@ -43,7 +55,7 @@ export function renderLetter({ subject, paragraphs, action, afterwards = [] }: L
 ${paragraphs.map(paragraph).join('\n')}
 ${button}
 ${afterwards.map(paragraph).join('\n')}
-<p style="margin:32px 0 0;padding-top:16px;border-top:1px solid #EDE6D8">Lampwright</p>
+<p style="margin:32px 0 0;padding-top:16px;border-top:1px solid #EDE6D8">${escapeHtml(foot)}</p>
 </div>
 </body>
 </html>

@@ -1,9 +1,13 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { and, eq, isNull, sql } from 'drizzle-orm';
+import { z } from 'zod';
 import { Database } from '../../database/database.js';
 import { mailMessages } from '../../database/schema/index.js';
+import type { LetterAttachment } from './letter.js';
 
-export type MailRow = typeof mailMessages.$inferSelect;
+export interface MailRow extends Omit<typeof mailMessages.$inferSelect, 'attachments'> {
+  readonly attachments: readonly LetterAttachment[];
+}
 
 export interface NewMail {
   readonly companyId: string | null;
@@ -11,7 +15,13 @@ export interface NewMail {
   readonly subject: string;
   readonly text: string;
   readonly html: string;
+  readonly attachments: readonly LetterAttachment[];
+  readonly replyTo: string | null;
 }
+
+const attachmentsSchema = z.array(
+  z.strictObject({ key: z.string(), fileName: z.string(), type: z.string() }),
+);
 
 @Injectable()
 export class MailRepository {
@@ -31,7 +41,7 @@ export class MailRepository {
       .from(mailMessages)
       .where(and(eq(mailMessages.id, id), isNull(mailMessages.sentAt)))
       .for('update');
-    return row ?? null;
+    return row ? { ...row, attachments: attachmentsSchema.parse(row.attachments) } : null;
   }
 
   async countAttempt(id: string): Promise<void> {

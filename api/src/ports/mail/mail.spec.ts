@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { SMTPServer } from 'smtp-server';
 import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
 import { startTestApp, type TestApp } from '../../../test/harness.js';
+import { MemoryStorage } from '../../../test/memory-storage.js';
 import { SendMail } from '../../jobs/mail.js';
 import { type MailCatcher, startMailCatcher } from './catcher.js';
 import { caughtMailListSchema } from './caught-mail.js';
@@ -56,12 +57,13 @@ describe('mail', () => {
 
   describe('from the outbox', () => {
     const mailer = new RecordingMailer();
+    const storage = new MemoryStorage();
     afterEach(() => {
       mailer.sent.length = 0;
       mailer.failing = false;
     });
     const handler = () =>
-      new SendMail(test.env, test.database, test.app.get(MailRepository, { strict: false }), mailer);
+      new SendMail(test.env, test.database, test.app.get(MailRepository, { strict: false }), mailer, storage);
 
     it('is written with the transaction, or not at all', async () => {
       await expect(
@@ -88,6 +90,44 @@ describe('mail', () => {
       const [after] = await rowsTo('done@example.com');
       expect(after?.sent_at).not.toBeNull();
       expect(after?.text).toBe('');
+    });
+
+    it('carries files from storage and where answers go', async () => {
+      await storage.put('company/a.pdf', Buffer.from('%PDF-1.7 a'), 'application/pdf');
+      await outbox().post(null, 'files@example.com', {
+        subject: 'With a file',
+        paragraphs: ['Here it is.'],
+        attachments: [{ key: 'company/a.pdf', fileName: 'Proposal 1042.pdf', type: 'application/pdf' }],
+        replyTo: 'studio@example.com',
+        signature: 'Fernhollow <Outdoor>',
+      });
+      const [row] = await rowsTo('files@example.com');
+      expect(row?.text).toMatch(/\n\nFernhollow <Outdoor>\n$/);
+      await handler().handle({ messageId: row!.id });
+      expect(mailer.sent).toMatchObject([
+        {
+          replyTo: 'studio@example.com',
+          attachments: [
+            { fileName: 'Proposal 1042.pdf', type: 'application/pdf', body: Buffer.from('%PDF-1.7 a') },
+          ],
+        },
+      ]);
+      expect(mailer.sent[0]?.html).toContain('>Fernhollow &lt;Outdoor&gt;</p>');
+    });
+
+    it('waits for a file that is missing, and never goes without it', async () => {
+      await outbox().post(null, 'missing@example.com', {
+        subject: 'Without its file',
+        paragraphs: ['Here it is.'],
+        attachments: [{ key: 'company/b.pdf', fileName: 'b.pdf', type: 'application/pdf' }],
+      });
+      const [row] = await rowsTo('missing@example.com');
+      await expect(handler().handle({ messageId: row!.id })).rejects.toThrow('not in object storage');
+      expect(mailer.sent).toEqual([]);
+      expect(await rowsTo('missing@example.com')).toMatchObject([{ attempts: 1, sent_at: null }]);
+      await storage.put('company/b.pdf', Buffer.from('%PDF-1.7 b'), 'application/pdf');
+      await handler().handle({ messageId: row!.id });
+      expect(mailer.sent).toHaveLength(1);
     });
 
     it('stays when the service is away, and counts the attempts', async () => {
@@ -123,6 +163,47 @@ describe('mail', () => {
     expect(page.text).toContain(`<a href="${link}">`);
     expect(page.headers['content-security-policy']).not.toContain('script-src');
     await test.agent().get('/dev/mail/messages/1b4e28ba-2fa1-4d3b-a3f5-ef19b5a7633b').expect(404);
+  });
+
+  it('shows attachments at /dev/mail as links that open', async () => {
+    const mailer = new SmtpMailer(test.env);
+    const pdf = Buffer.from('%PDF-1.7 \0\xff bytes', 'latin1');
+    const page = Buffer.from('<script>alert(1)</script>');
+    await mailer.send({
+      messageId: '<with-files@example.com>',
+      to: 'reader@example.com',
+      subject: 'Two files',
+      text: 'Two files.\n',
+      html: '<p>Two files.</p>',
+      replyTo: 'studio@example.com',
+      attachments: [
+        { fileName: 'Angebot größer "1".pdf', type: 'application/pdf', body: pdf },
+        { fileName: 'page.html', type: 'text/html', body: page },
+      ],
+    });
+    mailer.close();
+    const [mail] = await inbox('reader@example.com');
+    expect(mail).toMatchObject({
+      replyTo: 'studio@example.com',
+      attachments: [
+        { fileName: 'Angebot größer "1".pdf', type: 'application/pdf', bytes: pdf.length },
+        { fileName: 'page.html', type: 'text/html', bytes: page.length },
+      ],
+    });
+    const address = `/dev/mail/messages/${mail!.id}`;
+    const shown = await test.agent().get(address).expect(200);
+    expect(shown.text).toContain(`<a href="${address}/attachments/0">Angebot größer &quot;1&quot;.pdf</a>`);
+    const first = await test.agent().get(`${address}/attachments/0`).expect(200);
+    expect(first.headers).toMatchObject({ 'content-type': 'application/pdf' });
+    expect(first.headers['content-disposition']).toBe(
+      "inline; filename*=UTF-8''Angebot%20gr%C3%B6%C3%9Fer%20%221%22.pdf",
+    );
+    expect(first.body).toEqual(pdf);
+    // Markup from a message is saved, never run.
+    const second = await test.agent().get(`${address}/attachments/1`).expect(200);
+    expect(second.headers['content-type']).toBe('application/octet-stream');
+    expect(second.headers['content-disposition']).toContain('attachment;');
+    await test.agent().get(`${address}/attachments/2`).expect(404);
   });
 
   it('outlasts a restart of the catcher', async () => {

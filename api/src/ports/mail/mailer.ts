@@ -1,3 +1,9 @@
+export interface MailAttachment {
+  readonly fileName: string;
+  readonly type: string;
+  readonly body: Buffer;
+}
+
 export interface OutgoingMail {
   /** Stays the same when the same message is sent again, so that a repeat can be recognised. */
   readonly messageId: string;
@@ -5,6 +11,8 @@ export interface OutgoingMail {
   readonly subject: string;
   readonly text: string;
   readonly html: string;
+  readonly replyTo?: string;
+  readonly attachments?: readonly MailAttachment[];
 }
 
 /** Hands a message to the mail service. */

@@ -26,6 +26,8 @@ export class Outbox {
         subject: letter.subject,
         text,
         html,
+        attachments: letter.attachments ?? [],
+        replyTo: letter.replyTo ?? null,
       });
       await this.queue.send('mail.send', { messageId });
     });

@@ -34,15 +34,21 @@ export class SmtpMailer extends Mailer {
     });
   }
 
-  async send({ messageId, to, subject, text, html }: OutgoingMail): Promise<void> {
+  async send({ messageId, to, subject, text, html, replyTo, attachments = [] }: OutgoingMail): Promise<void> {
     try {
       await this.transport.sendMail({
         from: this.env.MAIL_FROM,
         // As an object, so that nothing in an address can add another recipient.
         to: { name: '', address: to },
+        ...(replyTo === undefined ? {} : { replyTo: { name: '', address: replyTo } }),
         subject,
         text,
         html,
+        attachments: attachments.map(({ fileName, type, body }) => ({
+          filename: fileName,
+          contentType: type,
+          content: body,
+        })),
         messageId,
         headers: { 'Auto-Submitted': 'auto-generated' },
       });
