@@ -1,3 +1,4 @@
+import { randomUUID } from 'node:crypto';
 import { mkdtemp, readdir, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -9,7 +10,7 @@ import { type MailCatcher, startMailCatcher } from '../src/ports/mail/catcher.js
 import { type FakeS3, startFakeS3 } from '../src/ports/storage/fake-s3.js';
 import { type Audience, hiddenElsewhere, type RouteCase, type ValidRequest } from './access/route-case.js';
 import { serverRoutes } from './access/server-routes.js';
-import { MARK, makeWorld, PASSWORD, type World } from './access/world.js';
+import { MARK, makeWorld, PASSWORD, type World, walkCardService } from './access/world.js';
 import { type Agent, startTestApp, type TestApp } from './harness.js';
 import type { TestPerson } from './people.js';
 
@@ -94,6 +95,7 @@ describe('the access walk', () => {
       S3_ENDPOINT: storage.endpoint,
       SMTP_URL: catcher.smtpUrl,
       MAIL_VIEWER_URL: catcher.httpUrl,
+      ...walkCardService,
     });
     passwordHash = await hashPassword(PASSWORD);
   });
@@ -211,7 +213,9 @@ async function send(
 ): Promise<Answer & { body: { code?: string } }> {
   const [method = ''] = route.split(' ');
   const { query = {}, body, file, fields = {} } = request;
-  const call = agent[verb(method)](addressOf(route, request)).query(query).set(headers);
+  const call = agent[verb(method)](addressOf(route, request))
+    .query(query)
+    .set({ 'Idempotency-Key': randomUUID(), ...request.headers, ...headers });
   if (!file) return body === undefined ? call : call.send(body);
   for (const [name, value] of Object.entries(fields)) call.field(name, value);
   return call.attach('file', file.content, file.name);

@@ -18,12 +18,18 @@ const common = {
   S3_SECRET_ACCESS_KEY: text,
   SMTP_URL: z.string().regex(/^smtps?:\/\//, { error: 'must be an smtp:// or smtps:// address' }),
   MAIL_FROM: text,
+  /** The card service. Without its keys homeowners are not offered to pay by card. */
+  STRIPE_SECRET_KEY: text.optional(),
+  /** Signs what the card service reports. */
+  STRIPE_WEBHOOK_SECRET: text.optional(),
+  /** Another address than the service's own: that of the local stand-in. */
+  STRIPE_API_BASE: z.url().optional(),
   /** How many proxies stand in front: 0 when reached directly. */
   TRUST_PROXY_HOPS: z.coerce.number().int().min(0).max(10).default(0),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']).default('info'),
 };
 
-const envSchema = z.discriminatedUnion('LAMPWRIGHT_MODE', [
+const modes = z.discriminatedUnion('LAMPWRIGHT_MODE', [
   z.object({
     LAMPWRIGHT_MODE: z.literal('local'),
     ...common,
@@ -38,6 +44,15 @@ const envSchema = z.discriminatedUnion('LAMPWRIGHT_MODE', [
     PUBLIC_URL: z.url({ protocol: /^https$/, error: 'must be an https:// address' }),
   }),
 ]);
+
+const envSchema = modes.superRefine((env, ctx) => {
+  const keys = ['STRIPE_SECRET_KEY', 'STRIPE_WEBHOOK_SECRET'] as const;
+  const given = keys.filter((key) => env[key] !== undefined);
+  if (given.length !== 1) return;
+  for (const key of keys)
+    if (env[key] === undefined)
+      ctx.addIssue({ code: 'custom', path: [key], message: `is missing, and ${given[0]} is there` });
+});
 
 export type Env = z.infer<typeof envSchema>;
 

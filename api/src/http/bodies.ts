@@ -17,6 +17,10 @@ const verify = (request: object) => {
 const small = express.json({ limit: SMALL, verify });
 const large = express.json({ limit: LARGE, verify });
 
+/** Signed over their very bytes: left as they came. */
+const SIGNED_PATH = /^\/api\/webhooks\/[^/]+\/?$/;
+const signed = express.raw({ limit: SMALL, type: () => true, inflate: false });
+
 /** How long a request's JSON took to parse, without the wait for its bytes; 0 where there was none. */
 export const jsonParseMilliseconds = (request: object): number => parsedIn.get(request) ?? 0;
 
@@ -37,10 +41,14 @@ function bodyError(error: unknown): AppError {
   }
 }
 
+function parserOf(path: string): RequestHandler {
+  if (SIGNED_PATH.test(path)) return signed;
+  return LARGE_PATHS.some((large) => large.test(path)) ? large : small;
+}
+
 /** JSON bodies with a limit chosen by address; other kinds of body are left to the route (uploads). */
 export const jsonBodies: RequestHandler = (request, response, next) => {
-  const parse = LARGE_PATHS.some((path) => path.test(request.path)) ? large : small;
-  parse(request, response, (error?: unknown) => {
+  parserOf(request.path)(request, response, (error?: unknown) => {
     const received = receivedAt.get(request);
     if (received !== undefined) parsedIn.set(request, performance.now() - received);
     next(error === undefined ? undefined : bodyError(error));

@@ -18,6 +18,8 @@ export interface ValidRequest {
   /** An uploaded file, sent with the fields as a form. */
   readonly file?: { readonly name: string; readonly content: Buffer };
   readonly fields?: Readonly<Record<string, string>>;
+  /** Beside the Idempotency-Key, which every request carries. */
+  readonly headers?: Readonly<Record<string, string>>;
 }
 
 export interface RouteCase {

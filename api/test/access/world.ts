@@ -5,6 +5,13 @@ import { addCompany, addPerson, type TestPerson } from '../people.js';
 /** Stands in the names of our company's things; nobody else may ever see it. */
 export const MARK = 'Marked-as-ours';
 
+/** A card service that nobody ever reaches; its words are signed with this secret. */
+export const walkCardService = {
+  STRIPE_SECRET_KEY: 'sk_test_of_the_walk',
+  STRIPE_WEBHOOK_SECRET: 'whsec_of_the_walk',
+  STRIPE_API_BASE: 'http://127.0.0.1:9',
+};
+
 export const PASSWORD = 'the password of everyone here';
 
 /** A company of ours with a person of each role, another company, and somebody who belongs to none. */

@@ -11,7 +11,9 @@ export const sharedDueSchema = z.strictObject({
   outstandingMinor: z.number().int(),
   amountMinor: z.number().int(),
   paidMinor: z.number().int(),
-  /** It can be paid now. */
+  /** The company has asked for it. */
+  requested: z.boolean(),
+  /** It can be paid now by card. False for one that is asked for where the company takes no cards. */
   payable: z.boolean(),
   /** A payment by card that is not settled yet. */
   pending: z.boolean(),

@@ -25,7 +25,10 @@ export interface JobEventData {
   'payment-requested': { readonly name: string; readonly amountMinor: number };
   'payment-received': { readonly name: string; readonly method: string; readonly amountMinor: number };
   'payment-failed': { readonly name: string; readonly amountMinor: number };
+  /** The card service reports a sum that nobody asked for: somebody must look at it. */
+  'payment-mismatch': { readonly name: string; readonly amountMinor: number; readonly expectedMinor: number };
   refunded: { readonly reason: string; readonly amountMinor: number };
+  'refund-failed': { readonly reason: string; readonly amountMinor: number };
 }
 export type JobEventKind = keyof JobEventData;
 

@@ -16,6 +16,10 @@ export interface QueuePayloads {
   'approval.sign': { readonly companyId: string; readonly approvalId: string };
   /** Make the PDF of an invoice, receipt or note of a refund, and mail it. */
   'money-document.make': { readonly companyId: string; readonly documentId: string };
+  /** Have the card service send a refund. */
+  'card-refund.send': { readonly companyId: string; readonly refundId: string };
+  /** End a checkout that nobody should pay any more. */
+  'card-checkout.end': { readonly companyId: string; readonly paymentId: string };
 }
 export type QueueName = keyof QueuePayloads;
 
@@ -65,4 +69,6 @@ export const queues: Readonly<Record<QueueName, QueueSettings>> = {
   'proposal.remind': paper,
   'approval.sign': paper,
   'money-document.make': paper,
+  'card-refund.send': { ...paper, retryLimit: 12, retryDelay: 5 },
+  'card-checkout.end': { ...paper, retryLimit: 12, retryDelay: 5 },
 };
