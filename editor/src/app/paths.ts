@@ -12,6 +12,10 @@ export const paths = {
   job: '/jobs/:jobId',
   siteWalk: '/jobs/:jobId/site-walk',
   plan: '/jobs/:jobId/plan',
+  proposal: '/jobs/:jobId/proposal',
+  board: '/board',
+  numbers: '/numbers',
+  price: '/jobs/:jobId/price',
   clients: '/clients',
   client: '/clients/:clientId',
   catalogue: '/catalogue',
@@ -19,6 +23,8 @@ export const paths = {
   catalogueItem: '/catalogue/items/:itemId',
   company: '/company',
   people: '/company/people',
+  proposalTexts: '/company/proposals',
+  priceBook: '/company/prices',
   account: '/account',
 } as const;
 
@@ -30,6 +36,11 @@ export const to = {
   /** The plan page, on a given sheet when one is named. */
   plan: (jobId: string, sheetId?: string) =>
     `/jobs/${segment(jobId)}/plan${sheetId === undefined ? '' : `?sheet=${segment(sheetId)}`}`,
+  /** The plan page with some of its records chosen. Many of them would be too long for a server to be sent. */
+  planLit: (jobId: string, recordIds: readonly string[]) =>
+    `/jobs/${segment(jobId)}/plan${recordIds.length > 100 ? '#' : '?'}lit=${recordIds.map(segment).join(',')}`,
+  price: (jobId: string) => `/jobs/${segment(jobId)}/price`,
+  proposal: (jobId: string) => `/jobs/${segment(jobId)}/proposal`,
   newJobFor: (clientId: string) => `/jobs/new?client=${segment(clientId)}`,
   client: (clientId: string) => `/clients/${segment(clientId)}`,
   newCatalogueItem: (category: string) => `/catalogue/new/${segment(category)}`,

@@ -25,6 +25,16 @@ export const JobsIcon = () => (
     <path d="M3 5.5h14M3 10h14M3 14.5h9" />
   </Icon>
 );
+export const BoardIcon = () => (
+  <Icon>
+    <path d="M3.5 4h3.6v12H3.5zM8.2 4h3.6v7H8.2zM12.9 4h3.6v9.5h-3.6z" />
+  </Icon>
+);
+export const NumbersIcon = () => (
+  <Icon>
+    <path d="M3.5 16.5h13M5.5 13v-2.5M10 13V7M14.5 13V4" />
+  </Icon>
+);
 export const ClientsIcon = () => (
   <Icon>
     <circle cx="10" cy="7" r="3.2" />

@@ -44,6 +44,13 @@ export interface Abilities {
   readonly editJobs: boolean;
   readonly editCatalogue: boolean;
   readonly editPlan: boolean;
+  /** Prices are seen by those who may edit them, and by nobody else. */
+  readonly editPrices: boolean;
+  readonly editPriceBook: boolean;
+  /** Proposals, questions and payments. */
+  readonly sell: boolean;
+  readonly refund: boolean;
+  readonly seeNumbers: boolean;
   readonly survey: boolean;
   readonly editCompany: boolean;
   readonly editMembers: boolean;
@@ -55,6 +62,11 @@ export function abilitiesOf(role: Role | null): Abilities {
     editJobs: planner,
     editCatalogue: planner,
     editPlan: planner,
+    editPrices: planner,
+    editPriceBook: role === 'owner',
+    sell: planner,
+    refund: role === 'owner',
+    seeNumbers: role === 'owner',
     survey: role !== null,
     editCompany: role === 'owner',
     editMembers: role === 'owner',

@@ -1,7 +1,14 @@
 import { Link, NavLink, Outlet, ScrollRestoration, useLocation, useNavigation } from 'react-router-dom';
-import { CatalogueIcon, ClientsIcon, CompanyIcon, JobsIcon } from '../../components/icons';
+import {
+  BoardIcon,
+  CatalogueIcon,
+  ClientsIcon,
+  CompanyIcon,
+  JobsIcon,
+  NumbersIcon,
+} from '../../components/icons';
 import { Mark } from '../../components/mark';
-import { useMe } from '../../lib/me';
+import { useAbilities, useMe } from '../../lib/me';
 import { paths } from '../paths';
 import { AccountMenu } from './account-menu';
 import { NoCompany } from './no-company';
@@ -9,16 +16,19 @@ import styles from './shell.module.css';
 
 const places = [
   { to: paths.jobs, label: 'Jobs', icon: JobsIcon },
+  { to: paths.board, label: 'Board', icon: BoardIcon },
   { to: paths.clients, label: 'Clients', icon: ClientsIcon },
   { to: paths.catalogue, label: 'Catalogue', icon: CatalogueIcon },
   { to: paths.company, label: 'Company', icon: CompanyIcon },
 ] as const;
+const ownersPlaces = [...places, { to: paths.numbers, label: 'Numbers', icon: NumbersIcon }] as const;
 
 /** The frame of every screen but the plan page: a bar on top; on a phone the places move to the foot. */
 export function Shell() {
   const navigation = useNavigation();
   const { pathname } = useLocation();
   const me = useMe();
+  const { seeNumbers } = useAbilities();
   return (
     <div className={styles.shell} data-phone-foot="">
       <a href="#main" className={styles.skip}>
@@ -30,7 +40,7 @@ export function Shell() {
           Lampwright
         </Link>
         <nav className={styles.places} aria-label="Main">
-          {places.map(({ to, label, icon: Icon }) => (
+          {(seeNumbers ? ownersPlaces : places).map(({ to, label, icon: Icon }) => (
             <NavLink key={to} to={to} className={styles.place}>
               <span className={styles.icon}>
                 <Icon />

@@ -37,14 +37,25 @@ interface PageProps {
   readonly actions?: ReactNode;
   /** One column: forms and settings. */
   readonly narrow?: boolean;
+  /** As wide as the window: columns side by side. */
+  readonly wide?: boolean;
   readonly children: ReactNode;
 }
 
-export function Page({ title, tabTitle, lede, back, actions, narrow = false, children }: PageProps) {
+export function Page({
+  title,
+  tabTitle,
+  lede,
+  back,
+  actions,
+  narrow = false,
+  wide = false,
+  children,
+}: PageProps) {
   useDocumentTitle(tabTitle ?? title);
   const heading = useHeadingFocus();
   return (
-    <div className={styles.page} data-narrow={narrow ? '' : undefined}>
+    <div className={styles.page} data-narrow={narrow ? '' : undefined} data-wide={wide ? '' : undefined}>
       {back && (
         <Link to={back.to} className={styles.back}>
           <ChevronLeft />
