@@ -52,9 +52,9 @@ export class JobPricingService {
   ): Promise<JobPricingAnswer> {
     demand(actor, 'prices.edit');
     const sees = seesCosts(actor, await this.book(actor));
-    if (!sees) refuseCosts(pricing);
     return this.database.transaction(async () => {
       const key = await this.editable(actor, jobId);
+      if (!sees) refuseCosts(pricing);
       const stored = await this.quotes.pricing(key);
       const whole = sees ? pricing : pricingWithCostsOf(pricing, stored.pricing);
       // A stored pricing that changed since it was read is at another version, and nothing is saved.

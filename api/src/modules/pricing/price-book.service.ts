@@ -70,10 +70,10 @@ export class PriceBookService {
   async setPrice(actor: Actor, itemId: string, { price }: ItemPriceEdit): Promise<CataloguePrices> {
     demand(actor, 'prices.edit');
     const { book } = await this.book(actor);
-    if (!seesCosts(actor, book))
-      throw notAllowed('Only those who see costs may change prices in this company.');
     await this.database.transaction(async () => {
       if (!(await this.prices.lockItem(actor.companyId, itemId))) throw notFound('This catalogue item');
+      if (!seesCosts(actor, book))
+        throw notAllowed('Only those who see costs may change prices in this company.');
       const before = await this.prices.newestOf(actor.companyId, itemId);
       const same = before && isSame(itemPriceSchema.parse(before.price), price);
       if (!same) await this.prices.add(actor.companyId, [{ itemId, price }], actor.userId);
