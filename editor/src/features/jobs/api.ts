@@ -1,4 +1,5 @@
 import { keepPreviousData, queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
+import { affairsChanged } from '../../lib/affairs';
 import { type Answer, answer, server } from '../../lib/api/client';
 import { clientsKey, propertiesKey } from '../../lib/clients';
 import { type Job, jobKey, jobsKey } from '../../lib/jobs';
@@ -73,7 +74,7 @@ function useJobChange<V>(jobId: string, change: (value: V) => Promise<Job>) {
     mutationFn: change,
     onSuccess: async (job) => {
       client.setQueryData(jobKey(jobId), job);
-      await client.invalidateQueries({ queryKey: [...jobsKey, 'list'] });
+      await affairsChanged(client, jobId);
     },
   });
 }

@@ -48,13 +48,22 @@ export const revisionQuery = (jobId: string, revisionId: string) =>
       ),
   });
 
-/** What stands in the way of a revision comes with the price. */
-export const obstaclesQuery = (jobId: string) =>
+/** Of the price as it is now: what it comes to, and what stands in the way of a revision. */
+export const priceBriefQuery = (jobId: string) =>
   queryOptions({
-    queryKey: [...affairsKey(jobId), 'obstacles'],
-    queryFn: async ({ signal }) =>
-      (await answer(server.GET('/api/jobs/{jobId}/quote', { signal, params: { path: { jobId } } })))
-        .obstacles,
+    queryKey: [...affairsKey(jobId), 'price'],
+    queryFn: async ({ signal }) => {
+      const { quote, obstacles } = await answer(
+        server.GET('/api/jobs/{jobId}/quote', { signal, params: { path: { jobId } } }),
+      );
+      return {
+        obstacles,
+        currency: quote.currency,
+        locale: quote.locale,
+        /** Null where nothing is priced yet. */
+        totalMinor: quote.lines.length === 0 ? null : (quote.combinations[0]?.totalMinor ?? null),
+      };
+    },
     staleTime: 0,
   });
 

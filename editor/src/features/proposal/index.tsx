@@ -6,7 +6,7 @@ import { sentenceOf } from '../../lib/api/client';
 import { count } from '../../lib/format';
 import type { Job } from '../../lib/jobs';
 import { useMe } from '../../lib/me';
-import { type Obstacle, obstaclesQuery, type Proposal, revisionQuery, useMakeRevision } from './api';
+import { type Obstacle, type Proposal, priceBriefQuery, revisionQuery, useMakeRevision } from './api';
 import { ApprovalSection } from './approval';
 import { LinksSection } from './links-section';
 import { Preview } from './preview';
@@ -45,13 +45,13 @@ export function ProposalView({
   questionsId,
 }: ProposalViewProps) {
   const newest = proposal.revisions[0];
-  const obstacles = useQuery({ ...obstaclesQuery(job.id), enabled: editable });
+  const price = useQuery({ ...priceBriefQuery(job.id), enabled: editable });
   const detail = useQuery({ ...revisionQuery(job.id, newest?.id ?? ''), enabled: newest !== undefined });
   const wordsChanged = detail.data !== undefined && !sameWords(detail.data.document.words, proposal.words);
   const changed = changedSince(newest, proposal.stale, wordsChanged);
   const move: Move = editable
     ? moveOf(proposal, {
-        obstacles: obstacles.data ?? [],
+        obstacles: price.data?.obstacles ?? [],
         openQuestions,
         changed: changed !== null,
       })
@@ -69,7 +69,7 @@ export function ProposalView({
             job={job}
             proposal={proposal}
             move={move}
-            waiting={obstacles.isPending && editable}
+            waiting={price.isPending && editable}
             questionsId={questionsId}
             mendAt={mendAt}
           />

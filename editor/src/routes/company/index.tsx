@@ -18,13 +18,18 @@ import { useAbilities } from '../../lib/me';
 
 export default function CompanyScreen() {
   const company = useQuery(companyQuery);
-  const { editCompany } = useAbilities();
+  const { editCompany, sell } = useAbilities();
   return (
     <Page
       title={company.data?.name ?? 'Company'}
       tabTitle="Company"
       narrow
-      actions={<LinkButton to={paths.people}>People</LinkButton>}
+      actions={
+        <>
+          {sell && <LinkButton to={paths.proposalTexts}>Texts of proposals</LinkButton>}
+          <LinkButton to={paths.people}>People</LinkButton>
+        </>
+      }
     >
       {company.isPending && <SkeletonRows rows={6} label="Loading the company" />}
       {company.isError && <Problem error={company.error} onRetry={() => company.refetch()} />}

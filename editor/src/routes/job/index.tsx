@@ -12,12 +12,17 @@ import { EditJob } from '../../features/jobs/edit-job';
 import { JobFacts } from '../../features/jobs/job-facts';
 import styles from '../../features/jobs/job-page.module.css';
 import { StageSteps } from '../../features/jobs/stage-steps';
+import { PaymentsBrief } from '../../features/payments/brief';
+import { ProposalBrief } from '../../features/proposal/brief';
 import { SheetsSection } from '../../features/sheets/sheets-section';
 import { SiteWalkSummary } from '../../features/site-walk/summary';
+import { TimelineSection } from '../../features/timeline';
+import { openQuestions, questionsQuery } from '../../lib/affairs';
 import { sentenceOf } from '../../lib/api/client';
 import { formatDay } from '../../lib/format';
 import { type Job, jobQuery } from '../../lib/jobs';
 import { useAbilities, useMe } from '../../lib/me';
+import { stages } from '../../lib/stages';
 
 const back = { to: paths.jobs, label: 'Jobs' };
 
@@ -48,6 +53,9 @@ function JobPage({ job }: { job: Job }) {
   const archived = job.archivedAt !== null;
   const editable = abilities.editJobs && !archived;
   const drawable = job.sheets.some((sheet) => sheet.status === 'ready');
+  const questions = useQuery({ ...questionsQuery(job.id), enabled: abilities.sell });
+  // Once the plan is proven, the proposal is what moves the job on.
+  const proposing = abilities.sell && stages.indexOf(job.stage) >= stages.indexOf('propose');
   const complain = (error: unknown) => void showProblem(sentenceOf(error));
 
   const putAway = () =>
@@ -70,7 +78,7 @@ function JobPage({ job }: { job: Job }) {
               <MenuItem onSelect={putAway}>Archive the job</MenuItem>
             </MoreMenu>
           )}
-          <LinkButton to={to.plan(job.id)} kind={drawable ? 'lamp' : 'quiet'}>
+          <LinkButton to={to.plan(job.id)} kind={drawable && !proposing ? 'lamp' : 'quiet'}>
             Open the plan
           </LinkButton>
         </>
@@ -96,6 +104,19 @@ function JobPage({ job }: { job: Job }) {
           />
         </div>
         <div className={styles.rest}>
+          {abilities.sell && (
+            <ProposalBrief
+              jobId={job.id}
+              openQuestions={openQuestions(questions.data ?? []).length}
+              priceLink={<LinkButton to={to.price(job.id)}>Price</LinkButton>}
+              proposalLink={
+                <LinkButton to={to.proposal(job.id)} kind={proposing ? 'lamp' : 'quiet'}>
+                  Proposal
+                </LinkButton>
+              }
+              payments={<PaymentsBrief jobId={job.id} />}
+            />
+          )}
           <Section
             title="Site walk"
             actions={
@@ -122,6 +143,7 @@ function JobPage({ job }: { job: Job }) {
           >
             {job.notes !== '' && <p className={styles.prose}>{job.notes}</p>}
           </Section>
+          <TimelineSection jobId={job.id} />
         </div>
         <aside className={styles.aside} aria-label="The job at a glance">
           <StageSteps job={job} editable={editable} />
