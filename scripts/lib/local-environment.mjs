@@ -1,7 +1,11 @@
 import { join } from 'node:path';
 
 /** Where the local fakes keep what they are given. @param {string} folder the data folder */
-export const fakeFolders = (folder) => ({ objects: join(folder, 'objects'), mail: join(folder, 'mail') });
+export const fakeFolders = (folder) => ({
+  objects: join(folder, 'objects'),
+  mail: join(folder, 'mail'),
+  cards: join(folder, 'cards'),
+});
 
 /**
  * Settings of the surroundings must not leak into local mode: only what a process needs to run passes.
@@ -51,18 +55,22 @@ export function productEnvironment({ state, port, databaseUrl, publicUrl, editor
     SMTP_URL: `smtp://127.0.0.1:${state.ports.smtp}`,
     MAIL_FROM: 'Lampwright <lampwright@localhost>',
     MAIL_VIEWER_URL: `http://127.0.0.1:${state.ports.mailViewer}`,
+    STRIPE_SECRET_KEY: state.cardsSecretKey,
+    STRIPE_WEBHOOK_SECRET: state.cardsWebhookSecret,
+    STRIPE_API_BASE: `http://127.0.0.1:${state.ports.cards}`,
     ...(editorFiles === undefined ? {} : { EDITOR_FILES: editorFiles }),
   };
 }
 
 /**
- * Settings of the local fakes of object storage and mail.
+ * Settings of the local fakes of object storage, mail and the card service.
  * @param {string} folder the data folder
  * @param {import('./local-state.mjs').LocalState} state
+ * @param {number} port of the API, which the card service reports to
  * @returns {NodeJS.ProcessEnv}
  */
-export function fakesEnvironment(folder, state) {
-  const { objects, mail } = fakeFolders(folder);
+export function fakesEnvironment(folder, state, port) {
+  const { objects, mail, cards } = fakeFolders(folder);
   return {
     ...surroundings(),
     FAKE_S3_PORT: String(state.ports.storage),
@@ -70,6 +78,11 @@ export function fakesEnvironment(folder, state) {
     FAKE_SMTP_PORT: String(state.ports.smtp),
     FAKE_MAIL_HTTP_PORT: String(state.ports.mailViewer),
     FAKE_MAIL_DIR: mail,
+    FAKE_CARDS_PORT: String(state.ports.cards),
+    FAKE_CARDS_FILE: join(cards, 'state.json'),
+    FAKE_CARDS_WEBHOOK_URL: `http://127.0.0.1:${port}/api/webhooks/stripe`,
+    STRIPE_SECRET_KEY: state.cardsSecretKey,
+    STRIPE_WEBHOOK_SECRET: state.cardsWebhookSecret,
     // The fake takes only requests signed with this installation's own key.
     S3_BUCKET: 'lampwright',
     S3_ACCESS_KEY_ID: state.storageKeyId,

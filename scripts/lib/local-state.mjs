@@ -9,7 +9,9 @@ import { freePort } from './ports.mjs';
  * @property {string} sessionSecret
  * @property {string} storageKeyId
  * @property {string} storageSecret
- * @property {{ storage: number, smtp: number, mailViewer: number }} ports
+ * @property {string} cardsSecretKey of the local card service
+ * @property {string} cardsWebhookSecret signs what it reports
+ * @property {{ storage: number, smtp: number, mailViewer: number, cards: number }} ports
  * @property {boolean} demoLoaded false until the demo company is in a new database
  */
 
@@ -37,10 +39,13 @@ export async function readState(folder) {
     sessionSecret: old.sessionSecret ?? randomBytes(48).toString('base64url'),
     storageKeyId: old.storageKeyId ?? `local-${randomBytes(6).toString('hex')}`,
     storageSecret: old.storageSecret ?? randomBytes(24).toString('base64url'),
+    cardsSecretKey: old.cardsSecretKey ?? `sk_test_${randomBytes(24).toString('hex')}`,
+    cardsWebhookSecret: old.cardsWebhookSecret ?? `whsec_${randomBytes(24).toString('hex')}`,
     ports: {
       storage: await freePort(old.ports?.storage),
       smtp: await freePort(old.ports?.smtp),
       mailViewer: await freePort(old.ports?.mailViewer),
+      cards: await freePort(old.ports?.cards),
     },
     demoLoaded: old.demoLoaded ?? false,
   };

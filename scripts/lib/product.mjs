@@ -32,7 +32,7 @@ export async function startGround({ folder, supervisor, signal, port, publicUrl,
   await cluster.ensureDatabase();
   await settleRestore(folder, cluster);
   let state = await readState(folder);
-  await startFakes(folder, state, supervisor, signal);
+  await startFakes({ folder, state, port, supervisor, signal });
   const env = productEnvironment({ state, port, databaseUrl: cluster.url, publicUrl, editorFiles });
   await runStep('Migrating the database', 'api/dist/database/migrate.js', env, signal);
   if (!state.demoLoaded) {
@@ -45,24 +45,26 @@ export async function startGround({ folder, supervisor, signal, port, publicUrl,
 }
 
 /**
- * @param {string} folder
- * @param {import('./local-state.mjs').LocalState} state
- * @param {Supervisor} supervisor
- * @param {AbortSignal} signal
+ * @param {object} options
+ * @param {string} options.folder
+ * @param {import('./local-state.mjs').LocalState} options.state
+ * @param {number} options.port of the API
+ * @param {Supervisor} options.supervisor
+ * @param {AbortSignal} options.signal
  */
-async function startFakes(folder, state, supervisor, signal) {
+async function startFakes({ folder, state, port, supervisor, signal }) {
   for (const path of Object.values(fakeFolders(folder))) mkdirSync(path, { recursive: true, mode: 0o700 });
   supervisor.start({
-    name: 'The local storage and mail',
+    name: 'The local storage, mail and card service',
     args: [inRoot('api/dist/ports/fakes.js')],
-    env: fakesEnvironment(folder, state),
+    env: fakesEnvironment(folder, state, port),
     logFile: join(folder, 'logs', 'fakes.log'),
   });
   const stopped = AbortSignal.any([signal, supervisor.signal]);
   const up = await Promise.all(
     Object.values(state.ports).map((port) => waitForPort(port, { signal: stopped })),
   );
-  if (up.includes(false)) throw new Trouble(`The local storage and mail did not start; see ${folder}/logs.`);
+  if (up.includes(false)) throw new Trouble(`The local services did not start; see ${folder}/logs.`);
 }
 
 /**
