@@ -7,6 +7,7 @@ import { OnceModule } from './http/once.module.js';
 import { AccountModule } from './modules/account/account.module.js';
 import { AuthModule } from './modules/auth/auth.module.js';
 import { CatalogueModule } from './modules/catalogue/catalogue.module.js';
+import { CatalogueImportModule } from './modules/catalogue-import/catalogue-import.module.js';
 import { ClientsModule } from './modules/clients/clients.module.js';
 import { CompaniesModule } from './modules/companies/companies.module.js';
 import { DevMailModule } from './modules/dev-mail/dev-mail.module.js';
@@ -53,6 +54,7 @@ export class AppModule {
         SheetsModule,
         PlansModule,
         CatalogueModule,
+        CatalogueImportModule,
         EstimatesModule,
         PricingModule,
         ProposalsModule,

@@ -2,9 +2,13 @@ import express, { type RequestHandler } from 'express';
 import { AppError } from './app-error.js';
 
 const SMALL = '256kb';
-/** Estimates and saves of a large plan. */
+/** Estimates, saves of a large plan, and tables of catalogue items. */
 const LARGE = '8mb';
-const LARGE_PATHS = [/^\/api\/estimates\/?$/, /^\/api\/jobs\/[^/]+\/plan\/changes\/?$/];
+const LARGE_PATHS = [
+  /^\/api\/estimates\/?$/,
+  /^\/api\/jobs\/[^/]+\/plan\/changes\/?$/,
+  /^\/api\/catalogue\/imports(\/preview)?\/?$/,
+];
 
 const receivedAt = new WeakMap<object, number>();
 const parsedIn = new WeakMap<object, number>();

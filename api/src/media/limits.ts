@@ -19,3 +19,9 @@ export const PDF_PROGRAM_AS_BYTES = 1024 * 1024 * 1024;
 export const PDF_PROGRAM_CPU_SECONDS = 50;
 export const PAGE_PREVIEW_MS = 10_000;
 export const ALL_PREVIEWS_MS = 40_000;
+
+/** Tables of catalogue items: a supplier's whole list has a few thousand rows. */
+export const MAX_TABLE_BYTES = 5 * 1024 * 1024;
+export const MAX_TABLE_ROWS = 5000;
+export const MAX_TABLE_COLUMNS = 100;
+export const MAX_CELL_CHARACTERS = 2000;

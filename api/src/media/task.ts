@@ -10,7 +10,13 @@ export type DecodeTask =
       readonly drawing: boolean;
     }
   | { readonly kind: 'pdf-inspect'; readonly input: string; readonly folder: string }
-  | { readonly kind: 'pdf-page'; readonly input: string; readonly folder: string; readonly page: number };
+  | { readonly kind: 'pdf-page'; readonly input: string; readonly folder: string; readonly page: number }
+  | {
+      readonly kind: 'table';
+      readonly input: string;
+      readonly folder: string;
+      readonly format: 'csv' | 'xlsx';
+    };
 
 const px = z.number().int().min(1);
 const picture = {
@@ -36,6 +42,12 @@ export const decodeResultSchema = z.discriminatedUnion('kind', [
     ...picture,
     /** Pixels per metre of paper at which the page was drawn. */
     pixelsPerPaperMeter: z.number().positive(),
+    maxRssBytes: z.number(),
+  }),
+  z.strictObject({
+    kind: z.literal('table'),
+    /** A JSON file: rows of texts, the heads of the columns first. */
+    file: z.string(),
     maxRssBytes: z.number(),
   }),
   z.strictObject({ kind: z.literal('refused'), code: z.string(), message: z.string() }),

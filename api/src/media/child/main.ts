@@ -3,6 +3,7 @@ import type { DecodeResult, DecodeTask } from '../task.js';
 import { decodePicture } from './images.js';
 import { drawPage, inspectPdf } from './pdf.js';
 import { Refusal } from './refusal.js';
+import { readTable } from './tables.js';
 
 /**
  * The child process that opens uploaded files: one task on standard input, one answer on standard output.
@@ -35,6 +36,12 @@ async function work(task: DecodeTask): Promise<DecodeResult> {
       return {
         kind: 'pdf-page',
         ...(await drawPage(task.input, task.folder, task.page)),
+        maxRssBytes: maxRss(),
+      };
+    case 'table':
+      return {
+        kind: 'table',
+        file: await readTable(task.input, task.folder, task.format),
         maxRssBytes: maxRss(),
       };
   }

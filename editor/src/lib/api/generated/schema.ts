@@ -836,6 +836,86 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/api/catalogue/tables": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["CatalogueImport_read"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/catalogue/imports/preview": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["CatalogueImport_preview"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/catalogue/imports": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["CatalogueImport_list"];
+        put?: never;
+        post: operations["CatalogueImport_take"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/catalogue/imports/{importId}/undo": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post: operations["CatalogueImport_undo"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/catalogue/export": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["CatalogueImport_export"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/api/estimates": {
         parameters: {
             query?: never;
@@ -6183,6 +6263,229 @@ export interface operations {
             };
         };
     };
+    CatalogueImport_read: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "multipart/form-data": {
+                    file: {
+                        path: string;
+                        size: number;
+                        originalname: string;
+                    };
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        fileName: string;
+                        columns: string[];
+                        rows: string[][];
+                        mapping: {
+                            [key: string]: number | null;
+                        };
+                        fields: {
+                            /** @enum {string} */
+                            name: "id" | "category" | "name" | "note" | "kind" | "light" | "base" | "maxWatts" | "technology" | "loadKind" | "watts" | "powerFactor" | "driverVolts" | "ratedVolts" | "amps" | "minVolts" | "maxVolts" | "aimMin" | "aimMax" | "lumens" | "beam" | "cct" | "life" | "leadConductor" | "leadLength" | "height" | "wetListed" | "conductor" | "ampacity" | "directBurial" | "ratedVA" | "lineVolts" | "regulation" | "ratedAt" | "supply" | "windings" | "terminals" | "ways" | "minConductors" | "maxConductors" | "largestAwg" | "smallestAwg" | "inrush" | "use" | "cost" | "price" | "per" | "unit" | "increment" | "taxable" | "supplier" | "orderNumber";
+                            header: string;
+                            money: boolean;
+                        }[];
+                        pricesTaken: boolean;
+                    };
+                };
+            };
+        };
+    };
+    CatalogueImport_preview: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    fileName: string;
+                    rows: string[][];
+                    mapping: {
+                        [key: string]: number | null;
+                    };
+                    category: ("fixture" | "lamp" | "cable" | "transformer" | "hub" | "connector" | "control" | "part") | null;
+                    leftOut: number[];
+                };
+            };
+        };
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        added: number;
+                        changed: number;
+                        same: number;
+                        faults: number;
+                        leftOut: number;
+                        rows: {
+                            row: number;
+                            /** @enum {string} */
+                            action: "add" | "change" | "same" | "fault" | "left-out";
+                            name: string;
+                            itemId: string | null;
+                            changes: {
+                                field: string;
+                                was: string;
+                                now: string;
+                            }[];
+                            faults: {
+                                column: number | null;
+                                detail: string;
+                            }[];
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    CatalogueImport_list: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        items: {
+                            /** Format: uuid */
+                            id: string;
+                            fileName: string;
+                            /** Format: date-time */
+                            at: string;
+                            by: string;
+                            undoneAt: string | null;
+                            summary: {
+                                added: number;
+                                changed: number;
+                                same: number;
+                                faults: number;
+                                leftOut: number;
+                            };
+                        }[];
+                    };
+                };
+            };
+        };
+    };
+    CatalogueImport_take: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": {
+                    fileName: string;
+                    rows: string[][];
+                    mapping: {
+                        [key: string]: number | null;
+                    };
+                    category: ("fixture" | "lamp" | "cable" | "transformer" | "hub" | "connector" | "control" | "part") | null;
+                    leftOut: number[];
+                };
+            };
+        };
+        responses: {
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        /** Format: uuid */
+                        id: string;
+                        fileName: string;
+                        /** Format: date-time */
+                        at: string;
+                        by: string;
+                        undoneAt: string | null;
+                        summary: {
+                            added: number;
+                            changed: number;
+                            same: number;
+                            faults: number;
+                            leftOut: number;
+                        };
+                    };
+                };
+            };
+        };
+    };
+    CatalogueImport_undo: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                importId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        kept: string[];
+                    };
+                };
+            };
+        };
+    };
+    CatalogueImport_export: {
+        parameters: {
+            query: {
+                format: "csv" | "xlsx";
+            };
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The table. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": string;
+                };
+            };
+        };
+    };
     Estimates_estimate: {
         parameters: {
             query?: never;
@@ -8498,6 +8801,7 @@ export interface operations {
                             outstandingMinor: number;
                             amountMinor: number;
                             paidMinor: number;
+                            requested: boolean;
                             payable: boolean;
                             pending: boolean;
                         }[];
@@ -8935,6 +9239,7 @@ export interface operations {
                             outstandingMinor: number;
                             amountMinor: number;
                             paidMinor: number;
+                            requested: boolean;
                             payable: boolean;
                             pending: boolean;
                         }[];
@@ -9201,6 +9506,7 @@ export interface operations {
                             outstandingMinor: number;
                             amountMinor: number;
                             paidMinor: number;
+                            requested: boolean;
                             payable: boolean;
                             pending: boolean;
                         }[];
