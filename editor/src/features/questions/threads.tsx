@@ -1,4 +1,4 @@
-import { useId, useState } from 'react';
+import { useEffect, useId, useRef, useState } from 'react';
 import { Button } from '../../components/button';
 import { Problem } from '../../components/states';
 import { showProblem, showToast } from '../../components/toast';
@@ -57,6 +57,10 @@ function Thread({ jobId, question, about, editable, onShow, chosen }: ThreadProp
   const reopen = useReopen(jobId);
   const complain = (error: unknown) => void showProblem(sentenceOf(error));
   const open = question.resolvedAt === null;
+  const item = useRef<HTMLLIElement>(null);
+  useEffect(() => {
+    if (chosen) item.current?.scrollIntoView({ block: 'nearest' });
+  }, [chosen]);
   const close = () =>
     resolve.mutate(question.id, {
       onSuccess: () =>
@@ -64,7 +68,12 @@ function Thread({ jobId, question, about, editable, onShow, chosen }: ThreadProp
       onError: complain,
     });
   return (
-    <li className={styles.thread} data-open={open ? '' : undefined} data-chosen={chosen ? '' : undefined}>
+    <li
+      ref={item}
+      className={styles.thread}
+      data-open={open ? '' : undefined}
+      data-chosen={chosen ? '' : undefined}
+    >
       <div className={styles.head}>
         <h3>{about}</h3>
         <span className={styles.state}>{open ? 'Open' : 'Settled'}</span>

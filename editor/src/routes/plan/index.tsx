@@ -14,6 +14,7 @@ import {
 import { type Job, jobQuery } from '../../lib/jobs';
 import { useAbilities, useMe } from '../../lib/me';
 import { useUnits } from '../../lib/units';
+import { useQuestions } from './use-questions';
 
 export default function PlanScreen() {
   const { jobId = '' } = useParams();
@@ -51,6 +52,7 @@ function Plan({ job, companyId }: { readonly job: Job; readonly companyId: strin
   const catalogue = useQuery({ queryKey: ['plan-catalogue', companyId], queryFn: readCatalogue });
   const images = useMemo(() => new Map(job.sheets.map((sheet) => [sheet.id, sheet.imageUrl])), [job.sheets]);
   const entries = useMemo(() => catalogue.data ?? [], [catalogue.data]);
+  const questions = useQuestions(job, opening.is === 'open' ? opening.editor : null);
   switch (opening.is) {
     case 'loading':
       return <Opening />;
@@ -70,6 +72,7 @@ function Plan({ job, companyId }: { readonly job: Job; readonly companyId: strin
             imageUrl={(sheetId) => images.get(sheetId) ?? null}
             entries={entries}
             history={<HistoryPanel jobId={job.id} />}
+            questions={questions}
           />
         </EditorContext>
       );

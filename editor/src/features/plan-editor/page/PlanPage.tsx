@@ -11,6 +11,7 @@ import { useDoc, useEditor, useEstimate, usePlan, useScale, useSession, useSheet
 import { FaultList } from './FaultList';
 import { type CatalogueEntry, firstChoices } from './items';
 import { Legend } from './Legend';
+import { type Pin, Pins } from './Pins';
 import styles from './page.module.css';
 import { Requests } from './Requests';
 import { pageKey } from './shortcuts';
@@ -29,10 +30,22 @@ export interface PlanPageProps {
   readonly entries: readonly CatalogueEntry[];
   /** The list of earlier versions. */
   readonly history: ReactNode;
+  /** What the client asked about the plan; null where nothing was. */
+  readonly questions: AskedQuestions | null;
+}
+
+export interface AskedQuestions {
+  /** How many are open. */
+  readonly open: number;
+  /** Where the open ones are. */
+  readonly pins: readonly Pin[];
+  readonly onPin: (id: string) => void;
+  /** All of them, to read and answer. */
+  readonly panel: ReactNode;
 }
 
 /** The plan page: the drawing fills the window; tools, ledger and profile stand around it. */
-export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }: PlanPageProps) {
+export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history, questions }: PlanPageProps) {
   const editor = useEditor();
   const doc = useDoc();
   const sheet = useSheet();
@@ -57,11 +70,18 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
 
   return (
     <div className={styles.page}>
-      <TopBar jobName={jobName} jobTo={jobTo} jobsTo={jobsTo} faults={faults} />
+      <TopBar
+        jobName={jobName}
+        jobTo={jobTo}
+        jobsTo={jobsTo}
+        faults={faults}
+        openQuestions={questions?.open ?? null}
+      />
       <ToolStrip />
       <main className={styles.drawing}>
         <h1 className="visually-hidden">Plan of {jobName}</h1>
         {sheet === undefined ? <NoSheet jobTo={jobTo} /> : <PlanCanvas imageUrl={imageUrl(sheet.id)} />}
+        {sheet !== undefined && questions !== null && <Pins pins={questions.pins} onPin={questions.onPin} />}
         <ToolOptions entries={entries} />
         <Requests />
         {!asking && <Messages />}
@@ -72,7 +92,7 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
             <ZoomBar />
           </div>
         )}
-        <Panels faults={faults} history={history} />
+        <Panels faults={faults} history={history} questions={questions?.panel ?? null} />
       </main>
       <aside className={styles.profile} data-open={drawer === 'profile' || undefined} aria-label="Profile">
         <Profile />
@@ -91,7 +111,13 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history }:
   );
 }
 
-function Panels({ faults, history }: { readonly faults: Faults; readonly history: ReactNode }) {
+interface PanelsProps {
+  readonly faults: Faults;
+  readonly history: ReactNode;
+  readonly questions: ReactNode;
+}
+
+function Panels({ faults, history, questions }: PanelsProps) {
   const panel = useSession((s) => s.panel);
   switch (panel) {
     case 'none':
@@ -102,6 +128,8 @@ function Panels({ faults, history }: { readonly faults: Faults; readonly history
       return <FaultList faults={faults} />;
     case 'history':
       return history;
+    case 'questions':
+      return questions;
     case 'conflicts':
       return <Conflicts />;
   }

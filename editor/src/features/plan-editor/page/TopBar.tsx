@@ -1,6 +1,7 @@
 import { Link } from 'react-router-dom';
 import { Button } from '../../../components/button';
 import { Mark } from '../../../components/mark';
+import { count } from '../../../lib/format';
 import { useEditor, usePlan } from './context';
 import styles from './page.module.css';
 import { SaveNote } from './SaveNote';
@@ -12,6 +13,8 @@ interface TopBarProps {
   readonly jobTo: string;
   readonly jobsTo: string;
   readonly faults: Faults;
+  /** Null where nothing was asked. */
+  readonly openQuestions: number | null;
 }
 
 /** What stands in the way of moving the job on. */
@@ -28,11 +31,11 @@ export function faultsShort({ counts: { fault }, voltsKnown }: Faults): string {
   return voltsKnown ? 'No faults' : 'No volts yet';
 }
 
-export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {
+export function TopBar({ jobName, jobTo, jobsTo, faults, openQuestions }: TopBarProps) {
   const editor = useEditor();
   const undoLabel = usePlan((s) => s.undoLabel);
   const redoLabel = usePlan((s) => s.redoLabel);
-  const open = (panel: 'faults' | 'history') =>
+  const open = (panel: 'faults' | 'history' | 'questions') =>
     editor.session.setState({ panel: editor.session.getState().panel === panel ? 'none' : panel });
   return (
     <header className={styles.bar}>
@@ -69,6 +72,11 @@ export function TopBar({ jobName, jobTo, jobsTo, faults }: TopBarProps) {
             Redo
           </Button>
         </span>
+      )}
+      {openQuestions !== null && (
+        <Button onClick={() => open('questions')}>
+          {openQuestions === 0 ? 'Questions' : count(openQuestions, 'question')}
+        </Button>
       )}
       <Button onClick={() => open('history')}>History</Button>
       <span className={styles.break} />

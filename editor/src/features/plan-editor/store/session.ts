@@ -2,7 +2,7 @@ import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Choices, Request } from '../tools/tool';
 
 /** Which panel stands over the drawing, if any. */
-export type Panel = 'none' | 'scale' | 'faults' | 'history' | 'conflicts';
+export type Panel = 'none' | 'scale' | 'faults' | 'history' | 'conflicts' | 'questions';
 /** On a phone, what has slid up over the drawing. */
 export type Drawer = 'none' | 'ledger' | 'profile' | 'inspector';
 
