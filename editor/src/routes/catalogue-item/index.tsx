@@ -18,6 +18,7 @@ import { categoryLabel } from '../../features/catalogue/categories';
 import { draftOf } from '../../features/catalogue/draft';
 import { ItemFacts } from '../../features/catalogue/item-facts';
 import { CatalogueForm } from '../../features/catalogue/item-form';
+import { ItemPriceSection } from '../../features/pricing/item-price-section';
 import { sentenceOf } from '../../lib/api/client';
 import { formatDay } from '../../lib/format';
 import { useAbilities } from '../../lib/me';
@@ -45,7 +46,7 @@ export default function CatalogueItemScreen() {
 
 function ItemPage({ entry: { id, item, archivedAt } }: { entry: CatalogueEntry }) {
   const navigate = useNavigate();
-  const { editCatalogue } = useAbilities();
+  const { editCatalogue, editPrices } = useAbilities();
   const replace = useReplaceItem(id);
   const archive = useArchiveItem();
   const restore = useRestoreItem();
@@ -101,6 +102,7 @@ function ItemPage({ entry: { id, item, archivedAt } }: { entry: CatalogueEntry }
       ) : (
         <ItemFacts item={item} />
       )}
+      {editPrices && <ItemPriceSection itemId={id} category={item.category} editable={archivedAt === null} />}
     </Page>
   );
 }
