@@ -1,0 +1,30 @@
+import type { Link } from './link';
+import { Proposal } from './proposal';
+import { GoneLink, LoadFailed, Skeleton, UnknownLink } from './states';
+import { useOpened } from './use-opened';
+import { useSharedPage } from './use-shared-page';
+
+/** The homeowner's page: whatever the address stands for. */
+export function Home({ link }: { readonly link: Link }) {
+  switch (link.kind) {
+    case 'unknown':
+      return <UnknownLink />;
+    case 'gone':
+      return <GoneLink />;
+    case 'live':
+      return <Live linkId={link.id} />;
+  }
+}
+
+function Live({ linkId }: { readonly linkId: string }) {
+  useOpened(linkId);
+  const { loaded, retry, refresh, replace } = useSharedPage(linkId);
+  switch (loaded.kind) {
+    case 'loading':
+      return <Skeleton />;
+    case 'failed':
+      return <LoadFailed trouble={loaded.trouble} onRetry={retry} />;
+    case 'ready':
+      return <Proposal linkId={linkId} page={loaded.page} refresh={refresh} replace={replace} />;
+  }
+}

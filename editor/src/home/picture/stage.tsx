@@ -1,0 +1,239 @@
+import { type KeyboardEvent, type ReactNode, useLayoutEffect, useRef, useState } from 'react';
+import type { Picture } from '../share';
+import { Crosshair } from './crosshair';
+import { at, LightMark, Pin, QuestionPin, type ShownMark } from './mark';
+import { boxOf, pixelOf, spotOf } from './sheet-box';
+import styles from './stage.module.css';
+import { useGestures } from './use-gestures';
+import { panned, type Spot, showing, under, type View, whole, zoomed } from './view';
+
+const ZOOM_STEP = 1.6;
+const PAN_STEP = 0.15;
+
+export interface Place {
+  readonly x: number;
+  readonly y: number;
+}
+
+export interface ShownPin extends Place {
+  readonly questionId: string;
+  readonly label: string;
+}
+
+interface Props {
+  readonly picture: Picture;
+  readonly name: string;
+  readonly marks: readonly ShownMark[];
+  readonly pins: readonly ShownPin[];
+  /** A place that is being asked about. */
+  readonly pending: Place | null;
+  readonly chosenId: string | null;
+  readonly onChoose: (recordId: string) => void;
+  readonly onPin: (questionId: string) => void;
+  /** A place is being looked for: what is pressed is a place, not a light. */
+  readonly placing: boolean;
+  readonly onPlace: (place: Place) => void;
+  readonly onPlacingEnd: () => void;
+}
+
+/** The picture with its marks, in a frame in which it can be moved and zoomed. */
+export function Stage(props: Props) {
+  const { picture, marks, pins, pending, placing } = props;
+  const frame = useRef<HTMLDivElement>(null);
+  const [view, setView] = useState<View>(whole);
+  useGestures(frame, view, setView);
+
+  const press = (event: { clientX: number; clientY: number; detail: number }, own: ShownMark): void => {
+    // A press by keyboard has no place.
+    const meant = event.detail === 0 ? own : (nearest(frame.current, view, marks, event) ?? own);
+    props.onChoose(meant.light.recordId);
+  };
+
+  const keys = (event: KeyboardEvent): void => {
+    const next = placing ? null : keyed(view, event.key);
+    if (!next || event.ctrlKey || event.metaKey || event.altKey) return;
+    event.preventDefault();
+    setView(next);
+  };
+
+  return (
+    <div className={styles.stage}>
+      {/* biome-ignore lint/a11y/useSemanticElements: a fieldset would be taken for a form */}
+      <div
+        ref={frame}
+        className={styles.frame}
+        role="group"
+        aria-label={`${props.name}: picture with ${marks.length} lights. Plus and minus zoom, arrow keys move it.`}
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: it can be moved and zoomed by keyboard
+        tabIndex={0}
+        data-zoomed={view.zoom > 1 || undefined}
+        data-placing={placing || undefined}
+        onKeyDown={keys}
+      >
+        <div
+          className={styles.world}
+          style={{
+            ['--zoom' as string]: view.zoom,
+            transform: `translate(${view.x * 100}%, ${view.y * 100}%) scale(${view.zoom})`,
+          }}
+        >
+          <SheetImage picture={picture} />
+          {marks.map((mark) => (
+            <LightMark
+              key={mark.light.recordId}
+              mark={mark}
+              chosen={mark.light.recordId === props.chosenId}
+              onPress={(event) => press(event, mark)}
+              onFocus={() => setView((seen) => showing(seen, mark.spot))}
+            />
+          ))}
+          {pins.map((pin) => (
+            <QuestionPin
+              key={pin.questionId}
+              spot={spotOf(picture, pin)}
+              label={pin.label}
+              onPress={() => props.onPin(pin.questionId)}
+            />
+          ))}
+          {pending && <Pin spot={spotOf(picture, pending)} />}
+        </div>
+        {placing && (
+          <Crosshair
+            onPlace={(spot) => props.onPlace(pixelOf(picture, under(view, spot)))}
+            onCancel={props.onPlacingEnd}
+          />
+        )}
+      </div>
+      <div className={styles.tools}>
+        <Tool label="Zoom in" onPress={() => setView(zoomed(view, ZOOM_STEP))}>
+          <path d="M10 4.500v11M4.500 10h11" />
+        </Tool>
+        <Tool label="Zoom out" off={view.zoom === 1} onPress={() => setView(zoomed(view, 1 / ZOOM_STEP))}>
+          <path d="M4.500 10h11" />
+        </Tool>
+        <Tool label="Show the whole picture" off={view.zoom === 1} onPress={() => setView(whole)}>
+          <path d="M4 8V4h4M12 4h4v4M16 12v4h-4M8 16H4v-4" />
+        </Tool>
+      </div>
+    </div>
+  );
+}
+
+function keyed(view: View, key: string): View | null {
+  switch (key) {
+    case '+':
+    case '=':
+      return zoomed(view, ZOOM_STEP);
+    case '-':
+      return zoomed(view, 1 / ZOOM_STEP);
+    case '0':
+      return whole;
+    default:
+      break;
+  }
+  // Arrow keys scroll the page while there is nothing to move.
+  if (view.zoom === 1) return null;
+  switch (key) {
+    case 'ArrowLeft':
+      return panned(view, PAN_STEP, 0);
+    case 'ArrowRight':
+      return panned(view, -PAN_STEP, 0);
+    case 'ArrowUp':
+      return panned(view, 0, PAN_STEP);
+    case 'ArrowDown':
+      return panned(view, 0, -PAN_STEP);
+    default:
+      return null;
+  }
+}
+
+function nearest(
+  frame: HTMLElement | null,
+  view: View,
+  marks: readonly ShownMark[],
+  { clientX, clientY }: { clientX: number; clientY: number },
+): ShownMark | null {
+  if (!frame) return null;
+  const box = frame.getBoundingClientRect();
+  const away = ({ spot }: { spot: Spot }): number =>
+    Math.hypot(
+      box.left + (view.x + spot.x * view.zoom) * box.width - clientX,
+      box.top + (view.y + spot.y * view.zoom) * box.height - clientY,
+    );
+  return marks.reduce<ShownMark | null>(
+    (best, mark) => (best && away(best) <= away(mark) ? best : mark),
+    null,
+  );
+}
+
+function SheetImage({ picture }: { readonly picture: Picture }) {
+  const [attempt, setAttempt] = useState(0);
+  const [failed, setFailed] = useState(false);
+  const box = boxOf(picture);
+  // Another picture in the same place begins anew.
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the address is what is new
+  useLayoutEffect(() => setFailed(false), [picture.url]);
+  if (failed)
+    return (
+      <div className={styles.failed}>
+        <p>The picture did not load.</p>
+        <button
+          type="button"
+          className="button"
+          onClick={() => {
+            setFailed(false);
+            setAttempt(attempt + 1);
+          }}
+        >
+          Try again
+        </button>
+      </div>
+    );
+  return (
+    <img
+      key={attempt}
+      className={styles.image}
+      style={{
+        ...at({ x: box.left, y: box.top }),
+        width: `${box.width * 100}%`,
+        height: `${box.height * 100}%`,
+      }}
+      src={picture.url}
+      width={picture.widthPx}
+      height={picture.heightPx}
+      alt=""
+      fetchPriority="high"
+      decoding="async"
+      draggable={false}
+      onError={() => setFailed(true)}
+    />
+  );
+}
+
+function Tool({
+  label,
+  off = false,
+  onPress,
+  children,
+}: {
+  readonly label: string;
+  readonly off?: boolean;
+  readonly onPress: () => void;
+  readonly children: ReactNode;
+}) {
+  return (
+    <button
+      type="button"
+      className={styles.tool}
+      aria-label={label}
+      title={label}
+      // Kept in the tab order: one that vanishes at its own press loses the focus.
+      aria-disabled={off}
+      onClick={() => !off && onPress()}
+    >
+      <svg viewBox="0 0 20 20" aria-hidden="true" focusable="false">
+        {children}
+      </svg>
+    </button>
+  );
+}
