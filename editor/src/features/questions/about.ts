@@ -24,7 +24,3 @@ export function inOrder(questions: readonly Question[]): Question[] {
     (a, b) => rank(a) - rank(b) || last(b).localeCompare(last(a)) || a.id.localeCompare(b.id),
   );
 }
-
-/** The homeowner had the last word: it is for the company to answer. */
-export const awaitsAnswer = ({ resolvedAt, messages }: Question): boolean =>
-  resolvedAt === null && messages.at(-1)?.side === 'homeowner';
