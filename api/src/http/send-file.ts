@@ -7,6 +7,8 @@ export interface StoredFile {
   readonly etag: string;
   /** What a browser calls it when it is saved: plain letters, digits and dashes. */
   readonly name?: string;
+  /** To be saved rather than shown. */
+  readonly save?: true;
   open(): Promise<{ readonly stream: Readable; readonly length: number; readonly type: string }>;
 }
 
@@ -21,7 +23,7 @@ export async function sendFile(file: StoredFile, request: Request, response: Res
     ETag: file.etag,
     'X-Content-Type-Options': 'nosniff',
     'Content-Security-Policy': "default-src 'none'; sandbox",
-    'Content-Disposition': file.name === undefined ? 'inline' : `inline; filename="${file.name}"`,
+    'Content-Disposition': disposition(file),
   });
   if (request.fresh) {
     response.status(304).end();
@@ -35,4 +37,9 @@ export async function sendFile(file: StoredFile, request: Request, response: Res
     // A reader who went away is no failure of ours.
     if (!request.destroyed && !response.destroyed) throw error;
   }
+}
+
+function disposition({ name, save }: StoredFile): string {
+  const how = save ? 'attachment' : 'inline';
+  return name === undefined ? how : `${how}; filename="${name}"`;
 }

@@ -21,6 +21,7 @@ export const paths = {
   catalogue: '/catalogue',
   newCatalogueItem: '/catalogue/new/:category',
   catalogueItem: '/catalogue/items/:itemId',
+  catalogueImport: '/catalogue/import',
   company: '/company',
   people: '/company/people',
   proposalTexts: '/company/proposals',

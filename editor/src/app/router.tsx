@@ -59,6 +59,7 @@ export const createRouter = (client: QueryClient) =>
                       lazy: screen(() => import('../routes/new-catalogue-item')),
                     },
                     { path: paths.catalogueItem, lazy: screen(() => import('../routes/catalogue-item')) },
+                    { path: paths.catalogueImport, lazy: screen(() => import('../routes/catalogue-import')) },
                     { path: paths.company, lazy: screen(() => import('../routes/company')) },
                     { path: paths.priceBook, lazy: screen(() => import('../routes/price-book')) },
                     { path: paths.people, lazy: screen(() => import('../routes/people')) },

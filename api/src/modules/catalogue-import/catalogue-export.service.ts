@@ -57,6 +57,7 @@ export class CatalogueExportService {
     return {
       etag: `"${Date.now()}"`,
       name: `catalogue.${format}`,
+      save: true,
       open: async () => ({ stream: Readable.from([bytes]), length: bytes.length, type }),
     };
   }

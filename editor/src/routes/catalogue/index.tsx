@@ -1,8 +1,9 @@
 import { useQuery } from '@tanstack/react-query';
-import { Link, useSearchParams } from 'react-router-dom';
+import { Link, useNavigate, useSearchParams } from 'react-router-dom';
 import { paths, to } from '../../app/paths';
 import { Button, LinkButton } from '../../components/button';
 import { PlusIcon } from '../../components/icons';
+import { MenuItem, MoreMenu } from '../../components/more-menu';
 import { Page } from '../../components/page';
 import { SearchBox } from '../../components/search-box';
 import { Select } from '../../components/select';
@@ -20,6 +21,7 @@ export default function CatalogueScreen() {
   const archived = params.get('archived') === 'true';
   const entries = useQuery(catalogueQuery({ category, search, archived }));
   const { editCatalogue } = useAbilities();
+  const navigate = useNavigate();
 
   const show = (next: { search?: string; archived?: boolean }) => {
     const asked = { search, archived, ...next };
@@ -35,6 +37,17 @@ export default function CatalogueScreen() {
       New {category}
     </LinkButton>
   );
+  const tables = editCatalogue && (
+    <MoreMenu label="More for the catalogue">
+      <MenuItem onSelect={() => navigate(paths.catalogueImport)}>Take in a table (CSV, XLSX)</MenuItem>
+      <MenuItem onSelect={() => window.location.assign('/api/catalogue/export?format=csv')}>
+        Save as CSV
+      </MenuItem>
+      <MenuItem onSelect={() => window.location.assign('/api/catalogue/export?format=xlsx')}>
+        Save as XLSX
+      </MenuItem>
+    </MoreMenu>
+  );
   const nothing = entries.data?.length === 0;
   const filtered = search !== '' || archived;
 
@@ -42,7 +55,12 @@ export default function CatalogueScreen() {
     <Page
       title="Catalogue"
       lede="What you install. A plan keeps its own copy of each item that it uses."
-      actions={add}
+      actions={
+        <>
+          {tables}
+          {add}
+        </>
+      }
     >
       <nav className={styles.tabs} aria-label="Categories">
         {categories.map((one) => (
