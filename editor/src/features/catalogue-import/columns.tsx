@@ -37,7 +37,7 @@ export function Columns({ table, mapping, onMapping, category, onCategory, categ
         </thead>
         <tbody>
           {table.columns.map((head, column) => (
-            // biome-ignore lint/suspicious/noArrayIndexKey: a column is known by its place; heads may repeat.
+            // A column is known by its place: heads may repeat.
             <tr key={column}>
               <th scope="row" className={styles.head}>
                 {head || `Column ${column + 1}`}
