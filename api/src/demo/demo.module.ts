@@ -7,11 +7,13 @@ import { SummarisePlan } from '../jobs/summarise-plan.js';
 import { Decoder } from '../media/decoder.js';
 import { CatalogueStoreModule } from '../modules/catalogue/catalogue-store.module.js';
 import { PlanStoreModule } from '../modules/plans/plan-store.module.js';
+import { PricingStoreModule } from '../modules/pricing/pricing-store.module.js';
 import { SheetStoreModule } from '../modules/sheets/sheet-store.module.js';
 import { QueueModule } from '../ports/queue/queue.module.js';
 import { StorageModule } from '../ports/storage/storage.module.js';
 import { DemoRepository } from './demo.repository.js';
 import { DemoService } from './demo.service.js';
+import { DemoPrices } from './prices/demo-prices.js';
 
 /** What loading the demo company needs of the product. */
 @Module({})
@@ -27,8 +29,9 @@ export class DemoModule {
         CatalogueStoreModule,
         SheetStoreModule,
         PlanStoreModule,
+        PricingStoreModule,
       ],
-      providers: [DemoRepository, DemoService, Decoder, ProcessSheet, SummarisePlan],
+      providers: [DemoRepository, DemoService, DemoPrices, Decoder, ProcessSheet, SummarisePlan],
     };
   }
 }

@@ -13,6 +13,7 @@ import { SheetsRepository } from '../modules/sheets/sheets.repository.js';
 import { ObjectStorage } from '../ports/storage/storage.js';
 import { DemoRepository } from './demo.repository.js';
 import { type Catalogue, PlanBuilder } from './plan-builder.js';
+import { DemoPrices } from './prices/demo-prices.js';
 import { DEMO_PASSWORD, type DemoSheet, demoCompany, demoDesigner, demoSheets } from './scenario.js';
 
 /** The files that came with the demo, read from the sources by the built program too. */
@@ -33,6 +34,7 @@ export class DemoService {
     @Inject(ProcessSheet) private readonly process: ProcessSheet,
     @Inject(PlanWriter) private readonly writer: PlanWriter,
     @Inject(SummarisePlan) private readonly summaries: SummarisePlan,
+    @Inject(DemoPrices) private readonly prices: DemoPrices,
   ) {}
 
   async load(now: Date): Promise<void> {
@@ -43,6 +45,7 @@ export class DemoService {
       await this.catalogue.seed(demoCompany.id);
       await this.demo.insertJobs(now);
     });
+    await this.prices.loadCompany();
     for (const sheet of demoSheets) {
       await this.loadSheet(sheet);
       await this.drawPlan(sheet);
@@ -73,17 +76,18 @@ export class DemoService {
       );
   }
 
-  private async drawPlan({ id: sheetId, jobId, draw }: DemoSheet): Promise<void> {
+  private async drawPlan({ id: sheetId, jobId, draw, pricing }: DemoSheet): Promise<void> {
     const key = { companyId: demoCompany.id, jobId };
     const catalogue = await this.catalogueByName();
     const author = { userId: demoDesigner.id, session: '' };
-    await this.writer.write(key, author, async ({ plan }) => {
+    const drawn = await this.writer.write(key, author, async ({ plan }) => {
       // Anything beyond the sheet and the settings: drawn already, or changed by people since.
       if (plan.get(sheetId)?.kind !== 'sheet' || [...recordsOf(plan, 'item')].length > 0) return [];
       const builder = new PlanBuilder(plan, sheetId, catalogue, 'demo');
       draw(builder);
       return builder.changes.map((change) => ({ change }));
     });
+    await this.prices.loadJob(key, drawn.plan, pricing);
     await this.summaries.handle(key);
   }
 

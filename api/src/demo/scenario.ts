@@ -1,6 +1,7 @@
 import type { PlanBuilder } from './plan-builder.js';
 import { drawHarrowBank } from './plans/harrow-bank.js';
 import { drawSandpiperRow } from './plans/sandpiper-row.js';
+import { type DemoPricing, harrowBankPricing, sandpiperRowPricing } from './prices/job-pricing.js';
 
 /**
  * The demo company: an invented firm in an invented town, whose people and clients are invented too. Ids are
@@ -17,6 +18,8 @@ export const demoPeople = [
   { id: id(12), name: 'Corin Aldous', email: 'designer@fernhollow.example', role: 'designer' },
   { id: id(13), name: 'Bram Tolliver', email: 'crew@fernhollow.example', role: 'crew' },
 ] as const;
+/** Who set the prices. */
+export const demoOwner = demoPeople[0];
 /** Who drew the plans. */
 export const demoDesigner = demoPeople[1];
 
@@ -119,6 +122,7 @@ export interface DemoSheet {
   /** In ./files. */
   readonly file: string;
   readonly draw: (plan: PlanBuilder) => void;
+  readonly pricing: DemoPricing;
 }
 
 export const demoSheets: readonly DemoSheet[] = [
@@ -129,6 +133,7 @@ export const demoSheets: readonly DemoSheet[] = [
     view: 'photo',
     file: 'yard-photo.jpg',
     draw: drawHarrowBank,
+    pricing: harrowBankPricing,
   },
   {
     id: id(52),
@@ -137,5 +142,6 @@ export const demoSheets: readonly DemoSheet[] = [
     view: 'plan',
     file: 'plot-plan.pdf',
     draw: drawSandpiperRow,
+    pricing: sandpiperRowPricing,
   },
 ];

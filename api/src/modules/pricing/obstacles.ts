@@ -1,8 +1,8 @@
 import { type PlanDocument, recordsOf } from '@lampwright/geometry/plan';
 import type { JobPricing, Quote } from '@lampwright/geometry/price';
-import type { OpenFault } from './fault-keys.js';
+import { keyOf, type OpenFault } from './fault-keys.js';
 import type { JudgedPlan } from './plan-judge.js';
-import type { CombinationCheck, Obstacle } from './pricing.dto.js';
+import type { Obstacle } from './pricing.dto.js';
 
 /** How many of a kind are named; the rest are counted. */
 const NAMED = 3;
@@ -13,8 +13,6 @@ export interface Findings {
   readonly quote: Quote;
   readonly judged: JudgedPlan;
   readonly faults: readonly OpenFault[];
-  /** The offered one first. */
-  readonly checks: readonly CombinationCheck[];
 }
 
 /** What stands in the way of a proposal, and where it is mended. */
@@ -72,17 +70,18 @@ function unpricedLines({ quote }: Findings): Obstacle[] {
   ];
 }
 
-/** Only for reasons that are not told as open faults of the whole plan already. */
-function offerRefused({ pricing, judged, faults, checks }: Findings): Obstacle[] {
-  const [offered] = checks;
-  const refusal = judged.combinations[0]?.refusal;
-  if (!offered || offered.offerable || pricing.groups.length === 0) return [];
-  const told = new Set<string | null | undefined>([...faults.map(({ message }) => message), judged.failure]);
-  const reasons = offered.faults.filter((message) => !told.has(message));
-  if (reasons.length === 0 && refusal === null) return [];
+/** Only for faults that the whole plan does not have: its own are told, or accepted, already. */
+function offerRefused({ pricing, judged, faults }: Findings): Obstacle[] {
+  const [offered] = judged.combinations;
+  if (!offered || pricing.groups.length === 0) return [];
+  const told = new Set(faults.map(({ key }) => key));
+  const reasons = offered.faults.filter((fault) => !told.has(keyOf(fault))).map(({ message }) => message);
+  const { refusal } = offered;
+  if (refusal !== null && refusal !== judged.failure) reasons.unshift(refusal);
+  if (reasons.length === 0) return [];
   const names = pricing.groups.filter(({ id }) => offered.groups.includes(id)).map(({ name }) => name);
   const what = names.length === 0 ? 'The base alone' : `The base with ${inWords(names)}`;
-  return [{ message: `${what} can’t be offered. ${some(reasons)}`.trim(), mend: 'groups' }];
+  return [{ message: `${what} can’t be offered. ${some(reasons)}`, mend: 'groups' }];
 }
 
 function some(sentences: readonly string[]): string {

@@ -75,7 +75,7 @@ export class Quotes {
     const judged = await this.judge.judge(key, at, pricing.pricing, held.system);
     const faults = withAcceptances(judged.faults, acceptances);
     const checks = checksOf(judged, faults);
-    const findings = { plan: at.plan, pricing: pricing.pricing, quote, judged, faults, checks };
+    const findings = { plan: at.plan, pricing: pricing.pricing, quote, judged, faults };
     return { ...told(read, quote), faults, checks, obstacles: obstaclesOf(findings), volts: judged.volts };
   }
 

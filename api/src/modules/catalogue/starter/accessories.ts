@@ -14,11 +14,20 @@ export const accessories: readonly CatalogueItem[] = [
   },
   {
     category: 'connector',
+    name: 'Gel-filled connector, medium',
+    minConductors: 2,
+    maxConductors: 4,
+    largestAwg: 10,
+    smallestAwg: 18,
+    directBurial: true,
+  },
+  {
+    category: 'connector',
     name: 'Gel-filled connector, large',
     minConductors: 2,
     maxConductors: 6,
     largestAwg: 8,
-    smallestAwg: 16,
+    smallestAwg: 18,
     directBurial: true,
   },
   {

@@ -1,4 +1,4 @@
-import { catalogueItemSchema, fixtureKinds } from '@lampwright/geometry/catalogue';
+import { type Conductor, catalogueItemSchema, fixtureKinds } from '@lampwright/geometry/catalogue';
 import { partUses } from '@lampwright/geometry/price';
 import { describe, expect, it } from 'vitest';
 import { starterCatalogue } from './index.js';
@@ -35,6 +35,27 @@ describe('the starter catalogue', () => {
     const sizes = starterCatalogue.flatMap((item) => (item.category === 'transformer' ? [item.ratedVA] : []));
     for (const size of [150, 300, 600, 900]) expect(sizes).toContain(size);
     for (const category of ['hub', 'connector', 'control']) expect(of(category).length).toBeGreaterThan(1);
+  });
+
+  it('has a connector for every gauge beside every lead', () => {
+    const gauge = (conductor: Conductor) => ('awg' in conductor ? [conductor.awg] : []);
+    const leads = starterCatalogue.flatMap((i) => (i.category === 'fixture' ? gauge(i.lead.conductor) : []));
+    const cables = starterCatalogue.flatMap((i) => (i.category === 'cable' ? gauge(i.conductor) : []));
+    for (const awg of cables)
+      for (const conductors of [2, 3, 4, 5])
+        for (const lead of leads)
+          expect(
+            starterCatalogue.some(
+              (i) =>
+                i.category === 'connector' &&
+                i.directBurial &&
+                i.minConductors <= conductors &&
+                i.maxConductors >= conductors &&
+                i.largestAwg <= Math.min(awg, lead) &&
+                i.smallestAwg >= Math.max(awg, lead),
+            ),
+            `${conductors} of ${awg} AWG with a lead of ${lead} AWG`,
+          ).toBe(true);
   });
 
   it('has a part for everything that a bill asks for', () => {
