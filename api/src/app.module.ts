@@ -25,6 +25,7 @@ import { ShareModule } from './modules/share/share.module.js';
 import { SheetsModule } from './modules/sheets/sheets.module.js';
 import { TimelineModule } from './modules/timeline/timeline.module.js';
 import { MailModule } from './ports/mail/mail.module.js';
+import { CardServiceModule } from './ports/payments/card-service.module.js';
 import { QueueModule } from './ports/queue/queue.module.js';
 import { StorageModule } from './ports/storage/storage.module.js';
 
@@ -40,6 +41,7 @@ export class AppModule {
         QueueModule,
         StorageModule,
         MailModule,
+        CardServiceModule,
         AccessModule,
         OnceModule,
         AuthModule,

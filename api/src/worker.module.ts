@@ -4,6 +4,7 @@ import type { Env } from './config/env.js';
 import { DatabaseModule } from './database/database.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
 import { MailModule } from './ports/mail/mail.module.js';
+import { CardServiceModule } from './ports/payments/card-service.module.js';
 import { QueueModule } from './ports/queue/queue.module.js';
 import { StorageModule } from './ports/storage/storage.module.js';
 
@@ -13,7 +14,15 @@ export class WorkerModule {
   static with(env: Env): DynamicModule {
     return {
       module: WorkerModule,
-      imports: [ConfigModule.with(env), DatabaseModule, QueueModule, StorageModule, MailModule, JobsModule],
+      imports: [
+        ConfigModule.with(env),
+        DatabaseModule,
+        QueueModule,
+        StorageModule,
+        MailModule,
+        CardServiceModule,
+        JobsModule,
+      ],
     };
   }
 }

@@ -1,10 +1,13 @@
 import { Inject, Module, type OnApplicationBootstrap } from '@nestjs/common';
 import { Decoder } from '../media/decoder.js';
+import { PaymentsStoreModule } from '../modules/payments/payments-store.module.js';
 import { PlanStoreModule } from '../modules/plans/plan-store.module.js';
 import { SheetStoreModule } from '../modules/sheets/sheet-store.module.js';
 import { Queue } from '../ports/queue/queue.js';
+import { EndCardCheckout, SendCardRefund } from './card-service.js';
 import { JOB_HANDLERS, type JobHandler } from './job-handler.js';
 import { SendMail } from './mail.js';
+import { MakeMoneyDocument } from './make-money-document.js';
 import { ProcessSheet } from './sheets.js';
 import { DeleteStored } from './storage.js';
 import { SummarisePlan } from './summarise-plan.js';
@@ -15,10 +18,13 @@ const handlers: (new (...parts: never[]) => JobHandler)[] = [
   ProcessSheet,
   DeleteStored,
   SummarisePlan,
+  MakeMoneyDocument,
+  SendCardRefund,
+  EndCardCheckout,
 ];
 
 @Module({
-  imports: [SheetStoreModule, PlanStoreModule],
+  imports: [SheetStoreModule, PlanStoreModule, PaymentsStoreModule],
   providers: [
     Decoder,
     ...handlers,

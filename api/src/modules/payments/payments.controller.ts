@@ -1,4 +1,4 @@
-import { Body, Controller, Get, HttpCode, Inject, Param, Post, Req, Res } from '@nestjs/common';
+import { Body, Controller, Get, HttpCode, Inject, Param, Post, Query, Req, Res } from '@nestjs/common';
 import { ApiCreatedResponse, ApiOkResponse, ApiTags } from '@nestjs/swagger';
 import type { Request, Response } from 'express';
 import { z } from 'zod';
@@ -11,6 +11,8 @@ import {
   jobPaymentsSchema,
   type NewRefund,
   newRefundSchema,
+  type PaymentsExportQuery,
+  paymentsExportQuerySchema,
   type RecordPayment,
   recordPaymentSchema,
 } from './payments.dto.js';
@@ -81,5 +83,26 @@ export class PaymentsController {
     @Res() response: Response,
   ): Promise<void> {
     await sendFile(await this.payments.documentPdf(actor, jobId, documentId), request, response);
+  }
+
+  @Get('payments/export')
+  @Permit('payments.export')
+  @ApiOkResponse({
+    description: 'Invoices, receipts and refunds as CSV.',
+    content: { 'text/csv': { schema: { type: 'string' } } },
+  })
+  async export(
+    @CurrentActor() actor: Actor,
+    @Query({ schema: paymentsExportQuerySchema }) query: PaymentsExportQuery,
+    @Res() response: Response,
+  ): Promise<void> {
+    const csv = await this.payments.export(actor, query);
+    response
+      .set({
+        'Content-Type': 'text/csv; charset=utf-8; header=present',
+        'Content-Disposition': 'attachment; filename="payments.csv"',
+        'X-Content-Type-Options': 'nosniff',
+      })
+      .send(csv);
   }
 }
