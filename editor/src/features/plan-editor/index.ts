@@ -1,6 +1,7 @@
 export { EditorContext } from './page/context';
 export type { PlanEditor } from './page/editor';
 export { HistoryPanel } from './page/HistoryPanel';
+export { litOf } from './page/lit';
 export { PanelFrame } from './page/PanelFrame';
 export { type AskedQuestions, PlanPage } from './page/PlanPage';
 export { readCatalogue } from './page/server';

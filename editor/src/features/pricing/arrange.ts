@@ -129,7 +129,7 @@ export function arrange(groups: readonly QuoteGroup[], lines: readonly ShownLine
 }
 
 /** Groups of the quote, with the names that are being typed and those it does not know yet. */
-export function groupsWithEdits(quote: Quote, pricing: JobPricing): QuoteGroup[] {
+export function groupsWithEdits(quote: Pick<Quote, 'groups'>, pricing: JobPricing): QuoteGroup[] {
   const known = new Map(quote.groups.map((group) => [group.id, group]));
   const base = known.get(null);
   const own = pricing.groups.map((group) => ({

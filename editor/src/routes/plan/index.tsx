@@ -1,12 +1,13 @@
 import { useQuery } from '@tanstack/react-query';
 import { useMemo } from 'react';
-import { useParams, useSearchParams } from 'react-router-dom';
+import { useLocation, useParams, useSearchParams } from 'react-router-dom';
 import { paths, to } from '../../app/paths';
 import { Page } from '../../components/page';
 import { Problem, SkeletonRows } from '../../components/states';
 import {
   EditorContext,
   HistoryPanel,
+  litOf,
   PlanPage,
   readCatalogue,
   usePlanEditor,
@@ -47,8 +48,14 @@ function Plan({ job, companyId }: { readonly job: Job; readonly companyId: strin
   const { editPlan } = useAbilities();
   const units = useUnits();
   const [search] = useSearchParams();
+  const location = useLocation();
   const canEdit = editPlan && job.archivedAt === null;
-  const opening = usePlanEditor({ userId: user.id, companyId, jobId: job.id }, canEdit, search.get('sheet'));
+  const opening = usePlanEditor(
+    { userId: user.id, companyId, jobId: job.id },
+    canEdit,
+    search.get('sheet'),
+    litOf(location.search, location.hash),
+  );
   const catalogue = useQuery({ queryKey: ['plan-catalogue', companyId], queryFn: readCatalogue });
   const images = useMemo(() => new Map(job.sheets.map((sheet) => [sheet.id, sheet.imageUrl])), [job.sheets]);
   const entries = useMemo(() => catalogue.data ?? [], [catalogue.data]);

@@ -18,6 +18,16 @@ export interface CameraState {
 /** Zoom to a choice never goes closer than this: one fixture needs its surroundings. */
 const CHOICE_ZOOM = 2;
 
+/** A part of the sheet with a little of what is around it. */
+function closeUp(box: Box, size: Size): Camera {
+  const pad = Math.max(box.right - box.left, box.bottom - box.top) * 0.1;
+  return fitBox(
+    { left: box.left - pad, top: box.top - pad, right: box.right + pad, bottom: box.bottom + pad },
+    size,
+    CHOICE_ZOOM,
+  );
+}
+
 export class CameraStore {
   readonly state: StoreApi<CameraState> = createStore<CameraState>(() => ({
     camera: { x: 0, y: 0, zoom: 1 },
@@ -26,6 +36,8 @@ export class CameraStore {
   /** True until the person moves the view: till then the sheet stays fitted while the window finds its size. */
   private untouched = true;
   private sheet: Size | null = null;
+  /** What the view begins with instead of the whole sheet. */
+  private aim: Box | null = null;
 
   get camera(): Camera {
     return this.state.getState().camera;
@@ -35,14 +47,27 @@ export class CameraStore {
   show(sheet: Size): void {
     this.sheet = sheet;
     this.untouched = true;
-    this.fit();
+    this.begin();
+  }
+
+  /** Has the view begin with a part of the sheet, until the person moves it; null: with the whole. */
+  aimAt(box: Box | null): void {
+    this.aim = box;
+    this.untouched = true;
+    this.begin();
+  }
+
+  private begin(): void {
+    const { size } = this.state.getState();
+    if (this.aim === null) this.fit();
+    else if (size.width > 0) this.state.setState({ camera: closeUp(this.aim, size) });
   }
 
   resize(size: Size): void {
     const before = this.state.getState().size;
     if (before.width === size.width && before.height === size.height) return;
     this.state.setState({ size });
-    if (this.untouched || before.width === 0) this.fit();
+    if (this.untouched || before.width === 0) this.begin();
     // What was in the middle stays in the middle.
     else this.set(panBy(this.camera, (size.width - before.width) / 2, (size.height - before.height) / 2));
   }
@@ -57,14 +82,7 @@ export class CameraStore {
   fitTo(box: Box): void {
     const { size } = this.state.getState();
     if (size.width === 0) return;
-    const pad = Math.max(box.right - box.left, box.bottom - box.top) * 0.1;
-    this.set(
-      fitBox(
-        { left: box.left - pad, top: box.top - pad, right: box.right + pad, bottom: box.bottom + pad },
-        size,
-        CHOICE_ZOOM,
-      ),
-    );
+    this.set(closeUp(box, size));
   }
 
   pan(dx: number, dy: number): void {

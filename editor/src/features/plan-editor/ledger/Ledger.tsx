@@ -6,7 +6,7 @@ import { useDoc, useEditor, useEstimate, useSession, useUnitSystem } from '../pa
 import { plainLength } from '../page/lengths';
 import styles from './ledger.module.css';
 import { type OutlineRow, outlineOf } from './outline';
-import { visibleRows } from './visible';
+import { unfoldedFor, visibleRows } from './visible';
 
 /** The plan as an outline with live figures; all that the drawing can do starts from here by keyboard too. */
 export function Ledger() {
@@ -19,7 +19,6 @@ export function Ledger() {
   const stale = useEstimate((s) => s.stale);
   const selection = useSession((s) => s.selection);
   const hoveredId = useSession((s) => s.hoveredId);
-  const [toggled, setToggled] = useState<ReadonlySet<string>>(new Set());
   const [search, setSearch] = useState('');
   const [activeKey, setActiveKey] = useState<string | null>(null);
   const tree = useRef<HTMLDivElement>(null);
@@ -32,6 +31,8 @@ export function Ledger() {
       }),
     [doc, answers, unwired, lengths, system],
   );
+  // What the page began with is unfolded; later choices find their lines by the search or by unfolding.
+  const [toggled, setToggled] = useState<ReadonlySet<string>>(() => unfoldedFor(rows, selection));
   const shown = useMemo(() => visibleRows(rows, toggled, search), [rows, toggled, search]);
   const active = shown.find((s) => s.row.key === activeKey)?.row.key ?? shown[0]?.row.key ?? null;
 
@@ -43,6 +44,16 @@ export function Ledger() {
     const line = tree.current?.querySelector(`[data-key="${CSS.escape(chosen)}"]`);
     line?.scrollIntoView({ block: 'nearest' });
   }, [chosen]);
+
+  // biome-ignore lint/correctness/useExhaustiveDependencies: only what the page began with is brought into sight.
+  useEffect(() => {
+    const first = shown.find(({ row }) => row.recordId !== null && selection.has(row.recordId));
+    if (first === undefined) return;
+    setActiveKey(first.row.key);
+    tree.current
+      ?.querySelector(`[data-key="${CSS.escape(first.row.key)}"]`)
+      ?.scrollIntoView({ block: 'nearest' });
+  }, []);
 
   const focus = (key: string | undefined) => {
     if (key === undefined) return;

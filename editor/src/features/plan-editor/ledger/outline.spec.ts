@@ -3,7 +3,7 @@ import { apply, setFields } from '@lampwright/geometry/plan';
 import { describe, expect, it } from 'vitest';
 import { type Driver, yardWith } from '../tools/driver.testkit';
 import { nodesInOrder, outlineOf } from './outline';
-import { FOLD_FROM, visibleRows } from './visible';
+import { FOLD_FROM, unfoldedFor, visibleRows } from './visible';
 
 function outline(d: Driver) {
   const lengths = cableLengths(d.doc);
@@ -97,6 +97,10 @@ describe('folding', () => {
     expect(visibleRows(rows, new Set(), '').map((s) => s.row.kind)).not.toContain('cable');
     const group = rows.find((r) => r.kind === 'group')!;
     expect(visibleRows(rows, new Set([group.key]), '').map((s) => s.row.kind)).toContain('cable');
+    const cable = rows.find((r) => r.kind === 'cable')!;
+    const opened = unfoldedFor(rows, new Set([cable.key]));
+    expect(visibleRows(rows, opened, '').map((s) => s.row.key)).toContain(cable.key);
+    expect(unfoldedFor(rows, new Set())).toEqual(new Set());
   });
 
   it('folds to runs when the plan is long', () => {

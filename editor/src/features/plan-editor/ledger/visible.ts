@@ -9,6 +9,21 @@ export function foldedAtFirst(row: OutlineRow, fixtures: number): boolean {
   return row.kind === 'run' && fixtures > FOLD_FROM;
 }
 
+/** What has to be unfolded for these records to show. */
+export function unfoldedFor(rows: readonly OutlineRow[], recordIds: ReadonlySet<string>): Set<string> {
+  const byKey = new Map(rows.map((row) => [row.key, row]));
+  const fixtures = rows.filter((row) => row.kind === 'fixture').length;
+  const opened = new Set<string>();
+  for (const row of rows) {
+    if (row.recordId === null || !recordIds.has(row.recordId)) continue;
+    for (let at = row.parent; at !== null; at = byKey.get(at)?.parent ?? null) {
+      const parent = byKey.get(at);
+      if (parent !== undefined && foldedAtFirst(parent, fixtures)) opened.add(at);
+    }
+  }
+  return opened;
+}
+
 /**
  * The lines that show: those with no folded ancestor, or, while somebody searches, those that match and
  * their ancestors. `toggled` holds lines that are not as they began.

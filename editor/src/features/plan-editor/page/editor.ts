@@ -100,8 +100,47 @@ export class PlanEditor {
     if (middle !== undefined) this.camera.reveal(middle);
   }
 
+  /** Begins with these chosen and in view, on the sheet that has most of them. What is gone is told. */
+  light(ids: readonly string[]): void {
+    if (ids.length === 0) return;
+    const there = ids.filter((id) => this.doc.has(id));
+    const sheetId = this.sheetOfMost(there);
+    if (sheetId !== null) this.openSheet(sheetId);
+    this.select(there);
+    this.camera.aimAt(
+      boxOfRecords(
+        this.context,
+        there.filter((id) => this.isOn(id, sheetId)),
+      ),
+    );
+    const gone = ids.length - there.length;
+    if (gone > 0)
+      this.session.setState({
+        message:
+          there.length === 0
+            ? 'That is no longer on the plan.'
+            : `${gone} of these are no longer on the plan.`,
+      });
+  }
+
+  private isOn(id: string, sheetId: string | null): boolean {
+    const record = this.doc.get(id);
+    return record !== undefined && 'sheetId' in record && record.sheetId === sheetId;
+  }
+
+  private sheetOfMost(ids: readonly string[]): string | null {
+    const counts = new Map<string, number>();
+    for (const id of ids) {
+      const record = this.doc.get(id);
+      if (record !== undefined && 'sheetId' in record)
+        counts.set(record.sheetId, (counts.get(record.sheetId) ?? 0) + 1);
+    }
+    return [...counts].sort((a, b) => b[1] - a[1])[0]?.[0] ?? null;
+  }
+
   openSheet(sheetId: string): void {
     if (sheetId === this.session.getState().sheetId) return;
+    this.camera.aimAt(null);
     this.tools.use('select');
     this.session.setState({ sheetId, hoveredId: null, request: null, message: null });
   }

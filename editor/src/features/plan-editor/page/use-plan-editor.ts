@@ -23,9 +23,10 @@ export function usePlanEditor(
   { userId, companyId, jobId }: PlanOwner,
   canEdit: boolean,
   sheetId: string | null,
+  lit: readonly string[] = [],
 ): Opening {
   const [opening, setOpening] = useState<Opening>({ is: 'loading' });
-  // biome-ignore lint/correctness/useExhaustiveDependencies: the sheet named in the address is only where to begin.
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the sheet and the records named in the address are only where to begin.
   useEffect(() => {
     setOpening({ is: 'loading' });
     const store = createPlanStore({
@@ -49,6 +50,7 @@ export function usePlanEditor(
           ask: askEstimate,
           sentence: sentenceOf,
         });
+        editor.light(lit);
         hide = exposeTestHandle(editor);
         setOpening({ is: 'open', editor });
       }
