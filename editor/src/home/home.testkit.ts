@@ -279,6 +279,7 @@ export const approvedPage = (over: Partial<SharedPage> = {}): SharedPage =>
         due: 'finish',
         amountMinor: 239_190,
         outstandingMinor: 239_190,
+        requested: false,
         payable: false,
       }),
     ],

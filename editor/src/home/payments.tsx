@@ -12,10 +12,12 @@ interface Props {
   /** The page has stopped asking by itself. */
   readonly tired: boolean;
   readonly onCheck: () => void;
+  /** Something else is what moves things on now. */
+  readonly aside?: boolean;
 }
 
 /** What is to be paid, and what is known about it. That a card was charged is known from the server alone. */
-export function Payments({ linkId, page, returned, tired, onCheck }: Props) {
+export function Payments({ linkId, page, returned, tired, onCheck, aside = false }: Props) {
   const { dues, document } = page;
   if (dues.length === 0) return null;
   const next = dues.find(({ payable, outstandingMinor }) => payable && outstandingMinor > 0);
@@ -29,7 +31,7 @@ export function Payments({ linkId, page, returned, tired, onCheck }: Props) {
               linkId={linkId}
               due={due}
               document={document}
-              first={due.id === next?.id}
+              main={!aside && due.id === next?.id}
               returned={returned !== null && (returned.dueId === null || returned.dueId === due.id)}
               tired={tired}
               onCheck={onCheck}
@@ -45,13 +47,14 @@ interface RowProps {
   readonly linkId: string;
   readonly due: Due;
   readonly document: SharedPage['document'];
-  readonly first: boolean;
+  /** Its button is the one of the screen. */
+  readonly main: boolean;
   readonly returned: boolean;
   readonly tired: boolean;
   readonly onCheck: () => void;
 }
 
-function DueRow({ linkId, due, document, first, returned, tired, onCheck }: RowProps) {
+function DueRow({ linkId, due, document, main, returned, tired, onCheck }: RowProps) {
   const money = moneyOf(document);
   const pay = useAction(async () => {
     const { url } = await checkout(linkId, due.id);
@@ -62,7 +65,8 @@ function DueRow({ linkId, due, document, first, returned, tired, onCheck }: RowP
     <>
       <div className={styles.sum}>
         <span>
-          {due.name} <span className="quiet">{dueInWords(due.due)}</span>
+          {due.name}
+          {!due.requested && <span className="quiet"> {dueInWords(due.due)}</span>}
         </span>
         <strong>{money(due.amountMinor)}</strong>
       </div>
@@ -75,10 +79,10 @@ function DueRow({ linkId, due, document, first, returned, tired, onCheck }: RowP
         {sentenceOf(word)}
       </p>
       <div className={styles.actions}>
-        {due.payable && due.outstandingMinor > 0 && (
+        {due.payable && due.outstandingMinor > 0 && word !== 'later' && (
           <button
             type="button"
-            className={first && word !== 'waiting' ? 'lamp-button' : 'button'}
+            className={main && word !== 'waiting' ? 'lamp-button' : 'button'}
             disabled={pay.busy}
             onClick={() => pay.run()}
           >
@@ -102,10 +106,10 @@ function DueRow({ linkId, due, document, first, returned, tired, onCheck }: RowP
 
 type Word = 'paid' | 'waiting' | 'begun' | 'failed' | 'open' | 'later';
 
-function wordOf({ outstandingMinor, pending, payable }: Due, returned: boolean): Word {
+function wordOf({ outstandingMinor, pending, payable, requested }: Due, returned: boolean): Word {
   if (outstandingMinor <= 0) return 'paid';
   if (pending) return returned ? 'waiting' : 'begun';
-  if (!payable) return 'later';
+  if (!requested || !payable) return 'later';
   return returned ? 'failed' : 'open';
 }
 

@@ -116,11 +116,7 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
       {/* Kept while another screen lies in front of it: zoom, unfolded lists and all. */}
       <main className="page" hidden={reviewing || declining}>
         <header className="page-head">
-          <p className="quiet">
-            {document.company.name} · proposal {document.number}
-            {document.revision > 1 && ` · version ${document.revision}`} · valid to{' '}
-            {dayOf(document.validUntil, document.locale)}
-          </p>
+          <p className="quiet">{headOf(document)}</p>
           <h1>{document.job.property || document.job.name} after dark</h1>
         </header>
         <div className="top">
@@ -136,7 +132,7 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
             <Payments linkId={linkId} page={page} returned={returned} tired={tired} onCheck={again} />
           </StateNotice>
           {state === 'open' && page.dues.length > 0 && (
-            <Payments linkId={linkId} page={page} returned={returned} tired={tired} onCheck={again} />
+            <Payments aside linkId={linkId} page={page} returned={returned} tired={tired} onCheck={again} />
           )}
           <Changes page={page} />
         </div>
@@ -192,6 +188,15 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
     </>
   );
 }
+
+/** The dots stay at the ends of lines. */
+const headOf = ({ company, number, revision, validUntil, locale }: SharedPage['document']): string =>
+  [
+    company.name,
+    `proposal ${number}`,
+    ...(revision > 1 ? [`version ${revision}`] : []),
+    `valid to ${dayOf(validUntil, locale)}`,
+  ].join('\u00a0· ');
 
 /** What was approved, or else what is being chosen: kept in this tab, version by version. */
 function useChoice(linkId: string, page: SharedPage): [Choice, (choice: Choice) => void] {

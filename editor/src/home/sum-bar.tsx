@@ -30,7 +30,7 @@ export function SumBar({ document, sums, onReview }: Props) {
         <strong>{money(sums.totalMinor)}</strong>
         {stage && sums.stages.length > 1 && stage.due === 'approval' && (
           <small>
-            {stage.name} now {money(stage.amountMinor)}
+            {stage.name} {money(stage.amountMinor)}
           </small>
         )}
       </p>

@@ -88,7 +88,22 @@ export function GardenPicture(props: Props) {
           placing={props.placing}
           onPlace={(place: Place) => props.onAsk({ kind: 'place', sheetId: tab.id, ...place })}
           onPlacingEnd={() => props.onPlacing(false)}
-        />
+        >
+          {props.canAsk && (
+            <button
+              type="button"
+              className="button"
+              aria-pressed={props.placing}
+              onClick={() => props.onPlacing(!props.placing)}
+            >
+              {props.placing ? 'Stop asking' : 'Ask about a place'}
+            </button>
+          )}
+        </Stage>
+        <p role="status" className={styles.hint}>
+          {props.placing &&
+            'Tap the place in the picture, or move the cross with the arrow keys and press Enter.'}
+        </p>
         <p className={styles.caption}>
           {here.length > 0
             ? 'Artist’s impression: the marks show where lights will stand. Tap one to see what it is and what it lights.'
@@ -96,21 +111,6 @@ export function GardenPicture(props: Props) {
         </p>
         <Legend marks={here} />
       </div>
-      {props.canAsk && (
-        <div className={styles.actions}>
-          <button
-            type="button"
-            className="button"
-            aria-pressed={props.placing}
-            onClick={() => props.onPlacing(!props.placing)}
-          >
-            {props.placing ? 'Stop asking about a place' : 'Ask about a place'}
-          </button>
-          <span className="quiet" role="status">
-            {props.placing && 'Tap the place in the picture.'}
-          </span>
-        </div>
-      )}
       {chosen && (
         <LightCard
           mark={chosen}

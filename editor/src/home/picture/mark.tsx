@@ -40,7 +40,7 @@ export const at = ({ x, y }: Spot): CSSProperties => ({ left: `${x * 100}%`, top
 interface Props {
   readonly mark: ShownMark;
   readonly chosen: boolean;
-  readonly onPress: (event: { clientX: number; clientY: number; detail: number }) => void;
+  readonly onPress: () => void;
   readonly onFocus: () => void;
 }
 

@@ -1,14 +1,23 @@
-import { type KeyboardEvent, type ReactNode, useLayoutEffect, useRef, useState } from 'react';
+import {
+  type KeyboardEvent,
+  type MouseEvent,
+  type ReactNode,
+  useLayoutEffect,
+  useRef,
+  useState,
+} from 'react';
 import type { Picture } from '../share';
 import { Crosshair } from './crosshair';
 import { at, LightMark, Pin, QuestionPin, type ShownMark } from './mark';
 import { boxOf, pixelOf, spotOf } from './sheet-box';
 import styles from './stage.module.css';
 import { useGestures } from './use-gestures';
-import { panned, type Spot, showing, under, type View, whole, zoomed } from './view';
+import { panned, showing, under, type View, whole, zoomed } from './view';
 
 const ZOOM_STEP = 1.6;
 const PAN_STEP = 0.15;
+/** Half of the 44 px that a finger needs. */
+const FINGER_PX = 22;
 
 export interface Place {
   readonly x: number;
@@ -34,6 +43,8 @@ interface Props {
   readonly placing: boolean;
   readonly onPlace: (place: Place) => void;
   readonly onPlacingEnd: () => void;
+  /** Beside the buttons that zoom. */
+  readonly children?: ReactNode;
 }
 
 /** The picture with its marks, in a frame in which it can be moved and zoomed. */
@@ -43,10 +54,11 @@ export function Stage(props: Props) {
   const [view, setView] = useState<View>(whole);
   useGestures(frame, view, setView);
 
-  const press = (event: { clientX: number; clientY: number; detail: number }, own: ShownMark): void => {
-    // A press by keyboard has no place.
-    const meant = event.detail === 0 ? own : (nearest(frame.current, view, marks, event) ?? own);
-    props.onChoose(meant.light.recordId);
+  /** A finger that came down beside the marks means the nearest, if it is near. */
+  const pressBeside = (event: MouseEvent): void => {
+    if (event.target instanceof Element && event.target.closest('button')) return;
+    const meant = nearest(frame.current, view, marks, event);
+    if (meant) props.onChoose(meant.light.recordId);
   };
 
   const keys = (event: KeyboardEvent): void => {
@@ -57,7 +69,7 @@ export function Stage(props: Props) {
   };
 
   return (
-    <div className={styles.stage}>
+    <>
       {/* biome-ignore lint/a11y/useSemanticElements: a fieldset would be taken for a form */}
       <div
         ref={frame}
@@ -69,6 +81,7 @@ export function Stage(props: Props) {
         data-zoomed={view.zoom > 1 || undefined}
         data-placing={placing || undefined}
         onKeyDown={keys}
+        onClick={pressBeside}
       >
         <div
           className={styles.world}
@@ -83,7 +96,7 @@ export function Stage(props: Props) {
               key={mark.light.recordId}
               mark={mark}
               chosen={mark.light.recordId === props.chosenId}
-              onPress={(event) => press(event, mark)}
+              onPress={() => props.onChoose(mark.light.recordId)}
               onFocus={() => setView((seen) => showing(seen, mark.spot))}
             />
           ))}
@@ -104,18 +117,21 @@ export function Stage(props: Props) {
           />
         )}
       </div>
-      <div className={styles.tools}>
-        <Tool label="Zoom in" onPress={() => setView(zoomed(view, ZOOM_STEP))}>
-          <path d="M10 4.500v11M4.500 10h11" />
-        </Tool>
-        <Tool label="Zoom out" off={view.zoom === 1} onPress={() => setView(zoomed(view, 1 / ZOOM_STEP))}>
-          <path d="M4.500 10h11" />
-        </Tool>
-        <Tool label="Show the whole picture" off={view.zoom === 1} onPress={() => setView(whole)}>
-          <path d="M4 8V4h4M12 4h4v4M16 12v4h-4M8 16H4v-4" />
-        </Tool>
+      <div className={styles.below}>
+        {props.children}
+        <div className={styles.tools}>
+          <Tool label="Zoom in" onPress={() => setView(zoomed(view, ZOOM_STEP))}>
+            <path d="M10 4.500v11M4.500 10h11" />
+          </Tool>
+          <Tool label="Zoom out" off={view.zoom === 1} onPress={() => setView(zoomed(view, 1 / ZOOM_STEP))}>
+            <path d="M4.500 10h11" />
+          </Tool>
+          <Tool label="Show the whole picture" off={view.zoom === 1} onPress={() => setView(whole)}>
+            <path d="M4 8V4h4M12 4h4v4M16 12v4h-4M8 16H4v-4" />
+          </Tool>
+        </div>
       </div>
-    </div>
+    </>
   );
 }
 
@@ -155,15 +171,17 @@ function nearest(
 ): ShownMark | null {
   if (!frame) return null;
   const box = frame.getBoundingClientRect();
-  const away = ({ spot }: { spot: Spot }): number =>
-    Math.hypot(
-      box.left + (view.x + spot.x * view.zoom) * box.width - clientX,
-      box.top + (view.y + spot.y * view.zoom) * box.height - clientY,
-    );
-  return marks.reduce<ShownMark | null>(
-    (best, mark) => (best && away(best) <= away(mark) ? best : mark),
-    null,
-  );
+  let found: ShownMark | null = null;
+  let least = FINGER_PX;
+  for (const mark of marks) {
+    const x = box.left + (view.x + mark.spot.x * view.zoom) * box.width;
+    const y = box.top + (view.y + mark.spot.y * view.zoom) * box.height;
+    const away = Math.hypot(x - clientX, y - clientY);
+    if (away > least) continue;
+    found = mark;
+    least = away;
+  }
+  return found;
 }
 
 function SheetImage({ picture }: { readonly picture: Picture }) {
