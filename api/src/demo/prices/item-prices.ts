@@ -32,10 +32,10 @@ const drum = (name: string, meters: number, costMinor: number, orderNumber: stri
   name,
   price(costMinor, orderNumber, { per: meters, unit: 'meter', increment: 1 }),
 ];
-/** In bags or boxes that are not opened. */
-const pack = (name: string, count: number, costMinor: number, orderNumber: string): Priced => [
+/** Bought by the bag, used one by one. */
+const bag = (name: string, count: number, costMinor: number, orderNumber: string): Priced => [
   name,
-  price(costMinor, orderNumber, { per: count, increment: count }),
+  price(costMinor, orderNumber, { per: count }),
 ];
 /** In sticks of ten feet. */
 const stick = (name: string, costMinor: number, orderNumber: string): Priced => [
@@ -96,9 +96,9 @@ export const demoItemPrices: ReadonlyMap<string, ItemPrice> = new Map([
   each('DC supply, 100 VA, 12 V', 9800, 'T-7100'),
   each('Buried junction hub, 4-way', 2850, 'H-0004'),
   each('Buried junction hub, 8-way', 4400, 'H-0008'),
-  pack('Gel-filled connector, small', 25, 2150, 'J-0325'),
-  pack('Gel-filled connector, medium', 25, 2700, 'J-0425'),
-  pack('Gel-filled connector, large', 25, 3400, 'J-0625'),
+  bag('Gel-filled connector, small', 25, 2150, 'J-0325'),
+  bag('Gel-filled connector, medium', 25, 2700, 'J-0425'),
+  bag('Gel-filled connector, large', 25, 3400, 'J-0625'),
   each('Plug-in timer', 2900, 'K-0100'),
   each('Sunset timer', 5600, 'K-0200'),
   each('Photocell, socket-mounted', 1900, 'K-0300'),

@@ -134,6 +134,8 @@ describe('faults of the plan', () => {
       'caution T T1 is loaded to 110 % (330 VA); keep to 80 % and leave room for additions.',
       'caution  A dead short at the far end of run 1 may draw too little to trip the breaker; use heavier cable or a shorter run.',
     ]);
+    // Terminals and windings of one transformer are told apart.
+    expect(faults.flatMap((f) => f.part ?? [])).toEqual(['C1', '12V', 'w1']);
   });
 
   it('tell runs that two people joined, and loops that nobody confirmed', () => {
