@@ -2,12 +2,15 @@ import { Inject, Module, type OnApplicationBootstrap } from '@nestjs/common';
 import { Decoder } from '../media/decoder.js';
 import { PaymentsStoreModule } from '../modules/payments/payments-store.module.js';
 import { PlanStoreModule } from '../modules/plans/plan-store.module.js';
+import { ProposalsStoreModule } from '../modules/proposals/proposals-store.module.js';
 import { SheetStoreModule } from '../modules/sheets/sheet-store.module.js';
 import { Queue } from '../ports/queue/queue.js';
 import { EndCardCheckout, SendCardRefund } from './card-service.js';
 import { JOB_HANDLERS, type JobHandler } from './job-handler.js';
 import { SendMail } from './mail.js';
 import { MakeMoneyDocument } from './make-money-document.js';
+import { PrepareProposal } from './prepare-proposal.js';
+import { Remind } from './remind.js';
 import { ProcessSheet } from './sheets.js';
 import { DeleteStored } from './storage.js';
 import { SummarisePlan } from './summarise-plan.js';
@@ -19,12 +22,14 @@ const handlers: (new (...parts: never[]) => JobHandler)[] = [
   DeleteStored,
   SummarisePlan,
   MakeMoneyDocument,
+  PrepareProposal,
+  Remind,
   SendCardRefund,
   EndCardCheckout,
 ];
 
 @Module({
-  imports: [SheetStoreModule, PlanStoreModule, PaymentsStoreModule],
+  imports: [SheetStoreModule, PlanStoreModule, PaymentsStoreModule, ProposalsStoreModule],
   providers: [
     Decoder,
     ...handlers,

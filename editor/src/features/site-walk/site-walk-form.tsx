@@ -11,7 +11,7 @@ import {
   useZodForm,
 } from '../../components/form';
 import { Note, Problem } from '../../components/states';
-import { transformerCautions } from '../../lib/cautions';
+import { transformerCautions } from '@lampwright/geometry/cautions';
 import { formatMoment } from '../../lib/format';
 import type { Job } from '../../lib/jobs';
 import { useMe } from '../../lib/me';

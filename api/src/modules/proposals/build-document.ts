@@ -1,0 +1,130 @@
+import { fixtureInitial } from '@lampwright/geometry/catalogue';
+import { proposalCautions } from '@lampwright/geometry/cautions';
+import { initialOf, itemOf, type PlanDocument, recordsOf, type SheetRecord } from '@lampwright/geometry/plan';
+import { recordGroups, scheduleOf } from '@lampwright/geometry/price';
+import { regionOf, type settingsInForce, wordsOf } from '../companies/settings.js';
+import type { WorkedQuote } from '../pricing/quotes.js';
+import { whatItLights } from './plain-words.js';
+import type { ProposalTexts } from './proposals.dto.js';
+import type { ProposalWords, RevisionDocument, ShownCombination, ShownLight } from './revision-document.js';
+
+export interface Parties {
+  readonly company: { readonly name: string; readonly region: string };
+  readonly settings: Pick<ReturnType<typeof settingsInForce>, 'units'>;
+  readonly texts: ProposalTexts;
+  readonly words: ProposalWords;
+  readonly client: { readonly name: string; readonly email: string | null; readonly phone: string | null };
+  readonly property: { readonly name: string; readonly address: string };
+  readonly job: { readonly id: string; readonly name: string };
+}
+
+export interface Standing {
+  readonly number: number;
+  readonly revision: number;
+  readonly changes: RevisionDocument['changes'];
+  readonly madeAt: Date;
+}
+
+/** Freezes what a quote says, with the words around it, into the document of a revision. No cost gets in. */
+export function buildDocument(worked: WorkedQuote, parties: Parties, standing: Standing): RevisionDocument {
+  const { plan, quote, book } = worked;
+  const { company, texts, client, property, job } = parties;
+  const validUntil = new Date(standing.madeAt.getTime() + book.validDays * 86_400_000);
+  const sheets = sheetsInUse(plan);
+  return {
+    form: 1,
+    number: standing.number,
+    revision: standing.revision,
+    changes: standing.changes,
+    madeAt: standing.madeAt.toISOString(),
+    validUntil: validUntil.toISOString().slice(0, 10),
+    currency: quote.currency,
+    locale: quote.locale,
+    region: regionOf(company.region),
+    units: parties.settings.units,
+    company: { name: company.name, ...texts.company },
+    client: {
+      name: client.name,
+      email: client.email ?? '',
+      phone: client.phone ?? '',
+      address: property.address,
+    },
+    job: { ...job, property: property.name },
+    plan: { version: worked.planVersion, records: [...plan.values()] },
+    sheets: sheets.map(({ id, name, view, widthPx, heightPx }) => ({ id, name, view, widthPx, heightPx })),
+    lights: lightsOf(worked),
+    price: {
+      groups: quote.groups,
+      lines: quote.lines.map(({ key, groupId, section, kind, name, quantity, unit, priceMinor }) => ({
+        key,
+        groupId,
+        section,
+        kind,
+        name,
+        quantity,
+        unit,
+        priceMinor: book.showLinePrices ? priceMinor : null,
+      })),
+      discountName: quote.discountName,
+      tax: quote.tax,
+      stages: worked.pricing.stages ?? book.stages,
+      combinations: combinationsOf(worked),
+    },
+    words: parties.words,
+    cautions: [...proposalCautions(wordsOf(regionOf(company.region)).protectiveDevice)],
+    acceptedFaults: worked.faults.flatMap(({ message, acceptance }) =>
+      acceptance ? [{ message, reason: acceptance.reason, by: acceptance.by, at: acceptance.at }] : [],
+    ),
+  };
+}
+
+/** Sheets on which something stands, in their order. */
+function sheetsInUse(plan: PlanDocument): SheetRecord[] {
+  const used = new Set([...recordsOf(plan, 'fixture')].map(({ sheetId }) => sheetId));
+  return [...recordsOf(plan, 'sheet')].filter(({ id }) => used.has(id)).sort((a, b) => a.order - b.order);
+}
+
+function lightsOf({ plan, pricing, volts }: WorkedQuote): ShownLight[] {
+  const groups = recordGroups(plan, pricing);
+  const schedule = new Map(scheduleOf(plan).map((row) => [row.recordId, row]));
+  return [...recordsOf(plan, 'fixture')].map((fixture) => {
+    const item = itemOf(plan, fixture.itemId, 'fixture');
+    const row = schedule.get(fixture.id);
+    const initial = item ? fixtureInitial(item.kind) : initialOf(plan, fixture);
+    const lamp = row?.lamp ? `, with ${row.lamp}` : '';
+    return {
+      recordId: fixture.id,
+      sheetId: fixture.sheetId,
+      ...fixture.at,
+      tag: `${initial}${fixture.number}`,
+      initial,
+      kind: item?.kind ?? '',
+      name: `${item?.name ?? 'Light'}${lamp}`,
+      // What the designer called it says it best: "Old oak".
+      lights: fixture.name || (item ? whatItLights(item.kind) : ''),
+      quantity: fixture.quantity,
+      groupId: groups.get(fixture.id) ?? null,
+      technical: {
+        volts: volts.get(fixture.id) ?? null,
+        watts: row?.watts ?? null,
+        lumens: row?.lumens ?? null,
+        beamDegrees: row?.beamDegrees ?? null,
+        cctKelvin: row?.cctKelvin ?? null,
+      },
+    };
+  });
+}
+
+function combinationsOf({ quote, checks }: WorkedQuote): ShownCombination[] {
+  const byGroups = new Map(checks.map((check) => [check.groups.join(' '), check]));
+  return quote.combinations.map((totals) => {
+    const offerable = byGroups.get(totals.groups.join(' '))?.offerable ?? false;
+    return {
+      ...totals,
+      offerable,
+      reason: offerable
+        ? ''
+        : 'With these lights alone the wiring would not feed every lamp as it should. Ask us, and we will change the plan.',
+    };
+  });
+}

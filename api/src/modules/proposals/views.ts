@@ -1,0 +1,80 @@
+import { Inject, Injectable } from '@nestjs/common';
+import type { ProposalLink, ProposalState, Revision } from './proposals.dto.js';
+import { type LinkRow, type ProposalRow, ProposalsRepository } from './proposals.repository.js';
+import { stateOf } from './state.js';
+
+/** Revisions as the company's screens show them. */
+@Injectable()
+export class RevisionViews {
+  constructor(@Inject(ProposalsRepository) private readonly repository: ProposalsRepository) {}
+
+  /** Newest first. */
+  async all({ companyId, id }: ProposalRow, jobId: string): Promise<Revision[]> {
+    const [rows, approvals, declines, links, commented] = [
+      await this.repository.revisions(companyId, id),
+      await this.repository.approvals(companyId, id),
+      await this.repository.declines(companyId, id),
+      await this.repository.links(companyId, id),
+      await this.repository.commented(companyId, id),
+    ];
+    const now = new Date();
+    return rows.map((row): Revision => {
+      const approval = approvals.find(({ revisionId }) => revisionId === row.id) ?? null;
+      const decline = declines.find(({ revisionId }) => revisionId === row.id) ?? null;
+      const path = `/api/jobs/${jobId}/proposal/revisions/${row.id}`;
+      const facts = { row, approval, decline, links, commented: commented.has(row.id), now };
+      return {
+        id: row.id,
+        revision: row.revision,
+        state: stateOf(facts),
+        changeOrder: row.changesRevisionId !== null,
+        planVersion: row.planVersion,
+        hash: row.hash,
+        totalMinor: row.totalMinor,
+        progress: row.progress,
+        failure: row.failure,
+        pdfUrl: row.pdfKey === null ? null : `${path}/pdf`,
+        validUntil: row.validUntil.toISOString().slice(0, 10),
+        createdAt: row.createdAt.toISOString(),
+        createdBy: row.by ?? '',
+        sentAt: row.sentAt?.toISOString() ?? null,
+        releasedAt: row.releasedAt?.toISOString() ?? null,
+        approval: approval && {
+          typedName: approval.typedName,
+          at: approval.approvedAt.toISOString(),
+          groups: approval.groups as string[],
+          totalMinor: approval.totalMinor,
+          signedPdfUrl: approval.signedPdfKey === null ? null : `${path}/signed-pdf`,
+        },
+        decline: decline && { reason: decline.reason, at: decline.createdAt.toISOString() },
+      };
+    });
+  }
+
+  async one(proposal: ProposalRow, jobId: string, revisionId: string): Promise<Revision> {
+    const revision = (await this.all(proposal, jobId)).find(({ id }) => id === revisionId);
+    if (!revision) throw new Error(`Revision ${revisionId} is not of proposal ${proposal.id}.`);
+    return revision;
+  }
+}
+
+/** Where the whole proposal stands: where its newest revision does, and what is approved before all. */
+export function proposalStateOf(revisions: readonly Revision[]): ProposalState {
+  const [newest] = revisions;
+  if (!newest) return 'draft';
+  // A revision that nobody was sent yet does not take the approval of an earlier one away.
+  const unsent = newest.state === 'preparing' || newest.state === 'ready' || newest.state === 'withdrawn';
+  if (unsent && revisions.some(({ state }) => state === 'approved')) return 'approved';
+  return newest.state;
+}
+
+export const linkOf = (row: LinkRow): ProposalLink => ({
+  id: row.id,
+  name: row.name,
+  email: row.email,
+  createdAt: row.createdAt.toISOString(),
+  expiresAt: row.expiresAt.toISOString(),
+  revokedAt: row.revokedAt?.toISOString() ?? null,
+  openedAt: row.openedAt?.toISOString() ?? null,
+  remindersSent: row.remindersSent,
+});
