@@ -54,7 +54,7 @@ function lineChange(
 ): string {
   const quantity = wasQuantity === nowQuantity ? '' : `, ${wasQuantity} → ${nowQuantity}${unitAfter(unit)}`;
   const price =
-    byMinor === null || byMinor === 0 ? '' : `, ${byMinor > 0 ? '+' : '−'} ${money(Math.abs(byMinor))}`;
+    byMinor === null || byMinor === 0 ? '' : `, ${byMinor > 0 ? '+' : '−'}${money(Math.abs(byMinor))}`;
   return `${name}${quantity}${price}`;
 }
 

@@ -79,7 +79,7 @@ function DueRow({ linkId, due, document, main, returned, tired, onCheck }: RowPr
         {sentenceOf(word)}
       </p>
       <div className={styles.actions}>
-        {due.payable && due.outstandingMinor > 0 && word !== 'later' && (
+        {due.payable && due.outstandingMinor > 0 && word !== 'later' && (word !== 'waiting' || tired) && (
           <button
             type="button"
             className={main && word !== 'waiting' ? 'lamp-button' : 'button'}

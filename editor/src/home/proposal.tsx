@@ -21,7 +21,7 @@ import { REVIEW_BUTTON, SumBar } from './sum-bar';
 import { TotalAloud, Totals } from './totals';
 import { useStep } from './use-step';
 import { useWatch } from './use-watch';
-import { dayOf } from './words';
+import { dayOf, dotted, proposalInWords } from './words';
 
 interface Props {
   readonly linkId: string;
@@ -116,27 +116,33 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
       {/* Kept while another screen lies in front of it: zoom, unfolded lists and all. */}
       <main className="page" hidden={reviewing || declining}>
         <header className="page-head">
-          <p className="quiet">{headOf(document)}</p>
+          <p className="quiet">
+            {dotted([
+              document.company.name,
+              ...proposalInWords(document),
+              `valid to ${dayOf(document.validUntil, document.locale)}`,
+            ])}
+          </p>
           <h1>{document.job.property || document.job.name} after dark</h1>
         </header>
-        <div className="top">
-          {overtaken && (
-            <div className="notice" role="alert">
-              <h2>The proposal has changed</h2>
-              <p>
-                A newer version came while you had this open. It is shown now; please look through it again.
-              </p>
-            </div>
-          )}
-          <StateNotice page={page}>
-            <Payments linkId={linkId} page={page} returned={returned} tired={tired} onCheck={again} />
-          </StateNotice>
-          {state === 'open' && page.dues.length > 0 && (
-            <Payments aside linkId={linkId} page={page} returned={returned} tired={tired} onCheck={again} />
-          )}
-          <Changes page={page} />
-        </div>
         <div className="columns">
+          <div className="top">
+            {overtaken && (
+              <div className="notice" role="alert">
+                <h2>The proposal has changed</h2>
+                <p>
+                  A newer version came while you had this open. It is shown now; please look through it again.
+                </p>
+              </div>
+            )}
+            <StateNotice page={page}>
+              <Payments linkId={linkId} page={page} returned={returned} tired={tired} onCheck={again} />
+            </StateNotice>
+            <Changes page={page} />
+            {state === 'open' && page.dues.length > 0 && (
+              <Payments aside linkId={linkId} page={page} returned={returned} tired={tired} onCheck={again} />
+            )}
+          </div>
           <div className="stays">
             <GardenPicture
               page={page}
@@ -181,22 +187,13 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
                 </button>
               )}
             </div>
-            {state === 'open' && <SumBar document={document} sums={sums} onReview={() => open('review')} />}
           </div>
         </div>
+        {state === 'open' && <SumBar document={document} sums={sums} onReview={() => open('review')} />}
       </main>
     </>
   );
 }
-
-/** The dots stay at the ends of lines. */
-const headOf = ({ company, number, revision, validUntil, locale }: SharedPage['document']): string =>
-  [
-    company.name,
-    `proposal ${number}`,
-    ...(revision > 1 ? [`version ${revision}`] : []),
-    `valid to ${dayOf(validUntil, locale)}`,
-  ].join('\u00a0· ');
 
 /** What was approved, or else what is being chosen: kept in this tab, version by version. */
 function useChoice(linkId: string, page: SharedPage): [Choice, (choice: Choice) => void] {

@@ -7,7 +7,7 @@ import { approve, type Combination, type SharedPage } from './share';
 import { Sum, Totals } from './totals';
 import { problemOf } from './trouble';
 import { useAction } from './use-action';
-import { listOf, moneyOf } from './words';
+import { dotted, listOf, moneyOf, proposalInWords } from './words';
 
 interface Props {
   readonly linkId: string;
@@ -71,8 +71,7 @@ export function Review({ linkId, page, choice, sums, onBack, onApproved, onConfl
       </button>
       <h1 tabIndex={-1}>Review and approve</h1>
       <p className="quiet">
-        {document.company.name} · proposal {document.number}
-        {document.revision > 1 && ` · version ${document.revision}`} · {document.job.property}
+        {dotted([document.company.name, ...proposalInWords(document), document.job.property])}
       </p>
 
       <section aria-labelledby={`${id}-taken`}>

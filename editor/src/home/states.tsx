@@ -68,10 +68,10 @@ export function Skeleton() {
         </div>
       </div>
       <div className="columns">
-        <div>
+        <div className="stays">
           <div className={styles.frame} />
         </div>
-        <div className={styles.rows}>
+        <div className="sums">
           <Bone width="46%" height={22} />
           {['80%', '70%', '74%', '58%'].map((width) => (
             <div key={width} className={styles.row}>

@@ -33,6 +33,16 @@ export const momentOf = (iso: string, locale: string): string =>
 
 export const count = (n: number, one: string, many = `${one}s`): string => `${n} ${n === 1 ? one : many}`;
 
+/** "proposal 1042", and which version where it is not the first. */
+export const proposalInWords = ({
+  number,
+  revision,
+}: Pick<ShareDocument, 'number' | 'revision'>): string[] =>
+  revision > 1 ? [`proposal ${number}`, `version ${revision}`] : [`proposal ${number}`];
+
+/** Parts of one line with dots between, which stay at the ends of lines. */
+export const dotted = (parts: readonly string[]): string => parts.join('\u00a0· ');
+
 /** "Path", "Path and Wall", "Path, Wall and Tree". */
 export const listOf = (names: readonly string[]): string =>
   names.length < 2 ? (names[0] ?? '') : `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`;
