@@ -102,7 +102,7 @@ function Payments({ jobId, data, editable, mayRefund }: PaymentsProps & { readon
                     {due.requestedAt === null && (
                       <Button
                         busy={request.isPending && request.variables === due.id}
-                        aria-label={`Ask for: ${due.name}`}
+                        aria-label={`Ask for it: ${due.name}`}
                         onClick={() => ask(due)}
                       >
                         Ask for it

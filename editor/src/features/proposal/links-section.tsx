@@ -31,7 +31,9 @@ export function LinksSection({ jobId, links }: LinksProps) {
         <thead>
           <tr>
             <th scope="col">To</th>
-            <th scope="col">Seen</th>
+            <th scope="col" className={styles.wide}>
+              Seen
+            </th>
             <th scope="col" className={styles.wide}>
               Sent
             </th>
@@ -47,10 +49,13 @@ export function LinksSection({ jobId, links }: LinksProps) {
             return (
               <tr key={link.id}>
                 <td>
-                  <strong>{called}</strong>
+                  <strong className={styles.called}>{called}</strong>
                   {link.name !== '' && <div className={styles.below}>{link.email}</div>}
+                  <div className={styles.phoneOnly}>
+                    {sentenceOfLink(link, now)}, {remindersOf(link)}
+                  </div>
                 </td>
-                <td>{sentenceOfLink(link, now)}</td>
+                <td className={styles.wide}>{sentenceOfLink(link, now)}</td>
                 <td className={styles.wide}>
                   {formatMoment(link.createdAt)}
                   <div className={styles.below}>{remindersOf(link)}</div>

@@ -11,44 +11,59 @@ export interface Step {
   readonly is: 'done' | 'now' | 'ahead' | 'ended';
 }
 
-const steps = (done: number, answered: { label: string; ended: boolean } | null): readonly Step[] => {
-  const labels = ['Made', 'Sent', 'Opened', answered?.label ?? 'Approved'];
-  return stations.map((station, i) => ({
-    station,
-    label: labels[i]!,
-    is: i < done ? (answered?.ended && i === 3 ? 'ended' : 'done') : i === done ? 'now' : 'ahead',
-  }));
+const wordsOf: Readonly<Record<Station, { readonly done: string; readonly ahead: string }>> = {
+  made: { done: 'Made', ahead: 'Make' },
+  sent: { done: 'Sent', ahead: 'Send' },
+  opened: { done: 'Opened', ahead: 'Open' },
+  answered: { done: 'Approved', ahead: 'Answer' },
 };
+
+/** So many stations are behind it; the one after them is where it is. */
+const steps = (done: number): readonly Step[] =>
+  stations.map((station, i) => ({
+    station,
+    label: i < done ? wordsOf[station].done : wordsOf[station].ahead,
+    is: i < done ? 'done' : i === done ? 'now' : 'ahead',
+  }));
+
+/** A line that ended without a yes; what never happened on the way stays ahead. */
+const ended = (label: string, happened: Readonly<Record<'sent' | 'opened', boolean>>): readonly Step[] =>
+  steps(4).map((step): Step => {
+    switch (step.station) {
+      case 'made':
+        return step;
+      case 'sent':
+      case 'opened':
+        return happened[step.station] ? step : { ...step, label: wordsOf[step.station].ahead, is: 'ahead' };
+      case 'answered':
+        return { ...step, label, is: 'ended' };
+    }
+  });
 
 /** How far the newest revision has come; what was refused or ran out stands as the end of the line. */
 export function stepsOf(proposal: Pick<Proposal, 'state' | 'revisions' | 'links'>): readonly Step[] {
   const newest = proposal.revisions[0];
+  const sent = newest !== undefined && newest.sentAt !== null;
+  const opened = sent && proposal.links.some(({ openedAt }) => openedAt !== null);
   switch (proposal.state) {
     case 'draft':
     case 'preparing':
-      return steps(0, null);
+      return steps(0);
     case 'ready':
-      return steps(1, null);
+      return steps(1);
     case 'sent':
-      return steps(2, null);
+      return steps(2);
     case 'opened':
     case 'commented':
-      return steps(3, null);
+      return steps(3);
     case 'approved':
-      return steps(4, { label: 'Approved', ended: false });
+      return steps(4);
     case 'declined':
-      return steps(4, { label: 'Declined', ended: true });
+      return ended('Declined', { sent: true, opened: true });
     case 'expired':
-    case 'withdrawn': {
-      const label = proposal.state === 'expired' ? 'Expired' : 'Withdrawn';
-      const sent = newest !== undefined && newest.sentAt !== null;
-      const opened = sent && proposal.links.some(({ openedAt }) => openedAt !== null);
-      return steps(4, { label, ended: true }).map((step) =>
-        (step.station === 'sent' && !sent) || (step.station === 'opened' && !opened)
-          ? { ...step, is: 'ahead' }
-          : step,
-      );
-    }
+      return ended('Expired', { sent, opened });
+    case 'withdrawn':
+      return ended('Withdrawn', { sent, opened });
   }
 }
 
