@@ -3,6 +3,7 @@ import { Decoder } from '../media/decoder.js';
 import { PaymentsStoreModule } from '../modules/payments/payments-store.module.js';
 import { PlanStoreModule } from '../modules/plans/plan-store.module.js';
 import { ProposalsStoreModule } from '../modules/proposals/proposals-store.module.js';
+import { ShareStoreModule } from '../modules/share/share-store.module.js';
 import { SheetStoreModule } from '../modules/sheets/sheet-store.module.js';
 import { Queue } from '../ports/queue/queue.js';
 import { EndCardCheckout, SendCardRefund } from './card-service.js';
@@ -12,6 +13,7 @@ import { MakeMoneyDocument } from './make-money-document.js';
 import { PrepareProposal } from './prepare-proposal.js';
 import { Remind } from './remind.js';
 import { ProcessSheet } from './sheets.js';
+import { SignApproval } from './sign-approval.js';
 import { DeleteStored } from './storage.js';
 import { SummarisePlan } from './summarise-plan.js';
 
@@ -24,12 +26,13 @@ const handlers: (new (...parts: never[]) => JobHandler)[] = [
   MakeMoneyDocument,
   PrepareProposal,
   Remind,
+  SignApproval,
   SendCardRefund,
   EndCardCheckout,
 ];
 
 @Module({
-  imports: [SheetStoreModule, PlanStoreModule, PaymentsStoreModule, ProposalsStoreModule],
+  imports: [SheetStoreModule, PlanStoreModule, PaymentsStoreModule, ProposalsStoreModule, ShareStoreModule],
   providers: [
     Decoder,
     ...handlers,

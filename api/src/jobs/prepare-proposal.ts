@@ -14,7 +14,9 @@ import type { JobHandler } from './job-handler.js';
 
 /** Sharp enough for a phone held close and for paper, light enough for a slow connection. */
 const PICTURE_EDGE_PX = 1600;
-const PICTURE_QUALITY = 72;
+const PICTURE_BYTES = 250_000;
+/** Tried from the first on until the picture is light enough; the last is taken as it comes. */
+const QUALITIES = [78, 70, 60, 50] as const;
 
 /** Keeps a revision's pictures, makes its PDF, and sends it where that was asked for. */
 @Injectable()
@@ -34,13 +36,28 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
   async handle({ companyId, revisionId }: QueuePayloads['proposal.prepare']): Promise<void> {
     const shown = await this.store.revision(companyId, revisionId);
     if (!shown) return;
-    if (shown.row.status === 'preparing') await this.prepare(shown.row, shown.document);
+    if (shown.row.status !== 'ready') {
+      try {
+        await this.prepare(shown.row, shown.document);
+      } catch (error) {
+        // Told as failed until another try makes it.
+        await this.repository.updateRevision(companyId, revisionId, {
+          status: 'failed',
+          failure:
+            'The PDF could not be made. It is tried again for a while; if it stays so, make a new revision.',
+        });
+        throw error;
+      }
+    }
     await this.sendIfAsked(companyId, revisionId);
   }
 
   private async prepare(row: RevisionRow, document: RevisionDocument): Promise<void> {
     const { companyId, id } = row;
-    await this.repository.updateRevision(companyId, id, { progress: 10 });
+    await this.repository.updateRevision(companyId, id, {
+      status: 'preparing',
+      progress: 10,
+    });
     const pictures = await this.keepPictures(row, document);
     await this.repository.updateRevision(companyId, id, { progress: 40, pictures: pictures.keys });
     const pdf = await proposalPdf({ document, hash: row.hash, pictures: pictures.bytes, signature: null });
@@ -85,11 +102,17 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
   private async reduced(key: string | undefined): Promise<Buffer | null> {
     const original = await this.read(key);
     if (!original) return null;
-    return sharp(original)
+    const small = await sharp(original)
       .resize({ width: PICTURE_EDGE_PX, height: PICTURE_EDGE_PX, fit: 'inside', withoutEnlargement: true })
       .flatten({ background: 'white' })
-      .jpeg({ quality: PICTURE_QUALITY, progressive: true, mozjpeg: true })
+      .png({ compressionLevel: 1 })
       .toBuffer();
+    let picture = small;
+    for (const quality of QUALITIES) {
+      picture = await sharp(small).jpeg({ quality, progressive: true, mozjpeg: true }).toBuffer();
+      if (picture.length <= PICTURE_BYTES) break;
+    }
+    return picture;
   }
 
   private async read(key: string | undefined): Promise<Buffer | null> {

@@ -22,6 +22,16 @@ export class JobsRepository {
     return row ?? null;
   }
 
+  /** The same, kept from changing until the running transaction ends. */
+  async lock(companyId: string, id: string): Promise<JobRow | null> {
+    const [row] = await this.database.queries
+      .select()
+      .from(jobs)
+      .where(and(eq(jobs.companyId, companyId), eq(jobs.id, id)))
+      .for('no key update');
+    return row ?? null;
+  }
+
   /** When the job or its plan was last edited. */
   async editedAt(companyId: string, id: string): Promise<Date | null> {
     const [row] = await this.database.queries

@@ -1,11 +1,13 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { type Actor, demand } from '../../access/actor.js';
+import { UsersRepository } from '../../access/users.repository.js';
 import { Database } from '../../database/database.js';
 import { badInput, notFound } from '../../http/app-error.js';
 import { ClientsService } from '../clients/clients.service.js';
 import { PropertiesService } from '../properties/properties.service.js';
 import { thumbnailUrl } from '../sheets/sheet-urls.js';
 import { SheetsService } from '../sheets/sheets.service.js';
+import { JobEvents } from '../timeline/job-events.repository.js';
 import { JobListRepository } from './job-list.repository.js';
 import type { Job, JobEdit, JobList, JobListQuery, NewJob } from './jobs.dto.js';
 import { type JobRow, JobsRepository } from './jobs.repository.js';
@@ -22,6 +24,8 @@ export class JobsService {
     @Inject(ClientsService) private readonly clients: ClientsService,
     @Inject(PropertiesService) private readonly properties: PropertiesService,
     @Inject(SheetsService) private readonly sheets: SheetsService,
+    @Inject(UsersRepository) private readonly users: UsersRepository,
+    @Inject(JobEvents) private readonly events: JobEvents,
   ) {}
 
   async list(actor: Actor, query: JobListQuery): Promise<JobList> {
@@ -79,12 +83,22 @@ export class JobsService {
   async edit(actor: Actor, id: string, edit: JobEdit): Promise<Job> {
     demand(actor, 'jobs.edit');
     const { siteWalkOn, installOn, ...rest } = edit;
-    const row = await this.repository.update(actor.companyId, id, {
-      ...rest,
-      siteWalkOn: startOfDay(siteWalkOn),
-      installOn: startOfDay(installOn),
+    return this.database.transaction(async () => {
+      const before = found(await this.repository.lock(actor.companyId, id));
+      const row = await this.repository.update(actor.companyId, id, {
+        ...rest,
+        siteWalkOn: startOfDay(siteWalkOn),
+        installOn: startOfDay(installOn),
+      });
+      if (edit.stage !== undefined && edit.stage !== before.stage)
+        await this.events.note(
+          { companyId: actor.companyId, jobId: id },
+          'stage-changed',
+          { from: before.stage, to: edit.stage },
+          { id: actor.userId, name: (await this.users.find(actor.userId))?.name ?? '' },
+        );
+      return this.whole(actor, found(row));
     });
-    return this.whole(actor, found(row));
   }
 
   async saveSiteWalk(actor: Actor, id: string, siteWalk: SiteWalk): Promise<Job> {

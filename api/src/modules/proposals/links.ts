@@ -22,26 +22,29 @@ export class ProposalLinks {
     @Inject(Seal) private readonly seal: Seal,
   ) {}
 
+  /** With when the last mail went to it; null for a new one. */
   async forRecipient(
     row: RevisionRow,
     { name, email }: Recipient,
     createdBy: string | null,
-  ): Promise<LinkRow> {
+    now: Date,
+  ): Promise<{ readonly link: LinkRow; readonly mailedAt: Date | null }> {
     const expiresAt = new Date(row.validUntil.getTime() + OPEN_AFTERWARDS_DAYS * 86_400_000);
-    const links = await this.repository.links(row.companyId, row.proposalId);
+    const links = await this.repository.links(row.companyId, [row.proposalId]);
     const live = links.find(
       (link) => link.revokedAt === null && link.email.toLowerCase() === email.toLowerCase(),
     );
     if (live) {
       const later = new Date(Math.max(expiresAt.getTime(), live.expiresAt.getTime()));
-      return this.repository.updateLink(row.companyId, live.id, {
+      const link = await this.repository.updateLink(row.companyId, live.id, {
         expiresAt: later,
-        lastMailAt: new Date(),
+        lastMailAt: now,
         ...(name === '' ? {} : { name }),
       });
+      return { link, mailedAt: live.lastMailAt };
     }
     const { token, tokenHash } = newToken();
-    return this.repository.insertLink({
+    const link = await this.repository.insertLink({
       companyId: row.companyId,
       proposalId: row.proposalId,
       tokenHash,
@@ -51,7 +54,9 @@ export class ProposalLinks {
       email,
       createdBy,
       expiresAt,
+      lastMailAt: now,
     });
+    return { link, mailedAt: null };
   }
 
   urlOf({ sealedToken, tokenHash }: LinkRow): string {

@@ -1,5 +1,5 @@
 import { Inject, Injectable } from '@nestjs/common';
-import { and, eq, inArray } from 'drizzle-orm';
+import { and, eq, inArray, sql } from 'drizzle-orm';
 import { Database } from '../../database/database.js';
 import { clients, jobs, properties, sheets, users } from '../../database/schema/index.js';
 
@@ -31,7 +31,13 @@ export class PartiesRepository {
     const rows = await this.database.queries
       .select({ id: sheets.id, key: sheets.imageKey })
       .from(sheets)
-      .where(and(eq(sheets.companyId, companyId), inArray(sheets.id, [...sheetIds])));
+      .where(
+        and(
+          eq(sheets.companyId, companyId),
+          // Ids of a plan are any text: one that is no uuid has no picture.
+          inArray(sql<string>`${sheets.id}::text`, [...sheetIds]),
+        ),
+      );
     return new Map(rows.flatMap(({ id, key }) => (key === null ? [] : [[id, key] as const])));
   }
 

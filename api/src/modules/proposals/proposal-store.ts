@@ -5,6 +5,7 @@ import {
   type ApprovalRow,
   type DeclineRow,
   ProposalsRepository,
+  type RevisionFactsRow,
   type RevisionRow,
 } from './proposals.repository.js';
 import { type RevisionDocument, revisionDocumentSchema } from './revision-document.js';
@@ -45,20 +46,20 @@ export class ProposalStore {
 
   /** The revision approved last; null before any was. */
   async approved(companyId: string, proposalId: string): Promise<ApprovedRevision | null> {
-    const [approval] = await this.repository.approvals(companyId, proposalId);
+    const [approval] = await this.repository.approvals(companyId, [proposalId]);
     if (!approval) return null;
     const shown = await this.revision(companyId, approval.revisionId);
     return shown && { ...shown, approval };
   }
 
   /** The approval of one revision. */
-  async approvalOf(row: RevisionRow): Promise<ApprovalRow | null> {
-    const all = await this.repository.approvals(row.companyId, row.proposalId);
+  async approvalOf(row: RevisionFactsRow): Promise<ApprovalRow | null> {
+    const all = await this.repository.approvals(row.companyId, [row.proposalId]);
     return all.find(({ revisionId }) => revisionId === row.id) ?? null;
   }
 
-  async declineOf(row: RevisionRow): Promise<DeclineRow | null> {
-    const all = await this.repository.declines(row.companyId, row.proposalId);
+  async declineOf(row: RevisionFactsRow): Promise<DeclineRow | null> {
+    const all = await this.repository.declines(row.companyId, [row.proposalId]);
     return all.find(({ revisionId }) => revisionId === row.id) ?? null;
   }
 

@@ -1,5 +1,5 @@
 import { Inject, Injectable } from '@nestjs/common';
-import { and, asc, desc, eq, inArray, isNotNull, isNull, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, getTableColumns, inArray, isNotNull, isNull, sql } from 'drizzle-orm';
 import { Database } from '../../database/database.js';
 import {
   approvals,
@@ -31,9 +31,13 @@ export type RevisionEdit = Partial<
     | 'releasedBy'
   >
 >;
+/** A revision without its document, which may be large. */
+export type RevisionFactsRow = Omit<RevisionRow, 'document'>;
 export type LinkRow = typeof proposalLinks.$inferSelect;
 export type ApprovalRow = typeof approvals.$inferSelect;
 export type DeclineRow = typeof declines.$inferSelect;
+
+const { document: _, ...factColumns } = getTableColumns(proposalRevisions);
 
 /** Proposals with their revisions and links; every question names the company. */
 @Injectable()
@@ -90,15 +94,23 @@ export class ProposalsRepository {
       .where(and(eq(proposals.companyId, companyId), eq(proposals.id, proposalId)));
   }
 
-  /** Newest first, with the name of whoever made each. */
-  async revisions(companyId: string, proposalId: string): Promise<(RevisionRow & { by: string | null })[]> {
-    const rows = await this.queries
-      .select({ row: proposalRevisions, by: users.name })
+  /** Of these proposals, newest first, with the name of whoever made each. */
+  async revisions(
+    companyId: string,
+    proposalIds: readonly string[],
+  ): Promise<(RevisionFactsRow & { by: string | null })[]> {
+    if (proposalIds.length === 0) return [];
+    return this.queries
+      .select({ ...factColumns, by: users.name })
       .from(proposalRevisions)
       .leftJoin(users, eq(users.id, proposalRevisions.createdBy))
-      .where(and(eq(proposalRevisions.companyId, companyId), eq(proposalRevisions.proposalId, proposalId)))
+      .where(
+        and(
+          eq(proposalRevisions.companyId, companyId),
+          inArray(proposalRevisions.proposalId, [...proposalIds]),
+        ),
+      )
       .orderBy(desc(proposalRevisions.revision));
-    return rows.map(({ row, by }) => ({ ...row, by }));
   }
 
   async revision(companyId: string, revisionId: string): Promise<RevisionRow | null> {
@@ -151,26 +163,29 @@ export class ProposalsRepository {
     return row!;
   }
 
-  async approvals(companyId: string, proposalId: string): Promise<ApprovalRow[]> {
+  async approvals(companyId: string, proposalIds: readonly string[]): Promise<ApprovalRow[]> {
+    if (proposalIds.length === 0) return [];
     return this.queries
       .select()
       .from(approvals)
-      .where(and(eq(approvals.companyId, companyId), eq(approvals.proposalId, proposalId)))
+      .where(and(eq(approvals.companyId, companyId), inArray(approvals.proposalId, [...proposalIds])))
       .orderBy(desc(approvals.approvedAt));
   }
 
-  async declines(companyId: string, proposalId: string): Promise<DeclineRow[]> {
+  async declines(companyId: string, proposalIds: readonly string[]): Promise<DeclineRow[]> {
+    if (proposalIds.length === 0) return [];
     return this.queries
       .select()
       .from(declines)
-      .where(and(eq(declines.companyId, companyId), eq(declines.proposalId, proposalId)));
+      .where(and(eq(declines.companyId, companyId), inArray(declines.proposalId, [...proposalIds])));
   }
 
-  async links(companyId: string, proposalId: string): Promise<LinkRow[]> {
+  async links(companyId: string, proposalIds: readonly string[]): Promise<LinkRow[]> {
+    if (proposalIds.length === 0) return [];
     return this.queries
       .select()
       .from(proposalLinks)
-      .where(and(eq(proposalLinks.companyId, companyId), eq(proposalLinks.proposalId, proposalId)))
+      .where(and(eq(proposalLinks.companyId, companyId), inArray(proposalLinks.proposalId, [...proposalIds])))
       .orderBy(asc(proposalLinks.createdAt), asc(proposalLinks.id));
   }
 
@@ -201,11 +216,12 @@ export class ProposalsRepository {
   }
 
   /** Revisions that the homeowner asked something about. */
-  async commented(companyId: string, proposalId: string): Promise<Set<string>> {
+  async commented(companyId: string, proposalIds: readonly string[]): Promise<Set<string>> {
+    if (proposalIds.length === 0) return new Set();
     const rows = await this.queries
       .selectDistinct({ revisionId: questions.revisionId })
       .from(questions)
-      .where(and(eq(questions.companyId, companyId), eq(questions.proposalId, proposalId)));
+      .where(and(eq(questions.companyId, companyId), inArray(questions.proposalId, [...proposalIds])));
     return new Set(rows.map(({ revisionId }) => revisionId));
   }
 

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import { Inject, Injectable } from '@nestjs/common';
 import { type Actor, demand } from '../../access/actor.js';
+import { Database } from '../../database/database.js';
 import { conflict, notFound } from '../../http/app-error.js';
 import { canonicalJson } from '../../http/canonical-json.js';
 import type { StoredFile } from '../../http/send-file.js';
@@ -10,7 +11,7 @@ import { ObjectStorage } from '../../ports/storage/storage.js';
 import { CompaniesRepository } from '../companies/companies.repository.js';
 import { regionOf, settingsInForce } from '../companies/settings.js';
 import { CountersRepository } from '../numbering/counters.repository.js';
-import { Quotes } from '../pricing/quotes.js';
+import { type PricedPlan, Quotes } from '../pricing/quotes.js';
 import { JobEvents } from '../timeline/job-events.repository.js';
 import { buildDocument } from './build-document.js';
 import { CompanyTexts } from './company-texts.js';
@@ -42,6 +43,7 @@ import { linkOf, proposalStateOf, RevisionViews } from './views.js';
 @Injectable()
 export class ProposalsService {
   constructor(
+    @Inject(Database) private readonly database: Database,
     @Inject(ProposalsRepository) private readonly repository: ProposalsRepository,
     @Inject(ProposalStore) private readonly store: ProposalStore,
     @Inject(PartiesRepository) private readonly parties: PartiesRepository,
@@ -67,17 +69,15 @@ export class ProposalsService {
     const proposal = await this.repository.ofJob(companyId, jobId);
     const { words, own } = await this.wordsOf(actor, proposal);
     const revisions = proposal ? await this.views.all(proposal, jobId) : [];
-    const links = proposal ? await this.repository.links(companyId, proposal.id) : [];
+    const links = proposal ? await this.repository.links(companyId, [proposal.id]) : [];
     const newest = proposal ? await this.newest(proposal) : null;
     return {
-      number: proposal?.number ?? null,
+      // Its number is kept for it from the first words on, but nobody has seen it before a revision.
+      number: revisions.length === 0 ? null : (proposal?.number ?? null),
       state: proposalStateOf(revisions),
       currency: bill.quote.currency,
       locale: bill.quote.locale,
-      stale:
-        newest !== null &&
-        (newest.row.planVersion !== bill.planVersion ||
-          offeredTotal(newest.document) !== (bill.quote.combinations[0]?.totalMinor ?? 0)),
+      stale: newest !== null && isStale(newest, bill),
       words,
       own,
       revisions,
@@ -88,9 +88,11 @@ export class ProposalsService {
   /** The job's own words; what is left out is the company's. */
   async setWords(actor: Actor, jobId: string, words: JobWords): Promise<Proposal> {
     demand(actor, 'proposals.edit');
-    await this.editableJob(actor, jobId);
-    const proposal = await this.proposalOf(actor, jobId);
-    await this.repository.setTexts(actor.companyId, proposal.id, words);
+    await this.database.transaction(async () => {
+      await this.editableJob(actor, jobId);
+      const proposal = await this.proposalOf(actor, jobId);
+      await this.repository.setTexts(actor.companyId, proposal.id, words);
+    });
     return this.get(actor, jobId);
   }
 
@@ -112,7 +114,7 @@ export class ProposalsService {
         obstacles: worked.obstacles,
       });
     const proposal = await this.proposalOf(actor, jobId);
-    const revisions = await this.repository.revisions(companyId, proposal.id);
+    const revisions = await this.repository.revisions(companyId, [proposal.id]);
     const approved = await this.store.approved(companyId, proposal.id);
     const document = buildDocument(
       worked,
@@ -189,7 +191,7 @@ export class ProposalsService {
   async send(actor: Actor, jobId: string, revisionId: string, input: Send): Promise<Revision> {
     demand(actor, 'proposals.edit');
     await this.editableJob(actor, jobId);
-    const { proposal, shown } = await this.revisionOf(actor, jobId, revisionId);
+    const { proposal, shown } = await this.lockedRevisionOf(actor, jobId, revisionId);
     const { row } = shown;
     if (row.withdrawnAt !== null) throw conflict('withdrawn', 'This revision was withdrawn. Make a new one.');
     if (row.status === 'failed')
@@ -211,20 +213,21 @@ export class ProposalsService {
 
   async withdraw(actor: Actor, jobId: string, revisionId: string): Promise<Revision> {
     demand(actor, 'proposals.edit');
-    const { proposal, shown } = await this.revisionOf(actor, jobId, revisionId);
-    const locked = await this.repository.lockRevision(actor.companyId, revisionId);
-    if (await this.store.approvalOf(shown.row))
-      throw conflict('approved', 'This revision is approved. Change it by a change order.');
-    if (locked?.withdrawnAt === null) {
-      await this.repository.updateRevision(actor.companyId, revisionId, {
-        withdrawnAt: new Date(),
-        sendTo: null,
-      });
-      const key = { companyId: actor.companyId, jobId };
-      const { revision } = shown.row;
-      await this.events.note(key, 'revision-withdrawn', { revision }, await this.actorOf(actor));
-    }
-    return this.views.one(proposal, jobId, revisionId);
+    return this.database.transaction(async () => {
+      const { proposal, shown } = await this.lockedRevisionOf(actor, jobId, revisionId);
+      if (await this.store.approvalOf(shown.row))
+        throw conflict('approved', 'This revision is approved. Change it by a change order.');
+      if (shown.row.withdrawnAt === null) {
+        await this.repository.updateRevision(actor.companyId, revisionId, {
+          withdrawnAt: new Date(),
+          sendTo: null,
+        });
+        const key = { companyId: actor.companyId, jobId };
+        const { revision } = shown.row;
+        await this.events.note(key, 'revision-withdrawn', { revision }, await this.actorOf(actor));
+      }
+      return this.views.one(proposal, jobId, revisionId);
+    });
   }
 
   /**
@@ -233,19 +236,24 @@ export class ProposalsService {
    */
   async release(actor: Actor, jobId: string, revisionId: string): Promise<Revision> {
     demand(actor, 'proposals.edit');
-    const { proposal, shown } = await this.revisionOf(actor, jobId, revisionId);
-    if (shown.row.sentAt === null || shown.row.withdrawnAt !== null)
-      throw conflict('not-sent', 'Only a revision that was sent and not withdrawn is released to the crew.');
-    if (shown.row.releasedAt === null) {
-      await this.repository.updateRevision(actor.companyId, revisionId, {
-        releasedAt: new Date(),
-        releasedBy: actor.userId,
-      });
-      const key = { companyId: actor.companyId, jobId };
-      const { revision } = shown.row;
-      await this.events.note(key, 'revision-released', { revision }, await this.actorOf(actor));
-    }
-    return this.views.one(proposal, jobId, revisionId);
+    return this.database.transaction(async () => {
+      const { proposal, shown } = await this.lockedRevisionOf(actor, jobId, revisionId);
+      if (shown.row.sentAt === null || shown.row.withdrawnAt !== null)
+        throw conflict(
+          'not-sent',
+          'Only a revision that was sent and not withdrawn is released to the crew.',
+        );
+      if (shown.row.releasedAt === null) {
+        await this.repository.updateRevision(actor.companyId, revisionId, {
+          releasedAt: new Date(),
+          releasedBy: actor.userId,
+        });
+        const key = { companyId: actor.companyId, jobId };
+        const { revision } = shown.row;
+        await this.events.note(key, 'revision-released', { revision }, await this.actorOf(actor));
+      }
+      return this.views.one(proposal, jobId, revisionId);
+    });
   }
 
   /** The letter of the newest revision once more, by the same link. */
@@ -273,12 +281,15 @@ export class ProposalsService {
   /** Ends a link at once: for whoever holds it, the page is gone. */
   async revoke(actor: Actor, jobId: string, linkId: string): Promise<ProposalLink> {
     demand(actor, 'proposals.edit');
-    const { link } = await this.linkOfJob(actor, jobId, linkId);
-    if (link.revokedAt !== null) return linkOf(link);
-    const revoked = await this.repository.updateLink(actor.companyId, linkId, { revokedAt: new Date() });
-    const key = { companyId: actor.companyId, jobId };
-    await this.events.note(key, 'link-revoked', { to: link.name || link.email }, await this.actorOf(actor));
-    return linkOf(revoked);
+    return this.database.transaction(async () => {
+      const { link } = await this.linkOfJob(actor, jobId, linkId);
+      if (link.revokedAt !== null) return linkOf(link);
+      const revoked = await this.repository.updateLink(actor.companyId, linkId, { revokedAt: new Date() });
+      const key = { companyId: actor.companyId, jobId };
+      const to = link.name || link.email;
+      await this.events.note(key, 'link-revoked', { to }, await this.actorOf(actor));
+      return linkOf(revoked);
+    });
   }
 
   private async wordsOf(
@@ -323,6 +334,18 @@ export class ProposalsService {
     return { proposal, shown };
   }
 
+  /** As `revisionOf`, held: its PDF may become ready, or somebody may answer it, at this moment. */
+  private async lockedRevisionOf(
+    actor: Actor,
+    jobId: string,
+    revisionId: string,
+  ): Promise<{ proposal: ProposalRow; shown: ShownRevision }> {
+    const proposal = await this.repository.ofJob(actor.companyId, jobId);
+    const shown = proposal && (await this.store.lockRevision(actor.companyId, revisionId));
+    if (!shown || shown.row.proposalId !== proposal.id) throw notFound('This revision');
+    return { proposal, shown };
+  }
+
   private async linkOfJob(
     actor: Actor,
     jobId: string,
@@ -335,14 +358,14 @@ export class ProposalsService {
   }
 
   private async newest(proposal: ProposalRow): Promise<ShownRevision | null> {
-    const [row] = await this.repository.revisions(proposal.companyId, proposal.id);
+    const [row] = await this.repository.revisions(proposal.companyId, [proposal.id]);
     return row ? this.store.revision(proposal.companyId, row.id) : null;
   }
 
   /** What a revision is compared with: the approved one that it changes, or else the one before it. */
   private async before(proposal: ProposalRow, row: RevisionRow): Promise<ShownRevision | null> {
     if (row.changesRevisionId !== null) return this.store.revision(proposal.companyId, row.changesRevisionId);
-    const all = await this.repository.revisions(proposal.companyId, proposal.id);
+    const all = await this.repository.revisions(proposal.companyId, [proposal.id]);
     const before = all.find(({ revision }) => revision < row.revision);
     return before ? this.store.revision(proposal.companyId, before.id) : null;
   }
@@ -363,4 +386,12 @@ export class ProposalsService {
       },
     };
   }
+}
+
+/** Plan, groups or sums are others by now than in a revision. */
+function isStale({ row, document }: ShownRevision, { planVersion, quote }: PricedPlan): boolean {
+  if (row.planVersion !== planVersion) return true;
+  const frozen = document.price.combinations.map(({ offerable: _, reason: __, ...totals }) => totals);
+  const was = { groups: document.price.groups, totals: frozen };
+  return canonicalJson(was) !== canonicalJson({ groups: quote.groups, totals: quote.combinations });
 }

@@ -37,10 +37,13 @@ export class Sending {
       if (!shown || shown.row.pdfKey === null || shown.row.withdrawnAt !== null) return;
       const { row, document } = shown;
       const reminderDays = (await this.texts.inForce(companyId))?.texts.reminderDays ?? [];
+      const now = new Date();
       for (const recipient of to.recipients) {
-        const link = await this.links.forRecipient(row, recipient, to.byId);
+        const { link, mailedAt } = await this.links.forRecipient(row, recipient, to.byId, now);
         const mail = { document, link: this.links.urlOf(link), pdfKey: shown.row.pdfKey };
         await this.outbox.post(companyId, recipient.email, proposalLetter(mail, to.message));
+        // Sent once more, it is reminded of as it was the first time.
+        if (row.sentAt !== null && mailedAt !== null && mailedAt >= row.sentAt) continue;
         for (const days of reminderDays)
           await this.queue.send(
             'proposal.remind',
@@ -49,7 +52,7 @@ export class Sending {
           );
       }
       await this.repository.updateRevision(companyId, revisionId, {
-        sentAt: row.sentAt ?? new Date(),
+        sentAt: row.sentAt ?? now,
         sendTo: null,
       });
       const actor = { id: to.byId, name: to.byName };

@@ -1,9 +1,9 @@
 import { isExpired } from './proposal-store.js';
 import type { ProposalState } from './proposals.dto.js';
-import type { ApprovalRow, DeclineRow, LinkRow, RevisionRow } from './proposals.repository.js';
+import type { ApprovalRow, DeclineRow, LinkRow, RevisionFactsRow } from './proposals.repository.js';
 
 export interface RevisionFacts {
-  readonly row: RevisionRow;
+  readonly row: RevisionFactsRow;
   readonly approval: ApprovalRow | null;
   readonly decline: DeclineRow | null;
   readonly links: readonly LinkRow[];
@@ -17,7 +17,7 @@ export function stateOf({ row, approval, decline, links, commented, now }: Revis
   if (approval) return 'approved';
   if (decline) return 'declined';
   if (row.withdrawnAt !== null) return 'withdrawn';
-  if (row.sentAt === null) return row.status === 'preparing' || row.sendTo !== null ? 'preparing' : 'ready';
+  if (row.sentAt === null) return row.status !== 'ready' || row.sendTo !== null ? 'preparing' : 'ready';
   if (isExpired(row, now)) return 'expired';
   if (commented) return 'commented';
   const { sentAt } = row;

@@ -1,3 +1,4 @@
+import { transformerCautions } from '@lampwright/geometry/cautions';
 import { useEffect, useRef, useState } from 'react';
 import { Button } from '../../components/button';
 import {
@@ -11,7 +12,6 @@ import {
   useZodForm,
 } from '../../components/form';
 import { Note, Problem } from '../../components/states';
-import { transformerCautions } from '@lampwright/geometry/cautions';
 import { formatMoment } from '../../lib/format';
 import type { Job } from '../../lib/jobs';
 import { useMe } from '../../lib/me';

@@ -1,5 +1,5 @@
-import { itemOf, setFields, setItem, type TransformerRecord } from '@lampwright/geometry/plan';
 import { transformerCautions } from '@lampwright/geometry/cautions';
+import { itemOf, setFields, setItem, type TransformerRecord } from '@lampwright/geometry/plan';
 import { useMe } from '../../../lib/me';
 import { percentText, voltAmpsText } from '../../../plan-view/words';
 import { useDoc, useEditor, useEstimate } from '../page/context';

@@ -1,5 +1,5 @@
-import type { FaultSeverity } from '@lampwright/geometry/estimate';
 import { estimateCaution } from '@lampwright/geometry/cautions';
+import type { FaultSeverity } from '@lampwright/geometry/estimate';
 import { useEditor } from './context';
 import { PanelFrame } from './PanelFrame';
 import styles from './page.module.css';
