@@ -28,6 +28,7 @@ import { drawHarrowBank, HARROW_BANK_SHEET } from '../demo/plans/harrow-bank.js'
 import { drawSandpiperRow, SANDPIPER_ROW_SHEET } from '../demo/plans/sandpiper-row.js';
 import { starterCatalogue } from '../modules/catalogue/starter/index.js';
 import type { RevisionDocument } from '../modules/proposals/revision-document.js';
+import type { MoneyDocument } from './money-document.js';
 import type { ProposalPaper } from './proposal-pdf.js';
 import type { SignatureEvidence } from './signature.js';
 
@@ -329,6 +330,34 @@ export function evidenceFor(document: RevisionDocument, groups: readonly string[
   };
 }
 
+/** An invoice, receipt or refund of the deposit of a demo proposal. */
+export function demoMoneyDocument(kind: MoneyDocument['kind']): MoneyDocument {
+  const { company, client, job, currency, locale, region, number, revision } = demoDocument(harrowBank);
+  return {
+    form: 1,
+    kind,
+    number: 318,
+    date: '2026-05-06',
+    currency,
+    locale,
+    region,
+    company,
+    client,
+    jobName: job.name,
+    proposal: { number, revision },
+    lines: [
+      { name: 'Deposit, 30% of the total', amountMinor: 261_526 },
+      { name: 'Change order 1', amountMinor: 41_250 },
+    ],
+    taxNote: 'Of this, $134.80 is sales tax (Marlow Bend).',
+    totalMinor: 302_776,
+    paidMinor: kind === 'invoice' ? 0 : 302_776,
+    outstandingMinor: kind === 'invoice' ? 871_754 : 568_978,
+    received: kind === 'invoice' ? null : { method: 'card', on: '2026-05-06' },
+    terms: 'Please quote the number of this document with any question.',
+  };
+}
+
 function inFolder<T>(work: (folder: string) => T): T {
   const folder = mkdtempSync(join(tmpdir(), 'lampwright-paper-'));
   try {
@@ -366,6 +395,35 @@ export const infoOf = (pdf: Buffer): Map<string, string> =>
 
 export const fontsOf = (pdf: Buffer): string => poppler('pdffonts', pdf);
 
-/** One page as SVG, its lengths in points. */
-export const svgOf = (pdf: Buffer, page: number): string =>
-  poppler('pdftocairo', pdf, ['-svg', '-f', String(page), '-l', String(page)], ['-']);
+export interface PlacedWord {
+  readonly text: string;
+  readonly page: { readonly number: number; readonly width: number; readonly height: number };
+  /** Points from the upper left corner of the page. */
+  readonly xMin: number;
+  readonly yMin: number;
+  readonly xMax: number;
+  readonly yMax: number;
+}
+
+/** Every word of a PDF with the box that it fills. */
+export function wordsOf(pdf: Buffer): PlacedWord[] {
+  const html = poppler('pdftotext', pdf, ['-bbox'], ['-']);
+  const words: PlacedWord[] = [];
+  html.split('<page ').forEach((part, number) => {
+    const size = /^width="([\d.]+)" height="([\d.]+)"/.exec(part);
+    if (!size) return;
+    const page = { number, width: Number(size[1]), height: Number(size[2]) };
+    for (const [, xMin, yMin, xMax, yMax, text = ''] of part.matchAll(
+      /<word xMin="([\d.-]+)" yMin="([\d.-]+)" xMax="([\d.-]+)" yMax="([\d.-]+)">(.*?)<\/word>/gs,
+    ))
+      words.push({
+        text,
+        page,
+        xMin: Number(xMin),
+        yMin: Number(yMin),
+        xMax: Number(xMax),
+        yMax: Number(yMax),
+      });
+  });
+  return words;
+}

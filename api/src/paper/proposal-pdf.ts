@@ -59,7 +59,7 @@ export async function proposalPdf({ document, hash, pictures, signature }: Propo
   price(writing);
   terms(writing);
   sign(writing);
-  const what = `${nameOf(document)} · ${say.date(document.madeAt)} · ${hash.slice(0, HASH_DIGITS)}${signature ? ' · approved' : ''}`;
+  const what = `${nameOf(document)} · ${say.date(document.madeAt)} · hash ${hash.slice(0, HASH_DIGITS)}${signature ? ' · approved' : ''}`;
   return paper.finish((page, pages) => {
     drawFoot(paper, document.company.name, what, page, pages);
   });

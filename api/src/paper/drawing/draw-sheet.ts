@@ -22,8 +22,8 @@ import {
 /** From sheet pixels to points on the page; null where nothing of it can be seen. */
 export type OnPage = (point: PlanPoint) => Pt | null;
 
-/** From so many lights on, tags are smaller. */
-const CROWDED = 140;
+/** Where more than this share of the usual tags finds no room on its place, small ones are tried. */
+const CROWDED = 0.2;
 
 /** Draws the lights of a sheet with their tags; gives those whose tag found no room. */
 function drawLights(
@@ -31,17 +31,23 @@ function drawLights(
   frame: Box,
   lights: readonly DrawnLight[],
   onPage: OnPage,
-  room: Room,
-): string[] {
-  const crowded = lights.length > CROWDED;
+  room: () => Room,
+): { readonly room: Room; readonly without: string[] } {
   const byId = new Map(lights.map((light) => [light.id, light]));
-  const size = (tag: string) => tagSize(paper, tag, crowded);
-  const marks = lights.flatMap(({ id, at, tag }) => {
-    const place = onPage(at);
-    const { width, height } = size(tag);
-    return place && within(place, frame) ? { id, at: place, width, height } : [];
-  });
-  const placed = new Map<string, PlacedMark>(room.place(marks).map((mark) => [mark.id, mark]));
+  const attempt = (sizeName: 'usual' | 'small') => {
+    const taken = room();
+    const marks = lights.flatMap(({ id, at, tag }) => {
+      const place = onPage(at);
+      const { width, height } = tagSize(paper, tag, sizeName);
+      return place && within(place, frame) ? { id, at: place, width, height } : [];
+    });
+    const placed = new Map<string, PlacedMark>(taken.place(marks).map((mark) => [mark.id, mark]));
+    const onPlace = [...placed.values()].filter(({ aside }) => !aside).length;
+    return { sizeName, room: taken, marks, placed, onPlace };
+  };
+  const usual = attempt('usual');
+  const small = usual.onPlace < (1 - CROWDED) * usual.marks.length ? attempt('small') : usual;
+  const { sizeName, room: taken, marks, placed } = small.onPlace > usual.onPlace ? small : usual;
   for (const { id, at } of marks) {
     const mark = placed.get(id);
     if (mark && !mark.aside) continue;
@@ -50,9 +56,9 @@ function drawLights(
   }
   for (const [id, { at }] of placed) {
     const { tag, offered } = byId.get(id)!;
-    drawTag(paper, at, tag, size(tag), offered);
+    drawTag(paper, at, tag, tagSize(paper, tag, sizeName), offered);
   }
-  return lights.filter(({ id }) => !placed.has(id)).map(({ tag }) => tag);
+  return { room: taken, without: lights.filter(({ id }) => !placed.has(id)).map(({ tag }) => tag) };
 }
 
 /** A picture with its lights marked, and nothing of the wiring. Gives the tags that found no room. */
@@ -62,7 +68,7 @@ export function markPicture(
   lights: readonly DrawnLight[],
   onPage: OnPage,
 ): string[] {
-  return drawLights(paper, frame, lights, onPage, new Room(frame, []));
+  return drawLights(paper, frame, lights, onPage, () => new Room(frame, [])).without;
 }
 
 export interface DrawingOptions {
@@ -95,12 +101,11 @@ export function drawSheet(
   if (!overPicture) for (const { area, points } of areas) drawArea(paper, area.use, points, false);
   for (const { line, weight } of [...lines].sort((a, b) => b.weight - a.weight))
     if (line.length > 1) drawCable(paper, line, weight);
-  const room = new Room(frame, wires);
-  for (const { at, kind, tag } of content.nodes) {
-    const place = onPage(at);
-    if (!place) continue;
-    const size = kind === 'splice' ? 6 : BLOCK;
-    room.take(boxAround(place, size, size));
+  const nodes = content.nodes.flatMap((node) => {
+    const place = onPage(node.at);
+    return place ? { ...node, place } : [];
+  });
+  for (const { place, kind, tag } of nodes) {
     switch (kind) {
       case 'transformer':
         drawTransformer(paper, place, tag);
@@ -116,7 +121,14 @@ export function drawSheet(
         break;
     }
   }
-  const without = drawLights(paper, frame, content.lights, onPage, room);
+  const { room, without } = drawLights(paper, frame, content.lights, onPage, () => {
+    const taken = new Room(frame, wires);
+    for (const { place, kind } of nodes) {
+      const size = kind === 'splice' ? 6 : BLOCK;
+      taken.take(boxAround(place, size, size));
+    }
+    return taken;
+  });
   if (!overPicture) nameAreas(paper, frame, areas, room);
   doc.restore();
   return without;

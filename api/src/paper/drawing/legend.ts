@@ -42,7 +42,7 @@ export function legendOf(
     initials.set(light.initial, kinds.add(kindWords(light.kind)));
   }
   const tag = (text: string, offered: boolean) => (at: Pt) =>
-    drawTag(paper, at, text, tagSize(paper, text, false), offered);
+    drawTag(paper, at, text, tagSize(paper, text), offered);
   for (const [initial, kinds] of [...initials].sort(([a], [b]) => (a < b ? -1 : 1)))
     entries.push({ text: [...kinds].sort().join(', '), draw: tag(initial, false) });
   if (lights.some(({ offered }) => offered))

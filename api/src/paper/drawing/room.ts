@@ -103,8 +103,9 @@ export interface PlacedMark {
   readonly aside: boolean;
 }
 
-/** Between a tag and what is beside it. */
-const CLEAR = 1.5;
+/** Between a tag and another, and between a tag and a wire beside it. */
+const CLEAR = 0.5;
+const CLEAR_OF_WIRE = 1.5;
 /** Of the dot that marks a place whose tag stands aside. */
 const DOT = 2.2;
 const TURNS = 24;
@@ -135,9 +136,10 @@ export class Room {
       return false;
     const wide = grown(box, CLEAR);
     for (const other of this.boxes.near(wide)) if (overlap(wide, other)) return false;
-    for (const lead of this.leads.near(wide)) if (crosses(lead, wide)) return false;
-    for (const wire of this.wires.near(wide))
-      if ((own === undefined || !wire.ends.includes(own)) && crosses(wire, wide)) return false;
+    const wider = grown(box, CLEAR_OF_WIRE);
+    for (const lead of this.leads.near(wider)) if (crosses(lead, wider)) return false;
+    for (const wire of this.wires.near(wider))
+      if ((own === undefined || !wire.ends.includes(own)) && crosses(wire, wider)) return false;
     return true;
   }
 

@@ -12,14 +12,17 @@ export interface TagSize {
   readonly text: number;
 }
 
-/** Points across a tag: less on a crowded drawing, and never below what can be read. */
-export function tagSize(paper: Paper, tag: string, crowded: boolean): TagSize {
-  const height = crowded ? 10 : 13;
-  const text = crowded ? 5.4 : 6.6;
+/** Points across a tag; the small one is for crowded drawings, and can still be read. */
+export function tagSize(paper: Paper, tag: string, size: 'usual' | 'small' = 'usual'): TagSize {
+  const height = size === 'usual' ? 13 : 10;
+  const text = size === 'usual' ? 6.6 : 5.4;
   return {
     height,
     text,
-    width: Math.max(height, paper.widthOf(tag, { size: text, weight: 'semibold' }) + 5),
+    width: Math.max(
+      height,
+      paper.widthOf(tag, { size: text, weight: 'semibold' }) + (size === 'usual' ? 5 : 3.4),
+    ),
   };
 }
 
@@ -112,9 +115,9 @@ function areaMm2(conductor: Conductor): number {
   return 1000 / 58 / conductor.ohmsPerKm;
 }
 
-/** Points across a cable's line: heavier cable is drawn heavier, from 0.7 (18 AWG) to about 2.3 (8 AWG). */
+/** Points across a cable's line: heavier cable is drawn heavier, from 0.6 (18 AWG) to 3 (8 AWG), each by more than a third. */
 export function cableWeight(conductor: Conductor): number {
-  return Math.min(2.6, Math.max(0.6, 0.7 + 0.48 * Math.log2(areaMm2(conductor) / 0.82)));
+  return Math.min(3.6, Math.max(0.6, 0.6 * (areaMm2(conductor) / 0.82) ** 0.7));
 }
 
 /** Ink with a white casing, so that it reads over a picture and where it crosses another. */
