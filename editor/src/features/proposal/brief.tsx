@@ -53,13 +53,15 @@ export function ProposalBrief({ jobId, openQuestions, priceLink, proposalLink, p
             {proposal.isError && <Problem error={proposal.error} onRetry={() => proposal.refetch()} />}
             {data !== undefined && (
               <>
-                <strong>
-                  Proposal{data.number === null ? '' : ` ${data.number}`}:{' '}
-                  {proposalWord(data.state).toLowerCase()}
-                </strong>
-                {openQuestions > 0 && (
-                  <span className={styles.badge}>{count(openQuestions, 'open question')}</span>
-                )}
+                <div className={styles.briefHead}>
+                  <strong>
+                    Proposal{data.number === null ? '' : ` ${data.number}`}:{' '}
+                    {proposalWord(data.state).toLowerCase()}
+                  </strong>
+                  {openQuestions > 0 && (
+                    <span className={styles.badge}>{count(openQuestions, 'open question')}</span>
+                  )}
+                </div>
                 <p className={styles.below}>{sentenceOfState(data, new Date().toISOString())}</p>
                 {data.stale && data.revisions[0] !== undefined && (
                   <p className={styles.below}>

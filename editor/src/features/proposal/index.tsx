@@ -164,7 +164,6 @@ function MoveOn({ job, proposal, move, waiting, questionsId, mendAt }: MoveOnPro
                 property: job.property.address || job.property.name,
                 clientName: job.client.name,
                 sender: me.user.name,
-                company: me.company?.name ?? '',
               }),
             }}
           />

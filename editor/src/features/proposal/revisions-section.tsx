@@ -39,7 +39,9 @@ export function RevisionsSection({ jobId, proposal }: RevisionsProps) {
         <thead>
           <tr>
             <th scope="col">Revision</th>
-            <th scope="col">How it stands</th>
+            <th scope="col" className={styles.wide}>
+              How it stands
+            </th>
             <th scope="col" data-align="end">
               Total
             </th>
@@ -55,16 +57,15 @@ export function RevisionsSection({ jobId, proposal }: RevisionsProps) {
               <td>
                 <strong>{revision.revision}</strong>
                 {revision.changeOrder && <span className="quiet"> · change order</span>}
+                <div className={styles.phoneOnly}>
+                  <Standing revision={revision} />
+                </div>
                 <div className={styles.below}>
                   {formatMoment(revision.createdAt)}, {revision.createdBy}
                 </div>
               </td>
-              <td>
-                {proposalWord(revision.state)}
-                {revision.failure !== null && <div className={styles.below}>{revision.failure}</div>}
-                {revision.releasedAt !== null && (
-                  <div className={styles.below}>Released to the crew {formatMoment(revision.releasedAt)}</div>
-                )}
+              <td className={styles.wide}>
+                <Standing revision={revision} />
               </td>
               <td data-align="end">{money(revision.totalMinor)}</td>
               <td>
@@ -137,3 +138,13 @@ export function RevisionsSection({ jobId, proposal }: RevisionsProps) {
     </Section>
   );
 }
+
+const Standing = ({ revision }: { readonly revision: Revision }) => (
+  <>
+    {proposalWord(revision.state)}
+    {revision.failure !== null && <div className={styles.below}>{revision.failure}</div>}
+    {revision.releasedAt !== null && (
+      <div className={styles.below}>Released to the crew {formatMoment(revision.releasedAt)}</div>
+    )}
+  </>
+);

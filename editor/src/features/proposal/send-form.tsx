@@ -91,7 +91,7 @@ function SendForm({ jobId, revision, first, onOpenChange }: SendProps) {
         control={control}
         name="message"
         label="Letter"
-        hint="The link and the PDF’s facts stand below it."
+        hint="Below it stand the total, until when it holds, the link and the company’s name. The PDF comes with it."
         rows={9}
       />
     </Form>

@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import { formatDay } from '../../lib/format';
 import type { Proposal, ProposalLink, Recipient, Revision } from './api';
 
 export const MOST_RECIPIENTS = 5;
@@ -43,24 +42,19 @@ export function firstRecipients({ links }: Pick<Proposal, 'links'>, client: Part
 }
 
 interface About {
-  readonly revision: Pick<Revision, 'revision' | 'changeOrder' | 'validUntil'>;
+  readonly revision: Pick<Revision, 'revision' | 'changeOrder'>;
   readonly property: string;
   readonly clientName: string;
   readonly sender: string;
-  readonly company: string;
 }
 
-/** The letter to begin with; whoever sends it may write it anew. */
-export function firstMessage({ revision, property, clientName, sender, company }: About): string {
+/** The letter to begin with. Total, date, link and the company's name come below it by themselves. */
+export function firstMessage({ revision, property, clientName, sender }: About): string {
   const first = clientName.trim().split(/\s+/)[0] ?? '';
   const what = revision.changeOrder
-    ? `here is what changes against the proposal you approved for ${property}, with the difference in price.`
+    ? `Here is what changes against the proposal you approved for ${property}, with the difference in price.`
     : revision.revision === 1
-      ? `here is our proposal for the lighting of ${property}: the plan over the picture of your garden, what it costs, and when we can do it.`
-      : `here is our revised proposal for the lighting of ${property}. The page shows what has changed.`;
-  return [
-    first === '' ? 'Hello,' : `Hello ${first},`,
-    `${what} You can ask about any light right on the page, and approve it there. It is valid until ${formatDay(revision.validUntil)}.`,
-    `${sender}\n${company}`,
-  ].join('\n\n');
+      ? `Here is our proposal for the lighting of ${property}: the plan over the picture of your garden, what it costs, and when we can do it.`
+      : `Here is our revised proposal for the lighting of ${property}. The page shows what has changed.`;
+  return [first === '' ? 'Hello,' : `Hello ${first},`, what, sender].join('\n\n');
 }

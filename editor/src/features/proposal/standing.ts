@@ -26,19 +26,23 @@ const steps = (done: number): readonly Step[] =>
     is: i < done ? 'done' : i === done ? 'now' : 'ahead',
   }));
 
+type Happened = Readonly<Record<'sent' | 'opened', boolean>>;
+
+function endedStep(step: Step, label: string, happened: Happened): Step {
+  switch (step.station) {
+    case 'made':
+      return step;
+    case 'sent':
+    case 'opened':
+      return happened[step.station] ? step : { ...step, label: wordsOf[step.station].ahead, is: 'ahead' };
+    case 'answered':
+      return { ...step, label, is: 'ended' };
+  }
+}
+
 /** A line that ended without a yes; what never happened on the way stays ahead. */
-const ended = (label: string, happened: Readonly<Record<'sent' | 'opened', boolean>>): readonly Step[] =>
-  steps(4).map((step): Step => {
-    switch (step.station) {
-      case 'made':
-        return step;
-      case 'sent':
-      case 'opened':
-        return happened[step.station] ? step : { ...step, label: wordsOf[step.station].ahead, is: 'ahead' };
-      case 'answered':
-        return { ...step, label, is: 'ended' };
-    }
-  });
+const ended = (label: string, happened: Happened): readonly Step[] =>
+  steps(4).map((step) => endedStep(step, label, happened));
 
 /** How far the newest revision has come; what was refused or ran out stands as the end of the line. */
 export function stepsOf(proposal: Pick<Proposal, 'state' | 'revisions' | 'links'>): readonly Step[] {
