@@ -11,6 +11,7 @@ describe('breaking text into lines', () => {
   });
 
   it('breaks after hyphens and slashes, and keeps them', () => {
+    expect(wrap('cable, 2-core', 8)).toEqual(['cable,', '2-core']);
     expect(wrap('well-known and/or', 6)).toEqual(['well-', 'known', 'and/or']);
   });
 

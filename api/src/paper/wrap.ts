@@ -7,8 +7,8 @@ export function wrapText(text: string, width: number, widthOf: (piece: string) =
   return text.split('\n').flatMap((paragraph) => wrapParagraph(paragraph, width, widthOf));
 }
 
-/** A word with the blanks after it; a hyphenated one in its parts. */
-const PIECES = /[^ ]*?(?:[-–—/@](?=[^ ])| +|$)/g;
+/** A word with the blanks after it; a hyphenated one in its parts, but "2-core" and "P1-4" whole. */
+const PIECES = /[^ ]*?(?:(?<=\p{L}{2})[-–—](?=[^ ])|[/@](?=[^ ])| +|$)/gu;
 
 function wrapParagraph(paragraph: string, width: number, widthOf: (piece: string) => number): string[] {
   const lines: string[] = [];
