@@ -234,7 +234,7 @@ export const samplePage = (over: Partial<SharedPage> = {}): SharedPage => ({
     ],
     acceptedFaults: [],
   },
-  pictures: [{ sheetId: 'photo', url: `/api/share/${LINK}/pictures/photo`, widthPx: 2400, heightPx: 1600 }],
+  pictures: [{ sheetId: 'photo', url: `/api/share/${LINK}/pictures/photo`, widthPx: 1600, heightPx: 1067 }],
   differences: null,
   approval: null,
   decline: null,

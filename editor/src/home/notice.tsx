@@ -21,7 +21,7 @@ export function StateNotice({
         <div className="notice">
           <h2>A change to what you approved</h2>
           <p>
-            You approved version {approval.revision} on {dayOf(approval.at, locale)} for{' '}
+            You approved revision {approval.revision} on {dayOf(approval.at, locale)} for{' '}
             {money(approval.totalMinor)}. That stands until you approve this change.
           </p>
         </div>

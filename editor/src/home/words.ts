@@ -33,12 +33,12 @@ export const momentOf = (iso: string, locale: string): string =>
 
 export const count = (n: number, one: string, many = `${one}s`): string => `${n} ${n === 1 ? one : many}`;
 
-/** "proposal 1042", and which version where it is not the first. */
+/** "proposal 1042", and which revision where it is not the first. */
 export const proposalInWords = ({
   number,
   revision,
 }: Pick<ShareDocument, 'number' | 'revision'>): string[] =>
-  revision > 1 ? [`proposal ${number}`, `version ${revision}`] : [`proposal ${number}`];
+  revision > 1 ? [`proposal ${number}`, `revision ${revision}`] : [`proposal ${number}`];
 
 /** Parts of one line with dots between, which stay at the ends of lines. */
 export const dotted = (parts: readonly string[]): string => parts.join('\u00a0· ');

@@ -127,10 +127,11 @@ export function GardenPicture(props: Props) {
   );
 }
 
+/** Lights are placed in the sheet's pixels; its picture may be a smaller one of the same shape. */
 const tabsOf = ({ document, pictures }: SharedPage): Tab[] =>
-  document.sheets.flatMap(({ id, name }) => {
+  document.sheets.flatMap(({ id, name, widthPx, heightPx }) => {
     const picture = pictures.find(({ sheetId }) => sheetId === id);
-    return picture ? [{ id, name, picture }] : [];
+    return picture ? [{ id, name, picture: { ...picture, widthPx, heightPx } }] : [];
   });
 
 /** The photo with the most lights; a drawing only where no photo has any. */
