@@ -55,6 +55,14 @@ const aboutMoney: ReadonlySet<string> = new Set<JobEventKind>([
 ]);
 export const isAboutMoney = (kind: string): boolean => aboutMoney.has(kind);
 
+/** A homeowner's reason for a no is often the price. */
+const withoutReason = (data: unknown): unknown =>
+  typeof data === 'object' && data !== null && 'reason' in data ? { ...data, reason: '' } : data;
+
+/** The same for crew, who are told that it was declined, and not why. */
+export const sentenceForCrew = (kind: string, data: unknown): string =>
+  sentenceOf(kind, kind === 'declined' ? withoutReason(data) : data);
+
 /** The sentence of a stored event; of a kind that is not known any more, its name. */
 export function sentenceOf(kind: string, data: unknown): string {
   if (!Object.hasOwn(tellers, kind)) return kind;

@@ -30,10 +30,21 @@ export interface BoardRow {
 /** Cards a column; its count tells how many there are. */
 export const CARDS_PER_STAGE = 50;
 
+/** Faults told in summary `s` of job `j` that somebody answers for: by fault, and by the words that were read. */
+const ACCEPTED = `SELECT count(*)::int
+  FROM jsonb_array_elements(s.summary->'faults') told
+  CROSS JOIN LATERAL (SELECT concat_ws(':', told->>'code', told->>'recordId', told->>'otherId') AS key) named
+  WHERE told->>'severity' = 'fault' AND EXISTS (SELECT 1 FROM fault_acceptances f
+    WHERE f.company_id = $1 AND f.job_id = j.id AND f.withdrawn_at IS NULL AND f.message = told->>'message'
+      AND (f.fault_key = named.key OR starts_with(f.fault_key, named.key || ':')))`;
+
 const OPEN_DUES = `
   SELECT d.company_id, d.proposal_id, d.name, d.position, d.requested_at, d.created_at,
     d.amount_minor - d.reduced_minor - coalesce((
-      SELECT sum(p.amount_minor) FROM payments p
+      SELECT sum(p.amount_minor - coalesce((
+        SELECT sum(r.amount_minor) FROM refunds r
+        WHERE r.company_id = p.company_id AND r.payment_id = p.id AND r.status <> 'failed'), 0))
+      FROM payments p
       WHERE p.company_id = d.company_id AND p.due_id = d.id AND p.status = 'succeeded'), 0) AS open_minor
   FROM dues d WHERE d.company_id = $1`;
 
@@ -78,7 +89,7 @@ export class TimelineRepository {
        SELECT j.id AS "jobId", j.name, c.name AS client, j.stage, j.updated_at AS "updatedAt",
          (SELECT count(*)::int FROM sheets s WHERE s.company_id = $1 AND s.job_id = j.id
             AND s.archived_at IS NULL AND s.status = 'ready') AS sheets,
-         summary.fixtures, summary.faults, p.id AS "proposalId",
+         summary.fixtures, summary.faults - summary.accepted AS faults, p.id AS "proposalId",
          (SELECT count(*)::int FROM questions q WHERE q.company_id = $1 AND q.proposal_id = p.id
             AND q.resolved_at IS NULL) AS "openQuestions",
          (SELECT count(*)::int FROM questions q WHERE q.company_id = $1 AND q.proposal_id = p.id
@@ -99,7 +110,7 @@ export class TimelineRepository {
        JOIN properties pr ON pr.company_id = $1 AND pr.id = j.property_id
        JOIN clients c ON c.company_id = $1 AND c.id = pr.client_id
        LEFT JOIN proposals p ON p.company_id = $1 AND p.job_id = j.id
-       LEFT JOIN LATERAL (SELECT s.fixtures, s.faults FROM plan_summaries s
+       LEFT JOIN LATERAL (SELECT s.fixtures, s.faults, (${ACCEPTED}) AS accepted FROM plan_summaries s
          WHERE s.company_id = $1 AND s.job_id = j.id
          ORDER BY s.plan_version DESC, s.created_at DESC LIMIT 1) summary ON true
        WHERE j.place <= $2

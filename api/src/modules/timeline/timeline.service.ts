@@ -6,7 +6,7 @@ import { jobStages } from '../jobs/jobs.dto.js';
 import { type BookInForce, PriceBooks } from '../pricing/price-books.js';
 import { RevisionViews } from '../proposals/views.js';
 import { nextStep } from './next-step.js';
-import { amountOf, isAboutMoney, sentenceOf } from './sentences.js';
+import { amountOf, isAboutMoney, sentenceForCrew, sentenceOf } from './sentences.js';
 import type { Board, Numbers, NumbersQuery, Timeline } from './timeline.dto.js';
 import { type SentProposal, TimelineRepository } from './timeline.repository.js';
 
@@ -34,7 +34,7 @@ export class TimelineService {
         at: createdAt.toISOString(),
         kind,
         actor: actorName,
-        sentence: sentenceOf(kind, data),
+        sentence: seesMoney ? sentenceOf(kind, data) : sentenceForCrew(kind, data),
         amountMinor: seesMoney ? amountOf(data) : null,
       }));
     items.push({
