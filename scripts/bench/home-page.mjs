@@ -90,7 +90,7 @@ export async function run(print, context) {
 
 const kilo = (/** @type {number} */ bytes) => `${(bytes / 1000).toFixed(1)} kB`;
 
-const asset = (/** @type {string} */ path) => readFile(inRoot('editor/dist', path));
+const asset = (/** @type {string} */ path) => readFile(inRoot('editor/dist', path.slice(1)));
 
 /** The proposal that the page's own tests use. */
 async function madeUp() {
