@@ -156,8 +156,9 @@ export class MoneyPapers {
 }
 
 /**
- * The tax in what brings the sum of payments from one amount to another. Each share is the difference of two
- * rounded sums, so that all of them add up to the tax of the whole when the whole is paid.
+ * The tax in what brings the sum of payments from one amount to another, at the share that tax has in what is
+ * agreed now. Each is the difference of two rounded sums, so that they add up to the tax of the whole when the
+ * whole is paid, as long as no change order alters that share.
  */
 export function taxBetween(
   { taxMinor, totalMinor }: Pick<Agreement, 'taxMinor' | 'totalMinor'>,
