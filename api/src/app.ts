@@ -2,6 +2,7 @@ import 'reflect-metadata';
 import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import cookieParser from 'cookie-parser';
+import { LinkGate } from './access/link-gate.js';
 import { AppModule } from './app.module.js';
 import { type Env, isLocal } from './config/env.js';
 import { jsonBodies } from './http/bodies.js';
@@ -11,7 +12,9 @@ import { serveOpenApi } from './http/openapi.js';
 import { ProblemFilter } from './http/problem.filter.js';
 import { requestLog } from './http/request-log.js';
 import { securityHeaders } from './http/security-headers.js';
+import { sharePage } from './http/share-page.js';
 import { validationPipe } from './http/validation.pipe.js';
+import { SharePageFacts } from './modules/share/share-page-facts.js';
 
 /** The whole HTTP application, not yet listening. */
 export async function createApp(env: Env): Promise<NestExpressApplication> {
@@ -27,7 +30,9 @@ export async function createApp(env: Env): Promise<NestExpressApplication> {
   app.use(securityHeaders(env));
   app.use(cookieParser());
   app.use(jsonBodies);
-  app.use(editorFiles(isLocal(env) ? env.EDITOR_FILES : undefined));
+  const files = isLocal(env) ? env.EDITOR_FILES : undefined;
+  app.use(sharePage(app.get(LinkGate), app.get(SharePageFacts, { strict: false }), files));
+  app.use(editorFiles(files));
   app.useGlobalPipes(validationPipe());
   app.useGlobalFilters(new ProblemFilter());
   app.enableShutdownHooks();

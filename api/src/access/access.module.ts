@@ -8,6 +8,7 @@ import { SameSiteGuard } from '../http/same-site.guard.js';
 import { AccessGuard } from './access.guard.js';
 import { JwtStrategy } from './jwt.strategy.js';
 import { LinkGate } from './link-gate.js';
+import { LinkThrottle } from './link-throttle.js';
 import { LinksRepository } from './links.repository.js';
 import { MembershipsRepository } from './memberships.repository.js';
 import { PasswordAttemptsRepository } from './password-attempts.repository.js';
@@ -42,6 +43,7 @@ const shared = [
   providers: [
     ...shared,
     PasswordAttemptsRepository,
+    LinkThrottle,
     JwtStrategy,
     { provide: APP_GUARD, useClass: SameSiteGuard },
     { provide: APP_GUARD, useClass: AccessGuard },

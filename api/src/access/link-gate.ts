@@ -6,6 +6,7 @@ import { ENV } from '../config/config.module.js';
 import { type Env, isLocal } from '../config/env.js';
 import { AppError, notFound } from '../http/app-error.js';
 import type { Guest } from './guest.js';
+import { LinkThrottle } from './link-throttle.js';
 import { type LinkRow, LinksRepository } from './links.repository.js';
 import { hashToken } from './one-time-token.js';
 
@@ -29,12 +30,19 @@ export class LinkGate {
     @Inject(ENV) private readonly env: Env,
     @Inject(JwtService) private readonly jwt: JwtService,
     @Inject(LinksRepository) private readonly links: LinksRepository,
+    @Inject(LinkThrottle) private readonly throttle: LinkThrottle,
   ) {}
 
-  /** @throws AppError 404 for a token that was never given, 410 for one that was revoked or has expired */
-  async byToken(token: string): Promise<Guest> {
-    if (!tokenSchema.safeParse(token).success) throw unknown();
-    return liveOrThrow(await this.links.byTokenHash(hashToken(token)));
+  /**
+   * @param address the caller's, by which wrong tokens are counted
+   * @throws AppError 404 for a token that was never given, 410 for one that was revoked or has expired, 429 for
+   * an address that was wrong too often
+   */
+  async byToken(token: string, address: string): Promise<Guest> {
+    this.throttle.demandPatience(address);
+    const row = tokenSchema.safeParse(token).success ? await this.links.byTokenHash(hashToken(token)) : null;
+    if (!row) this.throttle.countWrong(address);
+    return liveOrThrow(row);
   }
 
   /** @throws AppError 404 without a cookie for this link, 410 for a link that is no longer valid */
@@ -55,7 +63,12 @@ export class LinkGate {
       secure: !isLocal(this.env),
       path: `/api/share/${linkId}`,
     };
-    response.cookie(LINK_COOKIE, this.jwt.sign({ lid: linkId }), options);
+    response.cookie(LINK_COOKIE, this.sign(linkId), options);
+  }
+
+  /** What the cookie of a link holds. */
+  sign(linkId: string): string {
+    return this.jwt.sign({ lid: linkId });
   }
 }
 

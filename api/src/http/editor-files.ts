@@ -2,10 +2,11 @@ import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import express, { type RequestHandler, Router } from 'express';
 
-const OWN = fileURLToPath(new URL('../../../editor/dist', import.meta.url));
+/** The folder of the built editor. */
+export const BUILT_EDITOR = fileURLToPath(new URL('../../../editor/dist', import.meta.url));
 
 /** Serves the built editor: hashed assets for good, the page itself asked for anew each time. */
-export function editorFiles(folder = OWN): RequestHandler {
+export function editorFiles(folder = BUILT_EDITOR): RequestHandler {
   const router = Router();
   router.use(
     '/assets',

@@ -3,6 +3,12 @@ import type { RequestHandler } from 'express';
 import type { Logger } from 'pino';
 import { pinoHttp } from 'pino-http';
 
+/** A homeowner's link: whoever reads the log could open the page by it. */
+const LINK = /^\/+p\/.*/is;
+
+/** What is logged of an address: its path, without query and without secrets. */
+export const loggedPath = (url: string): string => (url.split('?')[0] ?? '').replace(LINK, '/p/…');
+
 /** Gives each request an id (also in the answer) and logs one line for it: path without its query. */
 export function requestLog(logger: Logger): RequestHandler {
   return pinoHttp({
@@ -19,7 +25,7 @@ export function requestLog(logger: Logger): RequestHandler {
       req: (request: { id: string; method: string; url: string }) => ({
         id: request.id,
         method: request.method,
-        path: request.url.split('?')[0],
+        path: loggedPath(request.url),
       }),
       res: (response: { statusCode: number }) => ({ status: response.statusCode }),
       err: (error: { type?: string }) => ({ type: error.type }),

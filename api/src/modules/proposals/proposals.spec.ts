@@ -305,11 +305,11 @@ describe('sending', () => {
     const gate = test.app.get(LinkGate, { strict: false });
     const token = tokenIn((await mailTo(to))[0]!);
     const [link] = (await proposalFor(agent, job.jobId)).links;
-    expect(await gate.byToken(token)).toMatchObject({ linkId: link?.id, jobId: job.jobId });
+    expect(await gate.byToken(token, '192.0.2.1')).toMatchObject({ linkId: link?.id, jobId: job.jobId });
     await post(agent, path(`links/${link?.id}/resend`)).expect(200);
     expect((await mailTo(to)).map(tokenIn)).toEqual([token, token]);
     await agent.post(path(`links/${link?.id}/revoke`)).expect(200);
-    await expect(gate.byToken(token)).rejects.toMatchObject({ status: 410 });
+    await expect(gate.byToken(token, '192.0.2.1')).rejects.toMatchObject({ status: 410 });
     expect((await post(agent, path(`links/${link?.id}/resend`)).expect(409)).body.code).toBe('link-gone');
     await worker
       .get(Remind, { strict: false })

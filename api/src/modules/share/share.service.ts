@@ -1,48 +1,155 @@
-import { Injectable } from '@nestjs/common';
+import { Inject, Injectable } from '@nestjs/common';
 import type { Guest } from '../../access/guest.js';
-import { AppError } from '../../http/app-error.js';
+import { Database } from '../../database/database.js';
+import { notFound } from '../../http/app-error.js';
 import type { StoredFile } from '../../http/send-file.js';
+import { Dues } from '../payments/dues.js';
+import { differencesOf } from '../proposals/differences.js';
+import { ProposalLinks } from '../proposals/links.js';
+import {
+  type ApprovedRevision,
+  ProposalStore,
+  picturesOf,
+  type ShownRevision,
+} from '../proposals/proposal-store.js';
 import type { NewMessage, Question } from '../proposals/proposals.dto.js';
+import { ProposalsRepository } from '../proposals/proposals.repository.js';
+import type { Differences } from '../proposals/revision-document.js';
+import { QuestionThreads } from '../questions/question-threads.js';
+import { JobEvents } from '../timeline/job-events.repository.js';
+import { Answers } from './answers.js';
 import type { GuestCaller } from './guest-caller.js';
+import { sentencesOf } from './sentences.js';
 import type { Approve, Ask, Checkout, Decline, SharedPage } from './share.dto.js';
+import { ShareRepository } from './share.repository.js';
+import { pictureUrl } from './share-addresses.js';
+import { SharePapers } from './share-papers.js';
+import { ShareQuestions } from './share-questions.js';
+import { ShownProposal } from './shown-proposal.js';
 
-const notBuilt = () => new AppError(501, 'not-built', 'This is not built yet.');
-
+/** What a homeowner sees and does by a link. Reading writes nothing. */
 @Injectable()
 export class ShareService {
-  async page(_guest: Guest, _linkId: string): Promise<SharedPage> {
-    throw notBuilt();
+  constructor(
+    @Inject(Database) private readonly database: Database,
+    @Inject(ShownProposal) private readonly shown: ShownProposal,
+    @Inject(ProposalStore) private readonly store: ProposalStore,
+    @Inject(ProposalsRepository) private readonly proposals: ProposalsRepository,
+    @Inject(ProposalLinks) private readonly links: ProposalLinks,
+    @Inject(ShareRepository) private readonly repository: ShareRepository,
+    @Inject(QuestionThreads) private readonly questions: QuestionThreads,
+    @Inject(ShareQuestions) private readonly asking: ShareQuestions,
+    @Inject(Answers) private readonly answers: Answers,
+    @Inject(SharePapers) private readonly papers: SharePapers,
+    @Inject(Dues) private readonly dues: Dues,
+    @Inject(JobEvents) private readonly events: JobEvents,
+  ) {}
+
+  async page(guest: Guest, linkId: string): Promise<SharedPage> {
+    demandOwn(guest, linkId);
+    const { companyId, proposalId } = guest;
+    const shown = await this.shown.of(guest);
+    const { row, document } = shown;
+    const approved = await this.store.approved(companyId, proposalId);
+    const kept = picturesOf(row);
+    const { plan: _plan, ...shownDocument } = document;
+    return {
+      ...(await this.shown.standingOf(shown)),
+      recipient: guest.name,
+      revisionId: row.id,
+      document: shownDocument,
+      hash: row.hash,
+      pictures: document.sheets
+        .filter(({ id }) => kept.has(id))
+        .map(({ id, widthPx, heightPx }) => ({
+          sheetId: id,
+          url: pictureUrl(linkId, id),
+          widthPx,
+          heightPx,
+        })),
+      differences: approved && differencesFrom(approved, shown),
+      approval: approved && {
+        typedName: approved.approval.typedName,
+        at: approved.approval.approvedAt.toISOString(),
+        groups: approved.approval.groups as string[],
+        totalMinor: approved.approval.totalMinor,
+        revision: approved.row.revision,
+      },
+      sentences: sentencesOf(document),
+      questions: await this.questions.ofProposal(companyId, proposalId),
+      dues: await this.dues.shared(companyId, proposalId),
+      papers: await this.papers.list(guest, shown),
+    };
   }
 
-  async opened(_guest: Guest, _linkId: string): Promise<void> {
-    throw notBuilt();
+  /** A person looks at it: told by their gesture, since programs open links too. */
+  async opened(guest: Guest, linkId: string): Promise<void> {
+    demandOwn(guest, linkId);
+    const { companyId, jobId, name } = guest;
+    await this.database.transaction(async () => {
+      const { row } = await this.shown.of(guest);
+      const first = await this.repository.seen(companyId, linkId);
+      if (!first) return;
+      const { revision } = row;
+      await this.events.note({ companyId, jobId }, 'proposal-opened', { revision }, { id: null, name });
+    });
   }
 
-  async picture(_guest: Guest, _linkId: string, _sheetId: string): Promise<StoredFile> {
-    throw notBuilt();
+  async picture(guest: Guest, linkId: string, sheetId: string): Promise<StoredFile> {
+    demandOwn(guest, linkId);
+    return this.papers.picture(guest, await this.shown.of(guest), sheetId);
   }
 
-  async paper(_guest: Guest, _linkId: string, _paperId: string): Promise<StoredFile> {
-    throw notBuilt();
+  async paper(guest: Guest, linkId: string, paperId: string): Promise<StoredFile> {
+    demandOwn(guest, linkId);
+    return this.papers.file(guest, await this.shown.of(guest), paperId);
   }
 
-  async ask(_guest: Guest, _linkId: string, _input: Ask): Promise<Question> {
-    throw notBuilt();
+  async ask(guest: Guest, linkId: string, input: Ask): Promise<Question> {
+    demandOwn(guest, linkId);
+    return this.database.transaction(() => this.asking.ask(guest, input));
   }
 
-  async reply(_guest: Guest, _linkId: string, _questionId: string, _input: NewMessage): Promise<Question> {
-    throw notBuilt();
+  async reply(guest: Guest, linkId: string, questionId: string, { text }: NewMessage): Promise<Question> {
+    demandOwn(guest, linkId);
+    return this.database.transaction(() => this.asking.reply(guest, questionId, text));
   }
 
-  async approve(_guest: Guest, _linkId: string, _input: Approve, _caller: GuestCaller): Promise<SharedPage> {
-    throw notBuilt();
+  async approve(guest: Guest, linkId: string, input: Approve, caller: GuestCaller): Promise<SharedPage> {
+    demandOwn(guest, linkId);
+    return this.database.transaction(async () => {
+      await this.answers.approve(guest, input, caller);
+      return this.page(guest, linkId);
+    });
   }
 
-  async decline(_guest: Guest, _linkId: string, _input: Decline): Promise<SharedPage> {
-    throw notBuilt();
+  async decline(guest: Guest, linkId: string, input: Decline): Promise<SharedPage> {
+    demandOwn(guest, linkId);
+    return this.database.transaction(async () => {
+      await this.answers.decline(guest, input);
+      return this.page(guest, linkId);
+    });
   }
 
-  async checkout(_guest: Guest, _linkId: string, _dueId: string): Promise<Checkout> {
-    throw notBuilt();
+  /** The card service brings the payer back to the page of the link that they came by. */
+  async checkout(guest: Guest, linkId: string, dueId: string): Promise<Checkout> {
+    demandOwn(guest, linkId);
+    const link = await this.proposals.link(guest.companyId, linkId);
+    if (!link) throw notFound('This proposal');
+    return this.dues.checkout(guest, dueId, this.links.urlOf(link));
   }
+}
+
+/** The guard has compared them already; nothing here hangs on that alone. */
+function demandOwn(guest: Guest, linkId: string): void {
+  if (guest.linkId !== linkId) throw notFound('This proposal');
+}
+
+/** Null where what is shown is what was approved. The sum before is what was agreed, of the parts taken. */
+function differencesFrom(approved: ApprovedRevision, shown: ShownRevision): Differences | null {
+  if (approved.row.id === shown.row.id) return null;
+  return {
+    ...differencesOf(approved.document, shown.document),
+    wasTotalMinor: approved.approval.totalMinor,
+  };
 }
