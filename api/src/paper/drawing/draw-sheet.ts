@@ -96,6 +96,8 @@ export function drawSheet(
     const points = area.points.map(onPage);
     return points.every((point) => point !== null) ? { area, points } : [];
   });
+  // What lies within another is drawn over it: a pool on its lawn.
+  areas.sort((a, b) => sizeOf(b.points) - sizeOf(a.points));
   doc.save();
   doc.rect(frame.left, frame.top, frame.right - frame.left, frame.bottom - frame.top).clip();
   if (!overPicture) for (const { area, points } of areas) drawArea(paper, area.use, points, false);
@@ -179,6 +181,15 @@ function nameAreas(
     paper.lineCentred(name, place.x, place.y - height / 2, NAME);
   }
 }
+
+/** Twice the area within, by the shoelace formula. */
+const sizeOf = (points: readonly Pt[]): number =>
+  Math.abs(
+    points.reduce((sum, a, i) => {
+      const b = points[(i + 1) % points.length] ?? a;
+      return sum + a.x * b.y - b.x * a.y;
+    }, 0),
+  );
 
 const corners = ({ left, top, right, bottom }: Box): Pt[] => [
   { x: left, y: top },

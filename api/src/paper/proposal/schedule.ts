@@ -1,3 +1,4 @@
+import { recordOf } from '@lampwright/geometry/plan';
 import { scheduleOf } from '@lampwright/geometry/price';
 import type { ShownLight } from '../../modules/proposals/revision-document.js';
 import { shortTag } from '../drawing/sheet-content.js';
@@ -25,26 +26,22 @@ export function schedule(writing: Writing): void {
   const included = document.lights.filter(({ groupId }) => groupId === null || taken.has(groupId));
   const rest = document.lights.filter(({ groupId }) => groupId !== null && !taken.has(groupId));
   if (document.lights.length === 0) paper.flow('There are no lights on this plan.', QUIET);
-  lightTable(writing, included, lamps);
+  lightTable(writing, included);
   if (rest.length > 0) {
     heading(paper, 'Offered as additions, not included');
-    lightTable(writing, rest, lamps);
+    lightTable(writing, rest);
   }
   lampTable(writing, included, lamps);
 }
 
-function lightTable(
-  writing: Writing,
-  lights: readonly ShownLight[],
-  lamps: ReadonlyMap<string, string>,
-): void {
+function lightTable(writing: Writing, lights: readonly ShownLight[]): void {
   if (lights.length === 0) return;
   const { paper, say, plan } = writing;
   const rows: Row[] = lights.map((light) => {
     const { watts, lumens, beamDegrees, cctKelvin } = light.technical;
     const short = shortTag(plan, light);
-    const lamp = lamps.get(light.recordId) ?? '';
-    const below = [lamp === '' ? '' : `with ${lamp}`, light.lights === '' ? '' : `lights ${light.lights}`];
+    // What the designer called it; the stock phrase of its kind would only repeat itself down the page.
+    const called = recordOf(plan, light.recordId, 'fixture')?.name ?? '';
     const figure = (value: number | null, unit: string) =>
       value === null ? DASH : `${say.number(value)}${unit}`;
     return {
@@ -57,7 +54,7 @@ function lightTable(
         figure(beamDegrees, '°'),
         figure(cctKelvin, '\u00a0K'),
       ],
-      below: [short === light.tag ? '' : light.tag, below.filter((part) => part !== '').join('; ')],
+      below: [short === light.tag ? '' : light.tag, called === light.tag ? '' : called],
     };
   });
   const count = lights.reduce((sum, { quantity }) => sum + quantity, 0);
