@@ -49,6 +49,9 @@ export interface ReadyJob {
   readonly lights: readonly string[];
 }
 
+/** Companies that have a price for all that such a job needs. */
+const priced = new WeakSet<PricedCompany>();
+
 /** A job that is drawn, wired and priced, on a sheet with a picture: a proposal can be made of it. */
 export async function addReadyJob(
   test: TestApp,
@@ -73,7 +76,8 @@ export async function addReadyJob(
     const [first] = plan.cable(CABLE, [box, ...lights]);
     plan.land(first ?? '', 'Walk', '12V', 'C1');
   });
-  await priceAll(company, jobId);
+  if (!priced.has(company)) await priceAll(company, jobId);
+  priced.add(company);
   const { faults } = await quoteFor(company.owner.agent, jobId);
   for (const { key, message } of faults)
     await company.designer.agent
@@ -105,17 +109,20 @@ export async function drawOn(
     });
 }
 
+let picture: Promise<Buffer> | null = null;
 /** Noise: as hard to make small as any garden. */
-async function keepPicture(test: TestApp, companyId: string, jobId: string, sheetId: string): Promise<void> {
+function gardenPicture(): Promise<Buffer> {
   const noise = { type: 'gaussian', mean: 128, sigma: 40 } as const;
-  const picture = await sharp({
-    create: { width: WIDTH, height: HEIGHT, channels: 3, background: 'white', noise },
-  })
-    .blur(1)
+  picture ??= sharp({ create: { width: WIDTH, height: HEIGHT, channels: 3, background: 'white', noise } })
+    .blur(4)
     .jpeg()
     .toBuffer();
+  return picture;
+}
+
+async function keepPicture(test: TestApp, companyId: string, jobId: string, sheetId: string): Promise<void> {
   const imageKey = `${companyId}/sheets/${sheetId}/image.jpg`;
-  await test.app.get(ObjectStorage, { strict: false }).put(imageKey, picture, 'image/jpeg');
+  await test.app.get(ObjectStorage, { strict: false }).put(imageKey, await gardenPicture(), 'image/jpeg');
   await test.database.queries.insert(sheets).values({
     id: sheetId,
     companyId,
