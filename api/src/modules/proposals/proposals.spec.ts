@@ -1,6 +1,6 @@
 import { createHash, randomUUID } from 'node:crypto';
 import type { INestApplicationContext } from '@nestjs/common';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import type { Agent, TestApp } from '../../../test/harness.js';
 import { LinkGate } from '../../access/link-gate.js';
 import { hashToken } from '../../access/one-time-token.js';
@@ -27,6 +27,9 @@ import {
   untilRevision,
 } from './proposals.testkit.js';
 import { revisionDocumentSchema } from './revision-document.js';
+
+// Plans are solved and PDFs made here: on a busy machine that takes its time.
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 120_000 });
 
 let test: TestApp;
 let worker: INestApplicationContext;
