@@ -6,11 +6,20 @@ import { fileURLToPath } from 'node:url';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { hashPassword } from '../src/access/password.js';
 import { type Role, roles } from '../src/access/permissions.js';
+import { writeShell } from '../src/modules/share/share.testkit.js';
 import { type MailCatcher, startMailCatcher } from '../src/ports/mail/catcher.js';
 import { type FakeS3, startFakeS3 } from '../src/ports/storage/fake-s3.js';
 import { type Audience, hiddenElsewhere, type RouteCase, type ValidRequest } from './access/route-case.js';
 import { serverRoutes } from './access/server-routes.js';
-import { MARK, makeWorld, PASSWORD, type World, walkCardService } from './access/world.js';
+import {
+  guestOf,
+  MARK,
+  makeWorld,
+  otherGuest,
+  PASSWORD,
+  type World,
+  walkCardService,
+} from './access/world.js';
 import { type Agent, startTestApp, type TestApp } from './harness.js';
 import type { TestPerson } from './people.js';
 
@@ -36,10 +45,11 @@ const callers = [
   'owner elsewhere',
   'designer elsewhere',
   'crew elsewhere',
+  'guest of another link',
 ] as const;
 type Caller = (typeof callers)[number];
 
-const rolesOf: Readonly<Record<Exclude<Audience, 'anyone' | 'signed-in'>, readonly Role[]>> = {
+const rolesOf: Readonly<Record<Exclude<Audience, 'anyone' | 'signed-in' | 'link'>, readonly Role[]>> = {
   everyone: ['owner', 'designer', 'crew'],
   planners: ['owner', 'designer'],
   owners: ['owner'],
@@ -51,13 +61,42 @@ function standing(caller: Caller): { role: Role; elsewhere: boolean } | null {
   return role ? { role, elsewhere: caller.endsWith('elsewhere') } : null;
 }
 
+/** Those who came by the link that a route names. Null: they are answered as the route says. */
+const holders = [
+  { link: 'the live link', status: null },
+  { link: 'the link, expired', status: 410 },
+  { link: 'the link, revoked', status: 410 },
+] as const;
+
+/** Ends a link as its name says, and gives a browser that came by it before. */
+async function end(test: TestApp, link: (typeof holders)[number]['link'], linkId: string): Promise<Agent> {
+  const set = (column: string) =>
+    test.database.executeSql(
+      `UPDATE proposal_links SET ${column} = now() - interval '1 second' WHERE id = $1`,
+      [linkId],
+    );
+  switch (link) {
+    case 'the live link':
+      break;
+    case 'the link, expired':
+      await set('expires_at');
+      break;
+    case 'the link, revoked':
+      await set('revoked_at');
+      break;
+  }
+  return guestOf(test, linkId).agent;
+}
+
 type Expectation = 'allowed' | 'not signed in' | 'not allowed' | 'hidden';
 
 /** What a route must answer to a caller, by its table entry alone. */
 function expected(route: RouteCase, caller: Caller): Expectation {
   const { audience } = route;
   if (audience === 'anyone') return 'allowed';
-  if (caller === 'signed out') return 'not signed in';
+  // Who does not hold the link is not told whether there is one.
+  if (audience === 'link') return 'hidden';
+  if (caller === 'signed out' || caller === 'guest of another link') return 'not signed in';
   const stands = standing(caller);
   const mayUse = audience === 'signed-in' || (stands !== null && rolesOf[audience].includes(stands.role));
   if (!mayUse) return 'not allowed';
@@ -65,8 +104,10 @@ function expected(route: RouteCase, caller: Caller): Expectation {
   return !ours && hiddenElsewhere(route) ? 'hidden' : 'allowed';
 }
 
+type Someone = Pick<TestPerson, 'agent' | 'cookie'>;
+
 async function personOf(world: World, caller: Caller): Promise<TestPerson | null> {
-  if (caller === 'signed out') return null;
+  if (caller === 'signed out' || caller === 'guest of another link') return null;
   const stands = standing(caller);
   if (!stands) return world.nobody;
   return stands.elsewhere ? world.other(stands.role) : world.members[stands.role];
@@ -91,7 +132,9 @@ describe('the access walk', () => {
       secretAccessKey: 'test',
     });
     catcher = await startMailCatcher({ smtpPort: 0, httpPort: 0, dir: join(dir, 'mail') });
+    await writeShell(join(dir, 'editor'));
     test = await startTestApp({
+      EDITOR_FILES: join(dir, 'editor'),
       S3_ENDPOINT: storage.endpoint,
       SMTP_URL: catcher.smtpUrl,
       MAIL_VIEWER_URL: catcher.httpUrl,
@@ -114,7 +157,8 @@ describe('the access walk', () => {
   describe.each(routeCases)('$route', (route) => {
     it.each(callers)('for %s', async (caller) => {
       const expectation = expected(route, caller);
-      const { world, request, person } = await prepare(route, caller, expectation);
+      const { world, request, person: known } = await prepare(route, caller, expectation);
+      const person: Someone | null = caller === 'guest of another link' ? await otherGuest(world) : known;
       const answer = route.endless
         ? await begin(test.url, person, addressOf(route.route, request))
         : await send(person?.agent ?? test.agent(), route.route, request);
@@ -134,13 +178,26 @@ describe('the access walk', () => {
           expect(answer.status, told).toBe(404);
           break;
       }
-      if (caller === 'no company' || caller.endsWith('elsewhere')) expectNothingOfOurs(route, world, answer);
+      if (caller === 'no company' || caller.endsWith('elsewhere') || caller.endsWith('link'))
+        expectNothingOfOurs(route, world, answer);
     });
+
+    if (route.audience === 'link')
+      it.each(holders)('for whoever holds $link', async ({ link, status }) => {
+        const world = await makeWorld(test, passwordHash);
+        const request = (await route.request?.(world, null)) ?? {};
+        const { linkId = '' } = request.params ?? {};
+        const answer = await send(await end(test, link, linkId), route.route, request);
+        expect(answer.status, `${answer.status} ${answer.text}`).toBe(status ?? route.answers);
+        if (status !== null) expectNothingOfOurs(route, world, answer);
+      });
 
     if (!route.route.startsWith('GET '))
       it('for another site’s page', async () => {
         const { world, request } = await prepare(route, 'owner', 'not allowed');
-        const { agent } = world.members.owner;
+        const { linkId } = request.params ?? {};
+        const { agent } =
+          route.audience === 'link' && linkId !== undefined ? guestOf(test, linkId) : world.members.owner;
         const answer = await send(agent, route.route, request, { 'Sec-Fetch-Site': 'cross-site' });
         expect(answer.status).toBe(403);
         expect(answer.body.code).toBe('cross-site');
@@ -183,7 +240,7 @@ interface Answer {
 }
 
 /** Waits for the beginning of an answer, and leaves if it is one without an end. */
-async function begin(url: string, person: TestPerson | null, address: string): Promise<Answer> {
+async function begin(url: string, person: Someone | null, address: string): Promise<Answer> {
   const leave = new AbortController();
   const answer = await fetch(url + address, {
     headers: person ? { Cookie: person.cookie } : {},

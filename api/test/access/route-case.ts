@@ -6,8 +6,9 @@ import type { World } from './world.js';
  * - anyone: signed in or not
  * - signed-in: whatever their company, or none
  * - everyone: each role of a company · planners: owner and designer · owners
+ * - link: whoever holds the live link that the route names as `linkId`, and nobody else
  */
-export type Audience = 'anyone' | 'signed-in' | 'everyone' | 'planners' | 'owners';
+export type Audience = 'anyone' | 'signed-in' | 'everyone' | 'planners' | 'owners' | 'link';
 
 /** A request that succeeds for those who may make it. */
 export interface ValidRequest {

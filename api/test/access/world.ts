@@ -1,4 +1,6 @@
 import type { Role } from '../../src/access/permissions.js';
+import { addProposal } from '../../src/modules/payments/payments.testkit.js';
+import { addLink, linkCookie } from '../../src/modules/share/share.testkit.js';
 import type { Agent, TestApp } from '../harness.js';
 import { addCompany, addPerson, type TestPerson } from '../people.js';
 
@@ -66,4 +68,18 @@ export async function makeWorld(test: TestApp, passwordHash: string): Promise<Wo
       return (rows[0] as { email: string }).email;
     },
   };
+}
+
+/** Somebody without an account who holds a live link to another proposal of ours. */
+export async function otherGuest({ test, companyId }: World): Promise<{ agent: Agent; cookie: string }> {
+  const { linkId } = await addLink(test, await addProposal(test, companyId, `${MARK} other job`));
+  return guestOf(test, linkId);
+}
+
+/** Somebody who holds the cookie of a link, and sends it to whatever address. */
+export function guestOf(test: TestApp, linkId: string): { agent: Agent; cookie: string } {
+  const cookie = linkCookie(test, linkId);
+  const agent = test.agent();
+  agent.set('Cookie', cookie);
+  return { agent, cookie };
 }
