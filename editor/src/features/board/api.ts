@@ -1,13 +1,8 @@
 import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
 import { affairsChanged, boardKey } from '../../lib/affairs';
-import { type Answer, answer, server } from '../../lib/api/client';
+import { answer, server } from '../../lib/api/client';
 import { jobKey } from '../../lib/jobs';
-import type { Stage } from '../../lib/stages';
-import { moved } from './move';
-
-export type Board = Answer<'/api/board', 'get'>;
-export type Column = Board['columns'][number];
-export type Card = Column['cards'][number];
+import { type Board, type Moving, moved } from './move';
 
 /** Others work on it too, and homeowners answer at any hour. */
 const REFRESH_MS = 30_000;
@@ -18,11 +13,6 @@ export const boardQuery = queryOptions({
   staleTime: 0,
   refetchInterval: REFRESH_MS,
 });
-
-export interface Moving {
-  readonly jobId: string;
-  readonly to: Stage;
-}
 
 /** Moves a job to another stage: on the screen at once, back again if the server refuses. */
 export function useMoveJob() {

@@ -10,8 +10,9 @@ import { count } from '../../lib/format';
 import { moneyOf } from '../../lib/money';
 import { proposalWord } from '../../lib/proposal-states';
 import { type Stage, stageLabel, stageMeaning, stageOptions, stageSchema, stages } from '../../lib/stages';
-import { type Board, type Card, type Column, useMoveJob } from './api';
+import { useMoveJob } from './api';
 import styles from './board.module.css';
+import type { Board, Card, Column } from './move';
 
 interface BoardProps {
   readonly board: Board;

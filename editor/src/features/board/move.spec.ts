@@ -1,6 +1,5 @@
 import { expect, it } from 'vitest';
-import type { Board, Card } from './api';
-import { moved } from './move';
+import { type Board, type Card, moved } from './move';
 
 const card = (jobId: string): Card => ({
   jobId,

@@ -1,4 +1,14 @@
-import type { Board, Moving } from './api';
+import type { Answer } from '../../lib/api/client';
+import type { Stage } from '../../lib/stages';
+
+export type Board = Answer<'/api/board', 'get'>;
+export type Column = Board['columns'][number];
+export type Card = Column['cards'][number];
+
+export interface Moving {
+  readonly jobId: string;
+  readonly to: Stage;
+}
 
 /** The board with one job in another stage, on top of its column; itself where the job is not on it. */
 export function moved(board: Board, { jobId, to }: Moving): Board {
