@@ -18,8 +18,26 @@ import type {
   JobPricingEdit,
   Materials,
   QuoteAnswer,
+  QuoteTerms,
 } from './pricing.dto.js';
 import { Quotes } from './quotes.js';
+
+/** What whoever prices a job may know of the book, costs or not. */
+const termsOf = ({
+  taxes,
+  defaultTaxId,
+  stages,
+  depositCap,
+  controlItemId,
+  rates,
+}: PriceBook): QuoteTerms => ({
+  taxes,
+  defaultTaxId,
+  stages,
+  depositCap,
+  controlItemId,
+  aimingVisits: rates.aimingVisits,
+});
 
 @Injectable()
 export class JobPricingService {
@@ -82,6 +100,7 @@ export class JobPricingService {
       pricingVersion,
       seesCosts: sees,
       quote: sees ? quote : withoutCosts(quote),
+      terms: termsOf(book),
       faults: [...faults],
       checks: [...checks],
       obstacles: [...obstacles],

@@ -89,11 +89,23 @@ export const obstacleSchema = z.strictObject({
 });
 export type Obstacle = z.infer<typeof obstacleSchema>;
 
+/** Of the price book: what a job's terms are chosen from, and what holds where it says nothing. No rates. */
+export const quoteTermsSchema = z.strictObject({
+  taxes: priceBookSchema.shape.taxes,
+  defaultTaxId: priceBookSchema.shape.defaultTaxId,
+  stages: priceBookSchema.shape.stages,
+  depositCap: priceBookSchema.shape.depositCap,
+  controlItemId: priceBookSchema.shape.controlItemId,
+  aimingVisits: priceBookSchema.shape.rates.shape.aimingVisits,
+});
+export type QuoteTerms = z.infer<typeof quoteTermsSchema>;
+
 export const quoteAnswerSchema = z.strictObject({
   planVersion: version,
   pricingVersion: version,
   seesCosts: z.boolean(),
   quote: quoteSchema,
+  terms: quoteTermsSchema,
   /** Of the whole plan. */
   faults: z.array(openFaultSchema),
   checks: z.array(combinationCheckSchema),

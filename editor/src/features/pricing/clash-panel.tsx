@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { Button } from '../../components/button';
 import type { MoneyManner } from '../../lib/money';
 import { type ClashNames, clashTitle, clashValue } from './clash-words';
@@ -16,11 +16,19 @@ interface ClashPanelProps {
 /** Two people changed the same: both are shown, and one chooses. Until then nothing more is saved. */
 export function ClashPanel({ store, state: { clash, pricing }, names, manner }: ClashPanelProps) {
   const [sides, setSides] = useState<ReadonlyMap<string, Side>>(new Map());
+  const heading = useRef<HTMLHeadingElement>(null);
+  const asked = clash !== null;
+  useEffect(() => {
+    // It stands at the head of the page: whoever is at work further down has to see it.
+    if (asked) heading.current?.focus();
+  }, [asked]);
   if (clash === null) return null;
   const sideOf = (key: string): Side => sides.get(key) ?? 'mine';
   return (
     <section className={styles.clash} aria-label="Changed by two people">
-      <h2>Somebody else changed the same</h2>
+      <h2 ref={heading} tabIndex={-1}>
+        Somebody else changed the same
+      </h2>
       <p className="quiet">Choose what counts. Your other changes wait here until then.</p>
       {clash.parts.map((part) => {
         const key = clashKey(part);

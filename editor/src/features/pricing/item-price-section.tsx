@@ -28,7 +28,12 @@ export function ItemPriceSection({ itemId, category, editable }: ItemPriceSectio
       <div className={styles.body}>
         {prices.isPending && <SkeletonRows rows={4} label="Loading the price" />}
         {prices.isError && <Problem error={prices.error} onRetry={() => void prices.refetch()} />}
-        {prices.data && editable && (
+        {prices.data && editable && !prices.data.seesCosts && (
+          <p className="quiet">
+            Prices are changed by those who see costs: an owner can let you under Price book.
+          </p>
+        )}
+        {prices.data && editable && prices.data.seesCosts && (
           <ItemPriceForm
             key={prices.data.items.find((entry) => entry.itemId === itemId)?.since ?? 'none'}
             itemId={itemId}

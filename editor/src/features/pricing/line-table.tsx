@@ -176,7 +176,7 @@ function LineRow({
         {own.map(({ code, message }) => (
           <span key={code} className={styles.warning}>
             {message}{' '}
-            {editable && code === 'no-price' && itemId !== null && (
+            {editable && seesCosts && code === 'no-price' && itemId !== null && (
               <button type="button" className={styles.inText} onClick={() => onPriceItem(itemId, line.name)}>
                 Price it
               </button>

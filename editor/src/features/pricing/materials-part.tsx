@@ -29,7 +29,7 @@ export function MaterialsPart({ materials, planHref }: MaterialsPartProps) {
           </th>
         </tr>
       </thead>
-      <tbody>
+      <tbody className={styles.body}>
         {sections.map((section) => (
           <Fragment key={section}>
             <tr className={styles.section}>

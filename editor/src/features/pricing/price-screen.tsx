@@ -7,7 +7,7 @@ import { PlusIcon } from '../../components/icons';
 import { Page } from '../../components/page';
 import { Empty, Problem, SkeletonRows } from '../../components/states';
 import { showToast } from '../../components/toast';
-import { type CatalogueEntry, catalogueQuery, type Obstacle, planQuery, priceBookQuery } from './api';
+import { type CatalogueEntry, catalogueQuery, type Obstacle, planQuery } from './api';
 import { arrange, groupsWithEdits, linesWithEdits } from './arrange';
 import { ClashPanel } from './clash-panel';
 import type { ClashNames } from './clash-words';
@@ -48,7 +48,6 @@ export function PriceScreen(props: PriceScreenProps) {
   const state = usePricing(store);
   const quote = useQuote(jobId, store);
   const plan = useQuery(planQuery(jobId));
-  const book = useQuery(priceBookQuery);
   const catalogue = useQuery(catalogueQuery);
   const [search] = useSearchParams();
   const part = parts.find((one) => one === search.get('part')) ?? 'lines';
@@ -70,11 +69,11 @@ export function PriceScreen(props: PriceScreenProps) {
       {children}
     </Page>
   );
-  const failed = [quote, plan, book, catalogue].find((query) => query.isError && query.data === undefined);
+  const failed = [quote, plan, catalogue].find((query) => query.isError && query.data === undefined);
   if (failed) return frame(<Problem error={failed.error} onRetry={() => void failed.refetch()} />);
   if (state.phase === 'failed')
     return frame(<Problem error={state.failure} onRetry={() => void store.start()} />);
-  if (state.phase === 'loading' || !quote.data || !doc || !book.data || !catalogue.data)
+  if (state.phase === 'loading' || !quote.data || !doc || !catalogue.data)
     return frame(<SkeletonRows rows={8} label="Loading the price" />);
 
   const answer = quote.data;
@@ -86,7 +85,8 @@ export function PriceScreen(props: PriceScreenProps) {
   };
   const shown = linesWithEdits(answer.quote.lines, state.pricing);
   const groups = groupsWithEdits(answer.quote, state.pricing);
-  const ahead = state.unsent > 0 || answer.pricingVersion !== state.base.version || slow;
+  const stuck = state.save.is !== 'saved' && state.save.is !== 'saving';
+  const ahead = !stuck && (state.unsent > 0 || answer.pricingVersion !== state.base.version || slow);
   const openFaults = answer.faults.filter(({ acceptance }) => acceptance === null).length;
   const mendHref = ({ mend }: Obstacle): string => (mend === 'plan' ? planHref([]) : `?part=${mend}`);
   const names: ClashNames = {
@@ -96,7 +96,7 @@ export function PriceScreen(props: PriceScreenProps) {
       transformers.find((transformer) => transformer.id === id)?.label ??
       'something that is no longer on the plan',
     item: (id) => nameOfItem(catalogue.data, id),
-    tax: (id) => book.data.book.taxes.find((tax) => tax.id === id)?.name ?? 'a tax that is gone',
+    tax: (id) => answer.terms.taxes.find((tax) => tax.id === id)?.name ?? 'a tax that is gone',
   };
   const hold =
     state.clash !== null
@@ -193,7 +193,7 @@ export function PriceScreen(props: PriceScreenProps) {
           {part === 'terms' && (
             <TermsPart
               pricing={state.pricing}
-              book={book.data.book}
+              usual={answer.terms}
               catalogue={catalogue.data}
               transformers={transformers}
               stages={answer.quote.combinations[0]?.stages ?? []}
@@ -214,6 +214,7 @@ export function PriceScreen(props: PriceScreenProps) {
           mendHref={mendHref}
           proposalTo={props.proposalTo}
           ahead={ahead}
+          behind={stuck}
           hold={hold}
         />
       </div>

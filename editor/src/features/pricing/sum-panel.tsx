@@ -16,8 +16,10 @@ interface SumPanelProps {
   /** Where an obstacle is mended. */
   readonly mendHref: (obstacle: Obstacle) => string;
   readonly proposalTo: string;
-  /** Edits that the sums don't know yet. */
+  /** They are being worked out anew. */
   readonly ahead: boolean;
+  /** Edits that are not saved, and will not be by themselves just now, are not in the sums. */
+  readonly behind: boolean;
   /** Why there can be no proposal now, obstacles apart. */
   readonly hold: string | null;
 }
@@ -41,8 +43,12 @@ export function SumPanel(props: SumPanelProps) {
         </span>
       </button>
       <div className={styles.content}>
-        <Sums {...props} />
-        <Margin {...props} />
+        {/* biome-ignore lint/a11y/noNoninteractiveTabindex: it scrolls, and has nothing to focus in it. */}
+        <section className={styles.scroll} tabIndex={0} aria-label="What makes up the price">
+          <Sums {...props} />
+          <Margin {...props} />
+        </section>
+        {props.behind && <p className={styles.behind}>Without your changes that are not saved.</p>}
         <Way {...props} />
       </div>
     </aside>
@@ -158,7 +164,7 @@ function Margin({ quote, seesCosts, ahead }: SumPanelProps) {
 function Way({ obstacles, mendHref, proposalTo, hold }: SumPanelProps) {
   const reason = hold ?? (obstacles.length > 0 ? standing(obstacles) : null);
   return (
-    <div className={styles.block}>
+    <div className={styles.way}>
       {obstacles.length > 0 && (
         <>
           <h2 className={styles.title}>{standing(obstacles)}</h2>

@@ -24,18 +24,11 @@ export function TaxTable({ form }: { readonly form: BookForm }) {
         {fields.map((tax, i) => (
           <li key={tax.key} className={styles.tax}>
             <FieldRow>
-              <TextField
-                control={control}
-                name={`taxes.${i}.name`}
-                label="Name"
-                hint="As on the proposal."
-                maxLength={60}
-              />
+              <TextField control={control} name={`taxes.${i}.name`} label="Name" maxLength={60} />
               <TextField
                 control={control}
                 name={`taxes.${i}.jurisdiction`}
                 label="Where it holds"
-                optional
                 maxLength={80}
               />
               <NumberField control={control} name={`taxes.${i}.percent`} label="Rate" unit="%" />

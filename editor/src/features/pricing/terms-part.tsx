@@ -1,10 +1,4 @@
-import {
-  type JobPricing,
-  moneyInput,
-  type PriceBook,
-  parseMoney,
-  type StageAmount,
-} from '@lampwright/geometry/price';
+import { type JobPricing, moneyInput, parseMoney, type StageAmount } from '@lampwright/geometry/price';
 import type { ReactNode } from 'react';
 import { Button } from '../../components/button';
 import { Choice, Field } from '../../components/form';
@@ -12,7 +6,7 @@ import form from '../../components/form/form.module.css';
 import { Section } from '../../components/page';
 import { Select } from '../../components/select';
 import { type MoneyManner, moneyOf } from '../../lib/money';
-import type { CatalogueEntry } from './api';
+import type { CatalogueEntry, QuoteAnswer } from './api';
 import { CommitField } from './commit-field';
 import type { PlanTransformer } from './fixtures-of';
 import { readPercent, readWhole } from './read-number';
@@ -23,7 +17,8 @@ import { dueLabel, numberText, percentText } from './words';
 
 interface TermsPartProps {
   readonly pricing: JobPricing;
-  readonly book: PriceBook;
+  /** What the company offers and does by default. */
+  readonly usual: QuoteAnswer['terms'];
   readonly catalogue: readonly CatalogueEntry[];
   readonly transformers: readonly PlanTransformer[];
   /** Of the combination as offered. */
@@ -72,10 +67,10 @@ const Plain = ({
   </Field>
 );
 
-function TaxFields({ pricing, book, editable, manner, edit }: TermsPartProps) {
-  const usual = book.taxes.find(({ id }) => id === book.defaultTaxId);
-  const gone = pricing.taxId !== null && !book.taxes.some(({ id }) => id === pricing.taxId);
-  const nameOf = (tax: PriceBook['taxes'][number]) =>
+function TaxFields({ pricing, usual, editable, manner, edit }: TermsPartProps) {
+  const own = usual.taxes.find(({ id }) => id === usual.defaultTaxId);
+  const gone = pricing.taxId !== null && !usual.taxes.some(({ id }) => id === pricing.taxId);
+  const nameOf = (tax: TermsPartProps['usual']['taxes'][number]) =>
     `${tax.name} ${percentText(tax.percent, manner.locale)}${tax.jurisdiction ? `, ${tax.jurisdiction}` : ''}`;
   return (
     <>
@@ -89,8 +84,8 @@ function TaxFields({ pricing, book, editable, manner, edit }: TermsPartProps) {
               edit('Tax', setTerms({ taxId: event.target.value === '' ? null : event.target.value }))
             }
           >
-            <option value="">{usual ? `The company’s: ${nameOf(usual)}` : 'The company’s: none set'}</option>
-            {book.taxes.map((tax) => (
+            <option value="">{own ? `The company’s: ${nameOf(own)}` : 'The company’s: none set'}</option>
+            {usual.taxes.map((tax) => (
               <option key={tax.id} value={tax.id}>
                 {nameOf(tax)}
               </option>
@@ -182,9 +177,9 @@ function DiscountFields({ pricing: { discount }, editable, manner, edit }: Terms
   );
 }
 
-function Payment({ pricing, book, stages, editable, manner, edit }: TermsPartProps) {
+function Payment({ pricing, usual, stages, editable, manner, edit }: TermsPartProps) {
   const money = moneyOf(manner);
-  const { percent, amountMinor } = book.depositCap;
+  const { percent, amountMinor } = usual.depositCap;
   const cap = [
     percent === null ? null : `${percentText(percent, manner.locale)} of the total`,
     amountMinor === null ? null : money(amountMinor),
@@ -200,7 +195,7 @@ function Payment({ pricing, book, stages, editable, manner, edit }: TermsPartPro
           { value: 'own', label: 'This job’s own' },
         ]}
         onChange={(value) =>
-          edit('Payment stages', setTerms({ stages: value === 'own' ? [...book.stages] : null }))
+          edit('Payment stages', setTerms({ stages: value === 'own' ? [...usual.stages] : null }))
         }
       />
       {pricing.stages === null ? (
@@ -231,9 +226,9 @@ function Payment({ pricing, book, stages, editable, manner, edit }: TermsPartPro
   );
 }
 
-function Controls({ pricing, book, catalogue, transformers, editable, edit }: TermsPartProps) {
+function Controls({ pricing, usual, catalogue, transformers, editable, edit }: TermsPartProps) {
   const controls = catalogue.filter(({ item }) => item.category === 'control');
-  const usual = controls.find(({ id }) => id === book.controlItemId)?.item.name ?? 'none';
+  const companys = controls.find(({ id }) => id === usual.controlItemId)?.item.name ?? 'none';
   if (transformers.length === 0)
     return <p className="quiet">There is no transformer on the plan yet, so there is nothing to control.</p>;
   return (
@@ -261,7 +256,7 @@ function Controls({ pricing, book, catalogue, transformers, editable, edit }: Te
                   );
                 }}
               >
-                <option value="company">The company’s: {usual}</option>
+                <option value="company">The company’s: {companys}</option>
                 <option value="none">None</option>
                 {controls.map((entry) => (
                   <option key={entry.id} value={entry.id}>
@@ -278,7 +273,7 @@ function Controls({ pricing, book, catalogue, transformers, editable, edit }: Te
   );
 }
 
-function Visits({ pricing, book, editable, edit }: TermsPartProps) {
+function Visits({ pricing, usual, editable, edit }: TermsPartProps) {
   const { aimingVisits } = pricing;
   return (
     <div className={styles.visits}>
@@ -286,7 +281,7 @@ function Visits({ pricing, book, editable, edit }: TermsPartProps) {
         label="Aiming visits"
         hint="After dark, to aim and adjust."
         numeric
-        value={String(aimingVisits ?? book.rates.aimingVisits)}
+        value={String(aimingVisits ?? usual.aimingVisits)}
         disabled={!editable}
         onCommit={(text) => {
           const visits = readWhole(text, 20);
@@ -297,7 +292,7 @@ function Visits({ pricing, book, editable, edit }: TermsPartProps) {
       />
       {aimingVisits !== null && editable && (
         <Button onClick={() => edit('Aiming visits', setTerms({ aimingVisits: null }))}>
-          As the company does: {book.rates.aimingVisits}
+          As the company does: {usual.aimingVisits}
         </Button>
       )}
     </div>

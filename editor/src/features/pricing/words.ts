@@ -113,7 +113,7 @@ export function dueLabel(due: 'approval' | 'start' | 'finish'): string {
     case 'start':
       return 'when work starts';
     case 'finish':
-      return 'when work is finished';
+      return 'when work ends';
   }
 }
 

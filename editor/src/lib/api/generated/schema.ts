@@ -7435,6 +7435,30 @@ export interface operations {
                                 recordIds: string[];
                             }[];
                         };
+                        terms: {
+                            taxes: {
+                                id: string;
+                                name: string;
+                                jurisdiction: string;
+                                percent: number;
+                                onMaterials: boolean;
+                                onLabour: boolean;
+                            }[];
+                            defaultTaxId: string | null;
+                            stages: {
+                                id: string;
+                                name: string;
+                                /** @enum {string} */
+                                due: "approval" | "start" | "finish";
+                                percent: number;
+                            }[];
+                            depositCap: {
+                                percent: number | null;
+                                amountMinor: number | null;
+                            };
+                            controlItemId: string | null;
+                            aimingVisits: number;
+                        };
                         faults: {
                             key: string;
                             code: string;
