@@ -8,6 +8,8 @@ import { Decoder } from '../media/decoder.js';
 import { CatalogueStoreModule } from '../modules/catalogue/catalogue-store.module.js';
 import { PlanStoreModule } from '../modules/plans/plan-store.module.js';
 import { PricingStoreModule } from '../modules/pricing/pricing-store.module.js';
+import { CompanyTexts } from '../modules/proposals/company-texts.js';
+import { ProposalTextsRepository } from '../modules/proposals/proposal-texts.repository.js';
 import { SheetStoreModule } from '../modules/sheets/sheet-store.module.js';
 import { QueueModule } from '../ports/queue/queue.module.js';
 import { StorageModule } from '../ports/storage/storage.module.js';
@@ -31,7 +33,16 @@ export class DemoModule {
         PlanStoreModule,
         PricingStoreModule,
       ],
-      providers: [DemoRepository, DemoService, DemoPrices, Decoder, ProcessSheet, SummarisePlan],
+      providers: [
+        DemoRepository,
+        DemoService,
+        DemoPrices,
+        CompanyTexts,
+        ProposalTextsRepository,
+        Decoder,
+        ProcessSheet,
+        SummarisePlan,
+      ],
     };
   }
 }

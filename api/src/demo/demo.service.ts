@@ -8,13 +8,21 @@ import { ProcessSheet } from '../jobs/sheets.js';
 import { SummarisePlan } from '../jobs/summarise-plan.js';
 import { CatalogueService } from '../modules/catalogue/catalogue.service.js';
 import { PlanWriter } from '../modules/plans/plan-writer.js';
+import { CompanyTexts } from '../modules/proposals/company-texts.js';
 import { originalKey } from '../modules/sheets/sheet-keys.js';
 import { SheetsRepository } from '../modules/sheets/sheets.repository.js';
 import { ObjectStorage } from '../ports/storage/storage.js';
 import { DemoRepository } from './demo.repository.js';
 import { type Catalogue, PlanBuilder } from './plan-builder.js';
 import { DemoPrices } from './prices/demo-prices.js';
-import { DEMO_PASSWORD, type DemoSheet, demoCompany, demoDesigner, demoSheets } from './scenario.js';
+import {
+  DEMO_PASSWORD,
+  type DemoSheet,
+  demoCompany,
+  demoDesigner,
+  demoSheets,
+  demoTexts,
+} from './scenario.js';
 
 /** The files that came with the demo, read from the sources by the built program too. */
 const FILES = new URL('../../src/demo/files/', import.meta.url);
@@ -35,6 +43,7 @@ export class DemoService {
     @Inject(PlanWriter) private readonly writer: PlanWriter,
     @Inject(SummarisePlan) private readonly summaries: SummarisePlan,
     @Inject(DemoPrices) private readonly prices: DemoPrices,
+    @Inject(CompanyTexts) private readonly texts: CompanyTexts,
   ) {}
 
   async load(now: Date): Promise<void> {
@@ -46,6 +55,8 @@ export class DemoService {
       await this.demo.insertJobs(now);
     });
     await this.prices.loadCompany();
+    // Does nothing for a company that has texts of its own.
+    await this.texts.save(demoCompany.id, 0, demoTexts);
     for (const sheet of demoSheets) {
       await this.loadSheet(sheet);
       await this.drawPlan(sheet);

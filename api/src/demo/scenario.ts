@@ -1,3 +1,4 @@
+import { usualTexts } from '../modules/proposals/usual-texts.js';
 import type { PlanBuilder } from './plan-builder.js';
 import { drawHarrowBank } from './plans/harrow-bank.js';
 import { drawSandpiperRow } from './plans/sandpiper-row.js';
@@ -145,3 +146,14 @@ export const demoSheets: readonly DemoSheet[] = [
     pricing: sandpiperRowPricing,
   },
 ];
+
+/** How homeowners reach the company; the words are the usual ones. */
+export const demoTexts = {
+  ...usualTexts('us'),
+  company: {
+    email: 'office@fernhollow.example',
+    phone: '555-0100',
+    address: '3 Mill Yard, Marlow Bend',
+    licence: 'Marlow Bend contractor no. 20-417',
+  },
+};
