@@ -13,6 +13,14 @@ export interface StoredFile {
 }
 
 /**
+ * A stored file opened by itself runs nothing and loads nothing, and its page has no origin of ours. Papers
+ * have no `sandbox`: browsers show them in a viewer that is a page of its own, and Chromium's does not open
+ * in a sandbox. A PDF can't reach our pages from there.
+ */
+const LOCKED = "default-src 'none'; sandbox";
+const LOCKED_PAPER = "default-src 'none'";
+
+/**
  * Streams a file. `no-cache` has the browser ask before each use, and only its own cache may keep a copy:
  * after sign-out or on a shared proxy the picture is not to be had, yet an unchanged one is sent only once.
  */
@@ -22,15 +30,20 @@ export async function sendFile(file: StoredFile, request: Request, response: Res
     Vary: 'Cookie',
     ETag: file.etag,
     'X-Content-Type-Options': 'nosniff',
-    'Content-Security-Policy': "default-src 'none'; sandbox",
     'Content-Disposition': disposition(file),
   });
   if (request.fresh) {
+    // What a 304 says replaces what the browser keeps: the file's own policy stays.
+    response.removeHeader('Content-Security-Policy');
     response.status(304).end();
     return;
   }
   const { stream, length, type } = await file.open();
-  response.set({ 'Content-Type': type, 'Content-Length': String(length) });
+  response.set({
+    'Content-Type': type,
+    'Content-Length': String(length),
+    'Content-Security-Policy': type === 'application/pdf' ? LOCKED_PAPER : LOCKED,
+  });
   try {
     await pipeline(stream, response);
   } catch (error) {
