@@ -13,7 +13,7 @@ import { Database } from '../database/database.js';
 import { AppError, conflict } from './app-error.js';
 import { canonicalJson } from './canonical-json.js';
 import { ONCE, type OnceMode } from './once.js';
-import { type OnceAnswer, OnceRepository, type OnceRequest } from './once.repository.js';
+import { companyScope, type OnceAnswer, OnceRepository, type OnceRequest } from './once.repository.js';
 
 const HEADER = 'Idempotency-Key';
 /** Printable ASCII. */
@@ -126,8 +126,8 @@ function onceOf(request: Request): OnceRequest {
 }
 
 function scopeOf({ actor, person, guest }: Request): string {
-  if (guest) return `company ${guest.companyId} link ${guest.linkId}`;
-  if (actor) return `company ${actor.companyId} user ${actor.userId}`;
+  if (guest) return `${companyScope(guest.companyId)}link ${guest.linkId}`;
+  if (actor) return `${companyScope(actor.companyId)}user ${actor.userId}`;
   if (person) return `user ${person.userId}`;
   throw new Error('A route that is open to anyone cannot happen once: nobody is known to have asked.');
 }

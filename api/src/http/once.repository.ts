@@ -21,6 +21,9 @@ export interface OnceAnswer {
 /** How many old answers go with each new one. */
 const SWEPT_AT_ONCE = 100;
 
+/** How the scopes of a company's people and links begin. */
+export const companyScope = (companyId: string): string => `company ${companyId} `;
+
 /** The answers of requests that happen once. */
 @Injectable()
 export class OnceRepository {

@@ -1,7 +1,8 @@
 import { Inject, Injectable } from '@nestjs/common';
-import { eq, sql } from 'drizzle-orm';
+import { eq, like, sql } from 'drizzle-orm';
 import { Database } from '../../database/database.js';
-import { companies } from '../../database/schema/index.js';
+import { companies, idempotencyKeys } from '../../database/schema/index.js';
+import { companyScope } from '../../http/once.repository.js';
 
 export type CompanyRow = typeof companies.$inferSelect;
 
@@ -44,8 +45,11 @@ export class CompaniesRepository {
     return row ?? null;
   }
 
-  /** Takes every record of the company with it. */
+  /** Takes every record of the company with it, and what its people and its homeowners were answered. */
   async delete(companyId: string): Promise<void> {
+    await this.database.queries
+      .delete(idempotencyKeys)
+      .where(like(idempotencyKeys.scope, `${companyScope(companyId)}%`));
     await this.database.queries.delete(companies).where(eq(companies.id, companyId));
   }
 }
