@@ -13,6 +13,9 @@ import { CompaniesRepository, type CompanyRow } from './companies.repository.js'
 import { companyDeletedLetter } from './letters.js';
 import { type CompanySettings, differencesFrom, regionOf, settingsInForce, wordsOf } from './settings.js';
 
+/** Work that was under way when a company was deleted, such as a PDF, may store its file a little later. */
+const LAST_FILE_AFTER_SECONDS = 3600;
+
 @Injectable()
 export class CompaniesService {
   constructor(
@@ -76,7 +79,9 @@ export class CompaniesService {
         if (member.role === 'owner')
           await this.outbox.post(null, member.email, companyDeletedLetter(member.name, row.name, user.name));
       }
-      await this.queue.send('storage.delete', { prefix: `${actor.companyId}/` });
+      const files = { prefix: `${actor.companyId}/` };
+      await this.queue.send('storage.delete', files);
+      await this.queue.send('storage.delete', files, { startAfterSeconds: LAST_FILE_AFTER_SECONDS });
     });
   }
 }

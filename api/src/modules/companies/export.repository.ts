@@ -6,10 +6,11 @@ const ROWS_AT_A_TIME = 500;
 
 /** Not the company's, although they name it: where its members are signed in belongs to them. */
 const LEFT_OUT = ['sessions'];
-/** Secrets, and what only had a meaning for its recipient. */
+/** Secrets, addresses by which whoever knows them may act, and what only had a meaning for its recipient. */
 const HIDDEN_COLUMNS: Readonly<Record<string, readonly string[]>> = {
   invitations: ['token_hash'],
   mail_messages: ['text', 'html'],
+  payments: ['checkout_url'],
   proposal_links: ['token_hash', 'sealed_token'],
 };
 
