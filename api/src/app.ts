@@ -6,6 +6,7 @@ import { LinkGate } from './access/link-gate.js';
 import { AppModule } from './app.module.js';
 import { type Env, isLocal } from './config/env.js';
 import { jsonBodies } from './http/bodies.js';
+import { compressedJson } from './http/compressed-json.js';
 import { editorFiles } from './http/editor-files.js';
 import { createLogger, NestLogger } from './http/logger.js';
 import { serveOpenApi } from './http/openapi.js';
@@ -28,6 +29,7 @@ export async function createApp(env: Env): Promise<NestExpressApplication> {
   app.disable('x-powered-by');
   app.use(requestLog(logger));
   app.use(securityHeaders(env));
+  app.use(compressedJson);
   app.use(cookieParser());
   app.use(jsonBodies);
   const files = isLocal(env) ? env.EDITOR_FILES : undefined;

@@ -4,6 +4,7 @@ import { hashFiles, listFiles } from './files.mjs';
 import { withLock } from './lock.mjs';
 import { say, since, Trouble } from './log.mjs';
 import { inRoot, root } from './paths.mjs';
+import { precompress } from './precompress.mjs';
 import { run } from './processes.mjs';
 
 /**
@@ -13,13 +14,14 @@ import { run } from './processes.mjs';
  * @property {string} output a file that a finished build has
  * @property {string[]} command run with npx
  * @property {string} folder where it runs
+ * @property {string} [compressed] a built folder whose text files get compressed copies
  * @property {boolean} [onlyWhenNamed] no part of the product
  * @property {NodeJS.ProcessEnv} [env] settings of its own
  */
 
 const everywhere = ['package-lock.json', 'tsconfig.base.json'];
 
-const editorInputs = [...everywhere, 'geometry/src', 'fonts', 'editor'];
+const editorInputs = [...everywhere, 'geometry/src', 'fonts', 'editor', 'scripts/lib/precompress.mjs'];
 
 /** In the order in which they need one another. @type {Part[]} */
 export const parts = [
@@ -46,6 +48,7 @@ export const parts = [
     output: 'editor/dist/index.html',
     command: ['vite', 'build'],
     folder: 'editor',
+    compressed: 'editor/dist',
   },
   {
     // The same with the handle through which tests see the canvas; beside the product's own, which may be running.
@@ -115,6 +118,7 @@ async function buildPart(part, signal) {
   if (result.code !== 0 || !existsSync(inRoot(part.output))) {
     throw new Trouble(`Building ${part.name} failed:\n${`${result.stdout}\n${result.stderr}`.trim()}`);
   }
+  if (part.compressed !== undefined) await precompress(inRoot(part.compressed));
   if (part.name === 'geometry') removeOlder(inRoot('geometry/dist'), wallClock);
   say(`Built ${part.name} in ${since(startedAt)}.`);
 }
