@@ -30,5 +30,5 @@ it('loses with a company what its people and homeowners were answered, and nothi
     );
   await test.app.get(CompaniesRepository, { strict: false }).delete(gone);
   const { rows } = await test.database.executeSql('SELECT scope FROM idempotency_keys');
-  expect(rows.map(({ scope }) => scope).sort()).toEqual(scopes.slice(2).sort());
+  expect((rows as { scope: string }[]).map(({ scope }) => scope).sort()).toEqual(scopes.slice(2).sort());
 });
