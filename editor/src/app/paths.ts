@@ -40,7 +40,9 @@ export const to = {
   /** The plan page with some of its records chosen. Many of them would be too long for a server to be sent. */
   planLit: (jobId: string, recordIds: readonly string[]) =>
     `/jobs/${segment(jobId)}/plan${recordIds.length > 100 ? '#' : '?'}lit=${recordIds.map(segment).join(',')}`,
-  price: (jobId: string) => `/jobs/${segment(jobId)}/price`,
+  /** The price of a job, at a part of it when one is named. */
+  price: (jobId: string, part?: string) =>
+    `/jobs/${segment(jobId)}/price${part === undefined ? '' : `?part=${segment(part)}`}`,
   proposal: (jobId: string) => `/jobs/${segment(jobId)}/proposal`,
   newJobFor: (clientId: string) => `/jobs/new?client=${segment(clientId)}`,
   client: (clientId: string) => `/clients/${segment(clientId)}`,

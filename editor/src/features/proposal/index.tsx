@@ -13,7 +13,7 @@ import { Preview } from './preview';
 import { RevisionsSection } from './revisions-section';
 import { firstMessage, firstRecipients } from './send';
 import { SendDialog } from './send-form';
-import { changedSince, clearLabel, type Move, makeLabel, moveOf } from './standing';
+import { changedSince, clearLabel, type Move, makeLabel, moveOf, overtaken } from './standing';
 import { Preparing, StandingCard } from './standing-card';
 import { sameWords } from './words';
 import { WordsSection } from './words-section';
@@ -48,7 +48,7 @@ export function ProposalView({
   const price = useQuery({ ...priceBriefQuery(job.id), enabled: editable });
   const detail = useQuery({ ...revisionQuery(job.id, newest?.id ?? ''), enabled: newest !== undefined });
   const wordsChanged = detail.data !== undefined && !sameWords(detail.data.document.words, proposal.words);
-  const changed = changedSince(newest, proposal.stale, wordsChanged);
+  const changed = overtaken(proposal) ?? changedSince(newest, proposal.stale, wordsChanged);
   const move: Move = editable
     ? moveOf(proposal, {
         obstacles: price.data?.obstacles ?? [],

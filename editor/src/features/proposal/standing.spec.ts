@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { proposalStates } from '../../lib/proposal-states';
 import { isWaiting } from './api';
 import { approval, link, proposal, revision } from './proposal.testkit';
-import { changedSince, moveOf, people, sentenceOfState, stepsOf } from './standing';
+import { changedSince, moveOf, overtaken, people, sentenceOfState, stepsOf } from './standing';
 
 const now = '2026-05-10T12:00:00.000Z';
 const clear = { obstacles: [], openQuestions: 0, changed: false };
@@ -58,6 +58,28 @@ describe('the step that moves the job on', () => {
       revision: 2,
       changeOrder: true,
     });
+  });
+});
+
+describe('a revision that an approval overtook', () => {
+  const approved = (at: string) => revision({ ...sent, state: 'approved', approval: approval({ at }) });
+  const next = revision({ revision: 2, createdAt: '2026-05-03T10:00:00.000Z' });
+  const after = approved('2026-05-04T10:00:00.000Z');
+
+  it('is told as what a change order has to take the place of', () => {
+    expect(overtaken(proposal({ revisions: [next, after] }))).toMatch(/^Revision 1 was approved after/);
+  });
+
+  it('is none that changes what was approved before, was sent, or was withdrawn', () => {
+    const before = approved('2026-05-02T10:00:00.000Z');
+    for (const revisions of [
+      [],
+      [after],
+      [next, before],
+      [{ ...next, sentAt: '2026-05-05T10:00:00.000Z' }, after],
+      [{ ...next, state: 'withdrawn' as const }, after],
+    ])
+      expect(overtaken(proposal({ revisions }))).toBeNull();
   });
 });
 

@@ -190,6 +190,16 @@ export function changedSince(newest: Revision | undefined, stale: boolean, words
   return words ? `The words have changed ${of}.` : null;
 }
 
+/** What was approved after the newest revision was made, which therefore can't be sent; null where nothing was. */
+export function overtaken({ revisions }: Pick<Proposal, 'revisions'>): string | null {
+  const newest = revisions[0];
+  if (newest === undefined || newest.sentAt !== null || newest.state === 'withdrawn') return null;
+  const approved = revisions.find(({ approval }) => approval !== null && approval.at > newest.createdAt);
+  return approved === undefined
+    ? null
+    : `Revision ${approved.revision} was approved after revision ${newest.revision} was made: a change order takes its place.`;
+}
+
 export const makeLabel = (move: Extract<Move, { kind: 'make' }>): string =>
   move.changeOrder ? `Make change order, revision ${move.revision}` : `Make revision ${move.revision}`;
 

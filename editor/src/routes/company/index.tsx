@@ -18,7 +18,7 @@ import { useAbilities } from '../../lib/me';
 
 export default function CompanyScreen() {
   const company = useQuery(companyQuery);
-  const { editCompany, sell } = useAbilities();
+  const { editCompany, editPriceBook, sell } = useAbilities();
   return (
     <Page
       title={company.data?.name ?? 'Company'}
@@ -26,6 +26,7 @@ export default function CompanyScreen() {
       narrow
       actions={
         <>
+          {editPriceBook && <LinkButton to={paths.priceBook}>Price book</LinkButton>}
           {sell && <LinkButton to={paths.proposalTexts}>Texts of proposals</LinkButton>}
           <LinkButton to={paths.people}>People</LinkButton>
         </>

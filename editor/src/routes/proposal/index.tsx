@@ -67,7 +67,7 @@ function ProposalPage({ job, proposal }: { readonly job: Job; readonly proposal:
         proposal={proposal}
         openQuestions={openQuestions(asked).length}
         editable={editable}
-        mendAt={(mend) => (mend === 'plan' ? to.plan(job.id) : to.price(job.id))}
+        mendAt={(mend) => (mend === 'plan' ? to.plan(job.id) : to.price(job.id, mend))}
         companyWords={<LinkButton to={paths.proposalTexts}>The company’s words</LinkButton>}
         questionsId={QUESTIONS_ID}
       >
