@@ -34,7 +34,10 @@ async function readCsv(input: string): Promise<string[][]> {
   // What it could only guess (a delimiter, a row shorter than others) is no fault of the file.
   const broken = parsed.errors.find(({ type }) => type === 'Quotes');
   if (broken)
-    throw new Refusal('table-damaged', `A quotation mark in row ${(broken.row ?? 0) + 1} is not closed.`);
+    throw new Refusal(
+      'table-damaged',
+      `A quotation mark in line ${(broken.row ?? 0) + 1} of the file is not closed.`,
+    );
   return parsed.data;
 }
 

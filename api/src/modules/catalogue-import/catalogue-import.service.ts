@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { mkdtemp, open, readFile, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { catalogueItemSchema } from '@lampwright/geometry/catalogue';
+import { type CatalogueItem, catalogueItemSchema } from '@lampwright/geometry/catalogue';
 import { sameData } from '@lampwright/geometry/plan';
 import { itemPriceSchema } from '@lampwright/geometry/price';
 import { Inject, Injectable } from '@nestjs/common';
@@ -98,16 +98,20 @@ export class CatalogueImportService {
       );
       const undo: z.input<typeof undoSchema> = { added: [], changed: [] };
       const priced: Parameters<CatalogueImportsRepository['addPrices']>[3][number][] = [];
+      const fresh: { id: string; item: CatalogueItem }[] = [];
       for (const { itemId, item, price } of acts) {
         const present = itemId === null ? null : catalogueItemSchema.parse(before.get(itemId));
-        const entry = itemId ?? (await this.imports.insertItem(actor.companyId, item));
-        if (present === null) undo.added.push(entry);
-        else if (!sameData(present, item)) {
+        const entry = itemId ?? randomUUID();
+        if (present === null) {
+          fresh.push({ id: entry, item });
+          undo.added.push(entry);
+        } else if (!sameData(present, item)) {
           await this.catalogue.replace(actor.companyId, entry, item);
           undo.changed.push({ id: entry, before: present, after: item });
         }
         if (price) priced.push({ itemId: entry, price });
       }
+      await this.imports.insertItems(actor.companyId, fresh);
       await this.imports.addPrices(actor.companyId, id, actor.userId, priced);
       const summary = countsOf(judged);
       return this.imports.insert(actor.companyId, {
@@ -147,8 +151,10 @@ export class CatalogueImportService {
           await this.catalogue.replace(actor.companyId, id, before);
         else kept.push(after.name);
       }
-      for (const id of added)
-        if (present.has(id)) await this.catalogue.setArchived(actor.companyId, id, new Date());
+      await this.imports.archive(
+        actor.companyId,
+        added.filter((id) => present.has(id)),
+      );
       await this.imports.removePrices(actor.companyId, importId);
       await this.imports.markUndone(actor.companyId, importId);
       return { kept };

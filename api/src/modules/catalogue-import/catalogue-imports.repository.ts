@@ -96,11 +96,23 @@ export class CatalogueImportsRepository {
     return new Map(rows.map(({ id, item }) => [id, item]));
   }
 
-  async insertItem(companyId: string, item: CatalogueItem): Promise<string> {
-    const [row] = await this.queries
+  async insertItems(
+    companyId: string,
+    items: readonly { readonly id: string; readonly item: CatalogueItem }[],
+  ): Promise<void> {
+    if (items.length === 0) return;
+    await this.queries
       .insert(catalogueItems)
-      .values({ companyId, category: item.category, name: item.name, item })
-      .returning({ id: catalogueItems.id });
-    return row!.id;
+      .values(
+        items.map(({ id, item }) => ({ id, companyId, category: item.category, name: item.name, item })),
+      );
+  }
+
+  async archive(companyId: string, ids: readonly string[]): Promise<void> {
+    if (ids.length === 0) return;
+    await this.queries
+      .update(catalogueItems)
+      .set({ archivedAt: sql`now()`, updatedAt: sql`now()` })
+      .where(and(eq(catalogueItems.companyId, companyId), inArray(catalogueItems.id, [...ids])));
   }
 }

@@ -77,6 +77,23 @@ describe('catalogue items in a table', () => {
     expect(faultsOf({ category: 'fixture', name: 'X', kind: 'path', watts: '0' })[0]).toMatch(/^watts:/);
   });
 
+  it('are refused in sentences, whatever the schema finds', () => {
+    const hub = { category: 'hub', name: 'Hub', ways: '4' };
+    expect(faultsOf({ ...hub, name: 'x'.repeat(121) })).toEqual(['name: At most 120 characters, please.']);
+    for (const [ways, detail] of [
+      ['0', 'Must be at least 2.'],
+      ['2.5', 'Must be a whole number.'],
+      ['100000', 'Must be at most'],
+    ] as const)
+      expect(faultsOf({ ...hub, ways })[0]).toContain(`ways: ${detail}`);
+    const price = { cost: '5', per: '0', supplier: 'y'.repeat(121) };
+    const read = priceOfFlat(price, { currency: 'USD', locale: 'en-US' }, { unit: 'each' });
+    expect(read.ok ? [] : read.faults.map(({ field, detail }) => `${field}: ${detail}`)).toEqual([
+      'per: Must be at least 0.001.',
+      'supplier: At most 120 characters, please.',
+    ]);
+  });
+
   it('read prices in the manner of the company', () => {
     const us = { currency: 'USD', locale: 'en-US' };
     const each = { unit: 'each' } as const;

@@ -11,6 +11,7 @@ import type { UnitSystem } from '@lampwright/geometry/units';
 import { catalogueCategories } from '../catalogue.dto.js';
 import { type CellFault, Cells, conductorText } from './cells.js';
 import type { FieldName, FlatItem } from './fields.js';
+import { cellSentence } from './sentences.js';
 
 /** An item as texts by field, so that a table can hold it; `itemOfFlat` reads it back. */
 export function flatOfItem(item: CatalogueItem): FlatItem {
@@ -142,12 +143,8 @@ export function itemOfFlat(flat: FlatItem, system: UnitSystem): FlatRead {
   if (!category) return { ok: false, faults: cells.faults };
   const rest = readers[category](cells);
   if (cells.faults.length > 0) return { ok: false, faults: cells.faults };
-  const parsed = catalogueItemSchema.safeParse({
-    category,
-    name,
-    ...(note === null ? {} : { note }),
-    ...rest,
-  });
+  const written = { category, name, ...(note === null ? {} : { note }), ...rest };
+  const parsed = catalogueItemSchema.safeParse(written, { error: cellSentence });
   if (parsed.success) return { ok: true, item: parsed.data };
   return {
     ok: false,

@@ -1,6 +1,7 @@
 import { type ItemPrice, itemPriceSchema, moneyInput, parseMoney } from '@lampwright/geometry/price';
 import { type CellFault, Cells } from './cells.js';
 import type { FieldName, FlatItem } from './fields.js';
+import { cellSentence } from './sentences.js';
 
 export interface MoneyManner {
   readonly currency: string;
@@ -76,7 +77,7 @@ export function priceOfFlat(
   const silent =
     costMinor === null && priceMinor === null && price.supplier === '' && price.orderNumber === '';
   if (silent) return { ok: true, price: null };
-  const parsed = itemPriceSchema.safeParse(price);
+  const parsed = itemPriceSchema.safeParse(price, { error: cellSentence });
   if (parsed.success) return { ok: true, price: parsed.data };
   return {
     ok: false,
