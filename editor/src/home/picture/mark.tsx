@@ -1,4 +1,4 @@
-import type { CSSProperties } from 'react';
+import type { CSSProperties, MouseEvent } from 'react';
 import type { Light } from '../share';
 import styles from './mark.module.css';
 import type { Spot } from './view';
@@ -40,7 +40,7 @@ export const at = ({ x, y }: Spot): CSSProperties => ({ left: `${x * 100}%`, top
 interface Props {
   readonly mark: ShownMark;
   readonly chosen: boolean;
-  readonly onPress: () => void;
+  readonly onPress: (event: MouseEvent) => void;
   readonly onFocus: () => void;
 }
 
