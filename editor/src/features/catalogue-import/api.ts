@@ -1,7 +1,9 @@
-import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
+import { type QueryClient, queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
 import { type Answer, answer, server } from '../../lib/api/client';
+import { fetchOrProblem } from '../../lib/api/transport';
 import { upload } from '../../lib/api/upload';
 import { useOnce } from '../../lib/once';
+import { saveBlob } from '../../lib/save-blob';
 
 export type Table = Answer<'/api/catalogue/tables', 'post'>;
 export type Preview = Answer<'/api/catalogue/imports/preview', 'post'>;
@@ -35,6 +37,16 @@ export const importsQuery = queryOptions({
   queryFn: async ({ signal }) => (await answer(server.GET('/api/catalogue/imports', { signal }))).items,
 });
 
+/** Saves the catalogue as a table that can be taken in again. */
+export const useSaveCatalogue = () =>
+  useMutation({
+    mutationFn: async (format: 'csv' | 'xlsx') => {
+      const url = new URL(`/api/catalogue/export?format=${format}`, window.location.origin);
+      const response = await fetchOrProblem(new Request(url, { credentials: 'same-origin' }));
+      saveBlob(await response.blob(), `catalogue.${format}`);
+    },
+  });
+
 /** Reads a file on the server, which keeps nothing of it. */
 export const useReadTable = () =>
   useMutation({
@@ -46,22 +58,31 @@ export const useReadTable = () =>
     },
   });
 
-export const previewQuery = (ask: ImportAsk | null, stamp: number) =>
+/**
+ * What taking it in would do. The stamp stands for what is asked: tables are too large to be keys themselves.
+ * Not under the key of the catalogue: what is taken in is not to be judged once more.
+ */
+export const previewQuery = (ask: ImportAsk, stamp: string) =>
   queryOptions({
-    queryKey: [...importsKey, 'preview', stamp] as const,
-    enabled: ask !== null,
-    queryFn: ({ signal }) => {
-      if (!ask) throw new TypeError('There is no table to preview.');
-      return answer(server.POST('/api/catalogue/imports/preview', { body: ask, signal }));
-    },
+    queryKey: ['catalogue-import', stamp] as const,
+    queryFn: ({ signal }) => answer(server.POST('/api/catalogue/imports/preview', { body: ask, signal })),
     gcTime: 0,
+    refetchOnWindowFocus: false,
+    refetchOnReconnect: false,
   });
+
+/** Items bring prices, and of both whatever is priced is made. */
+const tellOthers = (cache: QueryClient) =>
+  Promise.all([
+    cache.invalidateQueries({ queryKey: ['catalogue'] }),
+    cache.invalidateQueries({ queryKey: ['pricing'] }),
+  ]);
 
 export function useTakeImport() {
   const cache = useQueryClient();
   return useOnce(
     (ask: ImportAsk, headers) => answer(server.POST('/api/catalogue/imports', { body: ask, headers })),
-    () => cache.invalidateQueries({ queryKey: ['catalogue'] }),
+    () => tellOthers(cache),
   );
 }
 
@@ -70,6 +91,6 @@ export function useUndoImport() {
   return useMutation({
     mutationFn: (importId: string) =>
       answer(server.POST('/api/catalogue/imports/{importId}/undo', { params: { path: { importId } } })),
-    onSuccess: () => cache.invalidateQueries({ queryKey: ['catalogue'] }),
+    onSuccess: () => tellOthers(cache),
   });
 }

@@ -25,6 +25,9 @@ export function Columns({ table, mapping, onMapping, category, onCategory, categ
           Columns of cost, price and supplier are left out: your role does not see what things cost.
         </p>
       )}
+      {mapping.name === null && mapping.id === null && mapping.orderNumber === null && (
+        <p className={styles.note}>No column is taken as the name yet: say which one holds it.</p>
+      )}
       <TableFrame label="Columns of the table">
         <thead>
           <tr>
@@ -32,7 +35,9 @@ export function Columns({ table, mapping, onMapping, category, onCategory, categ
             <th scope="col" className={styles.samples}>
               Holds, for example
             </th>
-            <th scope="col">Is taken as</th>
+            <th scope="col" className={styles.taken}>
+              Is taken as
+            </th>
           </tr>
         </thead>
         <tbody>

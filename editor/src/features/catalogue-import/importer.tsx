@@ -1,10 +1,10 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import { Button } from '../../components/button';
 import { Section } from '../../components/page';
 import { Problem, SkeletonRows } from '../../components/states';
 import { showToast } from '../../components/toast';
-import { sentenceOf } from '../../lib/api/client';
+import { useDebounced } from '../../lib/use-debounced';
 import {
   type DefaultCategory,
   type ImportAsk,
@@ -18,17 +18,26 @@ import { ChooseFile } from './choose-file';
 import { Columns } from './columns';
 import styles from './import.module.css';
 import { Preview } from './preview';
+import { rowsText, takenText, undoneText } from './words';
 
 interface ImporterProps {
   readonly categories: readonly { readonly value: DefaultCategory; readonly label: string }[];
   readonly onDone: () => void;
 }
 
+/** Rows are left out one after another, and the whole table goes along each time: it waits for the last. */
+const SETTLED_MS = 600;
+
 /** Takes a table into the catalogue: choose it, say what its columns are, look, take it in. */
 export function Importer({ categories, onDone }: ImporterProps) {
   const [table, setTable] = useState<Table | null>(null);
-  if (table === null) return <ChooseFile onRead={setTable} />;
-  return <ReadTable table={table} categories={categories} onDone={onDone} onOther={() => setTable(null)} />;
+  const [again, setAgain] = useState(false);
+  if (table === null) return <ChooseFile again={again} onRead={setTable} />;
+  const other = () => {
+    setTable(null);
+    setAgain(true);
+  };
+  return <ReadTable table={table} categories={categories} onDone={onDone} onOther={other} />;
 }
 
 function ReadTable({
@@ -50,19 +59,29 @@ function ReadTable({
     }),
     [table, mapping, category, leftOut],
   );
-  const stamp = useStamp(ask);
-  const preview = useQuery({ ...previewQuery(ask, stamp), placeholderData: keepPreviousData });
+  const asked = useDebounced(ask, SETTLED_MS);
+  const preview = useQuery({
+    ...previewQuery(asked, useStamp(asked)),
+    placeholderData: keepPreviousData,
+  });
   const take = useTakeImport();
   const undo = useUndoImport();
   const told = preview.data;
   const useful = told ? told.added + told.changed : 0;
+  const settled = asked === ask && !preview.isPlaceholderData && !preview.isError;
+  const lede = useRef<HTMLSpanElement>(null);
+  // The button that had the focus is gone.
+  useEffect(() => lede.current?.focus({ preventScroll: true }), []);
 
   const takeIn = () =>
     take.mutate(ask, {
-      onSuccess: ({ id, summary }) => {
+      onSuccess: ({ id, fileName, summary }) => {
         showToast({
-          message: `${summary.added} new and ${summary.changed} changed items are in the catalogue.`,
-          undo: () => undo.mutateAsync(id),
+          message: takenText(summary),
+          undo: async () => {
+            const { kept } = await undo.mutateAsync(id);
+            showToast({ message: undoneText(fileName, kept) });
+          },
         });
         onDone();
       },
@@ -72,7 +91,11 @@ function ReadTable({
     <>
       <Section
         title="What the columns hold"
-        lede={`${table.fileName}, ${table.rows.length} ${table.rows.length === 1 ? 'row' : 'rows'}`}
+        lede={
+          <span ref={lede} tabIndex={-1} className={styles.lede}>
+            {table.fileName}, {rowsText(table.rows.length)} below the heads
+          </span>
+        }
         actions={<Button onClick={onOther}>Choose another file</Button>}
       >
         <Columns
@@ -84,34 +107,26 @@ function ReadTable({
           categories={categories}
         />
       </Section>
-      <Section title="What would happen">
+      <Section title="What would happen" lede="Rows are counted from the first below the heads.">
         {preview.isPending && <SkeletonRows rows={5} label="Looking through the rows" />}
         {preview.isError && <Problem error={preview.error} onRetry={() => preview.refetch()} />}
         {told && (
-          <div
-            className={preview.isPlaceholderData ? styles.pending : undefined}
-            aria-busy={preview.isFetching}
-          >
-            <Preview
-              preview={told}
-              columns={table.columns}
-              leftOut={leftOut}
-              onLeaveOut={(row, out) => {
-                const next = new Set(leftOut);
-                if (out) next.add(row);
-                else next.delete(row);
-                setLeftOut(next);
-              }}
-            />
-          </div>
+          <Preview
+            preview={told}
+            busy={preview.isFetching}
+            columns={table.columns}
+            leftOut={leftOut}
+            onLeaveOut={(row, out) => {
+              const next = new Set(leftOut);
+              if (out) next.add(row);
+              else next.delete(row);
+              setLeftOut(next);
+            }}
+          />
         )}
+        {take.isError && <Problem error={take.error} />}
         <div className={styles.foot}>
-          <Button
-            kind="lamp"
-            busy={take.isPending}
-            disabled={useful === 0 || preview.isPlaceholderData}
-            onClick={takeIn}
-          >
+          <Button kind="lamp" busy={take.isPending} disabled={useful === 0 || !settled} onClick={takeIn}>
             {useful === 0 ? 'Nothing to take in' : `Take in ${useful} ${useful === 1 ? 'item' : 'items'}`}
           </Button>
           {told && told.faults > 0 && (
@@ -120,16 +135,16 @@ function ReadTable({
             </p>
           )}
         </div>
-        {take.isError && <Problem error={sentenceOf(take.error)} />}
       </Section>
     </>
   );
 }
 
-/** A number that is another whenever what is asked is another: tables are too large to be keys themselves. */
-function useStamp(ask: ImportAsk): number {
-  const [held, setHeld] = useState({ ask, stamp: 1 });
+/** Another text whenever what is asked is another. */
+function useStamp(ask: ImportAsk): string {
+  const [held, setHeld] = useState(() => ({ ask, stamp: crypto.randomUUID() }));
   if (held.ask === ask) return held.stamp;
-  setHeld({ ask, stamp: held.stamp + 1 });
-  return held.stamp + 1;
+  const next = { ask, stamp: crypto.randomUUID() };
+  setHeld(next);
+  return next.stamp;
 }

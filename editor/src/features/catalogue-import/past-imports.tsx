@@ -8,15 +8,7 @@ import { sentenceOf } from '../../lib/api/client';
 import { formatDay } from '../../lib/format';
 import { type DoneImport, importsQuery, useUndoImport } from './api';
 import styles from './import.module.css';
-
-const told = ({ summary }: DoneImport): string =>
-  [
-    summary.added > 0 && `${summary.added} new`,
-    summary.changed > 0 && `${summary.changed} changed`,
-    summary.faults > 0 && `${summary.faults} not taken`,
-  ]
-    .filter(Boolean)
-    .join(', ');
+import { summaryText, undoneText } from './words';
 
 /** What was taken in so far, each with its undoing. */
 export function PastImports() {
@@ -24,18 +16,12 @@ export function PastImports() {
   const undo = useUndoImport();
   const takeBack = (done: DoneImport) =>
     undo.mutate(done.id, {
-      onSuccess: ({ kept }) =>
-        showToast({
-          message:
-            kept.length === 0
-              ? `${done.fileName} is taken back.`
-              : `${done.fileName} is taken back. Changed since, and left as they are: ${kept.join(', ')}.`,
-        }),
+      onSuccess: ({ kept }) => void showToast({ message: undoneText(done.fileName, kept) }),
       onError: (error) => void showProblem(sentenceOf(error)),
     });
   if (imports.data?.length === 0) return null;
   return (
-    <Section title="Taken in so far">
+    <Section title="Taken in so far" lede="The newest 50. Taking one back archives what it added.">
       {imports.isPending && <SkeletonRows rows={2} label="Loading earlier imports" />}
       {imports.isError && <Problem error={imports.error} onRetry={() => imports.refetch()} />}
       {imports.data && (
@@ -46,7 +32,7 @@ export function PastImports() {
               <th scope="col">When</th>
               <th scope="col">What</th>
               <th scope="col">
-                <span className={styles.hidden}>Undo</span>
+                <span className="visually-hidden">Undo</span>
               </th>
             </tr>
           </thead>
@@ -58,10 +44,10 @@ export function PastImports() {
                 </th>
                 <td>
                   {formatDay(done.at)}
-                  {done.by && `, ${done.by}`}
+                  {done.by && <span className={styles.by}>{done.by}</span>}
                 </td>
-                <td>{told(done)}</td>
-                <td className={styles.number}>
+                <td>{summaryText(done.summary)}</td>
+                <td className={styles.take}>
                   {done.undoneAt ? (
                     'Taken back'
                   ) : (

@@ -8,10 +8,13 @@ import { Page } from '../../components/page';
 import { SearchBox } from '../../components/search-box';
 import { Select } from '../../components/select';
 import { Empty, Problem, SkeletonRows } from '../../components/states';
+import { showProblem } from '../../components/toast';
 import { catalogueQuery } from '../../features/catalogue/api';
 import styles from '../../features/catalogue/catalogue.module.css';
 import { categories, categoryLabel, categoryOf } from '../../features/catalogue/categories';
 import { ItemTable } from '../../features/catalogue/item-table';
+import { useSaveCatalogue } from '../../features/catalogue-import/api';
+import { sentenceOf } from '../../lib/api/client';
 import { useAbilities } from '../../lib/me';
 
 export default function CatalogueScreen() {
@@ -22,6 +25,9 @@ export default function CatalogueScreen() {
   const entries = useQuery(catalogueQuery({ category, search, archived }));
   const { editCatalogue } = useAbilities();
   const navigate = useNavigate();
+  const save = useSaveCatalogue();
+  const saveAs = (format: 'csv' | 'xlsx') =>
+    save.mutate(format, { onError: (error) => void showProblem(sentenceOf(error)) });
 
   const show = (next: { search?: string; archived?: boolean }) => {
     const asked = { search, archived, ...next };
@@ -40,12 +46,8 @@ export default function CatalogueScreen() {
   const tables = editCatalogue && (
     <MoreMenu label="More for the catalogue">
       <MenuItem onSelect={() => navigate(paths.catalogueImport)}>Take in a table (CSV, XLSX)</MenuItem>
-      <MenuItem onSelect={() => window.location.assign('/api/catalogue/export?format=csv')}>
-        Save as CSV
-      </MenuItem>
-      <MenuItem onSelect={() => window.location.assign('/api/catalogue/export?format=xlsx')}>
-        Save as XLSX
-      </MenuItem>
+      <MenuItem onSelect={() => saveAs('csv')}>Save as CSV</MenuItem>
+      <MenuItem onSelect={() => saveAs('xlsx')}>Save as XLSX</MenuItem>
     </MoreMenu>
   );
   const nothing = entries.data?.length === 0;
