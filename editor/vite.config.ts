@@ -1,13 +1,14 @@
 import { fileURLToPath } from 'node:url';
 import react from '@vitejs/plugin-react';
 import { defaultClientConditions, defineConfig } from 'vite';
+import { homeFonts, homePage } from './vite.home-page';
 
 const apiTarget = process.env.LAMPWRIGHT_API_URL ?? 'http://127.0.0.1:3000';
 
 const page = (file: string): string => fileURLToPath(new URL(file, import.meta.url));
 
 export default defineConfig({
-  plugins: [react()],
+  plugins: [react(), homeFonts(), homePage(apiTarget)],
   resolve: { conditions: ['source', ...defaultClientConditions] },
   build: {
     outDir: 'dist',

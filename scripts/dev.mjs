@@ -45,7 +45,9 @@ await main(async () => {
 async function startAll(folder, port, supervisor, signal) {
   const editorPort = await freePort(5173);
   const page = `http://127.0.0.1:${editorPort}`;
-  const { env } = await startGround({ folder, supervisor, signal, port, publicUrl: page });
+  // The page of a homeowner's link is filled in by the API: from the source, which vite then makes ready.
+  const editorFiles = inRoot('editor');
+  const { env } = await startGround({ folder, supervisor, signal, port, publicUrl: page, editorFiles });
   const tool = (/** @type {Parameters<Supervisor['start']>[0]} */ service) =>
     supervisor.start({ ...service, tool: true });
 

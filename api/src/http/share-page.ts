@@ -1,5 +1,6 @@
 import { readFile } from 'node:fs/promises';
 import { type RequestHandler, Router } from 'express';
+import { z } from 'zod';
 import type { Guest } from '../access/guest.js';
 import type { LinkGate } from '../access/link-gate.js';
 import { escapeHtml } from '../ports/mail/letter.js';
@@ -9,20 +10,30 @@ import { BUILT_EDITOR } from './editor-files.js';
 /** What the page says before its script runs. */
 export interface PageHead {
   readonly title: string;
-  /** Pictures that it is going to ask for, most wanted first. */
-  readonly pictures: readonly string[];
+  /** The picture that it shows first, and a lighter one for the screens of a media query. */
+  readonly picture: { readonly url: string; readonly light: { url: string; media: string } } | null;
 }
 
 /** Anything but a sentence to read would ask for more. */
 const waiting = (sentence: string) =>
   `<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width, initial-scale=1"><meta name="robots" content="noindex, nofollow"><title>Please wait</title></head><body style="font-family:sans-serif;max-width:36rem;margin:4rem auto;padding:0 1rem"><h1 style="font-size:1.25rem">Please wait a little</h1><p>${escapeHtml(sentence)}</p></body></html>`;
 
+/** The addresses of these pages are kept by nobody and told to nobody. */
+const quiet = {
+  'Cache-Control': 'no-store',
+  'Referrer-Policy': 'no-referrer',
+  'X-Robots-Tag': 'noindex, nofollow',
+};
+
+const linkIdSchema = z.uuid();
+
 const meta = (name: string, content: string) =>
   `<meta name="lampwright-${name}" content="${escapeHtml(content)}">`;
 
 /**
- * Serves the page of a homeowner's link, `/p/<token>`, and swaps the token for the link's cookie. It writes
- * nothing: mail scanners open links too. For links that don't exist or are over, the same page says so.
+ * Serves the page of a homeowner's link, `/p/<token>`, and swaps the token for the link's cookie; and
+ * `/p/back/<link id>`, for whoever has that cookie. It writes nothing: mail scanners open links too. For links that
+ * don't exist or are over, the same page says so.
  */
 export function sharePage(
   gate: Pick<LinkGate, 'byToken' | 'setCookie'>,
@@ -30,14 +41,21 @@ export function sharePage(
   folder = BUILT_EDITOR,
 ): RequestHandler {
   const router = Router();
+  // Back from the card service, which is not told the token: the cookie of the link lets them in, in the browser
+  // that they left from. The page says the same of every id; only the cookie opens anything.
+  router.get('/p/back/:linkId', async (request, response, next) => {
+    const shell = await readFile(`${folder}/home.html`, 'utf8').catch(() => null);
+    if (shell === null) return next();
+    response.set(quiet).type('html');
+    const { linkId } = request.params;
+    if (!linkIdSchema.safeParse(linkId).success)
+      response.status(404).send(inHead(shell, meta('state', 'unknown')));
+    else response.send(inHead(shell, meta('link', linkId) + meta('state', 'back')));
+  });
   router.get('/p/:token', async (request, response, next) => {
     const shell = await readFile(`${folder}/home.html`, 'utf8').catch(() => null);
     if (shell === null) return next();
-    response.set({
-      'Cache-Control': 'no-store',
-      'Referrer-Policy': 'no-referrer',
-      'X-Robots-Tag': 'noindex, nofollow',
-    });
+    response.set(quiet);
     try {
       const guest = await gate.byToken(request.params.token, request.ip ?? '');
       const head = await facts.headOf(guest);
@@ -53,12 +71,18 @@ export function sharePage(
   return router;
 }
 
-function filled(shell: string, linkId: string, { title, pictures }: PageHead): string {
-  const hints = pictures.map(
-    (url) => `<link rel="preload" as="image" href="${escapeHtml(url)}" fetchpriority="high">`,
-  );
+function filled(shell: string, linkId: string, { title, picture }: PageHead): string {
   const named = shell.replace(/<title>[^<]*<\/title>/, () => `<title>${escapeHtml(title)}</title>`);
+  const hints = picture
+    ? [
+        pictureHint(picture.light.url, picture.light.media),
+        pictureHint(picture.url, `not all and ${picture.light.media}`),
+      ]
+    : [];
   return inHead(named, [meta('link', linkId), ...hints].join(''));
 }
+
+const pictureHint = (url: string, media: string) =>
+  `<link rel="preload" as="image" href="${escapeHtml(url)}" media="${escapeHtml(media)}" fetchpriority="high">`;
 
 const inHead = (shell: string, tags: string): string => shell.replace('</head>', () => `${tags}</head>`);

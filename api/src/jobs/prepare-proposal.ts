@@ -3,6 +3,7 @@ import { buffer } from 'node:stream/consumers';
 import { Inject, Injectable, Logger } from '@nestjs/common';
 import sharp from 'sharp';
 import { PartiesRepository } from '../modules/proposals/parties.repository.js';
+import { LIGHT_PICTURE, lightKeyOf, PICTURE } from '../modules/proposals/pictures.js';
 import { ProposalStore, picturesOf } from '../modules/proposals/proposal-store.js';
 import { ProposalsRepository, type RevisionRow } from '../modules/proposals/proposals.repository.js';
 import type { RevisionDocument } from '../modules/proposals/revision-document.js';
@@ -12,9 +13,6 @@ import type { QueuePayloads } from '../ports/queue/queues.js';
 import { ObjectStorage } from '../ports/storage/storage.js';
 import type { JobHandler } from './job-handler.js';
 
-/** Sharp enough for a phone held close and for paper, light enough for a slow connection. */
-const PICTURE_EDGE_PX = 1600;
-const PICTURE_BYTES = 250_000;
 /** Tried from the first on until the picture is light enough; the last is taken as it comes. */
 const QUALITIES = [78, 70, 60, 50] as const;
 
@@ -87,32 +85,22 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
     const bytes = new Map<string, Buffer>();
     for (const { id } of sheets) {
       const key = kept.get(id) ?? `${row.companyId}/proposals/${row.id}/sheet-${id}.jpg`;
-      const picture = (await this.read(kept.get(id))) ?? (await this.reduced(sources.get(id)));
+      const picture = (await this.read(kept.get(id))) ?? (await this.reducedSource(sources.get(id)));
       if (!picture) {
         this.logger.warn({ revisionId: row.id, sheetId: id }, 'a sheet of a proposal has no picture');
         continue;
       }
       await this.storage.put(key, picture, 'image/jpeg');
+      await this.storage.put(lightKeyOf(key), await reduced(picture, LIGHT_PICTURE), 'image/jpeg');
       keys[id] = key;
       bytes.set(id, picture);
     }
     return { keys, bytes };
   }
 
-  private async reduced(key: string | undefined): Promise<Buffer | null> {
+  private async reducedSource(key: string | undefined): Promise<Buffer | null> {
     const original = await this.read(key);
-    if (!original) return null;
-    const small = await sharp(original)
-      .resize({ width: PICTURE_EDGE_PX, height: PICTURE_EDGE_PX, fit: 'inside', withoutEnlargement: true })
-      .flatten({ background: 'white' })
-      .png({ compressionLevel: 1 })
-      .toBuffer();
-    let picture = small;
-    for (const quality of QUALITIES) {
-      picture = await sharp(small).jpeg({ quality, progressive: true, mozjpeg: true }).toBuffer();
-      if (picture.length <= PICTURE_BYTES) break;
-    }
-    return picture;
+    return original && reduced(original, PICTURE);
   }
 
   private async read(key: string | undefined): Promise<Buffer | null> {
@@ -126,4 +114,18 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
     const proposal = row && (await this.repository.find(companyId, row.proposalId));
     if (asked.success && proposal) await this.sending.send(proposal, revisionId, asked.data);
   }
+}
+
+async function reduced(picture: Buffer, { edgePx, bytes }: typeof PICTURE | typeof LIGHT_PICTURE) {
+  const small = await sharp(picture)
+    .resize({ width: edgePx, height: edgePx, fit: 'inside', withoutEnlargement: true })
+    .flatten({ background: 'white' })
+    .png({ compressionLevel: 1 })
+    .toBuffer();
+  let smallest = small;
+  for (const quality of QUALITIES) {
+    smallest = await sharp(small).jpeg({ quality, progressive: true, mozjpeg: true }).toBuffer();
+    if (smallest.length <= bytes) break;
+  }
+  return smallest;
 }

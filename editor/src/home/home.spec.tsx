@@ -28,7 +28,7 @@ afterEach(() => {
   vi.unstubAllGlobals();
 });
 
-const live: Link = { kind: 'live', id: sampleLinkId };
+const live: Link = { kind: 'live', id: sampleLinkId, back: false };
 
 async function show(page: SharedPage) {
   const server = fakeServer(page);
@@ -126,6 +126,53 @@ describe('the picture', () => {
     expect(card.textContent).toContain('Part of “Path to the patio”.');
     const volts = within(card).getByText('11.6 V');
     expect(volts.closest('details')?.querySelector('summary')?.textContent).toBe('Technical details');
+  });
+
+  it('is the light one at first where the screen is narrow, and the whole one after a closer look', async () => {
+    const asked: { src: string; onload: (() => void) | null }[] = [];
+    vi.stubGlobal(
+      'Image',
+      class {
+        src = '';
+        onload: (() => void) | null = null;
+        constructor() {
+          asked.push(this);
+        }
+      },
+    );
+    await show(samplePage());
+    const { url, light } = samplePage().pictures[0]!;
+    const picture = document.querySelector('picture')!;
+    const source = () => picture.querySelector('source');
+    const [media, address] = [source()?.getAttribute('media'), source()?.getAttribute('srcset')];
+    expect({ url: address, media }).toEqual(light);
+    expect(picture.querySelector('img')?.getAttribute('src')).toBe(url);
+    expect(asked).toEqual([]);
+    await press(button('Zoom in'));
+    await press(button('Zoom out'));
+    await press(button('Zoom in'));
+    expect(asked.at(-1)?.src).toBe(url);
+    // The light one stays until the other can take its place.
+    expect(source()).not.toBeNull();
+    await act(async () => asked.at(-1)?.onload?.());
+    expect(source()).toBeNull();
+    await press(button('Show the whole picture'));
+    expect(source()).toBeNull();
+    expect(picture.querySelector('img')?.getAttribute('src')).toBe(url);
+  });
+
+  it('begins with the one that the server puts first, in the order of the sheets', async () => {
+    const page = samplePage();
+    const [photo] = page.document.sheets;
+    const [picture] = page.pictures;
+    const plan = { ...photo!, id: 'plan', name: 'Plot plan', view: 'plan' as const };
+    await show({
+      ...page,
+      document: { ...page.document, sheets: [plan, photo!] },
+      pictures: [picture!, { ...picture!, sheetId: 'plan' }],
+    });
+    const tabs = screen.getAllByRole('tab');
+    expect(tabs.map((tab) => tab.getAttribute('aria-selected'))).toEqual(['false', 'true']);
   });
 
   it('tells a light that is not chosen', async () => {

@@ -234,7 +234,15 @@ export const samplePage = (over: Partial<SharedPage> = {}): SharedPage => ({
     ],
     acceptedFaults: [],
   },
-  pictures: [{ sheetId: 'photo', url: `/api/share/${LINK}/pictures/photo`, widthPx: 1600, heightPx: 1067 }],
+  pictures: [
+    {
+      sheetId: 'photo',
+      url: `/api/share/${LINK}/pictures/photo`,
+      light: { url: `/api/share/${LINK}/pictures/photo?width=1000`, media: '(max-width: 719px)' },
+      widthPx: 1600,
+      heightPx: 1067,
+    },
+  ],
   differences: null,
   approval: null,
   decline: null,

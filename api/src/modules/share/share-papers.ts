@@ -5,6 +5,7 @@ import type { StoredFile } from '../../http/send-file.js';
 import { ObjectStorage } from '../../ports/storage/storage.js';
 import { Dues } from '../payments/dues.js';
 import { paperName } from '../proposals/letters.js';
+import { lightKeyOf } from '../proposals/pictures.js';
 import { ProposalStore, picturesOf, type ShownRevision } from '../proposals/proposal-store.js';
 import type { SharedPage } from './share.dto.js';
 import { ShareRepository, type SignedApproval } from './share.repository.js';
@@ -68,13 +69,16 @@ export class SharePapers {
     { companyId, proposalId }: Guest,
     shown: ShownRevision,
     sheetId: string,
+    light: boolean,
   ): Promise<StoredFile> {
     const approved = await this.store.approved(companyId, proposalId);
     const revisions = approved ? [shown, approved] : [shown];
     for (const { row } of revisions) {
       const key = picturesOf(row).get(sheetId);
+      if (key === undefined) continue;
       // A revision's pictures never change.
-      if (key !== undefined) return this.stored(key, `${row.id}-${sheetId}`, undefined);
+      const tag = `${row.id}-${sheetId}`;
+      return light ? this.lightPicture(key, tag) : this.stored(key, tag, undefined);
     }
     throw notFound('This picture');
   }
@@ -89,6 +93,15 @@ export class SharePapers {
       papers.push({ id: papers.length === 0 ? 'signed' : `signed-${document.revision}`, approval, document });
     }
     return papers;
+  }
+
+  /** Or the other one where there is none, as in a revision made before there were any. */
+  private lightPicture(key: string, tag: string): StoredFile {
+    const whole = this.stored(key, tag, undefined);
+    return {
+      etag: `"${encodeURIComponent(`${tag}-light`)}"`,
+      open: async () => (await this.storage.get(lightKeyOf(key))) ?? whole.open(),
+    };
   }
 
   private stored(key: string | null, tag: string | null, name: string | undefined): StoredFile {

@@ -1,4 +1,4 @@
-import { Body, Controller, Get, HttpCode, Inject, Param, Post, Req, Res } from '@nestjs/common';
+import { Body, Controller, Get, HttpCode, Inject, Param, Post, Query, Req, Res } from '@nestjs/common';
 import { ApiCreatedResponse, ApiNoContentResponse, ApiOkResponse, ApiTags } from '@nestjs/swagger';
 import type { Request, Response } from 'express';
 import { z } from 'zod';
@@ -22,6 +22,8 @@ import {
   checkoutSchema,
   type Decline,
   declineSchema,
+  type PictureQuery,
+  pictureQuerySchema,
   type SharedPage,
   sharedPageSchema,
 } from './share.dto.js';
@@ -58,10 +60,11 @@ export class ShareController {
     @CurrentGuest() guest: Guest,
     @Param('linkId', id) linkId: string,
     @Param('sheetId', text) sheetId: string,
+    @Query({ schema: pictureQuerySchema }) { width }: PictureQuery,
     @Req() request: Request,
     @Res() response: Response,
   ): Promise<void> {
-    await sendFile(await this.share.picture(guest, linkId, sheetId), request, response);
+    await sendFile(await this.share.picture(guest, linkId, sheetId, width !== undefined), request, response);
   }
 
   @Get('papers/:paperId')

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { LIGHT_PICTURE } from '../proposals/pictures.js';
 import { questionSchema } from '../proposals/proposals.dto.js';
 import { differencesSchema, revisionDocumentSchema } from '../proposals/revision-document.js';
 
@@ -34,8 +35,16 @@ export const sharedPageSchema = z.strictObject({
   /** Without the plan's records, which the page does not need. */
   document: revisionDocumentSchema.omit({ plan: true }),
   hash: z.string(),
+  /** The one to be seen first leads. */
   pictures: z.array(
-    z.strictObject({ sheetId: z.string(), url: z.string(), widthPx: z.number(), heightPx: z.number() }),
+    z.strictObject({
+      sheetId: z.string(),
+      url: z.string(),
+      /** A smaller one of the same, and the screens (a media query) that it is enough for at first. */
+      light: z.strictObject({ url: z.string(), media: z.string() }),
+      widthPx: z.number(),
+      heightPx: z.number(),
+    }),
   ),
   /** Against the approved revision; null where nothing was approved before. */
   differences: differencesSchema.nullable(),
@@ -56,6 +65,12 @@ export const sharedPageSchema = z.strictObject({
   papers: z.array(sharedPaperSchema),
 });
 export type SharedPage = z.infer<typeof sharedPageSchema>;
+
+/** `width` asks for the light picture. */
+export const pictureQuerySchema = z.strictObject({
+  width: z.literal(String(LIGHT_PICTURE.edgePx)).optional(),
+});
+export type PictureQuery = z.infer<typeof pictureQuerySchema>;
 
 export const askSchema = z.strictObject({
   text: z.string().trim().min(1, { error: 'Please write your question.' }).max(4000),

@@ -1,19 +1,15 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { Guest } from '../../access/guest.js';
+import { ENV } from '../../config/config.module.js';
+import type { Env } from '../../config/env.js';
 import { Database } from '../../database/database.js';
 import { notFound } from '../../http/app-error.js';
 import type { StoredFile } from '../../http/send-file.js';
 import { Dues } from '../payments/dues.js';
 import { differencesOf } from '../proposals/differences.js';
-import { ProposalLinks } from '../proposals/links.js';
-import {
-  type ApprovedRevision,
-  ProposalStore,
-  picturesOf,
-  type ShownRevision,
-} from '../proposals/proposal-store.js';
+import { picturedSheets } from '../proposals/pictures.js';
+import { type ApprovedRevision, ProposalStore, type ShownRevision } from '../proposals/proposal-store.js';
 import type { NewMessage, Question } from '../proposals/proposals.dto.js';
-import { ProposalsRepository } from '../proposals/proposals.repository.js';
 import type { Differences } from '../proposals/revision-document.js';
 import { QuestionThreads } from '../questions/question-threads.js';
 import { JobEvents } from '../timeline/job-events.repository.js';
@@ -22,7 +18,7 @@ import type { GuestCaller } from './guest-caller.js';
 import { sentencesOf } from './sentences.js';
 import type { Approve, Ask, Checkout, Decline, SharedPage } from './share.dto.js';
 import { ShareRepository } from './share.repository.js';
-import { pictureUrl } from './share-addresses.js';
+import { LIGHT_PICTURE_MEDIA, lightPictureUrl, pictureUrl } from './share-addresses.js';
 import { SharePapers } from './share-papers.js';
 import { ShareQuestions } from './share-questions.js';
 import { ShownProposal } from './shown-proposal.js';
@@ -31,11 +27,10 @@ import { ShownProposal } from './shown-proposal.js';
 @Injectable()
 export class ShareService {
   constructor(
+    @Inject(ENV) private readonly env: Env,
     @Inject(Database) private readonly database: Database,
     @Inject(ShownProposal) private readonly shown: ShownProposal,
     @Inject(ProposalStore) private readonly store: ProposalStore,
-    @Inject(ProposalsRepository) private readonly proposals: ProposalsRepository,
-    @Inject(ProposalLinks) private readonly links: ProposalLinks,
     @Inject(ShareRepository) private readonly repository: ShareRepository,
     @Inject(QuestionThreads) private readonly questions: QuestionThreads,
     @Inject(ShareQuestions) private readonly asking: ShareQuestions,
@@ -51,7 +46,6 @@ export class ShareService {
     const shown = await this.shown.of(guest);
     const { row, document } = shown;
     const approved = await this.store.approved(companyId, proposalId);
-    const kept = picturesOf(row);
     const { plan: _plan, ...shownDocument } = document;
     return {
       ...(await this.shown.standingOf(shown)),
@@ -59,14 +53,13 @@ export class ShareService {
       revisionId: row.id,
       document: shownDocument,
       hash: row.hash,
-      pictures: document.sheets
-        .filter(({ id }) => kept.has(id))
-        .map(({ id, widthPx, heightPx }) => ({
-          sheetId: id,
-          url: pictureUrl(linkId, id),
-          widthPx,
-          heightPx,
-        })),
+      pictures: picturedSheets(row, document).map(({ id, widthPx, heightPx }) => ({
+        sheetId: id,
+        url: pictureUrl(linkId, id),
+        light: { url: lightPictureUrl(linkId, id), media: LIGHT_PICTURE_MEDIA },
+        widthPx,
+        heightPx,
+      })),
       differences: approved && differencesFrom(approved, shown),
       approval: approved && {
         typedName: approved.approval.typedName,
@@ -95,9 +88,9 @@ export class ShareService {
     });
   }
 
-  async picture(guest: Guest, linkId: string, sheetId: string): Promise<StoredFile> {
+  async picture(guest: Guest, linkId: string, sheetId: string, light: boolean): Promise<StoredFile> {
     demandOwn(guest, linkId);
-    return this.papers.picture(guest, await this.shown.of(guest), sheetId);
+    return this.papers.picture(guest, await this.shown.of(guest), sheetId, light);
   }
 
   async paper(guest: Guest, linkId: string, paperId: string): Promise<StoredFile> {
@@ -131,12 +124,10 @@ export class ShareService {
     });
   }
 
-  /** The card service brings the payer back to the page of the link that they came by. */
+  /** The card service brings the payer back to the page that they left from, and learns no token. */
   async checkout(guest: Guest, linkId: string, dueId: string): Promise<Checkout> {
     demandOwn(guest, linkId);
-    const link = await this.proposals.link(guest.companyId, linkId);
-    if (!link) throw notFound('This proposal');
-    return this.dues.checkout(guest, dueId, this.links.urlOf(link));
+    return this.dues.checkout(guest, dueId, backUrl(this.env.PUBLIC_URL, linkId));
   }
 }
 

@@ -1,3 +1,5 @@
+import { randomUUID } from 'node:crypto';
+import sharp from 'sharp';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { TestApp } from '../../../test/harness.js';
 import { ObjectStorage } from '../../ports/storage/storage.js';
@@ -94,9 +96,15 @@ describe('the address of a link', () => {
     expect(cookie).toContain(`; Path=/api/share/${sent.linkId};`);
     expect(cookie).toContain('HttpOnly');
     expect(cookie).toContain('SameSite=Lax');
-    expect(answer.text).toContain(
-      `<link rel="preload" as="image" href="/api/share/${sent.linkId}/pictures/${job.sheetId}"`,
-    );
+    const picture = `/api/share/${sent.linkId}/pictures/${job.sheetId}`;
+    const hint = '<link rel="preload" as="image"';
+    expect(answer.text).toContain(`${hint} href="${picture}?width=1000" media="(max-width: 719px)"`);
+    expect(answer.text).toContain(`${hint} href="${picture}" media="not all and (max-width: 719px)"`);
+    const [shown] = (await pageOf(sent)).pictures;
+    expect(shown).toMatchObject({
+      url: picture,
+      light: { url: `${picture}?width=1000`, media: '(max-width: 719px)' },
+    });
     expect(answer.text).toMatch(/<title>Proposal \d+ for Front – Test company<\/title>/);
     expect(answer.text).not.toContain(sent.token);
     await test.agent().head(`/p/${sent.token}`).expect(200);
@@ -167,6 +175,25 @@ describe('the address of a link', () => {
     await test.agent().post(sharePath(b.home.linkId, '/opened')).set('Cookie', forced).expect(404);
     await test.agent().get(sharePath(b.home.linkId)).expect(404);
     await test.agent().get(sharePath(b.home.linkId)).set('Cookie', company.owner.cookie).expect(404);
+  });
+
+  it('lets whoever comes back from the card service in by their cookie, and nobody else', async () => {
+    const { home } = await fresh();
+    const back = `/p/back/${home.linkId}`;
+    const answer = await home.agent.get(back).expect(200);
+    expect(answer.headers).toMatchObject({ 'cache-control': 'no-store', 'referrer-policy': 'no-referrer' });
+    expect(answer.headers['set-cookie']).toBeUndefined();
+    expect(answer.text).toContain(`<meta name="lampwright-link" content="${home.linkId}">`);
+    expect(answer.text).toContain('<meta name="lampwright-state" content="back">');
+    await home.agent.get(sharePath(home.linkId)).expect(200);
+    // Elsewhere the same address has the same page, and opens nothing; nor does it tell which links there are.
+    const elsewhere = test.agent();
+    expect((await elsewhere.get(back).expect(200)).text).toBe(answer.text);
+    await elsewhere.get(sharePath(home.linkId)).expect(404);
+    const madeUp = randomUUID();
+    const { text } = await elsewhere.get(`/p/back/${madeUp}`).expect(200);
+    expect(text.replace(madeUp, home.linkId)).toBe(answer.text);
+    await elsewhere.get('/p/back/%3Cscript%3E').expect(404);
   });
 
   it('is not a sign-in: its cookie opens nothing of the company', async () => {
@@ -245,6 +272,32 @@ describe('the page', () => {
     });
     await test.app.get(ObjectStorage, { strict: false }).put('some/key.jpg', Buffer.from('x'), 'image/jpeg');
     await home.agent.get(sharePath(home.linkId, '/pictures/secret')).expect(404);
+  });
+
+  it('has a light one of each picture, and sends the whole one where it was not made', async () => {
+    const { home, proposal } = await fresh();
+    const [picture] = (await pageOf(home)).pictures;
+    const get = async (url: string) => (await home.agent.get(url).buffer(true).expect(200)).body as Buffer;
+    const sizeOf = async (url: string) => {
+      const { width, height } = await sharp(await get(url)).metadata();
+      return [width, height];
+    };
+    expect(await sizeOf(picture!.url)).toEqual([1600, 1200]);
+    expect(await sizeOf(picture!.light.url)).toEqual([1000, 750]);
+    expect((await get(picture!.light.url)).length).toBeLessThan(120_000);
+    const tags = [picture!.url, picture!.light.url].map(
+      async (url) => (await home.agent.head(url)).headers.etag,
+    );
+    expect(new Set(await Promise.all(tags)).size).toBe(2);
+    await home.agent.get(`${picture!.url}?width=999`).expect(400);
+
+    const key = 'older/picture.jpg';
+    const bytes = await sharp({ create: { width: 40, height: 30, channels: 3, background: 'green' } })
+      .jpeg()
+      .toBuffer();
+    await test.app.get(ObjectStorage, { strict: false }).put(key, bytes, 'image/jpeg');
+    await sendCopy(test, company.companyId, proposal.revisionId, { pictures: { [job.sheetId]: key } });
+    expect(await sizeOf(picture!.light.url)).toEqual([40, 30]);
   });
 
   it('shows the newest revision that was sent and not taken back', async () => {

@@ -36,7 +36,7 @@ export function GardenPicture(props: Props) {
   const tabs = useMemo(() => tabsOf(page), [page]);
   const marks = useMemo(() => marksOf(page, choice), [page, choice]);
   const changed = useMemo(() => changeSentences(page), [page]);
-  const [sheetId, setSheetId] = useState(() => firstSheet(tabs, page));
+  const [sheetId, setSheetId] = useState(page.pictures[0]?.sheetId);
   const tab = tabs.find(({ id }) => id === sheetId) ?? tabs[0];
   const chosen = marks.find(({ light }) => light.recordId === chosenId);
   const root = useRef<HTMLElement>(null);
@@ -133,19 +133,6 @@ const tabsOf = ({ document, pictures }: SharedPage): Tab[] =>
     const picture = pictures.find(({ sheetId }) => sheetId === id);
     return picture ? [{ id, name, picture: { ...picture, widthPx, heightPx } }] : [];
   });
-
-/** The photo with the most lights; a drawing only where no photo has any. */
-function firstSheet(tabs: readonly Tab[], { document }: SharedPage): string | undefined {
-  const worth = (id: string): number => {
-    const lights = document.lights.filter(({ sheetId }) => sheetId === id).length;
-    const photo = document.sheets.find((sheet) => sheet.id === id)?.view === 'photo';
-    return lights === 0 ? 0 : lights + (photo ? 10_000 : 0);
-  };
-  return tabs.reduce<Tab | undefined>(
-    (best, tab) => (best && worth(best.id) >= worth(tab.id) ? best : tab),
-    undefined,
-  )?.id;
-}
 
 function marksOf({ document, differences, questions }: SharedPage, choice: Choice): ShownMark[] {
   const changes = new Map<string, LightChange>();

@@ -2,6 +2,7 @@ import {
   type KeyboardEvent,
   type MouseEvent,
   type ReactNode,
+  useEffect,
   useLayoutEffect,
   useRef,
   useState,
@@ -54,6 +55,13 @@ export function Stage(props: Props) {
   const [view, setView] = useState<View>(whole);
   useGestures(frame, view, setView);
 
+  /** Where marks overlap, a finger means the one whose middle is nearest, not the one that lies on top. */
+  const pressMark = (mark: ShownMark, event: MouseEvent): void => {
+    // Enter and the space bar press without a place.
+    const meant = event.detail === 0 ? null : nearest(frame.current, view, marks, event);
+    props.onChoose((meant ?? mark).light.recordId);
+  };
+
   /** A finger that came down beside the marks means the nearest, if it is near. */
   const pressBeside = (event: MouseEvent): void => {
     if (event.target instanceof Element && event.target.closest('button')) return;
@@ -90,13 +98,13 @@ export function Stage(props: Props) {
             transform: `translate(${view.x * 100}%, ${view.y * 100}%) scale(${view.zoom})`,
           }}
         >
-          <SheetImage picture={picture} />
+          <SheetImage picture={picture} closeUp={view.zoom > 1} />
           {marks.map((mark) => (
             <LightMark
               key={mark.light.recordId}
               mark={mark}
               chosen={mark.light.recordId === props.chosenId}
-              onPress={() => props.onChoose(mark.light.recordId)}
+              onPress={(event) => pressMark(mark, event)}
               onFocus={() => setView((seen) => showing(seen, mark.spot))}
             />
           ))}
@@ -184,9 +192,11 @@ function nearest(
   return found;
 }
 
-function SheetImage({ picture }: { readonly picture: Picture }) {
+/** The light one first where it is enough; from the first close look on the whole one, once it has come. */
+function SheetImage({ picture, closeUp }: { readonly picture: Picture; readonly closeUp: boolean }) {
   const [attempt, setAttempt] = useState(0);
   const [failed, setFailed] = useState(false);
+  const whole = useLoaded(closeUp ? picture.url : null);
   const box = boxOf(picture);
   // Another picture in the same place begins anew.
   // biome-ignore lint/correctness/useExhaustiveDependencies: the address is what is new
@@ -208,24 +218,42 @@ function SheetImage({ picture }: { readonly picture: Picture }) {
       </div>
     );
   return (
-    <img
-      key={attempt}
-      className={styles.image}
-      style={{
-        ...at({ x: box.left, y: box.top }),
-        width: `${box.width * 100}%`,
-        height: `${box.height * 100}%`,
-      }}
-      src={picture.url}
-      width={picture.widthPx}
-      height={picture.heightPx}
-      alt=""
-      fetchPriority="high"
-      decoding="async"
-      draggable={false}
-      onError={() => setFailed(true)}
-    />
+    <picture>
+      {!whole && <source media={picture.light.media} srcSet={picture.light.url} />}
+      <img
+        key={attempt}
+        className={styles.image}
+        style={{
+          ...at({ x: box.left, y: box.top }),
+          width: `${box.width * 100}%`,
+          height: `${box.height * 100}%`,
+        }}
+        src={picture.url}
+        width={picture.widthPx}
+        height={picture.heightPx}
+        alt=""
+        fetchPriority="high"
+        decoding="async"
+        draggable={false}
+        onError={() => setFailed(true)}
+      />
+    </picture>
   );
+}
+
+/** Whether a picture, once it was asked for by its address, has come; one that fails is asked for again. */
+function useLoaded(url: string | null): boolean {
+  const [loaded, setLoaded] = useState<string | null>(null);
+  useEffect(() => {
+    if (url === null) return;
+    const image = new Image();
+    image.onload = () => setLoaded(url);
+    image.src = url;
+    return () => {
+      image.onload = null;
+    };
+  }, [url]);
+  return loaded !== null;
 }
 
 function Tool({

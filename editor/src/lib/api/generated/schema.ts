@@ -8775,6 +8775,10 @@ export interface operations {
                         pictures: {
                             sheetId: string;
                             url: string;
+                            light: {
+                                url: string;
+                                media: string;
+                            };
                             widthPx: number;
                             heightPx: number;
                         }[];
@@ -8892,7 +8896,9 @@ export interface operations {
     };
     Share_picture: {
         parameters: {
-            query?: never;
+            query?: {
+                width?: "1000";
+            };
             header?: never;
             path: {
                 linkId: string;
@@ -9213,6 +9219,10 @@ export interface operations {
                         pictures: {
                             sheetId: string;
                             url: string;
+                            light: {
+                                url: string;
+                                media: string;
+                            };
                             widthPx: number;
                             heightPx: number;
                         }[];
@@ -9480,6 +9490,10 @@ export interface operations {
                         pictures: {
                             sheetId: string;
                             url: string;
+                            light: {
+                                url: string;
+                                media: string;
+                            };
                             widthPx: number;
                             heightPx: number;
                         }[];
