@@ -1,6 +1,7 @@
 /** What the address stands for, as the server wrote it into the page. */
 export type Link =
-  | { readonly kind: 'live'; readonly id: string }
+  /** `back`: they came back from the card service, and only the browser that they left from is let in. */
+  | { readonly kind: 'live'; readonly id: string; readonly back: boolean }
   | { readonly kind: 'unknown' }
   | { readonly kind: 'gone' };
 
@@ -9,6 +10,7 @@ const meta = (page: Document, name: string): string | null =>
 
 export function linkOf(page: Document): Link {
   const id = meta(page, 'link');
-  if (id !== null) return { kind: 'live', id };
-  return { kind: meta(page, 'state') === 'gone' ? 'gone' : 'unknown' };
+  const state = meta(page, 'state');
+  if (id !== null) return { kind: 'live', id, back: state === 'back' };
+  return { kind: state === 'gone' ? 'gone' : 'unknown' };
 }

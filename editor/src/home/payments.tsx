@@ -104,12 +104,13 @@ function DueRow({ linkId, due, document, main, returned, tired, onCheck }: RowPr
   );
 }
 
-type Word = 'paid' | 'waiting' | 'begun' | 'failed' | 'open' | 'later';
+type Word = 'paid' | 'waiting' | 'begun' | 'failed' | 'open' | 'by-hand' | 'later';
 
 function wordOf({ outstandingMinor, pending, payable, requested }: Due, returned: boolean): Word {
   if (outstandingMinor <= 0) return 'paid';
   if (pending) return returned ? 'waiting' : 'begun';
-  if (!requested || !payable) return 'later';
+  if (!requested) return 'later';
+  if (!payable) return 'by-hand';
   return returned ? 'failed' : 'open';
 }
 
@@ -125,6 +126,8 @@ function sentenceOf(word: Word): string {
       return 'The card payment did not go through, and nothing was charged. Please try again.';
     case 'later':
       return 'You are asked for it when it is due.';
+    case 'by-hand':
+      return 'Please pay by transfer or cheque, as the invoice says. It shows here once the company has it.';
     case 'open':
       return '';
   }
@@ -139,6 +142,7 @@ function buttonOf(word: Word, amount: string): string {
       return 'Go on with the payment';
     case 'open':
     case 'paid':
+    case 'by-hand':
     case 'later':
       return `Pay ${amount} by card`;
   }

@@ -21,6 +21,17 @@ export const UnknownLink = () => (
   </Alone>
 );
 
+/** Back from the card service, in a browser that the proposal was not opened in. */
+export const OtherBrowser = () => (
+  <Alone title="Please open the proposal from its mail">
+    <p>
+      This browser does not know the proposal, so it can’t be shown here. Whether a payment went through
+      stands on its page: open it by the link in the mail. For a payment that did, a receipt comes by mail as
+      well.
+    </p>
+  </Alone>
+);
+
 export const GoneLink = () => (
   <Alone title="This link is no longer valid">
     <p>It has run out or was called back. Please ask the company that sent it for a new one.</p>
