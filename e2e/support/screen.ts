@@ -99,12 +99,15 @@ function layoutProblems(page: Page): Promise<string[]> {
         problems.push(`cuts off the foot of “${words}”`);
       const frame = element.closest('button, [role="button"], [role="tab"], label, td, th');
       if (frame === null || style.textOverflow === 'ellipsis') continue;
-      const range = document.createRange();
-      range.selectNodeContents(element);
-      const text = range.getBoundingClientRect();
       const box = frame.getBoundingClientRect();
-      if (text.width > 0 && (text.left < box.left - 1 || text.right > box.right + 1))
-        problems.push(`“${words}” sticks out of its ${frame.tagName.toLowerCase()}`);
+      const sticksOut = [...element.childNodes].some((node) => {
+        if (node.nodeType !== Node.TEXT_NODE) return false;
+        const range = document.createRange();
+        range.selectNodeContents(node);
+        const text = range.getBoundingClientRect();
+        return text.width > 0 && (text.left < box.left - 1 || text.right > box.right + 1);
+      });
+      if (sticksOut) problems.push(`“${words}” sticks out of its ${frame.tagName.toLowerCase()}`);
     }
     return problems;
   });
