@@ -52,6 +52,16 @@ export class ProposalStore {
     return shown && { ...shown, approval };
   }
 
+  /**
+   * What was approved after a revision was frozen, so that the revision tells its changes against something else,
+   * or against nothing; null where it was not overtaken.
+   */
+  async approvedSince(row: RevisionFactsRow): Promise<ApprovedRevision | null> {
+    const approved = await this.approved(row.companyId, row.proposalId);
+    const known = approved === null || [row.id, row.changesRevisionId].includes(approved.row.id);
+    return known ? null : approved;
+  }
+
   /** The approval of one revision. */
   async approvalOf(row: RevisionFactsRow): Promise<ApprovalRow | null> {
     const all = await this.repository.approvals(row.companyId, [row.proposalId]);

@@ -204,6 +204,12 @@ export class ProposalsService {
       );
     if (await this.store.declineOf(row))
       throw conflict('declined', 'This revision was declined. Make a new one.');
+    const since = await this.store.approvedSince(row);
+    if (since)
+      throw conflict(
+        'approved-since',
+        `Revision ${since.row.revision} was approved after this one was made, so that this one does not say what it changes. Make a new one: it will be a change order.`,
+      );
     const person = await this.actorOf(actor);
     const sendTo = { ...input, byId: actor.userId, byName: person.name };
     if (row.status === 'ready') await this.sending.send(proposal, revisionId, sendTo);

@@ -11,6 +11,7 @@ import { ObjectStorage } from '../../ports/storage/storage.js';
 import { addJob } from '../plans/plans.testkit.js';
 import { addPricedCompany, editBook, type PricedCompany } from '../pricing/pricing.testkit.js';
 import type { RevisionDetail } from './proposals.dto.js';
+import { ProposalsRepository } from './proposals.repository.js';
 import {
   addReadyJob,
   approveRevision,
@@ -27,6 +28,7 @@ import {
   untilRevision,
 } from './proposals.testkit.js';
 import { revisionDocumentSchema } from './revision-document.js';
+import { Sending } from './sending.js';
 
 // Plans are solved and PDFs made here: on a busy machine that takes its time.
 vi.setConfig({ testTimeout: 120_000, hookTimeout: 120_000 });
@@ -279,6 +281,44 @@ describe('sending', () => {
     expect(second.totalMinor).toBeGreaterThan(first.totalMinor);
     // The earlier one is not what the homeowner should see any more.
     expect((await send(first.id, to).expect(409)).body.code).toBe('newer-sent');
+  });
+
+  it('is refused for a revision that was frozen before another one was approved', async () => {
+    const first = await frozenAndReady(agent, job.jobId);
+    await send(first.id, address()).expect(200);
+    await addLight();
+    const second = await frozenAndReady(agent, job.jobId);
+    expect(second.changeOrder).toBe(false);
+    await approveRevision(test, company.companyId, first);
+    const to = address();
+    const refusal = (await send(second.id, to).expect(409)).body;
+    expect(refusal).toMatchObject({ code: 'approved-since', detail: expect.stringContaining('Revision 1') });
+    expect(await mailTo(to)).toHaveLength(0);
+    // What is approved can still be sent to somebody else.
+    await send(first.id, to).expect(200);
+    const third = await frozenAndReady(agent, job.jobId);
+    expect(third.changeOrder).toBe(true);
+    await send(third.id, to).expect(200);
+    expect(await mailTo(to)).toHaveLength(2);
+  });
+
+  it('sends nothing that was overtaken by an approval while its PDF was made', async () => {
+    const first = await frozenAndReady(agent, job.jobId);
+    await send(first.id, address()).expect(200);
+    await addLight();
+    const second = await frozenAndReady(agent, job.jobId);
+    const proposal = await test.app
+      .get(ProposalsRepository, { strict: false })
+      .ofJob(company.companyId, job.jobId);
+    await approveRevision(test, company.companyId, first);
+    const to = address();
+    const { id: byId } = (await agent.get('/api/auth/me').expect(200)).body.user;
+    await worker
+      .get(Sending, { strict: false })
+      .send(proposal!, second.id, { ...sendTo(to), byId, byName: 'Rowan Marsh' });
+    expect(await mailTo(to)).toHaveLength(0);
+    const [newest] = (await proposalFor(agent, job.jobId)).revisions;
+    expect(newest).toMatchObject({ revision: 2, state: 'ready', sentAt: null });
   });
 
   it('reminds by the same link while nobody answered, and not after that', async () => {

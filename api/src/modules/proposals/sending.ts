@@ -29,13 +29,22 @@ export class Sending {
     @Inject(Queue) private readonly queue: Queue,
   ) {}
 
-  /** In one transaction: everybody gets the mail, or nobody. */
+  /**
+   * In one transaction: everybody gets the mail, or nobody. A revision that was overtaken by an approval while its
+   * PDF was made goes to nobody, and stays ready.
+   */
   async send(proposal: ProposalRow, revisionId: string, to: SendTo): Promise<void> {
     const { companyId, jobId } = proposal;
     await this.database.transaction(async () => {
+      // Before the revision, as whoever answers holds them.
+      await this.repository.lockJob(companyId, jobId);
       const shown = await this.store.lockRevision(companyId, revisionId);
       if (!shown || shown.row.pdfKey === null || shown.row.withdrawnAt !== null) return;
       const { row, document } = shown;
+      if (await this.store.approvedSince(row)) {
+        await this.repository.updateRevision(companyId, revisionId, { sendTo: null });
+        return;
+      }
       const reminderDays = (await this.texts.inForce(companyId))?.texts.reminderDays ?? [];
       const now = new Date();
       for (const recipient of to.recipients) {
