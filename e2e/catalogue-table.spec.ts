@@ -108,6 +108,8 @@ test('the catalogue is saved as a table that is taken in again without a change'
     await page.goto('/catalogue/import');
     const path = await saved.path();
     await page.getByLabel('Table of items').setInputFiles(path);
+    await expect(page.getByText(/rows below the heads/)).toBeVisible({ timeout: 30_000 });
+    await expect(page.getByRole('table', { name: 'Rows of the table' })).toBeVisible();
     await expect(page.getByRole('button', { name: 'Nothing to take in' })).toBeDisabled();
     const shown = page.getByRole('group', { name: 'Which rows to show' }).getByRole('button');
     await expect(shown).toHaveText([/^All \d+$/, /^As they are \d+$/]);

@@ -42,7 +42,7 @@ export function PastImports() {
                 <th scope="row" className={styles.head}>
                   {done.fileName}
                 </th>
-                <td>
+                <td className={styles.when}>
                   {formatDay(done.at)}
                   {done.by && <span className={styles.by}>{done.by}</span>}
                 </td>
