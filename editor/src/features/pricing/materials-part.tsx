@@ -4,6 +4,7 @@ import { Link } from 'react-router-dom';
 import { Empty } from '../../components/states';
 import { Table } from '../../components/table';
 import type { Materials } from './api';
+import { gather } from './gather';
 import styles from './lines.module.css';
 import { quantityText, sectionLabel } from './words';
 
@@ -14,11 +15,17 @@ interface MaterialsPartProps {
 
 const isSection = (text: string): text is LineSection => lineSections.some((section) => section === text);
 
+function amount(quantity: number, text: string): string {
+  const unit = saleUnitSchema.safeParse(text);
+  return unit.success ? quantityText(quantity, unit.data, navigator.language) : `${quantity} ${text}`;
+}
+
 /** What is needed to build the plan, without any money. */
 export function MaterialsPart({ materials, planHref }: MaterialsPartProps) {
   if (materials.lines.length === 0)
     return <Empty title="Nothing to bring yet">Materials are counted from what is on the plan.</Empty>;
-  const sections = [...new Set(materials.lines.map(({ section }) => section))];
+  const things = gather(materials.lines);
+  const sections = [...new Set(things.map(({ section }) => section))];
   return (
     <Table label="Materials">
       <thead>
@@ -37,32 +44,29 @@ export function MaterialsPart({ materials, planHref }: MaterialsPartProps) {
                 {isSection(section) ? sectionLabel(section) : section}
               </th>
             </tr>
-            {materials.lines
-              .filter((line) => line.section === section)
-              .map((line) => {
-                const unit = saleUnitSchema.safeParse(line.unit);
-                return (
-                  <tr key={`${line.groupId} ${line.key}`} className={styles.line} data-origin="plan">
-                    <td className={styles.what}>
-                      <span className={styles.name}>{line.name}</span>
-                      <span className={styles.source}>
-                        {line.recordIds.length > 0 ? (
-                          <Link to={planHref(line.recordIds)} title="Show on the plan">
-                            {line.source}
+            {things
+              .filter((thing) => thing.section === section)
+              .map(({ name, unit, quantity, uses }) => (
+                <tr key={`${name} ${unit}`} className={styles.line} data-origin="plan">
+                  <td className={styles.what}>
+                    <span className={styles.name}>{name}</span>
+                    {uses.map(({ key, groupId, source, recordIds }) => (
+                      <span key={`${groupId} ${key}`} className={styles.source}>
+                        {recordIds.length > 0 ? (
+                          <Link to={planHref(recordIds)} title="Show on the plan">
+                            {source}
                           </Link>
                         ) : (
-                          line.source
+                          source
                         )}
                       </span>
-                    </td>
-                    <td data-align="end" className={styles.figure}>
-                      {unit.success
-                        ? quantityText(line.quantity, unit.data, navigator.language)
-                        : `${line.quantity} ${line.unit}`}
-                    </td>
-                  </tr>
-                );
-              })}
+                    ))}
+                  </td>
+                  <td data-align="end" className={styles.figure}>
+                    {amount(quantity, unit)}
+                  </td>
+                </tr>
+              ))}
           </Fragment>
         ))}
       </tbody>

@@ -2,7 +2,7 @@ import { type ManualLine, type QuoteWarning, scheduleOf } from '@lampwright/geom
 import { useQuery } from '@tanstack/react-query';
 import { type ReactNode, useEffect, useMemo, useState } from 'react';
 import { Link, useSearchParams } from 'react-router-dom';
-import { Button } from '../../components/button';
+import { Button, LinkButton } from '../../components/button';
 import { PlusIcon } from '../../components/icons';
 import { Page } from '../../components/page';
 import { Empty, Problem, SkeletonRows } from '../../components/states';
@@ -137,12 +137,16 @@ export function PriceScreen(props: PriceScreenProps) {
           {part === 'lines' && (
             <>
               <Warnings warnings={answer.quote.warnings} lines={shown.map(({ key }) => key)} {...props} />
-              {shown.length === 0 ? (
-                <Empty title="Nothing to price yet">
+              {fixtures.length === 0 && (
+                <Empty
+                  title="Nothing to price yet"
+                  action={<LinkButton to={planHref([])}>Open the plan</LinkButton>}
+                >
                   Lines come from what is on the plan: fixtures, lamps, cable, transformers, and the work on
                   them.
                 </Empty>
-              ) : (
+              )}
+              {shown.length > 0 && (
                 <LineTable
                   groups={arrange(groups, shown)}
                   manner={manner}
