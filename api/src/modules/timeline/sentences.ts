@@ -3,7 +3,7 @@ import type { JobEventData, JobEventKind } from './job-events.repository.js';
 const stageNames: Readonly<Record<string, string>> = {
   enquiry: 'Enquiry',
   plan: 'Plan',
-  prove: 'Prove it',
+  prove: 'Prove',
   propose: 'Propose',
   prepare: 'Prepare',
   install: 'Install',

@@ -67,7 +67,8 @@ export function RevisionsSection({ jobId, proposal }: RevisionsProps) {
               <td className={styles.wide}>
                 <Standing revision={revision} />
               </td>
-              <td data-align="end">{money(revision.totalMinor)}</td>
+              {/* What was agreed, of the parts taken; before that, what is offered. */}
+              <td data-align="end">{money(revision.approval?.totalMinor ?? revision.totalMinor)}</td>
               <td>
                 <span className={styles.papers}>
                   {revision.pdfUrl !== null && <FileLink href={revision.pdfUrl}>PDF</FileLink>}
