@@ -1,5 +1,6 @@
 import type { Place } from './picture/stage';
 import type { Light, Question, ShareDocument } from './share';
+import { kindInWords } from './words';
 
 /** What a question is about. */
 export type About =
@@ -18,14 +19,14 @@ type Shown = Pick<ShareDocument, 'lights' | 'sheets'>;
 export const lightOf = ({ lights }: Pick<Shown, 'lights'>, recordId: string): Light | undefined =>
   lights.find((light) => light.recordId === recordId);
 
-/** "About P3, Brass path light, 3 W". */
+/** "About path light P3". */
 export function aboutInWords(document: Shown, about: About): string {
   switch (about.kind) {
     case 'whole':
       return 'About the whole proposal';
     case 'light': {
       const light = lightOf(document, about.recordId);
-      return light ? `About ${light.tag}, ${light.name}` : 'About a light that is no longer planned';
+      return light ? `About ${kindInWords(light)} ${light.tag}` : 'About a light that is no longer planned';
     }
     case 'place': {
       const several = document.sheets.length > 1;

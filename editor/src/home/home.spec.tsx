@@ -121,7 +121,7 @@ describe('the picture', () => {
   it('says what a light is, what it lights, and its figures only under technical details', async () => {
     await show(samplePage());
     await press(button('P3, Brass path light, 3 W'));
-    const card = screen.getByRole('region', { name: /^P3 · Brass path light/ });
+    const card = screen.getByRole('region', { name: /^Path light P3\s*Brass path light/ });
     expect(card.textContent).toContain('Lights the stepping stones to the patio.');
     expect(card.textContent).toContain('Part of “Path to the patio”.');
     const volts = within(card).getByText('11.6 V');
@@ -212,7 +212,7 @@ describe('questions', () => {
     const server = await show(samplePage());
     const again = screen.getByLabelText<HTMLTextAreaElement>(/^Ask Fernhollow/);
     expect(again.value).toBe('How bright?');
-    expect(screen.getByText('About P3, Brass path light, 3 W')).toBeTruthy();
+    expect(screen.getByText('About path light P3')).toBeTruthy();
     server.willAnswer('questions', { status: 201, body: sampleQuestion });
     await press(button('Send question'));
     expect(server.posts[0]?.body).toEqual({ text: 'How bright?', recordId: 'p3', point: null });
@@ -240,7 +240,7 @@ describe('questions', () => {
 
   it('replies in a thread', async () => {
     const server = await show(samplePage({ questions: [sampleQuestion] }));
-    const reply = screen.getByLabelText('Reply: About P3, Brass path light, 3 W');
+    const reply = screen.getByLabelText('Reply: About path light P3');
     fireEvent.change(reply, { target: { value: 'Thank you.' } });
     server.willAnswer('messages', { status: 201, body: sampleQuestion });
     await press(button('Send reply'));

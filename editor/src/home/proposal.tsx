@@ -21,7 +21,7 @@ import { REVIEW_BUTTON, SumBar } from './sum-bar';
 import { TotalAloud, Totals } from './totals';
 import { useStep } from './use-step';
 import { useWatch } from './use-watch';
-import { dayOf, dotted, proposalInWords } from './words';
+import { dayOf, dotted, proposalInWords, together } from './words';
 
 interface Props {
   readonly linkId: string;
@@ -120,7 +120,7 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
             {dotted([
               document.company.name,
               ...proposalInWords(document),
-              `valid to ${dayOf(document.validUntil, document.locale)}`,
+              together(`valid to ${dayOf(document.validUntil, document.locale)}`),
             ])}
           </p>
           <h1>{document.job.property || document.job.name} after dark</h1>

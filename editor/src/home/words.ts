@@ -33,12 +33,12 @@ export const momentOf = (iso: string, locale: string): string =>
 
 export const count = (n: number, one: string, many = `${one}s`): string => `${n} ${n === 1 ? one : many}`;
 
+/** Kept on one line: "proposal" alone at the end of one says nothing. */
+export const together = (text: string): string => text.replaceAll(' ', '\u00a0');
+
 /** "proposal 1042", and which revision where it is not the first. */
-export const proposalInWords = ({
-  number,
-  revision,
-}: Pick<ShareDocument, 'number' | 'revision'>): string[] =>
-  revision > 1 ? [`proposal ${number}`, `revision ${revision}`] : [`proposal ${number}`];
+export const proposalInWords = ({ number, revision }: Pick<ShareDocument, 'number' | 'revision'>): string[] =>
+  [`proposal ${number}`, ...(revision > 1 ? [`revision ${revision}`] : [])].map(together);
 
 /** Parts of one line with dots between, which stay at the ends of lines. */
 export const dotted = (parts: readonly string[]): string => parts.join('\u00a0· ');
@@ -59,6 +59,14 @@ const kinds: Readonly<Record<string, string>> = {
   linear: 'strip light',
   underwater: 'underwater light',
 };
+
+/** "path light": what it is in plain words. */
+export const kindInWords = ({ kind }: Pick<Light, 'kind'>): string => kinds[kind] ?? 'light';
+
+export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
+
+/** Ends as sentences do. */
+export const sentence = (text: string): string => (/[.!?…]$/.test(text) ? text : `${text}.`);
 
 /** "5 path lights"; "4 lights" where they are of several kinds. */
 export function lightsInWords(fixtures: number, lights: readonly Pick<Light, 'kind'>[]): string {

@@ -47,6 +47,7 @@ export function GardenPicture(props: Props) {
       .filter(({ light }) => light.sheetId === id)
       .map((mark) => ({ ...mark, spot: spotOf(tab.picture, mark.light) }));
   const here = onSheet(tab.id);
+  const photo = document.sheets.find(({ id }) => id === tab.id)?.view === 'photo';
   const asked = page.questions.filter(({ recordId }) => recordId !== null && recordId === chosenId);
 
   const close = (): void => {
@@ -101,15 +102,19 @@ export function GardenPicture(props: Props) {
           )}
         </Stage>
         <p role="status" className={styles.hint}>
-          {props.placing &&
-            'Tap the place in the picture, or move the cross with the arrow keys and press Enter.'}
+          {props.placing && (
+            <>
+              Tap the place in the picture
+              <span className={styles.byKeys}>, or move the cross with the arrow keys and press Enter</span>.
+            </>
+          )}
         </p>
-        <p className={styles.caption}>
-          {here.length > 0
-            ? 'Artist’s impression: the marks show where lights will stand. Tap one to see what it is and what it lights.'
-            : 'No lights are planned in this picture.'}
-        </p>
-        <Legend marks={here} />
+        {!props.placing && (
+          <>
+            <p className={styles.caption}>{captionOf(here, photo)}</p>
+            <Legend marks={here} />
+          </>
+        )}
       </div>
       {chosen && (
         <LightCard
@@ -157,6 +162,12 @@ const pinsOf = ({ questions, document }: SharedPage, sheetId: string): ShownPin[
     const label = `${aboutInWords(document, about)}: ${text.slice(0, 80)}`;
     return [{ questionId: question.id, label, x: about.x, y: about.y }];
   });
+
+function captionOf(marks: readonly ShownMark[], photo: boolean): string {
+  if (marks.length === 0) return 'No lights are planned in this picture.';
+  const what = photo ? 'Artist’s impression: the' : 'Seen from above. The';
+  return `${what} marks show where lights will stand. Tap one to see what it is and what it lights.`;
+}
 
 function Legend({ marks }: { readonly marks: readonly ShownMark[] }) {
   const changes = new Set(marks.map(({ change }) => change));

@@ -1,6 +1,6 @@
 import { useEffect, useRef } from 'react';
 import type { Group, Light } from '../share';
-import { count } from '../words';
+import { capital, count, kindInWords, sentence } from '../words';
 import styles from './light-card.module.css';
 import type { ShownMark } from './mark';
 
@@ -32,8 +32,11 @@ export function LightCard({ mark, group, locale, changed, questions, onAsk, onQu
     <section className={styles.card} aria-labelledby="light-card">
       <div className={styles.head}>
         <h2 id="light-card" ref={heading} tabIndex={-1}>
-          {light.tag} · {light.name}
-          {light.quantity > 1 && <span className="quiet"> × {light.quantity}</span>}
+          {capital(kindInWords(light))} {light.tag}
+          <small>
+            {light.name}
+            {light.quantity > 1 && ` × ${light.quantity}`}
+          </small>
         </h2>
         <button type="button" className="icon-button" aria-label="Close" onClick={onClose}>
           <svg viewBox="0 0 20 20" aria-hidden="true" focusable="false">
@@ -41,7 +44,7 @@ export function LightCard({ mark, group, locale, changed, questions, onAsk, onQu
           </svg>
         </button>
       </div>
-      {light.lights !== '' && <p>{light.lights}</p>}
+      {light.lights !== '' && <p>{sentence(light.lights)}</p>}
       {group && <p className="quiet">{belonging(group, mark.taken)}</p>}
       {changed !== null && <p className={styles.changed}>{changed}</p>}
       <Technical light={light} locale={locale} />

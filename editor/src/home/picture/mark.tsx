@@ -40,12 +40,20 @@ export const at = ({ x, y }: Spot): CSSProperties => ({ left: `${x * 100}%`, top
 interface Props {
   readonly mark: ShownMark;
   readonly chosen: boolean;
+  /** Others stand too close for its full size. */
+  readonly small: boolean;
   readonly onPress: (event: MouseEvent) => void;
   readonly onFocus: () => void;
 }
 
 /** A light as it stands in the picture: lamp-coloured where it is part of the choice, hollow where not. */
-export function LightMark({ mark: { light, spot, taken, change, asked }, chosen, onPress, onFocus }: Props) {
+export function LightMark({
+  mark: { light, spot, taken, change, asked },
+  chosen,
+  small,
+  onPress,
+  onFocus,
+}: Props) {
   const name = [
     light.tag,
     light.name,
@@ -59,6 +67,7 @@ export function LightMark({ mark: { light, spot, taken, change, asked }, chosen,
       className={styles.mark}
       style={at(spot)}
       data-record={light.recordId}
+      data-small={(small && !chosen) || undefined}
       aria-label={name}
       aria-expanded={chosen}
       onClick={onPress}

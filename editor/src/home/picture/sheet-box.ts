@@ -1,12 +1,17 @@
 import type { Spot } from './view';
 
-/** Width to height of the frame; a picture of another shape lies in its middle. */
-export const FRAME = 3 / 2;
-
 interface Size {
   readonly widthPx: number;
   readonly heightPx: number;
 }
+
+/** Beyond these a picture would fill the screen, or be a strip. */
+const TALLEST = 4 / 5;
+const WIDEST = 16 / 9;
+
+/** Width to height of the frame: the picture's own, within reason; another picture lies in its middle. */
+export const frameOf = ({ widthPx, heightPx }: Size): number =>
+  Math.min(WIDEST, Math.max(TALLEST, widthPx / heightPx));
 
 /** Where a picture lies in the frame, in shares of it. */
 export interface Box {
@@ -16,10 +21,11 @@ export interface Box {
   readonly height: number;
 }
 
-export function boxOf({ widthPx, heightPx }: Size): Box {
-  const shape = widthPx / heightPx;
-  const width = Math.min(1, shape / FRAME);
-  const height = Math.min(1, FRAME / shape);
+export function boxOf(size: Size): Box {
+  const shape = size.widthPx / size.heightPx;
+  const frame = frameOf(size);
+  const width = Math.min(1, shape / frame);
+  const height = Math.min(1, frame / shape);
   return { left: (1 - width) / 2, top: (1 - height) / 2, width, height };
 }
 

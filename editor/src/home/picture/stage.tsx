@@ -10,8 +10,9 @@ import {
 import type { Picture } from '../share';
 import { Crosshair } from './crosshair';
 import { at, LightMark, Pin, QuestionPin, type ShownMark } from './mark';
-import { boxOf, pixelOf, spotOf } from './sheet-box';
+import { boxOf, frameOf, pixelOf, spotOf } from './sheet-box';
 import styles from './stage.module.css';
+import { useCrowded } from './use-crowded';
 import { useGestures } from './use-gestures';
 import { panned, showing, under, type View, whole, zoomed } from './view';
 
@@ -54,6 +55,7 @@ export function Stage(props: Props) {
   const frame = useRef<HTMLDivElement>(null);
   const [view, setView] = useState<View>(whole);
   useGestures(frame, view, setView);
+  const crowded = useCrowded(frame, view, marks);
 
   /** Where marks overlap, a finger means the one whose middle is nearest, not the one that lies on top. */
   const pressMark = (mark: ShownMark, event: MouseEvent): void => {
@@ -82,6 +84,7 @@ export function Stage(props: Props) {
       <div
         ref={frame}
         className={styles.frame}
+        style={{ ['--shape' as string]: frameOf(picture) }}
         role="group"
         aria-label={`${props.name}: picture with ${marks.length} lights. Plus and minus zoom, arrow keys move it.`}
         // biome-ignore lint/a11y/noNoninteractiveTabindex: it can be moved and zoomed by keyboard
@@ -104,6 +107,7 @@ export function Stage(props: Props) {
               key={mark.light.recordId}
               mark={mark}
               chosen={mark.light.recordId === props.chosenId}
+              small={crowded.has(mark)}
               onPress={(event) => pressMark(mark, event)}
               onFocus={() => setView((seen) => showing(seen, mark.spot))}
             />

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { pixelOf, spotOf } from './sheet-box';
+import { boxOf, frameOf, pixelOf, spotOf } from './sheet-box';
+import { crowdedOf } from './use-crowded';
 import { MOST_ZOOM, panned, showing, under, whole, zoomed } from './view';
 
 describe('the part of a picture that is seen', () => {
@@ -59,5 +60,30 @@ describe('pixels of a sheet in the frame', () => {
 
   it('stay on the picture where the frame is wider than it', () => {
     expect(pixelOf({ widthPx: 1000, heightPx: 3000 }, { x: 0, y: 0.5 })).toEqual({ x: 0, y: 1500 });
+  });
+});
+
+describe('marks that stand close together', () => {
+  const marks = [0.1, 0.13, 0.5].map((x) => ({ spot: { x, y: 0.5 } }));
+
+  it('are told from those that have room, and have room themselves in a closer look', () => {
+    const [left, right] = marks;
+    expect(crowdedOf(marks, { widthPx: 350, heightPx: 230 })).toEqual(new Set([left, right]));
+    expect(crowdedOf(marks, { widthPx: 700, heightPx: 460 })).toEqual(new Set());
+  });
+
+  it('may be close on one side only', () => {
+    const above = [0.4, 0.44].map((y) => ({ spot: { x: 0.2, y } }));
+    expect(crowdedOf(above, { widthPx: 350, heightPx: 230 }).size).toBe(2);
+    expect(crowdedOf(above, { widthPx: 350, heightPx: 460 }).size).toBe(0);
+  });
+});
+
+describe('the frame', () => {
+  it('has the shape of its picture, neither taller nor wider than looks well', () => {
+    expect(frameOf({ widthPx: 1600, heightPx: 1100 })).toBeCloseTo(1600 / 1100);
+    expect(frameOf({ widthPx: 1000, heightPx: 3000 })).toBe(4 / 5);
+    expect(frameOf({ widthPx: 4000, heightPx: 1000 })).toBe(16 / 9);
+    expect(boxOf({ widthPx: 1600, heightPx: 1100 })).toEqual({ left: 0, top: 0, width: 1, height: 1 });
   });
 });
