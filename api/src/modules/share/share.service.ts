@@ -18,7 +18,7 @@ import type { GuestCaller } from './guest-caller.js';
 import { sentencesOf } from './sentences.js';
 import type { Approve, Ask, Checkout, Decline, SharedPage } from './share.dto.js';
 import { ShareRepository } from './share.repository.js';
-import { LIGHT_PICTURE_MEDIA, lightPictureUrl, pictureUrl } from './share-addresses.js';
+import { backUrl, LIGHT_PICTURE_MEDIA, lightPictureUrl, pictureUrl } from './share-addresses.js';
 import { SharePapers } from './share-papers.js';
 import { ShareQuestions } from './share-questions.js';
 import { ShownProposal } from './shown-proposal.js';
