@@ -6,6 +6,7 @@ import { showToast } from '../../components/toast';
 import { type MoneyManner, moneyOf } from '../../lib/money';
 import { amountTyped, typedAmount } from './amount';
 import { type Payment, useRefund } from './api';
+import { refundHint } from './words';
 
 interface RefundProps {
   readonly jobId: string;
@@ -66,7 +67,7 @@ function RefundForm({ jobId, payment, mostMinor, creditMinor, manner, onClose }:
         control={control}
         name="amountMinor"
         label={`Amount, ${manner.currency}`}
-        hint={`At most ${moneyOf(manner)(mostMinor)}.`}
+        hint={refundHint(moneyOf(manner), mostMinor, creditMinor)}
         inputMode="decimal"
         autoComplete="off"
       />

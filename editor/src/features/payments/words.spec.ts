@@ -1,7 +1,7 @@
 import { expect, it } from 'vitest';
 import { amountTyped } from './amount';
 import type { Due, Payment, Refund } from './api';
-import { dueStanding, nextDue, refundable } from './words';
+import { dueStanding, nextDue, refundable, refundHint } from './words';
 
 const due = (change: Partial<Due> = {}): Due => ({
   id: 'due',
@@ -65,4 +65,13 @@ it('reads an amount as it is typed, up to what there is', () => {
   expect(amount.parse('$12.50')).toBe(1250);
   for (const wrong of ['', '0', 'much', '1.005', '1,000.01'])
     expect(amount.safeParse(wrong).success).toBe(false);
+});
+
+it('says what paying back comes to: owed again, but for what a change order took off', () => {
+  const money = (minor: number) => `$${minor / 100}`;
+  expect(refundHint(money, 50_000, 0)).toMatch(/^At most \$500\. It is owed again afterwards/);
+  expect(refundHint(money, 50_000, 20_000)).toBe(
+    'At most $500. What is over the $200 that is to go back is owed again.',
+  );
+  expect(refundHint(money, 50_000, 50_000)).toBe('At most $500.');
 });

@@ -82,3 +82,12 @@ export function nextDue({ dues }: Pick<JobPayments, 'dues'>): Due | undefined {
   const left = dues.filter(({ outstandingMinor }) => outstandingMinor > 0);
   return left.find(({ requestedAt }) => requestedAt !== null) ?? left[0];
 }
+
+/** How much can be paid back, and what comes of it: what no change order took off is still agreed, so it is owed. */
+export function refundHint(money: (minor: number) => string, mostMinor: number, creditMinor: number): string {
+  const most = `At most ${money(mostMinor)}.`;
+  if (creditMinor >= mostMinor) return most;
+  return creditMinor > 0
+    ? `${most} What is over the ${money(creditMinor)} that is to go back is owed again.`
+    : `${most} It is owed again afterwards: to make the work cheaper, have a change order approved first.`;
+}
