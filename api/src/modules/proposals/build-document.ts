@@ -22,7 +22,15 @@ export interface Standing {
   readonly number: number;
   readonly revision: number;
   readonly changes: RevisionDocument['changes'];
+  /** What was approved before, for a change order. */
+  readonly agreed: Agreed | null;
   readonly madeAt: Date;
+}
+
+export interface Agreed {
+  /** All groups that could be chosen then. */
+  readonly known: readonly (string | null)[];
+  readonly taken: readonly string[];
 }
 
 /** Freezes what a quote says, with the words around it, into the document of a revision. No cost gets in. */
@@ -68,7 +76,7 @@ export function buildDocument(worked: WorkedQuote, parties: Parties, standing: S
       discountName: quote.discountName,
       tax: quote.tax,
       stages: worked.pricing.stages ?? book.stages,
-      combinations: combinationsOf(worked),
+      combinations: begunWithAgreed(combinationsOf(worked), worked, standing.agreed),
     },
     words: parties.words,
     cautions: [...proposalCautions(wordsOf(regionOf(company.region)).protectiveDevice)],
@@ -127,4 +135,25 @@ function combinationsOf({ quote, checks }: WorkedQuote): ShownCombination[] {
         : 'With these lights alone the wiring would not feed every lamp as it should. Ask us, and we will change the plan.',
     };
   });
+}
+
+/**
+ * The first combination is the one that is offered. A change order offers what was approved, with those of the
+ * new groups that the company takes: beside any other choice, what it costs more would tell nothing.
+ */
+function begunWithAgreed(
+  combinations: ShownCombination[],
+  { quote }: WorkedQuote,
+  agreed: Agreed | null,
+): ShownCombination[] {
+  if (agreed === null) return combinations;
+  const priced = new Set(combinations[0]?.groups);
+  const wanted = quote.groups.flatMap(({ id }) => {
+    if (id === null) return [];
+    return (agreed.known.includes(id) ? agreed.taken.includes(id) : priced.has(id)) ? [id] : [];
+  });
+  const first = combinations.find(
+    ({ groups }) => groups.length === wanted.length && wanted.every((id) => groups.includes(id)),
+  );
+  return first?.offerable ? [first, ...combinations.filter((one) => one !== first)] : combinations;
 }

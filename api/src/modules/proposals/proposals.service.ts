@@ -133,6 +133,10 @@ export class ProposalsService {
           hash: approved.row.hash,
           totalMinor: approved.approval.totalMinor,
         },
+        agreed: approved && {
+          known: approved.document.price.groups.map(({ id }) => id),
+          taken: approved.approval.groups as string[],
+        },
         madeAt: new Date(),
       },
     );
@@ -398,6 +402,13 @@ export class ProposalsService {
 function isStale({ row, document }: ShownRevision, { planVersion, quote }: PricedPlan): boolean {
   if (row.planVersion !== planVersion) return true;
   const frozen = document.price.combinations.map(({ offerable: _, reason: __, ...totals }) => totals);
-  const was = { groups: document.price.groups, totals: frozen };
-  return canonicalJson(was) !== canonicalJson({ groups: quote.groups, totals: quote.combinations });
+  // A change order has combinations in an order of its own: it begins with what was approved.
+  const inOrder = document.changes === null ? asTheyAre : byGroups;
+  const was = { groups: document.price.groups, totals: inOrder(frozen) };
+  return canonicalJson(was) !== canonicalJson({ groups: quote.groups, totals: inOrder(quote.combinations) });
 }
+
+type Combinations = PricedPlan['quote']['combinations'];
+const asTheyAre = (all: Combinations): Combinations => all;
+const byGroups = (all: Combinations): Combinations =>
+  [...all].sort((a, b) => a.groups.join(' ').localeCompare(b.groups.join(' ')));

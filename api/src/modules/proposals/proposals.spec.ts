@@ -1,4 +1,5 @@
 import { createHash, randomUUID } from 'node:crypto';
+import { emptyPricing } from '@lampwright/geometry/price';
 import type { INestApplicationContext } from '@nestjs/common';
 import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import type { Agent, TestApp } from '../../../test/harness.js';
@@ -9,7 +10,13 @@ import { PrepareProposal } from '../../jobs/prepare-proposal.js';
 import { Remind } from '../../jobs/remind.js';
 import { ObjectStorage } from '../../ports/storage/storage.js';
 import { addJob } from '../plans/plans.testkit.js';
-import { addPricedCompany, editBook, type PricedCompany } from '../pricing/pricing.testkit.js';
+import {
+  addPricedCompany,
+  editBook,
+  group,
+  type PricedCompany,
+  savePricing,
+} from '../pricing/pricing.testkit.js';
 import type { RevisionDetail } from './proposals.dto.js';
 import { ProposalsRepository } from './proposals.repository.js';
 import {
@@ -300,6 +307,28 @@ describe('sending', () => {
     expect(third.changeOrder).toBe(true);
     await send(third.id, to).expect(200);
     expect(await mailTo(to)).toHaveLength(2);
+  });
+
+  it('begins a change order with the groups that were approved', async () => {
+    await savePricing(agent, job.jobId, {
+      ...emptyPricing,
+      groups: [group('more', false)],
+      members: { [job.lights[2]!]: 'more' },
+    });
+    const first = await frozenAndReady(agent, job.jobId);
+    await send(first.id, address()).expect(200);
+    const { combinations } = (await detail(first.id)).document.price;
+    const taken = combinations.find(({ groups }) => groups.includes('more'))!;
+    expect(taken.totalMinor).toBeGreaterThan(first.totalMinor);
+    await approveRevision(test, company.companyId, first, taken);
+    const change = await frozenAndReady(agent, job.jobId);
+    expect(change).toMatchObject({ changeOrder: true, totalMinor: taken.totalMinor });
+    const { document } = await detail(change.id);
+    expect(document.price.combinations[0]?.groups).toEqual(['more']);
+    expect(document.price.combinations).toHaveLength(combinations.length);
+    expect((await proposalFor(agent, job.jobId)).stale).toBe(false);
+    await addLight();
+    expect((await proposalFor(agent, job.jobId)).stale).toBe(true);
   });
 
   it('sends nothing that was overtaken by an approval while its PDF was made', async () => {

@@ -178,8 +178,16 @@ export const sendTo = (email: string, message = 'Here it is.') => ({
   message,
 });
 
-/** Writes down a yes, as the homeowner's page does. */
-export async function approveRevision(test: TestApp, companyId: string, revision: Revision): Promise<void> {
+/** Writes down a yes, as the homeowner's page does: to what is offered, unless told otherwise. */
+export async function approveRevision(
+  test: TestApp,
+  companyId: string,
+  revision: Revision,
+  taken: { readonly groups: readonly string[]; readonly totalMinor: number } = {
+    groups: [],
+    totalMinor: revision.totalMinor,
+  },
+): Promise<void> {
   const { rows } = await test.database.executeSql(
     `SELECT l.id, l.proposal_id FROM proposal_links l
        JOIN proposal_revisions r ON r.company_id = l.company_id AND r.proposal_id = l.proposal_id
@@ -192,8 +200,8 @@ export async function approveRevision(test: TestApp, companyId: string, revision
     proposalId: link!.proposal_id,
     revisionId: revision.id,
     linkId: link!.id,
-    groups: [],
-    totalMinor: revision.totalMinor,
+    groups: taken.groups,
+    totalMinor: taken.totalMinor,
     typedName: 'Ida Fairweather',
     agreedTo: 'I approve.',
     consentedTo: 'Electronic records are fine with me.',
