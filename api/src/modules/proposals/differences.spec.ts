@@ -152,6 +152,15 @@ describe('what changed between two revisions', () => {
     expect([wasTotalMinor, nowTotalMinor]).toEqual([40_000, 30_000]);
   });
 
+  it('tells a change order against what was agreed, whatever was offered', () => {
+    const before = documentOf([], { totalMinor: 40_000 });
+    const changes = { revision: before.revision, hash: 'of it', totalMinor: 55_000 };
+    const after = { ...documentOf([], { totalMinor: 57_000 }), changes };
+    expect(differencesOf(before, after)).toMatchObject({ wasTotalMinor: 55_000, nowTotalMinor: 57_000 });
+    const another = { ...after, changes: { ...changes, revision: before.revision + 1 } };
+    expect(differencesOf(before, another).wasTotalMinor).toBe(40_000);
+  });
+
   it('says nothing of prices of lines that are not shown', () => {
     const hidden = (quantity: number) =>
       documentOf([], { lines: [line('lamp', { quantity, priceMinor: null })] });

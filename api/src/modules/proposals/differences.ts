@@ -29,10 +29,14 @@ export function differencesOf(before: RevisionDocument, after: RevisionDocument)
     moved,
     replaced,
     lines: linesOf(before.price.lines, after.price.lines),
-    wasTotalMinor: offeredTotal(before),
+    wasTotalMinor: agreedTotal(before, after) ?? offeredTotal(before),
     nowTotalMinor: offeredTotal(after),
   };
 }
+
+/** What was agreed, of the parts taken, where the later one is a change order to the earlier one; null otherwise. */
+const agreedTotal = ({ revision }: RevisionDocument, { changes }: RevisionDocument): number | null =>
+  changes?.revision === revision ? changes.totalMinor : null;
 
 /** The total of the combination as it is offered. */
 export function offeredTotal({ price }: RevisionDocument): number {

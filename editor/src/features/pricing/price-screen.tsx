@@ -139,7 +139,7 @@ export function PriceScreen(props: PriceScreenProps) {
               <Warnings warnings={answer.quote.warnings} lines={shown.map(({ key }) => key)} {...props} />
               {fixtures.length === 0 && (
                 <Empty
-                  title="Nothing to price yet"
+                  title="Nothing is on the plan yet"
                   action={<LinkButton to={planHref([])}>Open the plan</LinkButton>}
                 >
                   Lines come from what is on the plan: fixtures, lamps, cable, transformers, and the work on

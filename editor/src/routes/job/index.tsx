@@ -78,6 +78,7 @@ function JobPage({ job }: { job: Job }) {
               <MenuItem onSelect={putAway}>Archive the job</MenuItem>
             </MoreMenu>
           )}
+          {!abilities.editPrices && <LinkButton to={to.price(job.id)}>Materials</LinkButton>}
           <LinkButton to={to.plan(job.id)} kind={drawable && !proposing ? 'lamp' : 'quiet'}>
             Open the plan
           </LinkButton>
