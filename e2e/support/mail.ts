@@ -1,9 +1,11 @@
 import { type APIRequestContext, expect } from '@playwright/test';
 
-interface Mail {
+export interface Mail {
+  readonly id: string;
   readonly to: readonly string[];
   readonly subject: string;
   readonly text: string;
+  readonly attachments: readonly { readonly fileName: string; readonly type: string }[];
 }
 
 async function mailsTo(request: APIRequestContext, address: string): Promise<Mail[]> {
@@ -34,4 +36,33 @@ export async function linkMailedTo(
 
 export async function countMailsTo(request: APIRequestContext, address: string): Promise<number> {
   return (await mailsTo(request, address)).length;
+}
+
+interface Wanted {
+  readonly subject: RegExp;
+  /** The name of a file that comes with it. */
+  readonly file?: RegExp;
+}
+
+/** The newest mail to an address that fits, once one has arrived. */
+export async function mailTo(
+  request: APIRequestContext,
+  address: string,
+  { subject, file }: Wanted,
+): Promise<Mail> {
+  let found: Mail | undefined;
+  await expect
+    .poll(
+      async () => {
+        found = (await mailsTo(request, address)).find(
+          (mail) =>
+            subject.test(mail.subject) &&
+            (file === undefined || mail.attachments.some(({ fileName }) => file.test(fileName))),
+        );
+        return found?.subject;
+      },
+      { message: `a mail to ${address} about ${subject}`, timeout: 20_000 },
+    )
+    .toBeTruthy();
+  return found!;
 }
