@@ -86,8 +86,16 @@ export function DifferencesList({ differences, units, currency, locale }: Differ
         </table>
       )}
       <p>
-        Total {money(differences.wasTotalMinor)} → <strong>{money(differences.nowTotalMinor)}</strong>
-        {by !== 0 && <> ({signed(by, money)})</>}
+        {by === 0 ? (
+          <>
+            Total <strong>{money(differences.nowTotalMinor)}</strong>, as before
+          </>
+        ) : (
+          <>
+            Total {money(differences.wasTotalMinor)} → <strong>{money(differences.nowTotalMinor)}</strong> (
+            {signed(by, money)})
+          </>
+        )}
       </p>
     </>
   );
