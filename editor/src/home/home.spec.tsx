@@ -339,6 +339,8 @@ describe('review and approval', () => {
     await press(button('Decline the proposal'));
     expect(server.posts[0]?.body).toEqual({ revisionId: samplePage().revisionId, reason: 'Not this year.' });
     expect(screen.getByText(/“Not this year\.”/)).toBeTruthy();
+    // Wherever the page was left before, it is led to what became of it.
+    expect(document.activeElement?.textContent).toBe('You declined this proposal');
   });
 });
 

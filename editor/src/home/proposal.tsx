@@ -1,4 +1,5 @@
 import { useCallback, useEffect, useLayoutEffect, useRef, useState } from 'react';
+import { flushSync } from 'react-dom';
 import type { About } from './about';
 import { Changes } from './changes';
 import { type Choice, combinationOf, offered } from './choice';
@@ -80,10 +81,13 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
   );
 
   const answered = (next: SharedPage): void => {
-    close('done');
-    setOvertaken(false);
-    replace(next);
-    requestAnimationFrame(() => goTo(next.state));
+    // The page has found its old place again before it is led to what there is to say now.
+    flushSync(() => {
+      close('done');
+      setOvertaken(false);
+      replace(next);
+    });
+    goTo(next.state);
   };
 
   const conflict = async (): Promise<void> => {

@@ -2,8 +2,8 @@ import { type RefObject, useLayoutEffect, useMemo, useState } from 'react';
 import type { ShownMark } from './mark';
 import type { View } from './view';
 
-/** Marks whose middles are nearer than this would hide one another's letters. */
-const APART_PX = 18;
+/** Nearer than a target needs, marks would hide one another's letters and be hard to press one by one. */
+const APART_PX = 24;
 
 interface Size {
   readonly widthPx: number;

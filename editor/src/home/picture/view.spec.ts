@@ -69,13 +69,13 @@ describe('marks that stand close together', () => {
   it('are told from those that have room, and have room themselves in a closer look', () => {
     const [left, right] = marks;
     expect(crowdedOf(marks, { widthPx: 350, heightPx: 230 })).toEqual(new Set([left, right]));
-    expect(crowdedOf(marks, { widthPx: 700, heightPx: 460 })).toEqual(new Set());
+    expect(crowdedOf(marks, { widthPx: 1000, heightPx: 660 })).toEqual(new Set());
   });
 
   it('may be close on one side only', () => {
     const above = [0.4, 0.44].map((y) => ({ spot: { x: 0.2, y } }));
     expect(crowdedOf(above, { widthPx: 350, heightPx: 230 }).size).toBe(2);
-    expect(crowdedOf(above, { widthPx: 350, heightPx: 460 }).size).toBe(0);
+    expect(crowdedOf(above, { widthPx: 350, heightPx: 700 }).size).toBe(0);
   });
 });
 
