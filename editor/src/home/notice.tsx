@@ -49,8 +49,8 @@ export function StateNotice({
           </h2>
           {page.decline && (
             <p>
-              On {dayOf(page.decline.at, locale)}
-              {page.decline.reason === '' ? '' : `: “${page.decline.reason}”`}. {company.name} has been told.
+              {company.name} was told on {dayOf(page.decline.at, locale)}
+              {page.decline.reason === '' ? '.' : `: “${page.decline.reason}”`}
             </p>
           )}
           <p>
