@@ -1,8 +1,10 @@
 import { expect, test } from '@playwright/test';
 import { phone } from './playwright.config.js';
-import { newJob } from './support/jobs.js';
+import { HomePage } from './support/home-page.js';
+import { jobIdOf, newJob } from './support/jobs.js';
 import { ownerOfNewCompany, signIn } from './support/people.js';
 import { PlanPage } from './support/plan-page.js';
+import { sendProposal } from './support/proposals.js';
 import { Complaints, look } from './support/screen.js';
 
 /** Every screen on a desk and on a phone; their pictures are in test-results/screens. */
@@ -182,6 +184,74 @@ test('the plans of a company at work', async ({ page }) => {
       await page.setViewportSize(phone);
       await drawers.getByRole('button', { name: drawer }).click();
     }
+  });
+});
+
+test('the way from plan to yes', async ({ page }) => {
+  test.setTimeout(240_000);
+  const complaints = new Complaints(page);
+  await signIn(page, demo('owner'));
+  await page.getByRole('link', { name: /^Sandpiper Row/ }).click();
+  await expect(page.getByRole('heading', { level: 1, name: /^Sandpiper Row/ })).toBeVisible();
+  const jobId = jobIdOf(page);
+  const shown = async (name: string, path: string) => {
+    await page.goto(path);
+    await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
+    await look(page, complaints, name);
+  };
+
+  await test.step('price', async () => {
+    for (const part of ['lines', 'groups', 'terms', 'faults', 'schedule'])
+      await shown(`price-${part}`, `/jobs/${jobId}/price?part=${part}`);
+    await page.goto(`/jobs/${jobId}/price`);
+    await page.getByRole('button', { name: 'Add a line by hand' }).click();
+    await expect(page.getByRole('dialog')).toBeVisible();
+    await look(page, complaints, 'price-line-by-hand');
+  });
+
+  await test.step('what the company sets once', async () => {
+    await shown('price-book', '/company/prices');
+    await shown('proposal-texts', '/company/proposals');
+    await shown('catalogue-import', '/catalogue/import');
+  });
+
+  await test.step('proposal', async () => {
+    await shown('proposal-in-the-way', `/jobs/${jobId}/proposal`);
+    const link = await sendProposal(page.request, jobId);
+    await shown('proposal-sent', `/jobs/${jobId}/proposal`);
+
+    const home = new HomePage(page);
+    await page.goto(link);
+    await home.isOpen();
+    await look(page, complaints, 'home-open');
+    await home.light('P1').click();
+    await expect(home.card('P1')).toBeVisible();
+    await look(page, complaints, 'home-light');
+    await home.main.getByRole('button', { name: 'Decline this proposal' }).click();
+    await expect(home.main.getByRole('heading', { level: 1, name: /^Decline/ })).toBeVisible();
+    await look(page, complaints, 'home-decline');
+    await page.goBack();
+    await home.main.getByRole('button', { name: 'Review and approve' }).click();
+    await expect(home.main.getByRole('heading', { level: 1, name: 'Review and approve' })).toBeVisible();
+    await home.main.getByRole('button', { name: /^Approve for/ }).click();
+    await expect(home.main.getByText('Please confirm that you approve.')).toBeVisible();
+    await look(page, complaints, 'home-review');
+    await home.main.getByRole('checkbox', { name: /^I approve/ }).check();
+    await home.main.getByRole('checkbox', { name: /^I agree to sign electronically/ }).check();
+    await home.main.getByLabel('Your full name, as your signature').fill('Ines Calder');
+    await home.main.getByRole('button', { name: /^Approve for/ }).click();
+    await expect(home.main.getByRole('heading', { name: 'Thank you, Ines Calder' })).toBeVisible();
+    await look(page, complaints, 'home-approved');
+    await page.goto(`/p/${'A'.repeat(43)}`);
+    await expect(page.getByRole('heading', { name: 'There is no proposal at this address' })).toBeVisible();
+    await look(page, complaints, 'home-unknown', { expected: /status of 404/ });
+  });
+
+  await test.step('after the yes', async () => {
+    await shown('proposal-approved', `/jobs/${jobId}/proposal`);
+    await shown('job-approved', `/jobs/${jobId}`);
+    await shown('board', '/board');
+    await shown('numbers', '/numbers');
   });
 });
 

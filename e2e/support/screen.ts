@@ -132,8 +132,16 @@ function told({ violations }: AxeResults): string[] {
   return violations
     .filter(({ impact }) => impact === 'serious' || impact === 'critical')
     .flatMap(({ id, help, nodes }) =>
-      nodes.map(
-        (node) => `${id} (${help}): ${node.target.join(' ')} ${node.failureSummary?.replace(/\s+/g, ' ')}`,
-      ),
+      nodes
+        .filter((node) => !(id === 'target-size' && isPlaced(node.target.join(' '))))
+        .map(
+          (node) => `${id} (${help}): ${node.target.join(' ')} ${node.failureSummary?.replace(/\s+/g, ' ')}`,
+        ),
     );
 }
+
+/**
+ * A light's mark in the homeowner's picture stands where the light will: its place is what it tells, which
+ * WCAG 2.5.8 excepts. A press between near ones takes the nearest, and zooming parts them.
+ */
+const isPlaced = (target: string): boolean => target.includes('button[data-record=');
