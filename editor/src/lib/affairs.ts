@@ -26,6 +26,10 @@ export const questionsQuery = (jobId: string) =>
 export const openQuestions = (questions: readonly Question[]): readonly Question[] =>
   questions.filter((question) => question.resolvedAt === null);
 
+/** Those that nobody has answered yet: open, with the client's as the last word. */
+export const waitingQuestions = (questions: readonly Question[]): readonly Question[] =>
+  openQuestions(questions).filter(({ messages }) => messages.at(-1)?.side === 'homeowner');
+
 /** One step may move the job on, be told in its timeline and count in the numbers: all of them are asked anew. */
 export const affairsChanged = (client: QueryClient, jobId: string): Promise<unknown> =>
   Promise.all([

@@ -8,7 +8,7 @@ import { PaymentsSection } from '../../features/payments';
 import { ProposalView } from '../../features/proposal';
 import { type Proposal, proposalQuery, revisionQuery } from '../../features/proposal/api';
 import { Threads } from '../../features/questions/threads';
-import { openQuestions, questionsQuery } from '../../lib/affairs';
+import { questionsQuery, waitingQuestions } from '../../lib/affairs';
 import { type Job, jobQuery } from '../../lib/jobs';
 import { useAbilities } from '../../lib/me';
 import NotForYou from '../not-for-you';
@@ -65,7 +65,7 @@ function ProposalPage({ job, proposal }: { readonly job: Job; readonly proposal:
       <ProposalView
         job={job}
         proposal={proposal}
-        openQuestions={openQuestions(asked).length}
+        openQuestions={waitingQuestions(asked).length}
         editable={editable}
         mendAt={(mend) => (mend === 'plan' ? to.plan(job.id) : to.price(job.id, mend))}
         companyWords={<LinkButton to={paths.proposalTexts}>The company’s words</LinkButton>}
