@@ -35,7 +35,7 @@ async function onPhone(browser: Browser): Promise<Page> {
 }
 
 test('from plan to yes', async ({ page, browser }) => {
-  test.setTimeout(400_000);
+  test.setTimeout(300_000);
   const price = new PricePage(page);
   const proposal = new ProposalPage(page);
   const plan = new PlanPage(page);

@@ -188,7 +188,7 @@ test('the plans of a company at work', async ({ page }) => {
 });
 
 test('the way from plan to yes', async ({ page }) => {
-  test.setTimeout(240_000);
+  test.setTimeout(300_000);
   const complaints = new Complaints(page);
   await signIn(page, demo('owner'));
   await page.getByRole('link', { name: /^Sandpiper Row/ }).click();
