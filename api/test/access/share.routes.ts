@@ -101,6 +101,13 @@ export const routes: readonly RouteCase[] = [
     answers: 200,
     request: async (world) => ({ params: { token: (await sent(world)).token } }),
   },
+  {
+    // The same shell for everybody: who has the link's cookie is asked by its script.
+    route: 'GET /p/back/:linkId',
+    audience: 'anyone',
+    answers: 200,
+    request: params,
+  },
   { route: 'GET /api/share/:linkId', audience: 'link', answers: 200, request: params },
   { route: 'POST /api/share/:linkId/opened', audience: 'link', answers: 204, request: params },
   {

@@ -120,7 +120,7 @@ export function labourOf(
       recordIds: boxes.map(({ id }) => id),
     });
   const visits = pricing.aimingVisits ?? rates.aimingVisits;
-  if (visits > 0)
+  if (visits > 0 && byKind.size > 0)
     put('Aiming after dark', rates.perAimingVisit, 'visit', {
       key: lineKey('labour:aiming', null),
       quantity: visits,

@@ -62,7 +62,9 @@ export function buildDocument(worked: WorkedQuote, parties: Parties, standing: S
     sheets: sheets.map(({ id, name, view, widthPx, heightPx }) => ({ id, name, view, widthPx, heightPx })),
     lights: lightsOf(worked),
     price: {
-      groups: quote.groups,
+      groups: quote.groups.map((group) =>
+        group.id === null ? { ...group, name: baseName(group.fixtures) } : group,
+      ),
       lines: quote.lines.map(({ key, groupId, section, kind, name, quantity, unit, priceMinor }) => ({
         key,
         groupId,
@@ -85,6 +87,10 @@ export function buildDocument(worked: WorkedQuote, parties: Parties, standing: S
     ),
   };
 }
+
+/** What is always in, in words that need no plan. */
+const baseName = (lights: number): string =>
+  lights === 0 ? 'Transformer, control and wiring' : 'Transformer, wiring and the lights always in';
 
 /** Sheets on which something stands, in their order. */
 function sheetsInUse(plan: PlanDocument): SheetRecord[] {
