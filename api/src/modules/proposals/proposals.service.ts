@@ -404,9 +404,16 @@ function isStale({ row, document }: ShownRevision, { planVersion, quote }: Price
   const frozen = document.price.combinations.map(({ offerable: _, reason: __, ...totals }) => totals);
   // A change order has combinations in an order of its own: it begins with what was approved.
   const inOrder = document.changes === null ? asTheyAre : byGroups;
-  const was = { groups: document.price.groups, totals: inOrder(frozen) };
-  return canonicalJson(was) !== canonicalJson({ groups: quote.groups, totals: inOrder(quote.combinations) });
+  const was = { groups: unnamedBase(document.price.groups), totals: inOrder(frozen) };
+  return (
+    canonicalJson(was) !==
+    canonicalJson({ groups: unnamedBase(quote.groups), totals: inOrder(quote.combinations) })
+  );
 }
+
+/** The base is named for homeowners as it is frozen. */
+const unnamedBase = (groups: PricedPlan['quote']['groups']) =>
+  groups.map((group) => (group.id === null ? { ...group, name: '' } : group));
 
 type Combinations = PricedPlan['quote']['combinations'];
 const asTheyAre = (all: Combinations): Combinations => all;
