@@ -1,19 +1,20 @@
 import type { RouteCase } from './route-case.js';
 import { MARK, type World } from './world.js';
 
-const table = {
-  fileName: `${MARK}.csv`,
-  rows: [['hub', `${MARK} hub`, '4']],
+const tableOf = (name: string) => ({
+  fileName: `${name}.csv`,
+  rows: [['hub', `${name} hub`, '4']],
   mapping: { category: 0, name: 1, ways: 2 },
   category: null,
   leftOut: [],
-};
+});
+const table = tableOf('Sent by whoever asks');
 
 async function done({ owner }: World) {
   const made = await owner
     .post('/api/catalogue/imports')
     .set('Idempotency-Key', 'made before')
-    .send(table)
+    .send(tableOf(MARK))
     .expect(201);
   return { params: { importId: made.body.id as string } };
 }

@@ -1,7 +1,7 @@
 import { fixtureInitial } from '@lampwright/geometry/catalogue';
 import { proposalCautions } from '@lampwright/geometry/cautions';
 import { initialOf, itemOf, type PlanDocument, recordsOf, type SheetRecord } from '@lampwright/geometry/plan';
-import { recordGroups, scheduleOf } from '@lampwright/geometry/price';
+import { type Quote, recordGroups, scheduleOf } from '@lampwright/geometry/price';
 import { regionOf, type settingsInForce, wordsOf } from '../companies/settings.js';
 import type { WorkedQuote } from '../pricing/quotes.js';
 import { whatItLights } from './plain-words.js';
@@ -129,18 +129,23 @@ function lightsOf({ plan, pricing, volts }: WorkedQuote): ShownLight[] {
   });
 }
 
-function combinationsOf({ quote, checks }: WorkedQuote): ShownCombination[] {
+/** Every combination with its sums, whether it can be taken, and why not in a homeowner's words. */
+export function combinationsOf({ quote, checks }: Pick<WorkedQuote, 'quote' | 'checks'>): ShownCombination[] {
   const byGroups = new Map(checks.map((check) => [check.groups.join(' '), check]));
   return quote.combinations.map((totals) => {
     const offerable = byGroups.get(totals.groups.join(' '))?.offerable ?? false;
-    return {
-      ...totals,
-      offerable,
-      reason: offerable
-        ? ''
-        : 'With these lights alone the wiring would not feed every lamp as it should. Ask us, and we will change the plan.',
-    };
+    return { ...totals, offerable, reason: offerable ? '' : reasonAgainst(quote, totals.groups) };
   });
+}
+
+function reasonAgainst({ groups }: Quote, taken: readonly string[]): string {
+  const lights = groups.reduce(
+    (sum, { id, fixtures }) => (id === null || taken.includes(id) ? sum + fixtures : sum),
+    0,
+  );
+  return lights === 0
+    ? 'There would be no light in it. Please take at least one part with lights.'
+    : 'With these lights alone the wiring would not feed every lamp as it should. Ask us, and we will change the plan.';
 }
 
 /**
