@@ -12,5 +12,7 @@ export default defineConfig({
     testTimeout: 30_000,
     hookTimeout: 60_000,
     retry: 0,
+    // Specs wait on the database and the disk as much as they compute: one a core keeps two cores busy.
+    maxWorkers: 2,
   },
 });

@@ -2,7 +2,6 @@ import { Module } from '@nestjs/common';
 import { Decoder } from '../../media/decoder.js';
 import { CatalogueStoreModule } from '../catalogue/catalogue-store.module.js';
 import { PricingStoreModule } from '../pricing/pricing-store.module.js';
-import { UploadInterceptor } from '../sheets/upload.interceptor.js';
 import { CatalogueExportService } from './catalogue-export.service.js';
 import { CatalogueImportController } from './catalogue-import.controller.js';
 import { CatalogueImportService } from './catalogue-import.service.js';
@@ -12,12 +11,6 @@ import { CatalogueImportsRepository } from './catalogue-imports.repository.js';
 @Module({
   imports: [CatalogueStoreModule, PricingStoreModule],
   controllers: [CatalogueImportController],
-  providers: [
-    CatalogueImportService,
-    CatalogueExportService,
-    CatalogueImportsRepository,
-    UploadInterceptor,
-    Decoder,
-  ],
+  providers: [CatalogueImportService, CatalogueExportService, CatalogueImportsRepository, Decoder],
 })
 export class CatalogueImportModule {}

@@ -6,6 +6,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { addCompany, addPerson, type TestPerson } from '../../../test/people.js';
 import { executable, gif, heic, pdf, phonePhoto, quarters, svg, zip } from '../../media/files.testkit.js';
 import { MAX_UPLOAD_BYTES } from '../../media/limits.js';
+import { SheetsModule } from './sheets.module.js';
 import { newJob, type SheetTest, startSheetTest, until } from './sheets.testkit.js';
 import { UploadInterceptor } from './upload.interceptor.js';
 
@@ -127,7 +128,8 @@ describe('files at the door', () => {
   });
 
   it('leaves nothing on disk, also of an upload that breaks off', async () => {
-    const folder = await test.app.get(UploadInterceptor, { strict: false }).tempFolder();
+    // Each module with uploads has one of its own.
+    const folder = await test.app.select(SheetsModule).get(UploadInterceptor, { strict: true }).tempFolder();
     const temporaryFiles = () => readdir(folder);
     const { hostname, port } = new URL(test.url);
     const broken = request({
