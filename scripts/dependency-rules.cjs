@@ -49,14 +49,14 @@ module.exports = {
     {
       name: 'only-downwards-from-shared',
       severity: 'error',
-      from: { path: '^editor/src/(components|lib|plan-view)/' },
+      from: { path: '^editor/src/(components|lib|plan-view|night)/' },
       to: { path: '^editor/src/(routes|features|app)/' },
     },
     {
       name: 'lib-below-components',
       severity: 'error',
       from: { path: '^editor/src/lib/' },
-      to: { path: '^editor/src/(components|plan-view)/' },
+      to: { path: '^editor/src/(components|plan-view|night)/' },
     },
     {
       name: 'features-apart',

@@ -74,6 +74,7 @@ function planWith(count: number): PlanDocument {
       view: 'plan',
       pixelsPerPaperMeter: null,
       groundMetersPerPaperMeter: null,
+      whiteLux: null,
       references: [],
     },
     defaultSettings('us'),
@@ -96,6 +97,9 @@ function planWith(count: number): PlanDocument {
       lampId: null,
       quantity: 1,
       lead: null,
+      aim: null,
+      mountingHeightMeters: null,
+      zoneId: null,
       note: '',
     });
     if (i > 0)

@@ -135,6 +135,7 @@ export function drawDemo(demo: DemoPlan): PlanDocument {
       pixelsPerPaperMeter: demo.sheet.view === 'plan' ? 200 / 0.0254 : null,
       references: [],
       groundMetersPerPaperMeter: null,
+      whiteLux: null,
     },
   ]);
   const builder = new PlanBuilder(start, SHEET_ID, catalogue, 'demo');

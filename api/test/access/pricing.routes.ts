@@ -58,6 +58,7 @@ async function ofFault(world: World) {
     pixelsPerPaperMeter: null,
     references: [],
     groundMetersPerPaperMeter: null,
+    whiteLux: null,
   });
   const light = { load: { kind: 'driver', watts: 3, powerFactor: 0.9, minVolts: 9 }, target: null };
   const about = { lumens: null, beamDegrees: null, cctKelvin: null, window: { minVolts: 9, maxVolts: 15 } };
@@ -96,6 +97,9 @@ async function ofFault(world: World) {
       lampId: 'i2',
       quantity: 1,
       lead: null,
+      aim: null,
+      mountingHeightMeters: null,
+      zoneId: null,
       note: '',
     },
   };

@@ -25,7 +25,12 @@ export function tagOf(doc: PlanDocument, record: PlanRecord): string {
       return `Run ${record.number}`;
     case 'sheet':
     case 'area':
+    case 'zone':
       return record.name;
+    case 'face':
+      return record.name || 'Wall face';
+    case 'tree':
+      return record.name || 'Tree';
     case 'item':
       return record.item.name;
     case 'cable':

@@ -23,6 +23,9 @@ const fixture = (n: number, x: number): FixtureRecord => ({
   lampId: null,
   quantity: 1,
   lead: null,
+  aim: null,
+  mountingHeightMeters: null,
+  zoneId: null,
   note: '',
 });
 const cable = (id: string, fromId: string, toId: string, runId: string | null): CableRecord => ({
@@ -49,6 +52,7 @@ const run: RunRecord = {
   transformerId: 't',
   tapId: '12V',
   commonId: '1',
+  schedule: null,
 };
 
 const doc: PlanDocument = planOf([

@@ -55,8 +55,13 @@ const lightSource = {
   /** What the company aims at; outside is advice. Null: no aim. */
   target: voltWindowSchema.nullable(),
   lumens: positive.nullable(),
+  /** Full angle at which the light has fallen to half of its peak; 360: the same all around. */
   beamDegrees: positive.max(360).nullable(),
   cctKelvin: positive.nullable(),
+  /** Measured in the middle of the beam; left out or null: worked out from lumens and beam. */
+  peakCandela: positive.nullable().optional(),
+  /** Switched by itself or with its zone, apart from its feed; left out: no. */
+  smart: z.boolean().optional(),
 };
 
 const fixtureCommon = {
@@ -67,6 +72,8 @@ const fixtureCommon = {
   /** The lead that comes with it, from its splice to the lamp. */
   lead: z.strictObject({ conductor: conductorSchema, lengthMeters: meters }),
   mountingHeightMeters: meters.nullable(),
+  /** Share of the light outside of the beam angle that its hood, shield or louvre holds back; left out: none. */
+  shieldFactor: z.number().min(0).max(1).optional(),
   /** Listed for use in water: clearances to pools do not apply. */
   wetListed: z.boolean(),
 };

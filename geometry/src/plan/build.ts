@@ -9,6 +9,7 @@ import {
   SETTINGS_ID,
   type SettingsRecord,
 } from './records.js';
+import { usualSchedule } from './schedule.js';
 
 /** Where new ids come from: random in the product, counted in tests. */
 export type IdSource = () => string;
@@ -35,6 +36,7 @@ export function defaultSettings(region: PlanRegion): SettingsRecord {
     slackAtTransformerMeters: region === 'us' ? 0.9144 : 0.9,
     slackAtJunctionMeters: region === 'us' ? 0.3048 : 0.3,
     waterClearanceMeters: region === 'us' ? 3.048 : 2,
+    schedule: usualSchedule,
   };
 }
 
@@ -119,6 +121,12 @@ export function labelOf(record: PlanRecord, doc: PlanDocument): string {
       return record.name || 'sheet';
     case 'area':
       return record.name || record.use;
+    case 'face':
+      return record.name || 'wall face';
+    case 'tree':
+      return record.name || 'tree';
+    case 'zone':
+      return record.name;
     case 'item':
       return record.item.name;
     case 'cable':

@@ -3,7 +3,7 @@ import { sameData } from './equal.js';
 import { type PlanDocument, type PlanRecord, planRecordSchema, recordIdSchema } from './records.js';
 
 /** The form of records and changes written today; see migrations.ts for what older ones become. */
-export const PLAN_SCHEMA_VERSION = 1;
+export const PLAN_SCHEMA_VERSION = 2;
 
 /** The most records that one change may put and remove together. */
 export const MAX_RECORDS_PER_CHANGE = 5000;

@@ -6,3 +6,4 @@ export * from './integrity.js';
 export * from './migrations.js';
 export * from './rebase.js';
 export * from './records.js';
+export * from './schedule.js';

@@ -29,13 +29,19 @@ export function referencesOf(record: PlanRecord): string[] {
     case 'sheet':
     case 'item':
     case 'settings':
+    case 'zone':
       return [];
     case 'transformer':
       return [record.sheetId, record.itemId];
     case 'feed':
       return [record.sheetId, record.transformerId];
     case 'fixture':
-      return [record.sheetId, record.itemId, ...(record.lampId === null ? [] : [record.lampId])];
+      return [
+        record.sheetId,
+        record.itemId,
+        ...(record.lampId === null ? [] : [record.lampId]),
+        ...(record.zoneId === null ? [] : [record.zoneId]),
+      ];
     case 'junction':
       return [record.sheetId, ...(record.itemId === null ? [] : [record.itemId])];
     case 'run':
@@ -49,6 +55,8 @@ export function referencesOf(record: PlanRecord): string[] {
         ...(record.runId === null ? [] : [record.runId]),
       ];
     case 'area':
+    case 'face':
+    case 'tree':
     case 'measurement':
     case 'note':
       return [record.sheetId];
@@ -103,7 +111,7 @@ export function recordProblems(doc: PlanDocument, record: PlanRecord): Integrity
   const problems: IntegrityProblem[] = [];
   const add = (code: IntegrityCode, message: string, refersTo: string | null = null) =>
     problems.push({ code, recordId: record.id, refersTo, message });
-  const wantKind = (id: string, kind: 'sheet' | 'transformer' | 'run') => {
+  const wantKind = (id: string, kind: 'sheet' | 'transformer' | 'run' | 'zone') => {
     if (!recordOf(doc, id, kind))
       add('dangling-reference', `The ${kind} that ${labelOf(record, doc)} belongs to is gone.`, id);
   };
@@ -124,6 +132,7 @@ export function recordProblems(doc: PlanDocument, record: PlanRecord): Integrity
     case 'fixture':
       wantItem(record.itemId, 'fixture');
       if (record.lampId !== null) wantItem(record.lampId, 'lamp');
+      if (record.zoneId !== null) wantKind(record.zoneId, 'zone');
       break;
     case 'junction':
       if (record.itemId !== null) wantItem(record.itemId, record.style === 'hub' ? 'hub' : 'connector');
@@ -139,6 +148,9 @@ export function recordProblems(doc: PlanDocument, record: PlanRecord): Integrity
       break;
     case 'sheet':
     case 'area':
+    case 'face':
+    case 'tree':
+    case 'zone':
     case 'measurement':
     case 'note':
     case 'item':

@@ -12,8 +12,32 @@ export interface PlanMigration {
   readonly record: (record: Readonly<Record<string, unknown>>) => Record<string, unknown>;
 }
 
-/** In order, one for each form before the present one. The first form has nothing before it. */
-export const planMigrations: readonly PlanMigration[] = [];
+/** In order, one for each form before the present one. */
+export const planMigrations: readonly PlanMigration[] = [{ from: 1, record: withLight }];
+
+/** The second form knows where fixtures point and when they are on. */
+function withLight(record: Readonly<Record<string, unknown>>): Record<string, unknown> {
+  switch (record.kind) {
+    case 'sheet':
+      return { ...record, whiteLux: null };
+    case 'transformer':
+    case 'run':
+      return { ...record, schedule: null };
+    case 'fixture':
+      return { ...record, aim: null, mountingHeightMeters: null, zoneId: null };
+    case 'area':
+    case 'measurement':
+      return { ...record, lightTarget: null };
+    case 'settings':
+      return {
+        ...record,
+        // Written out: what is usual today may be something else when an old plan is read.
+        schedule: { on: { kind: 'sunset', minutesAfter: 0 }, off: { kind: 'clock', at: '23:00' } },
+      };
+    default:
+      return { ...record };
+  }
+}
 
 export type PlanFormCode = 'plan-schema-newer' | 'plan-schema-unknown' | 'plan-change-invalid';
 

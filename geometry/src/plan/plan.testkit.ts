@@ -141,6 +141,7 @@ export function sheet(id = 'sheet1', order = 0): SheetRecord {
     pixelsPerPaperMeter: null,
     references: [{ id: 'r1', kind: 'length', a: { x: 0, y: 0 }, b: { x: 1000, y: 0 }, meters: 10 }],
     groundMetersPerPaperMeter: null,
+    whiteLux: null,
   };
 }
 

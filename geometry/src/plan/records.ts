@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { catalogueItemSchema, conductorSchema } from '../catalogue/index.js';
+import { scheduleSchema } from './schedule.js';
 
 /**
  * The records of a plan. A plan is a set of these, keyed by id; every edit is one change that puts and
@@ -60,6 +61,8 @@ export const sheetRecordSchema = z.strictObject({
   references: z.array(referenceSchema).max(50),
   /** Typed drawing scale: metres of ground per metre of paper (1:100 is 100). */
   groundMetersPerPaperMeter: z.number().positive().max(1_000_000).nullable(),
+  /** Lux on white that the night picture of this sheet shows as white; null: the usual. */
+  whiteLux: z.number().min(0.1).max(10_000).nullable(),
 });
 
 export const transformerRecordSchema = z.strictObject({
@@ -71,6 +74,8 @@ export const transformerRecordSchema = z.strictObject({
   itemId: id,
   /** Line volts at its outlet; null: the plan's. */
   lineVolts: z.number().positive().max(600).nullable(),
+  /** When its control switches it; null: as the plan says. */
+  schedule: scheduleSchema.nullable(),
   note: z.string().max(2000),
 });
 
@@ -82,6 +87,20 @@ export const feedRecordSchema = z.strictObject({
   transformerId: id,
   name,
 });
+
+/**
+ * Where a fixture points. `tilt`: towards a place on the ground (for its direction only), so many degrees up
+ * from straight down (90 is level, 180 straight up). `point`: at a place on the ground or so high above it.
+ */
+export const aimSchema = z.discriminatedUnion('kind', [
+  z.strictObject({
+    kind: z.literal('tilt'),
+    toward: pointSchema,
+    degreesFromDown: z.number().min(0).max(180),
+  }),
+  z.strictObject({ kind: z.literal('point'), at: pointSchema, heightMeters: meters.max(100) }),
+]);
+export type Aim = z.infer<typeof aimSchema>;
 
 export const fixtureRecordSchema = z.strictObject({
   kind: z.literal('fixture'),
@@ -95,6 +114,12 @@ export const fixtureRecordSchema = z.strictObject({
   quantity: z.number().int().min(1).max(1000),
   /** Null: the lead that comes with the item. */
   lead: z.strictObject({ conductor: conductorSchema, lengthMeters: meters }).nullable(),
+  /** Null: as its kind usually points. */
+  aim: aimSchema.nullable(),
+  /** Of the light above the ground; null: the item's. */
+  mountingHeightMeters: meters.max(100).nullable(),
+  /** The zone that its smart lamp is switched with; null: with the feed. */
+  zoneId: id.nullable(),
   note: z.string().max(2000),
 });
 
@@ -118,6 +143,8 @@ export const runRecordSchema = z.strictObject({
   transformerId: id,
   tapId: z.string().min(1).max(24),
   commonId: z.string().min(1).max(24),
+  /** With a switch of its own on its home run: when that is on. Null: it is on with its transformer. */
+  schedule: scheduleSchema.nullable(),
 });
 
 /** A length of cable between two records (transformer, feed, fixture or junction) of one sheet. */
@@ -144,6 +171,18 @@ export const cableRecordSchema = z.strictObject({
   markedToMarked: z.boolean(),
 });
 
+const share = z.number().min(0).max(1);
+
+/** What light is wanted along a measured path or in an area. */
+export const lightTargetSchema = z.strictObject({
+  /** Least lux anywhere; null: none asked. */
+  leastLux: z.number().positive().max(10_000).nullable(),
+  meanLux: z.number().positive().max(10_000).nullable(),
+  /** Least divided by mean. */
+  uniformity: share.nullable(),
+});
+export type LightTarget = z.infer<typeof lightTargetSchema>;
+
 export const areaUses = ['lawn', 'bed', 'paved', 'building', 'canopy', 'water', 'lot-line'] as const;
 export type AreaUse = (typeof areaUses)[number];
 export const areaRecordSchema = z.strictObject({
@@ -154,6 +193,56 @@ export const areaRecordSchema = z.strictObject({
   name,
   points: z.array(pointSchema).min(3).max(2000),
   heightMeters: meters.nullable(),
+  lightTarget: lightTargetSchema.nullable(),
+});
+
+/**
+ * An upright surface: a house face, a wall, a fence. `foot` runs along the ground. On a photo, `top` is its
+ * upper edge as seen there, point by point above `foot`; on a drawing from above it is null.
+ */
+export const faceRecordSchema = z
+  .strictObject({
+    kind: z.literal('face'),
+    id,
+    sheetId: id,
+    name,
+    foot: z.array(pointSchema).min(2).max(50),
+    top: z.array(pointSchema).min(2).max(50).nullable(),
+    heightMeters: z.number().positive().max(100),
+  })
+  .refine((face) => face.top === null || face.top.length === face.foot.length, {
+    error: 'The upper edge of a face has as many points as its foot.',
+    path: ['top'],
+  });
+
+/**
+ * A tree or shrub. `foot` is where it stands; `outline` is the crown: on a photo its silhouette, on a drawing
+ * its edge seen from above.
+ */
+export const treeRecordSchema = z
+  .strictObject({
+    kind: z.literal('tree'),
+    id,
+    sheetId: id,
+    name,
+    foot: pointSchema,
+    outline: z.array(pointSchema).min(3).max(500),
+    /** Of the top of the crown above the ground. */
+    heightMeters: z.number().positive().max(100),
+    /** Of the lower edge of the crown; 0 for a shrub. */
+    crownBaseMeters: meters.max(100),
+  })
+  .refine((tree) => tree.crownBaseMeters < tree.heightMeters, {
+    error: 'The crown must begin below the top of the tree.',
+    path: ['crownBaseMeters'],
+  });
+
+/** Lights with smart lamps that are switched together, apart from their feed. */
+export const zoneRecordSchema = z.strictObject({
+  kind: z.literal('zone'),
+  id,
+  name: z.string().trim().min(1).max(120),
+  schedule: scheduleSchema,
 });
 
 export const measurementRecordSchema = z.strictObject({
@@ -161,6 +250,8 @@ export const measurementRecordSchema = z.strictObject({
   id,
   sheetId: id,
   points: z.array(pointSchema).min(2).max(500),
+  /** Set where it is a path that is to be lit. */
+  lightTarget: lightTargetSchema.nullable(),
 });
 
 export const noteRecordSchema = z.strictObject({
@@ -190,6 +281,8 @@ export const settingsRecordSchema = z.strictObject({
   slackAtJunctionMeters: meters,
   /** The region's least distance of a fixture from water. */
   waterClearanceMeters: meters,
+  /** When the lights are on, where nothing else is said. */
+  schedule: scheduleSchema,
 });
 
 export const planRecordSchema = z.discriminatedUnion('kind', [
@@ -201,6 +294,9 @@ export const planRecordSchema = z.discriminatedUnion('kind', [
   runRecordSchema,
   cableRecordSchema,
   areaRecordSchema,
+  faceRecordSchema,
+  treeRecordSchema,
+  zoneRecordSchema,
   measurementRecordSchema,
   noteRecordSchema,
   itemRecordSchema,
@@ -218,6 +314,9 @@ export type JunctionRecord = RecordOf<'junction'>;
 export type RunRecord = RecordOf<'run'>;
 export type CableRecord = RecordOf<'cable'>;
 export type AreaRecord = RecordOf<'area'>;
+export type FaceRecord = RecordOf<'face'>;
+export type TreeRecord = RecordOf<'tree'>;
+export type ZoneRecord = RecordOf<'zone'>;
 export type MeasurementRecord = RecordOf<'measurement'>;
 export type NoteRecord = RecordOf<'note'>;
 export type ItemRecord = RecordOf<'item'>;

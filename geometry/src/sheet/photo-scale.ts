@@ -1,5 +1,5 @@
 import { type GroundPoint, type Meters, meters, pixels, type SheetPoint } from '../units/brand.js';
-import { inverse, type Matrix3 } from './homography.js';
+import { inverse, type Matrix3, multiply } from './homography.js';
 import type { ScaleReference } from './references.js';
 import {
   type GroundReading,
@@ -43,6 +43,7 @@ export class PhotoScale implements SolvedScale {
   readonly misfit: number | null;
   readonly clickSigmaPixels: number;
   readonly covariance: Float64Array;
+  readonly groundMatrix: Matrix3;
   private readonly toImage: Matrix3;
   private readonly toGround: Matrix3;
   private readonly image: PhotoSolution['image'];
@@ -61,6 +62,31 @@ export class PhotoScale implements SolvedScale {
     this.frame = solution.frame;
     this.cos = Math.cos(solution.frame.angle) * solution.frame.unit;
     this.sin = Math.sin(solution.frame.angle) * solution.frame.unit;
+    const { cos, sin, image } = this;
+    const { originX, originY } = solution.frame;
+    const framed: Matrix3 = [
+      cos,
+      sin,
+      -cos * originX - sin * originY,
+      -sin,
+      cos,
+      sin * originX - cos * originY,
+      0,
+      0,
+      1,
+    ];
+    const normalised: Matrix3 = [
+      image.scale,
+      0,
+      -image.x * image.scale,
+      0,
+      image.scale,
+      -image.y * image.scale,
+      0,
+      0,
+      1,
+    ];
+    this.groundMatrix = multiply(framed, multiply(this.toGround, normalised));
     this.residuals = solution.references.flatMap((r) => this.residualsOf(r));
   }
 

@@ -1,4 +1,5 @@
 import { type GroundPoint, type Meters, meters, type SheetPoint } from '../units/brand.js';
+import type { Matrix3 } from './homography.js';
 
 /** How one reference fits the scale that all of them gave together. */
 export interface ReferenceResidual {
@@ -29,6 +30,8 @@ export interface SolvedScale {
   readonly view: 'plan' | 'photo';
   /** Null at the horizon and above it. */
   groundFromSheet(p: SheetPoint): GroundPoint | null;
+  /** What `groundFromSheet` does, as one matrix over pixels: (x, y, w) = M · (u, v, 1), seen where w > 0. */
+  readonly groundMatrix: Matrix3;
   /** Null for ground at or behind the camera. */
   sheetFromGround(g: GroundPoint): SheetPoint | null;
   /** Null at the horizon and above it. */

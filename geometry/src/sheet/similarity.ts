@@ -53,6 +53,7 @@ export function solveSimilarity(
     view: 'plan',
     groundFromSheet: (p) => ({ x: meters(p.x * metersPerPixel), y: meters(-p.y * metersPerPixel) }),
     sheetFromGround: (g) => ({ x: pixels(g.x * pixelsPerMeter), y: pixels(-g.y * pixelsPerMeter) }),
+    groundMatrix: [metersPerPixel, 0, 0, 0, -metersPerPixel, 0, 0, 0, 1],
     read: (p) => readingAt(p, metersPerPixel),
     residuals: observations.map((o) => residualOf(o, metersPerPixel)),
     misfit,

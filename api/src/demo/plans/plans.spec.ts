@@ -59,6 +59,7 @@ function drawn(
       pixelsPerPaperMeter: sheet.view === 'plan' ? 200 / 0.0254 : null,
       references: [],
       groundMetersPerPaperMeter: null,
+      whiteLux: null,
     },
   ]);
   const builder = new PlanBuilder(start, 'sheet', catalogue, 'demo');

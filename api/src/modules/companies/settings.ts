@@ -1,4 +1,4 @@
-import { defaultSettings } from '@lampwright/geometry/plan';
+import { defaultSettings, scheduleSchema } from '@lampwright/geometry/plan';
 import { z } from 'zod';
 
 /** The regional packs: wording, rules and usual values. */
@@ -16,6 +16,15 @@ const aimWindowSchema = z
     path: ['maxVolts'],
   });
 
+function isTimeZone(name: string): boolean {
+  try {
+    new Intl.DateTimeFormat('en', { timeZone: name });
+    return true;
+  } catch {
+    return false;
+  }
+}
+
 const fields = {
   units: z.enum(['imperial', 'metric']),
   /** ISO 4217. */
@@ -29,6 +38,16 @@ const fields = {
   waterClearanceMeters: lengthMeters,
   /** The share of its rating up to which the company loads a transformer. */
   transformerTargetPercent: z.number().min(1).max(100),
+  /** When lights are on, where a plan does not say otherwise. */
+  schedule: scheduleSchema,
+  /** Of the IANA database: what clocks at its properties show. */
+  timeZone: z.string().max(64).refine(isTimeZone, {
+    error: 'That is no time zone; one is written as Europe/London or America/New_York.',
+  }),
+  /** Where the sun sets for properties whose own place is not known; null: nowhere known either. */
+  place: z
+    .strictObject({ latitude: z.number().min(-90).max(90), longitude: z.number().min(-180).max(180) })
+    .nullable(),
   /** The volts that the company aims at, inside of what a fixture is rated for. */
   aim: z.strictObject({ led: aimWindowSchema, halogen: aimWindowSchema }),
 };
@@ -56,6 +75,11 @@ const words: Readonly<Record<Region, RegionalWords>> = {
 };
 export const wordsOf = (region: Region): RegionalWords => words[region];
 
+const timeZones: Readonly<Record<Region, string>> = {
+  us: 'America/New_York',
+  eu: 'Europe/Berlin',
+  uk: 'Europe/London',
+};
 const currencies: Readonly<Record<Region, string>> = { us: 'USD', eu: 'EUR', uk: 'GBP' };
 
 /** What a company of the region begins with. */
@@ -65,6 +89,8 @@ export function regionalSettings(region: Region): CompanySettings {
     ...plan,
     units: region === 'us' ? 'imperial' : 'metric',
     currency: currencies[region],
+    timeZone: timeZones[region],
+    place: null,
     transformerTargetPercent: 80,
     aim: { led: { minVolts: 10.5, maxVolts: 13 }, halogen: { minVolts: 10.8, maxVolts: 12 } },
   };

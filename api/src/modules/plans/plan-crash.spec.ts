@@ -7,6 +7,7 @@ import { join } from 'node:path';
 import {
   apply,
   type Change,
+  PLAN_SCHEMA_VERSION,
   type PlanDocument,
   type PlanRecord,
   placeNote,
@@ -278,8 +279,9 @@ function sheetChange(id: string): Change {
     pixelsPerPaperMeter: null,
     references: [],
     groundMetersPerPaperMeter: null,
+    whiteLux: null,
   };
-  return { id, schema: 1, put: { sheet1: sheet }, remove: [] };
+  return { id, schema: PLAN_SCHEMA_VERSION, put: { sheet1: sheet }, remove: [] };
 }
 
 async function waitUntil(what: () => string, done: () => Promise<boolean>): Promise<void> {

@@ -91,6 +91,7 @@ export class PlanWriter {
       slackAtFixtureMeters: usual.slackAtFixtureMeters,
       slackAtTransformerMeters: usual.slackAtTransformerMeters,
       slackAtJunctionMeters: usual.slackAtJunctionMeters,
+      schedule: usual.schedule,
       waterClearanceMeters: usual.waterClearanceMeters,
     };
     const put = { [SETTINGS_ID]: settings };

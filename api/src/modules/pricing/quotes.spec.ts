@@ -1,4 +1,4 @@
-import { SETTINGS_ID } from '@lampwright/geometry/plan';
+import { PLAN_SCHEMA_VERSION, SETTINGS_ID } from '@lampwright/geometry/plan';
 import { emptyPricing, type Quote } from '@lampwright/geometry/price';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { type Agent, startTestApp, type TestApp } from '../../../test/harness.js';
@@ -52,7 +52,7 @@ async function setLineVolts(agent: Agent, jobId: string, lineVolts: number): Pro
   const put = { [SETTINGS_ID]: { ...plan.get(SETTINGS_ID), lineVolts } };
   await save(agent, jobId, {
     baseVersion: version,
-    changes: [{ id: crypto.randomUUID(), schema: 1, put, remove: [] }],
+    changes: [{ id: crypto.randomUUID(), schema: PLAN_SCHEMA_VERSION, put, remove: [] }],
   });
 }
 

@@ -1,3 +1,4 @@
+import { eveningPlaceSchema } from '@lampwright/geometry/light';
 import { paymentStagesSchema, quoteGroupSchema, totalsSchema } from '@lampwright/geometry/price';
 import { z } from 'zod';
 
@@ -97,6 +98,8 @@ export const revisionDocumentSchema = z.strictObject({
   plan: z.strictObject({
     version: z.number().int(),
     records: z.array(z.looseObject({ kind: z.string(), id: z.string() })),
+    /** The form of the records; left out in documents older than the second form. */
+    schema: z.number().int().optional(),
   }),
   sheets: z.array(
     z.strictObject({
@@ -108,6 +111,8 @@ export const revisionDocumentSchema = z.strictObject({
     }),
   ),
   lights: z.array(shownLightSchema),
+  /** Where and in which time zone its evenings are; left out in documents from before there were night pictures. */
+  evening: eveningPlaceSchema.optional(),
   price: z.strictObject({
     groups: z.array(quoteGroupSchema),
     lines: z.array(shownLineSchema),

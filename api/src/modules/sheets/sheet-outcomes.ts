@@ -62,6 +62,7 @@ export class SheetOutcomes {
         pixelsPerPaperMeter,
         references: [],
         groundMetersPerPaperMeter: null,
+        whiteLux: null,
       });
       if (row.originalKey) await this.queue.send('storage.delete', { prefix: row.originalKey });
       if (row.pageCount) await this.queue.send('storage.delete', { prefix: pagesPrefix(companyId, id) });

@@ -15,7 +15,7 @@ import { putSplice } from './split.js';
  *   At the end of a cable: the cable goes too.
  * - A transformer or feed: its runs go, its cables stay, each capped where it was landed.
  * - A cable: bare splices that it leaves behind go or heal. A run: its cables stay, unfed.
- * - A sheet: everything on it. An item that is used is refused.
+ * - A zone: its lights are switched with their feed again. A sheet: everything on it. An item that is used is refused.
  */
 export function deleteRecords(
   doc: PlanDocument,
@@ -45,6 +45,7 @@ export function deleteRecords(
   }
   for (const id of loosened) healSplice(draft, id);
   unfeed(draft);
+  unzone(draft);
   assignRuns(draft);
   return made(draft);
 }
@@ -100,4 +101,10 @@ function leaveSplice(draft: Draft, node: NodeRecord, cables: readonly CableRecor
 function unfeed(draft: Draft): void {
   for (const cable of [...recordsOf(draft.plan, 'cable')])
     if (cable.runId !== null && !draft.get(cable.runId)) draft.put({ ...cable, runId: null });
+}
+
+/** Lights lose zones that are gone. */
+function unzone(draft: Draft): void {
+  for (const fixture of [...recordsOf(draft.plan, 'fixture')])
+    if (fixture.zoneId !== null && !draft.get(fixture.zoneId)) draft.put({ ...fixture, zoneId: null });
 }

@@ -88,12 +88,15 @@ function copyOf(draft: Draft, record: PlanRecord, dx: number, dy: number): PlanR
       return { ...moved(record, dx, dy), id, number: nextNumber(draft.plan, record.kind) } as PlanRecord;
     case 'feed':
     case 'area':
+    case 'face':
+    case 'tree':
     case 'measurement':
     case 'note':
       return { ...moved(record, dx, dy), id } as PlanRecord;
     case 'sheet':
     case 'run':
     case 'cable':
+    case 'zone':
     case 'item':
     case 'settings':
       return undefined;

@@ -1,5 +1,5 @@
 import { type IdSource, newId } from '../build.js';
-import type { PlanDocument, PlanPoint, PlanRecord } from '../records.js';
+import type { Aim, PlanDocument, PlanPoint, PlanRecord } from '../records.js';
 import { Draft } from './draft.js';
 import { type EditResult, made, refuse } from './result.js';
 
@@ -12,21 +12,32 @@ export function moved(record: PlanRecord, dx: number, dy: number): PlanRecord {
   switch (record.kind) {
     case 'transformer':
     case 'feed':
-    case 'fixture':
     case 'junction':
     case 'note':
       return { ...record, at: shift(record.at) };
+    case 'fixture':
+      // What it is aimed at stays where it is; a direction goes along.
+      return { ...record, at: shift(record.at), aim: shiftedAim(record.aim, shift) };
     case 'cable':
       return record.via.length === 0 ? record : { ...record, via: record.via.map(shift) };
     case 'area':
     case 'measurement':
       return { ...record, points: record.points.map(shift) };
+    case 'face':
+      return { ...record, foot: record.foot.map(shift), top: record.top?.map(shift) ?? null };
+    case 'tree':
+      return { ...record, foot: shift(record.foot), outline: record.outline.map(shift) };
     case 'sheet':
     case 'run':
+    case 'zone':
     case 'item':
     case 'settings':
       return record;
   }
+}
+
+function shiftedAim(aim: Aim | null, shift: (p: PlanPoint) => PlanPoint): Aim | null {
+  return aim?.kind === 'tilt' ? { ...aim, toward: shift(aim.toward) } : aim;
 }
 
 /**
@@ -57,5 +68,7 @@ function onPlan(record: PlanRecord): boolean {
   if ('at' in record) return fits(record.at);
   if (record.kind === 'cable') return record.via.every(fits);
   if (record.kind === 'area' || record.kind === 'measurement') return record.points.every(fits);
+  if (record.kind === 'face') return [...record.foot, ...(record.top ?? [])].every(fits);
+  if (record.kind === 'tree') return [record.foot, ...record.outline].every(fits);
   return true;
 }

@@ -1,6 +1,15 @@
 import { fixtureInitial } from '../../catalogue/index.js';
 import { type IdSource, itemOf, labelOf, newId, nextFixtureNumber, nextNumber, recordsOf } from '../build.js';
-import type { AreaUse, PlanDocument, PlanPoint, SheetRecord } from '../records.js';
+import type {
+  Aim,
+  AreaUse,
+  FaceRecord,
+  PlanDocument,
+  PlanPoint,
+  SheetRecord,
+  TreeRecord,
+  ZoneRecord,
+} from '../records.js';
 import { Draft } from './draft.js';
 import { ensureItem, type ItemChoice } from './items.js';
 import { assignRuns } from './network.js';
@@ -18,6 +27,7 @@ export interface FixturePlacing extends Place {
   /** The lamp, for fixtures that take one. */
   readonly lamp: ItemChoice | null;
   readonly quantity?: number;
+  readonly aim?: Aim | null;
   /** Places it on this cable, which then runs through it. */
   readonly onCableId?: string;
 }
@@ -53,6 +63,9 @@ export function placeFixture(doc: PlanDocument, placing: FixturePlacing, ids: Id
     lampId,
     quantity: placing.quantity ?? 1,
     lead: null,
+    aim: placing.aim ?? null,
+    mountingHeightMeters: null,
+    zoneId: null,
     note: '',
   });
   if (placing.onCableId !== undefined) assignRuns(draft);
@@ -77,6 +90,7 @@ export function placeTransformer(
     name: '',
     itemId,
     lineVolts: null,
+    schedule: null,
     note: '',
   });
   return made(draft, [record.id]);
@@ -159,8 +173,53 @@ export function placeArea(
     name: '',
     points: [...area.points],
     heightMeters: area.heightMeters ?? null,
+    lightTarget: null,
   });
   return made(draft, [record.id]);
+}
+
+/** Marks an upright surface: along its foot, with its upper edge on a photo. */
+export function placeFace(
+  doc: PlanDocument,
+  face: Pick<FaceRecord, 'sheetId' | 'foot' | 'top' | 'heightMeters'>,
+  ids: IdSource = newId,
+): EditResult {
+  const draft = new Draft(doc, ids);
+  if (!draft.of(face.sheetId, 'sheet')) return missing('sheet');
+  if (face.foot.length < 2)
+    return refuse('too-few-points', 'A wall face needs two points along its foot at least.');
+  const record = draft.put({ kind: 'face', id: draft.ids(), name: '', ...face });
+  return made(draft, [record.id]);
+}
+
+/** Marks a tree or shrub by its foot and its crown. */
+export function placeTree(
+  doc: PlanDocument,
+  tree: Pick<TreeRecord, 'sheetId' | 'foot' | 'outline' | 'heightMeters' | 'crownBaseMeters'>,
+  ids: IdSource = newId,
+): EditResult {
+  const draft = new Draft(doc, ids);
+  if (!draft.of(tree.sheetId, 'sheet')) return missing('sheet');
+  if (tree.outline.length < 3) return refuse('too-few-points', 'A crown needs at least three corners.');
+  const record = draft.put({ kind: 'tree', id: draft.ids(), name: '', ...tree });
+  return made(draft, [record.id]);
+}
+
+/** Makes a zone of its own for lights with smart lamps, with these lights in it. */
+export function addZone(
+  doc: PlanDocument,
+  zone: Pick<ZoneRecord, 'name' | 'schedule'>,
+  fixtureIds: Iterable<string>,
+  ids: IdSource = newId,
+): EditResult {
+  const draft = new Draft(doc, ids);
+  if (zone.name.trim() === '') return refuse('no-name', 'Give the zone a name.');
+  const { id } = draft.put({ kind: 'zone', id: draft.ids(), ...zone, name: zone.name.trim() });
+  for (const fixtureId of fixtureIds) {
+    const fixture = draft.of(fixtureId, 'fixture');
+    if (fixture) draft.put({ ...fixture, zoneId: id });
+  }
+  return made(draft, [id]);
 }
 
 export function placeMeasurement(
@@ -173,7 +232,13 @@ export function placeMeasurement(
   if (measurement.points.length < 2)
     return refuse('too-few-points', 'Measuring needs a start and an end: click both.');
   const points = [...measurement.points];
-  const record = draft.put({ kind: 'measurement', id: draft.ids(), sheetId: measurement.sheetId, points });
+  const record = draft.put({
+    kind: 'measurement',
+    id: draft.ids(),
+    sheetId: measurement.sheetId,
+    points,
+    lightTarget: null,
+  });
   return made(draft, [record.id]);
 }
 
@@ -192,12 +257,19 @@ export function placeNote(
 /** Puts a stored sheet on the plan, last in order; its record has the id of the stored sheet. */
 export function addSheet(
   doc: PlanDocument,
-  sheet: Omit<SheetRecord, 'kind' | 'order' | 'references' | 'groundMetersPerPaperMeter'>,
+  sheet: Omit<SheetRecord, 'kind' | 'order' | 'references' | 'groundMetersPerPaperMeter' | 'whiteLux'>,
   ids: IdSource = newId,
 ): EditResult {
   const draft = new Draft(doc, ids);
   let order = 0;
   for (const other of recordsOf(doc, 'sheet')) order = Math.max(order, other.order + 1);
-  draft.put({ ...sheet, kind: 'sheet', order, references: [], groundMetersPerPaperMeter: null });
+  draft.put({
+    ...sheet,
+    kind: 'sheet',
+    order,
+    references: [],
+    groundMetersPerPaperMeter: null,
+    whiteLux: null,
+  });
   return made(draft, [sheet.id]);
 }

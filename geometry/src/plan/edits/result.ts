@@ -6,6 +6,7 @@ export type RefusalCode =
   | 'wrong-kind'
   | 'wrong-item'
   | 'too-few-points'
+  | 'no-name'
   | 'cable-to-itself'
   | 'cable-between-feeds'
   | 'joins-transformers'

@@ -138,6 +138,7 @@ export function startRun(draft: Draft, transformerId: string): RunRecord | Refus
     transformerId,
     tapId: tap.id,
     commonId: common.id,
+    schedule: null,
   });
 }
 

@@ -225,6 +225,10 @@ function rest(doc: PlanDocument, rows: Draft[], shown: ReadonlySet<string>, word
       case 'area':
         others.push(plain(record.id, 'other', 2, 'rest', record.name || words.area(record.use)));
         break;
+      case 'face':
+      case 'tree':
+        others.push(plain(record.id, 'other', 2, 'rest', tagOf(doc, record)));
+        break;
       case 'measurement':
         others.push(plain(record.id, 'other', 2, 'rest', 'Measurement'));
         break;
@@ -237,6 +241,7 @@ function rest(doc: PlanDocument, rows: Draft[], shown: ReadonlySet<string>, word
       case 'fixture':
       case 'run':
       case 'cable':
+      case 'zone':
       case 'item':
       case 'settings':
         break;

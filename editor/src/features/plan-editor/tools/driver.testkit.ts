@@ -79,6 +79,7 @@ export const sheet: SheetRecord = {
   view: 'plan',
   pixelsPerPaperMeter: null,
   groundMetersPerPaperMeter: null,
+  whiteLux: null,
   references: [{ id: 'r', kind: 'length', a: { x: 0, y: 0 }, b: { x: 1000, y: 0 }, meters: 10 }],
 };
 

@@ -118,8 +118,13 @@ export function extentOf(ctx: Pick<ToolContext, 'doc'>, record: PlanRecord): rea
     case 'area':
     case 'measurement':
       return record.points;
+    case 'face':
+      return [...record.foot, ...(record.top ?? [])];
+    case 'tree':
+      return [record.foot, ...record.outline];
     case 'sheet':
     case 'run':
+    case 'zone':
     case 'item':
     case 'settings':
       return [];

@@ -1703,6 +1703,39 @@ export interface operations {
                                 slackAtJunctionMeters: number;
                                 waterClearanceMeters: number;
                                 transformerTargetPercent: number;
+                                schedule: {
+                                    on: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                    off: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                };
+                                timeZone: string;
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
                                 aim: {
                                     led: {
                                         minVolts: number;
@@ -1783,6 +1816,39 @@ export interface operations {
                                 slackAtJunctionMeters: number;
                                 waterClearanceMeters: number;
                                 transformerTargetPercent: number;
+                                schedule: {
+                                    on: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                    off: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                };
+                                timeZone: string;
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
                                 aim: {
                                     led: {
                                         minVolts: number;
@@ -1960,6 +2026,39 @@ export interface operations {
                                 slackAtJunctionMeters: number;
                                 waterClearanceMeters: number;
                                 transformerTargetPercent: number;
+                                schedule: {
+                                    on: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                    off: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                };
+                                timeZone: string;
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
                                 aim: {
                                     led: {
                                         minVolts: number;
@@ -2040,6 +2139,39 @@ export interface operations {
                                 slackAtJunctionMeters: number;
                                 waterClearanceMeters: number;
                                 transformerTargetPercent: number;
+                                schedule: {
+                                    on: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                    off: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                };
+                                timeZone: string;
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
                                 aim: {
                                     led: {
                                         minVolts: number;
@@ -2148,6 +2280,39 @@ export interface operations {
                                 slackAtJunctionMeters: number;
                                 waterClearanceMeters: number;
                                 transformerTargetPercent: number;
+                                schedule: {
+                                    on: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                    off: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                };
+                                timeZone: string;
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
                                 aim: {
                                     led: {
                                         minVolts: number;
@@ -2305,6 +2470,39 @@ export interface operations {
                             slackAtJunctionMeters: number;
                             waterClearanceMeters: number;
                             transformerTargetPercent: number;
+                            schedule: {
+                                on: {
+                                    /** @enum {string} */
+                                    kind: "sunset";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "sunrise";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "clock";
+                                    at: string;
+                                };
+                                off: {
+                                    /** @enum {string} */
+                                    kind: "sunset";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "sunrise";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "clock";
+                                    at: string;
+                                };
+                            };
+                            timeZone: string;
+                            place: {
+                                latitude: number;
+                                longitude: number;
+                            } | null;
                             aim: {
                                 led: {
                                     minVolts: number;
@@ -2375,6 +2573,39 @@ export interface operations {
                         slackAtJunctionMeters?: number;
                         waterClearanceMeters?: number;
                         transformerTargetPercent?: number;
+                        schedule?: {
+                            on: {
+                                /** @enum {string} */
+                                kind: "sunset";
+                                minutesAfter: number;
+                            } | {
+                                /** @enum {string} */
+                                kind: "sunrise";
+                                minutesAfter: number;
+                            } | {
+                                /** @enum {string} */
+                                kind: "clock";
+                                at: string;
+                            };
+                            off: {
+                                /** @enum {string} */
+                                kind: "sunset";
+                                minutesAfter: number;
+                            } | {
+                                /** @enum {string} */
+                                kind: "sunrise";
+                                minutesAfter: number;
+                            } | {
+                                /** @enum {string} */
+                                kind: "clock";
+                                at: string;
+                            };
+                        };
+                        timeZone?: string;
+                        place?: {
+                            latitude: number;
+                            longitude: number;
+                        } | null;
                         aim?: {
                             led: {
                                 minVolts: number;
@@ -2412,6 +2643,39 @@ export interface operations {
                             slackAtJunctionMeters: number;
                             waterClearanceMeters: number;
                             transformerTargetPercent: number;
+                            schedule: {
+                                on: {
+                                    /** @enum {string} */
+                                    kind: "sunset";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "sunrise";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "clock";
+                                    at: string;
+                                };
+                                off: {
+                                    /** @enum {string} */
+                                    kind: "sunset";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "sunrise";
+                                    minutesAfter: number;
+                                } | {
+                                    /** @enum {string} */
+                                    kind: "clock";
+                                    at: string;
+                                };
+                            };
+                            timeZone: string;
+                            place: {
+                                latitude: number;
+                                longitude: number;
+                            } | null;
                             aim: {
                                 led: {
                                     minVolts: number;
@@ -2694,6 +2958,39 @@ export interface operations {
                                 slackAtJunctionMeters: number;
                                 waterClearanceMeters: number;
                                 transformerTargetPercent: number;
+                                schedule: {
+                                    on: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                    off: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                };
+                                timeZone: string;
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
                                 aim: {
                                     led: {
                                         minVolts: number;
@@ -4724,6 +5021,7 @@ export interface operations {
                                     lengthMeters: number;
                                 };
                                 mountingHeightMeters: number | null;
+                                shieldFactor?: number;
                                 wetListed: boolean;
                                 /** @enum {string} */
                                 light: "integrated";
@@ -4762,6 +5060,8 @@ export interface operations {
                                 lumens: number | null;
                                 beamDegrees: number | null;
                                 cctKelvin: number | null;
+                                peakCandela?: number | null;
+                                smart?: boolean;
                             } | {
                                 /** @enum {string} */
                                 category: "fixture";
@@ -4782,6 +5082,7 @@ export interface operations {
                                     lengthMeters: number;
                                 };
                                 mountingHeightMeters: number | null;
+                                shieldFactor?: number;
                                 wetListed: boolean;
                                 /** @enum {string} */
                                 light: "lamp";
@@ -4830,6 +5131,8 @@ export interface operations {
                                 lumens: number | null;
                                 beamDegrees: number | null;
                                 cctKelvin: number | null;
+                                peakCandela?: number | null;
+                                smart?: boolean;
                                 lifeHours: number | null;
                             } | {
                                 /** @enum {string} */
@@ -4953,6 +5256,7 @@ export interface operations {
                             lengthMeters: number;
                         };
                         mountingHeightMeters: number | null;
+                        shieldFactor?: number;
                         wetListed: boolean;
                         /** @enum {string} */
                         light: "integrated";
@@ -4991,6 +5295,8 @@ export interface operations {
                         lumens: number | null;
                         beamDegrees: number | null;
                         cctKelvin: number | null;
+                        peakCandela?: number | null;
+                        smart?: boolean;
                     } | {
                         /** @enum {string} */
                         category: "fixture";
@@ -5011,6 +5317,7 @@ export interface operations {
                             lengthMeters: number;
                         };
                         mountingHeightMeters: number | null;
+                        shieldFactor?: number;
                         wetListed: boolean;
                         /** @enum {string} */
                         light: "lamp";
@@ -5059,6 +5366,8 @@ export interface operations {
                         lumens: number | null;
                         beamDegrees: number | null;
                         cctKelvin: number | null;
+                        peakCandela?: number | null;
+                        smart?: boolean;
                         lifeHours: number | null;
                     } | {
                         /** @enum {string} */
@@ -5173,6 +5482,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "integrated";
@@ -5211,6 +5521,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                         } | {
                             /** @enum {string} */
                             category: "fixture";
@@ -5231,6 +5543,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "lamp";
@@ -5279,6 +5592,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                             lifeHours: number | null;
                         } | {
                             /** @enum {string} */
@@ -5403,6 +5718,7 @@ export interface operations {
                             lengthMeters: number;
                         };
                         mountingHeightMeters: number | null;
+                        shieldFactor?: number;
                         wetListed: boolean;
                         /** @enum {string} */
                         light: "integrated";
@@ -5441,6 +5757,8 @@ export interface operations {
                         lumens: number | null;
                         beamDegrees: number | null;
                         cctKelvin: number | null;
+                        peakCandela?: number | null;
+                        smart?: boolean;
                     } | {
                         /** @enum {string} */
                         category: "fixture";
@@ -5461,6 +5779,7 @@ export interface operations {
                             lengthMeters: number;
                         };
                         mountingHeightMeters: number | null;
+                        shieldFactor?: number;
                         wetListed: boolean;
                         /** @enum {string} */
                         light: "lamp";
@@ -5509,6 +5828,8 @@ export interface operations {
                         lumens: number | null;
                         beamDegrees: number | null;
                         cctKelvin: number | null;
+                        peakCandela?: number | null;
+                        smart?: boolean;
                         lifeHours: number | null;
                     } | {
                         /** @enum {string} */
@@ -5623,6 +5944,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "integrated";
@@ -5661,6 +5983,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                         } | {
                             /** @enum {string} */
                             category: "fixture";
@@ -5681,6 +6005,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "lamp";
@@ -5729,6 +6054,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                             lifeHours: number | null;
                         } | {
                             /** @enum {string} */
@@ -5860,6 +6187,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "integrated";
@@ -5898,6 +6226,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                         } | {
                             /** @enum {string} */
                             category: "fixture";
@@ -5918,6 +6248,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "lamp";
@@ -5966,6 +6297,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                             lifeHours: number | null;
                         } | {
                             /** @enum {string} */
@@ -6097,6 +6430,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "integrated";
@@ -6135,6 +6469,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                         } | {
                             /** @enum {string} */
                             category: "fixture";
@@ -6155,6 +6491,7 @@ export interface operations {
                                 lengthMeters: number;
                             };
                             mountingHeightMeters: number | null;
+                            shieldFactor?: number;
                             wetListed: boolean;
                             /** @enum {string} */
                             light: "lamp";
@@ -6203,6 +6540,8 @@ export interface operations {
                             lumens: number | null;
                             beamDegrees: number | null;
                             cctKelvin: number | null;
+                            peakCandela?: number | null;
+                            smart?: boolean;
                             lifeHours: number | null;
                         } | {
                             /** @enum {string} */
@@ -7910,6 +8249,7 @@ export interface operations {
                                 } & {
                                     [key: string]: unknown;
                                 })[];
+                                schema?: number;
                             };
                             sheets: {
                                 id: string;
@@ -7939,6 +8279,13 @@ export interface operations {
                                     cctKelvin: number | null;
                                 };
                             }[];
+                            evening?: {
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
+                                timeZone: string;
+                            };
                             price: {
                                 groups: {
                                     id: string | null;
@@ -8699,6 +9046,13 @@ export interface operations {
                                     cctKelvin: number | null;
                                 };
                             }[];
+                            evening?: {
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
+                                timeZone: string;
+                            };
                             price: {
                                 groups: {
                                     id: string | null;
@@ -9143,6 +9497,13 @@ export interface operations {
                                     cctKelvin: number | null;
                                 };
                             }[];
+                            evening?: {
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
+                                timeZone: string;
+                            };
                             price: {
                                 groups: {
                                     id: string | null;
@@ -9414,6 +9775,13 @@ export interface operations {
                                     cctKelvin: number | null;
                                 };
                             }[];
+                            evening?: {
+                                place: {
+                                    latitude: number;
+                                    longitude: number;
+                                } | null;
+                                timeZone: string;
+                            };
                             price: {
                                 groups: {
                                     id: string | null;

@@ -1,0 +1,3 @@
+export * from './beam.js';
+export * from './night-scene.js';
+export * from './space.js';
