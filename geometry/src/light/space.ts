@@ -1,4 +1,5 @@
-import { applyHomography, type Matrix3, type PlanePoint } from '../sheet/index.js';
+import { applyHomography, type Matrix3, type PlanePoint } from '../sheet/matrix3.js';
+import type { Beam } from './beam.js';
 import type { LightSource, NightScene } from './night-scene.js';
 
 /** A point in metres: x and y on the ground, z up. */
@@ -19,6 +20,13 @@ export interface Wall {
   readonly heightMeters: number;
 }
 
+/** What is under the roof of a building is cut off from all that is not, whatever may shine over its walls. */
+export interface Roof {
+  readonly id: string;
+  readonly points: readonly PlanePoint[];
+  readonly heightMeters: number;
+}
+
 /** A crown as an ellipsoid about an upright axis; it stops light and catches it. */
 export interface Crown {
   readonly id: string;
@@ -29,20 +37,39 @@ export interface Crown {
   readonly halfHeightMeters: number;
 }
 
-/** What light meets on one sheet. */
+/** What light comes from and meets on one sheet. */
 export interface LightSpace {
   readonly sources: readonly LightSource[];
   readonly walls: readonly Wall[];
+  readonly roofs: readonly Roof[];
   readonly crowns: readonly Crown[];
 }
 
-/** Light that starts on a wall, or ends on it, is not stopped by that wall: within so many metres of it. */
-const TOUCHING_METERS = 0.02;
+/** What can stop the light of one lamp. */
+export interface Obstacles {
+  readonly walls: readonly Wall[];
+  readonly roofs: readonly { readonly roof: Roof; readonly overLamp: boolean }[];
+  readonly crowns: readonly Crown[];
+}
+
+/** Light that ends on a wall is not stopped by it: rounding, in metres. */
+const ROUNDING_METERS = 1e-3;
+/** A ray through the edge where two walls meet must not slip between them: share of the wall's length. */
+const JOINT = 1e-9;
 /** Narrower than this a crown can't be: its outline was drawn on edge. */
 const LEAST_RADIUS_METERS = 0.1;
+/**
+ * One wall that is marked twice (as a face and as the edge of a building) is marked within so many metres: clicks
+ * at the far end of a yard are this far off on the ground.
+ */
+export const MARKED_TWICE_METERS = 0.3;
 
-/** The walls and crowns of a scene, in metres. Marks that are not on the ground, above the horizon, are left out. */
+/** The walls, roofs and crowns of a scene, in metres. Marks that are not on the ground, above the horizon, are left out. */
 export function spaceOf(scene: NightScene): LightSpace {
+  const roofs = scene.buildings.flatMap(({ id, points, heightMeters }) => {
+    const ground = points.map((p) => groundUnder(scene, p));
+    return ground.every((p) => p !== null) ? [{ id, points: ground, heightMeters }] : [];
+  });
   return {
     sources: scene.sources,
     walls: [
@@ -51,6 +78,7 @@ export function spaceOf(scene: NightScene): LightSpace {
         wallsAlong(scene, id, [...points, points[0]!], heightMeters),
       ),
     ],
+    roofs,
     crowns: scene.trees.flatMap((tree) => crownOf(scene, tree) ?? []),
   };
 }
@@ -58,6 +86,12 @@ export function spaceOf(scene: NightScene): LightSpace {
 /** Ground metres under a sheet pixel; null at the horizon and above it. */
 export function groundUnder(scene: Pick<NightScene, 'groundMatrix'>, p: PlanePoint): PlanePoint | null {
   return applyHomography(scene.groundMatrix as unknown as Matrix3, p);
+}
+
+/** The bell of a lamp at its rated volts, of one of its quantity. */
+export function beamOf(source: Pick<LightSource, 'peakCandela' | 'halfAngle' | 'shield'>): Beam {
+  const { peakCandela, halfAngle, shield } = source;
+  return { peakCandela, halfAngle: halfAngle ?? Number.POSITIVE_INFINITY, shield };
 }
 
 function wallsAlong(
@@ -100,7 +134,8 @@ function crownOf(scene: NightScene, tree: NightScene['trees'][number]): Crown | 
   return { id: tree.id, x, y, z, radiusMeters, halfHeightMeters };
 }
 
-function middleOf(points: readonly PlanePoint[]): { area: number; x: number; y: number } {
+/** Area and centre of gravity of a polygon, either way round; its first corner where it has no area. */
+export function middleOf(points: readonly PlanePoint[]): { area: number; x: number; y: number } {
   let twice = 0;
   let x = 0;
   let y = 0;
@@ -116,21 +151,38 @@ function middleOf(points: readonly PlanePoint[]): { area: number; x: number; y: 
   return { area: Math.abs(twice) / 2, x: o.x + x / (3 * twice), y: o.y + y / (3 * twice) };
 }
 
-/** Walls and crowns that may come between a lamp and anything; ask once a lamp, then {@link isStopped} a point. */
-export function isStopped(
-  from: Point3,
-  to: Point3,
-  walls: readonly Wall[],
-  crowns: readonly Crown[],
-): boolean {
-  for (const wall of walls) if (wallBetween(wall, from, to)) return true;
-  for (const crown of crowns) if (crownBetween(crown, from, to)) return true;
+/** What can stop the light of a lamp: all but the crown that it hangs in or stands inside of. */
+export function obstaclesFor(
+  space: Pick<LightSpace, 'walls' | 'roofs' | 'crowns'>,
+  lamp: Pick<LightSource, 'x' | 'y' | 'z' | 'treeId'>,
+): Obstacles {
+  return {
+    walls: space.walls,
+    roofs: space.roofs.map((roof) => ({ roof, overLamp: isUnder(roof, lamp) })),
+    crowns: space.crowns.filter((crown) => crown.id !== lamp.treeId && insideness(crown, lamp) > 1),
+  };
+}
+
+/**
+ * Whether something stands between a lamp (whose obstacles these are) and a point. A point of an upright surface
+ * is asked about from {@link before} it.
+ */
+export function isStopped(lamp: Point3, to: Point3, { walls, roofs, crowns }: Obstacles): boolean {
+  for (const wall of walls) if (wallBetween(wall, lamp, to)) return true;
+  for (const { roof, overLamp } of roofs) if (isUnder(roof, to) !== overLamp) return true;
+  for (const crown of crowns) if (crownBetween(crown, lamp, to)) return true;
   return false;
 }
 
-/** Crowns that can stop a lamp's light: all but the one that it hangs in or stands inside of. */
-export function crownsFor(source: Pick<LightSource, 'x' | 'y' | 'z' | 'treeId'>, crowns: readonly Crown[]) {
-  return crowns.filter((crown) => crown.id !== source.treeId && insideness(crown, source) > 1);
+/**
+ * A point of an upright surface moved off it, the way that its normal points level, so far that the same wall
+ * marked a second time does not stand before it; a point of level ground as it is.
+ */
+export function before(point: Point3, normal: Point3): Point3 {
+  const level = Math.hypot(normal.x, normal.y);
+  if (level < 1e-9) return point;
+  const off = MARKED_TWICE_METERS / level;
+  return { x: point.x + normal.x * off, y: point.y + normal.y * off, z: point.z };
 }
 
 function wallBetween(wall: Wall, from: Point3, to: Point3): boolean {
@@ -146,10 +198,27 @@ function wallBetween(wall: Wall, from: Point3, to: Point3): boolean {
   const t = (ox * wy - oy * wx) / cross;
   if (t <= 0 || t >= 1) return false;
   const s = (ox * dy - oy * dx) / cross;
-  if (s < 0 || s > 1) return false;
+  if (s < -JOINT || s > 1 + JOINT) return false;
   if (from.z + t * (to.z - from.z) > wall.heightMeters) return false;
-  const perMeter = Math.abs(cross) / Math.hypot(wx, wy);
-  return t * perMeter > TOUCHING_METERS && (1 - t) * perMeter > TOUCHING_METERS;
+  // The point's distance from the wall's plane.
+  return ((1 - t) * Math.abs(cross)) / Math.hypot(wx, wy) > ROUNDING_METERS;
+}
+
+/** Whether a point is in the footprint of a roof and below it. */
+export function isUnder(roof: Roof, p: Point3): boolean {
+  if (p.z >= roof.heightMeters) return false;
+  return isWithin(roof.points, p);
+}
+
+/** Whether a point is within a polygon: a line from outside to it enters an odd number of times. */
+export function isWithin(points: readonly PlanePoint[], p: PlanePoint): boolean {
+  let inside = false;
+  for (let i = 0, j = points.length - 1; i < points.length; j = i++) {
+    const a = points[i]!;
+    const b = points[j]!;
+    if (a.y > p.y !== b.y > p.y && p.x < a.x + ((p.y - a.y) / (b.y - a.y)) * (b.x - a.x)) inside = !inside;
+  }
+  return inside;
 }
 
 /** Squared distance from a crown's middle, where 1 is its surface. */
