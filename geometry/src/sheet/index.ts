@@ -1,2 +1,3 @@
 export * from './calibration.js';
+export * from './camera.js';
 export * from './homography.js';
