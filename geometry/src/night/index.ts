@@ -1,1 +1,2 @@
-export {};
+export * from './clock.js';
+export * from './evening.js';
