@@ -12,5 +12,7 @@ export interface PaintState {
   readonly preview: Preview | null;
   /** The figures shown are of the plan before the last change. */
   readonly stale: boolean;
+  /** Over a picture of the night marks step back. */
+  readonly night: boolean;
   readonly lengthText: (points: readonly Point[]) => string;
 }

@@ -11,6 +11,7 @@ import {
 } from '../../../plan-view/draw/scene';
 import { MarkSprites } from '../../../plan-view/draw/sprites';
 import { emptyScene, type Scene, type SceneCable } from '../../../plan-view/scene';
+import { atNight, drawNightCables, drawNightFixtures, drawNightNodes } from '../night/marks';
 import type { Preview } from '../tools/tool';
 import type { PaintState } from './paint-state';
 import { drawPreview } from './preview';
@@ -47,6 +48,7 @@ export class Painter {
       hoveredId: null,
       preview: null,
       stale: false,
+      night: false,
       lengthText: () => '',
     };
   }
@@ -71,13 +73,15 @@ export class Painter {
     if (state.scene !== before.scene || movingBefore !== movingNow) {
       this.split = movingNow === null ? null : splitScene(state.scene, movingNow);
     }
-    if (state.camera !== before.camera || state.size !== before.size) return allLayers;
+    if (state.camera !== before.camera || state.size !== before.size || state.night !== before.night)
+      return allLayers;
     if (state.scene !== before.scene || state.selection !== before.selection || movingBefore !== movingNow)
       for (const name of ['ground', 'cable', 'fixtures', 'overlay'] as const) dirty.add(name);
     if (state.hoveredId !== before.hoveredId || state.stale !== before.stale) {
       dirty.add('cable');
       dirty.add('fixtures');
       dirty.add('overlay');
+      if (state.night) dirty.add('ground');
     }
     if (isBusy(state.preview) !== isBusy(before.preview)) dirty.add('fixtures');
     if (state.preview !== before.preview || state.lengthText !== before.lengthText) dirty.add('overlay');
@@ -85,7 +89,9 @@ export class Painter {
   }
 
   paint(name: LayerName, ctx: CanvasRenderingContext2D): void {
-    const still = this.split?.still ?? this.state.scene;
+    const { scene, night, selection, hoveredId } = this.state;
+    const whole = this.split?.still ?? scene;
+    const still = night ? atNight(whole, selection, hoveredId) : whole;
     switch (name) {
       case 'ground':
         this.paintGround(ctx, still);
@@ -108,8 +114,9 @@ export class Painter {
   }
 
   private paintCables(ctx: CanvasRenderingContext2D, scene: Scene): void {
-    const { camera, selection, hoveredId } = this.state;
-    drawCables(ctx, camera, scene.cables);
+    const { camera, selection, hoveredId, night } = this.state;
+    if (night) drawNightCables(ctx, camera, scene.cables);
+    else drawCables(ctx, camera, scene.cables);
     for (const cable of scene.cables) if (selection.has(cable.id)) drawChosenCable(ctx, camera, cable);
     const hovered = scene.cables.find((c) => c.id === hoveredId && !selection.has(c.id));
     if (hovered !== undefined) drawCables(ctx, camera, [{ ...hovered, weight: hovered.weight + 1.5 }]);
@@ -118,8 +125,7 @@ export class Painter {
 
   private paintMarks(ctx: CanvasRenderingContext2D, scene: Scene): void {
     const { camera, size, selection, hoveredId, stale } = this.state;
-    drawNodes(ctx, camera, size, scene.nodes);
-    drawFixtures(ctx, camera, size, scene.fixtures, this.sprites);
+    this.paintNodesAndFixtures(ctx, camera, scene);
     drawLabels(ctx, camera, size, scene.fixtures, scene.nodes, scene.areas, {
       // The figures of the hand at work are what counts while it works.
       hoveredId: isBusy(this.state.preview) ? null : hoveredId,
@@ -127,6 +133,17 @@ export class Painter {
       asides: this.asides(scene),
       alpha: stale ? STALE_ALPHA : 1,
     });
+  }
+
+  private paintNodesAndFixtures(ctx: CanvasRenderingContext2D, camera: Camera, scene: Scene): void {
+    const { size, night } = this.state;
+    if (night) {
+      drawNightNodes(ctx, camera, size, scene.nodes);
+      drawNightFixtures(ctx, camera, size, scene.fixtures);
+      return;
+    }
+    drawNodes(ctx, camera, size, scene.nodes);
+    drawFixtures(ctx, camera, size, scene.fixtures, this.sprites);
   }
 
   private paintOverlay(ctx: CanvasRenderingContext2D): void {
@@ -152,7 +169,7 @@ export class Painter {
   }
 
   private paintMoving(ctx: CanvasRenderingContext2D, moving: Scene, dx: number, dy: number): void {
-    const { camera, size } = this.state;
+    const { camera } = this.state;
     const shifted = { ...camera, x: camera.x + dx * camera.zoom, y: camera.y + dy * camera.zoom };
     const ids = this.split?.ids ?? nobody;
     drawCables(
@@ -162,8 +179,7 @@ export class Painter {
     );
     for (const area of moving.areas) drawArea(ctx, shifted, area, true);
     drawMeasurements(ctx, shifted, moving.measurements, () => true);
-    drawNodes(ctx, shifted, size, moving.nodes);
-    drawFixtures(ctx, shifted, size, moving.fixtures, this.sprites);
+    this.paintNodesAndFixtures(ctx, shifted, moving);
     this.paintChoices(ctx, shifted, moving);
   }
 

@@ -1,3 +1,4 @@
+import { toggleMode } from '../night/set-mode';
 import type { PlanEditor } from './editor';
 import { toolKeys } from './icons';
 
@@ -31,6 +32,9 @@ export function pageKey(editor: PlanEditor, e: KeyboardEvent): boolean {
       return true;
     case 'Escape':
       return stepBack(editor);
+    case 'l':
+      toggleMode(editor.session);
+      return true;
     default: {
       const tool = toolKeys[key];
       if (tool === undefined || !editor.canEdit) return false;
@@ -85,5 +89,8 @@ function stepBack(editor: PlanEditor): boolean {
 
 export function isTyping(target: EventTarget | null): boolean {
   if (!(target instanceof HTMLElement)) return false;
+  // Nothing is typed into a slider or a tick.
+  if (target instanceof HTMLInputElement && ['range', 'checkbox', 'radio'].includes(target.type))
+    return false;
   return target.isContentEditable || ['INPUT', 'TEXTAREA', 'SELECT'].includes(target.tagName);
 }

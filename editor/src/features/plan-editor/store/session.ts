@@ -4,7 +4,11 @@ import type { Choices, Request } from '../tools/tool';
 /** Which panel stands over the drawing, if any. */
 export type Panel = 'none' | 'scale' | 'faults' | 'history' | 'conflicts' | 'questions';
 /** On a phone, what has slid up over the drawing. */
-export type Drawer = 'none' | 'ledger' | 'profile' | 'inspector';
+export type Drawer = 'none' | 'ledger' | 'light' | 'profile' | 'inspector';
+/** The sheet as drawn, or as it looks in the evening. */
+export type Mode = 'day' | 'night';
+/** What stands beside the drawing at night. */
+export type Side = 'ledger' | 'light';
 
 export interface SessionState {
   readonly sheetId: string;
@@ -16,6 +20,8 @@ export interface SessionState {
   readonly message: string | null;
   readonly panel: Panel;
   readonly drawer: Drawer;
+  readonly mode: Mode;
+  readonly side: Side;
   /** The run whose profile is shown when the selection is of none. */
   readonly runId: string | null;
 }
@@ -33,6 +39,8 @@ export function createSession(sheetId: string): StoreApi<SessionState> {
     message: null,
     panel: 'none',
     drawer: 'none',
+    mode: 'day',
+    side: 'light',
     runId: null,
   }));
 }
