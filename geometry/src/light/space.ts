@@ -151,7 +151,7 @@ export function middleOf(points: readonly PlanePoint[]): { area: number; x: numb
   return { area: Math.abs(twice) / 2, x: o.x + x / (3 * twice), y: o.y + y / (3 * twice) };
 }
 
-/** What can stop the light of a lamp: all but the crown that it hangs in or stands inside of. */
+/** What can stop the light of a lamp. */
 export function obstaclesFor(
   space: Pick<LightSpace, 'walls' | 'roofs' | 'crowns'>,
   lamp: Pick<LightSource, 'x' | 'y' | 'z' | 'treeId'>,
@@ -159,8 +159,16 @@ export function obstaclesFor(
   return {
     walls: space.walls,
     roofs: space.roofs.map((roof) => ({ roof, overLamp: isUnder(roof, lamp) })),
-    crowns: space.crowns.filter((crown) => crown.id !== lamp.treeId && insideness(crown, lamp) > 1),
+    crowns: crownsFor(lamp, space.crowns),
   };
+}
+
+/** Crowns that can stop a lamp's light: all but the one that it hangs in or stands inside of. */
+export function crownsFor(
+  lamp: Pick<LightSource, 'x' | 'y' | 'z' | 'treeId'>,
+  crowns: readonly Crown[],
+): Crown[] {
+  return crowns.filter((crown) => crown.id !== lamp.treeId && insideness(crown, lamp) > 1);
 }
 
 /**

@@ -4,4 +4,4 @@ export * from './fault.js';
 export * from './plan-faults.js';
 export * from './request.js';
 export { scaleOfSheet, sheetPoint } from './sheet-scale.js';
-export { voltsInWords } from './words.js';
+export { capitalised, listed, voltsInWords } from './words.js';
