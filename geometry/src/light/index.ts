@@ -3,6 +3,7 @@ export * from './beam.js';
 export * from './night-scene.js';
 export * from './output.js';
 export * from './photometry.js';
+export * from './reach.js';
 export * from './scene-of-plan.js';
 export * from './space.js';
 export * from './usual.js';

@@ -5,6 +5,10 @@ export function requestPreview(request: Request | null): Preview | null {
   switch (request?.kind) {
     case 'area':
       return { kind: 'polygon', points: [...request.points, request.points[0]!], pending: null };
+    case 'face':
+      return { kind: 'face', foot: request.foot, top: request.top, pending: null };
+    case 'tree':
+      return { kind: 'tree', foot: request.foot, outline: request.outline, pending: null };
     case 'note':
       return { kind: 'place', at: request.at, mark: { kind: 'note' }, snapped: false };
     case 'scale-length':

@@ -56,6 +56,28 @@ export function ToolIcon({ id }: { readonly id: ToolId }) {
           <path d="M10 3.5V8M10 12v4.5M4.4 6.8l3.9 2.2M11.7 11l3.9 2.2M15.6 6.8 11.7 9M8.3 11l-3.9 2.2" />
         </Line>
       );
+    case 'aim':
+      return (
+        <Line>
+          <circle cx="4.8" cy="15.2" r="1.9" fill="currentColor" />
+          <path d="M6.6 12.4 10 3.6M7.6 14.2l8.8-3.4" />
+          <path d="M12.8 4.4v4.8M10.4 6.8h4.8" />
+        </Line>
+      );
+    case 'face':
+      return (
+        <Line>
+          <path d="M3.5 6.5 16.5 4v11.5l-13 1z" />
+          <path d="M6.2 6v2.6M9 5.5v2.6M11.8 5v2.6M14.4 4.4V7" />
+        </Line>
+      );
+    case 'tree':
+      return (
+        <Line>
+          <path d="M10 17v-5.5M7.4 17h5.2" />
+          <path d="M10 3c3.4 0 5.6 2.1 5.6 4.7 0 2.4-2.2 4-5.6 4s-5.6-1.6-5.6-4C4.4 5.1 6.6 3 10 3z" />
+        </Line>
+      );
     case 'area':
       return (
         <Line>
@@ -95,8 +117,14 @@ export function toolWord(id: ToolId): string {
       return 'Cable';
     case 'hub':
       return 'Hub';
+    case 'aim':
+      return 'Aim';
     case 'area':
       return 'Area';
+    case 'face':
+      return 'Wall face';
+    case 'tree':
+      return 'Tree';
     case 'measure':
       return 'Measure';
     case 'note':
@@ -113,7 +141,10 @@ export const toolKeys: Readonly<Record<string, ToolId>> = {
   f: 'fixture',
   c: 'cable',
   h: 'hub',
+  i: 'aim',
   a: 'area',
+  w: 'face',
+  r: 'tree',
   m: 'measure',
   n: 'note',
   s: 'scale',

@@ -1,9 +1,12 @@
+import { createAimTool } from './aim';
 import { createCableTool } from './cable';
+import { createFaceTool } from './face';
 import { createNoteTool } from './note';
 import { createAreaTool, createMeasureTool, createScaleTool } from './paths';
 import { createFixtureTool, createHubTool, createTransformerTool } from './place';
 import { createSelectTool } from './select';
 import type { Tool, ToolContext, ToolId } from './tool';
+import { createTreeTool } from './tree';
 
 export function createTool(id: ToolId, ctx: ToolContext): Tool {
   switch (id) {
@@ -17,6 +20,12 @@ export function createTool(id: ToolId, ctx: ToolContext): Tool {
       return createCableTool(ctx);
     case 'hub':
       return createHubTool(ctx);
+    case 'aim':
+      return createAimTool(ctx);
+    case 'face':
+      return createFaceTool(ctx);
+    case 'tree':
+      return createTreeTool(ctx);
     case 'area':
       return createAreaTool(ctx);
     case 'measure':

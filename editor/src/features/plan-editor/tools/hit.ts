@@ -1,9 +1,11 @@
 import {
   type CableRecord,
   cablePoints,
+  type FaceRecord,
   isNode,
   type NodeRecord,
   type PlanRecord,
+  type TreeRecord,
 } from '@lampwright/geometry/plan';
 import type { Box, Point } from '../../../plan-view/camera';
 import { boxAround, contains } from '../../../plan-view/camera';
@@ -13,9 +15,16 @@ import { distance, type ToolContext } from './tool';
 const LINE_REACH = 7;
 const MARK_REACH = 5;
 
-/** The topmost record under a sheet point: marks over cable over measurements over areas. */
+/** The topmost record under a sheet point: marks over cable over measurements over trees, faces and areas. */
 export function hitAt(ctx: ToolContext, at: Point): PlanRecord | null {
-  return nodeAt(ctx, at) ?? noteAt(ctx, at) ?? cableAt(ctx, at)?.cable ?? lineAt(ctx, at) ?? areaAt(ctx, at);
+  return (
+    nodeAt(ctx, at) ??
+    noteAt(ctx, at) ??
+    cableAt(ctx, at)?.cable ??
+    lineAt(ctx, at) ??
+    uprightAt(ctx, at) ??
+    areaAt(ctx, at)
+  );
 }
 
 /** The mark under a point, the nearest one where several are. */
@@ -71,6 +80,39 @@ function lineAt(ctx: ToolContext, at: Point): PlanRecord | null {
     if (near !== null && near.distance <= reach) return record;
   }
   return null;
+}
+
+/** Trees and faces are hit by their edges, and a tree by its foot: what they stand before stays within reach. */
+function uprightAt(ctx: ToolContext, at: Point): PlanRecord | null {
+  let best: PlanRecord | null = null;
+  let least = LINE_REACH / ctx.zoom();
+  for (const record of ctx.doc().values()) {
+    if ((record.kind !== 'tree' && record.kind !== 'face') || record.sheetId !== ctx.sheetId()) continue;
+    for (const line of edgesOf(record)) {
+      const near = nearestOn(line, at);
+      if (near !== null && near.distance <= least) {
+        best = record;
+        least = near.distance;
+      }
+    }
+    if (record.kind === 'tree' && distance(record.foot, at) <= least) {
+      best = record;
+      least = distance(record.foot, at);
+    }
+  }
+  return best;
+}
+
+/** The lines that a tree or face is drawn with. */
+function edgesOf(record: FaceRecord | TreeRecord): readonly (readonly Point[])[] {
+  switch (record.kind) {
+    case 'tree':
+      return [[...record.outline, record.outline[0]!]];
+    case 'face':
+      return record.top === null
+        ? [record.foot]
+        : [[...record.foot, ...[...record.top].reverse(), record.foot[0]!]];
+  }
 }
 
 /** The smallest area around a point, so that a bed in a lawn can be chosen. */

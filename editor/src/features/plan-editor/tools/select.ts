@@ -1,24 +1,27 @@
-import { cablePoints, moveRecords, type PlanRecord, setFields } from '@lampwright/geometry/plan';
+import { moveRecords } from '@lampwright/geometry/plan';
 import { boxOf, type Point } from '../../../plan-view/camera';
-import { hitAt, idsInBox, nearestOn } from './hit';
+import { NOTHING_THERE } from './aim';
+import { aimHandleAt, aimsAt, setAims } from './aiming';
+import { type Grip, gripOf, type Shape, setShape, shapeLabel, shapePreview } from './grip';
+import { hitAt, idsInBox } from './hit';
 import { distance, type Preview, settle, type Tool, type ToolContext, type ToolEvent } from './tool';
 
 /** A press that moves less than this, in window pixels, is a click. */
 const SLOP = 4;
-/** A corner or bend is taken hold of within this many window pixels. */
-const GRIP = 9;
 
 type State =
   | { readonly is: 'idle' }
   | { readonly is: 'pressed'; readonly at: Point; readonly hitId: string }
   | { readonly is: 'moving'; readonly from: Point; readonly to: Point }
-  | { readonly is: 'shaping'; readonly id: string; readonly index: number; readonly points: readonly Point[] }
+  | { readonly is: 'shaping'; readonly id: string; readonly grip: Grip; readonly shape: Shape }
+  | { readonly is: 'aiming'; readonly from: Point; readonly to: Point | null }
   | { readonly is: 'boxing'; readonly a: Point; readonly b: Point; readonly add: boolean };
 
 /**
  * Choose and move. Click chooses, shift-click adds or takes away, a box from empty ground chooses what lies
  * in it. Dragging what is chosen moves it; cable ends follow. Dragging one chosen cable bends it; a corner of
- * one chosen area or measurement moves that corner.
+ * one chosen area, measurement, wall face or tree moves that corner. The cross at the end of a chosen light's beam
+ * aims all chosen lights.
  */
 export function createSelectTool(ctx: ToolContext): Tool {
   let state: State = { is: 'idle' };
@@ -32,6 +35,7 @@ export function createSelectTool(ctx: ToolContext): Tool {
   const far = (a: Point, b: Point): boolean => distance(a, b) * ctx.zoom() > SLOP;
 
   const press = (at: Point, shift: boolean): true => {
+    if (!shift && aimHandleAt(ctx, at)) return go({ is: 'aiming', from: at, to: null });
     const hit = hitAt(ctx, at);
     if (hit === null) return go({ is: 'boxing', a: at, b: at, add: shift });
     const chosen = ctx.selection();
@@ -50,7 +54,7 @@ export function createSelectTool(ctx: ToolContext): Tool {
     const record = ctx.doc().get(hitId);
     const grip = chosen.size === 1 && record !== undefined ? gripOf(ctx, record, at) : null;
     if (grip === null) return go({ is: 'moving', from: at, to });
-    return go({ is: 'shaping', id: hitId, index: grip.index, points: replaced(grip.points, grip.index, to) });
+    return go({ is: 'shaping', id: hitId, grip, shape: grip.moved(to) });
   };
 
   const finish = (): true => {
@@ -70,8 +74,15 @@ export function createSelectTool(ctx: ToolContext): Tool {
         return true;
       }
       case 'shaping':
-        reshape(ctx, ended.id, ended.points);
+        reshape(ctx, ended.id, ended.shape);
         return true;
+      case 'aiming': {
+        if (ended.to === null) return true;
+        const aims = aimsAt(ctx, ended.to);
+        if (aims === null) ctx.say(NOTHING_THERE);
+        else setAims(ctx, aims);
+        return true;
+      }
       case 'boxing': {
         const wide = far(ended.a, ended.b);
         const found = wide ? idsInBox(ctx, boxOf(ended.a, ended.b)) : [];
@@ -100,7 +111,9 @@ export function createSelectTool(ctx: ToolContext): Tool {
             case 'moving':
               return go({ ...state, to: event.at });
             case 'shaping':
-              return go({ ...state, points: replaced(state.points, state.index, event.at) });
+              return go({ ...state, shape: state.grip.moved(event.at) });
+            case 'aiming':
+              return state.to !== null || far(state.from, event.at) ? go({ ...state, to: event.at }) : true;
             case 'boxing':
               return go({ ...state, b: event.at });
           }
@@ -133,7 +146,10 @@ export function createSelectTool(ctx: ToolContext): Tool {
             dy: state.to.y - state.from.y,
           };
         case 'shaping':
-          return { kind: 'shape', id: state.id, points: state.points };
+          return shapePreview(state.id, state.shape);
+        case 'aiming':
+          if (state.to === null) return null;
+          return { kind: 'aim', aims: aimsAt(ctx, state.to) ?? new Map(), at: state.to };
         case 'boxing':
           return { kind: 'box', a: state.a, b: state.b };
         case 'idle':
@@ -147,84 +163,23 @@ export function createSelectTool(ctx: ToolContext): Tool {
     },
     // On a phone one finger moves what is chosen and, everywhere else, the plan.
     touchDrag(at) {
+      if (aimHandleAt(ctx, at)) return 'draw';
       const hit = hitAt(ctx, at);
       return hit !== null && ctx.selection().has(hit.id) ? 'draw' : 'pan';
     },
   };
 }
 
-interface Grip {
-  /** The whole outline with the gripped point in it. */
-  readonly points: readonly Point[];
-  readonly index: number;
-}
-
-/** The corner or bend under a press; on a cable a new bend where there is none. Null: the record moves whole. */
-function gripOf(ctx: ToolContext, record: PlanRecord, at: Point): Grip | null {
-  const reach = GRIP / ctx.zoom();
-  switch (record.kind) {
-    case 'area':
-    case 'measurement': {
-      const index = record.points.findIndex((p) => distance(p, at) <= reach);
-      return index < 0 ? null : { points: record.points, index };
-    }
-    case 'cable': {
-      const points = cablePoints(ctx.doc(), record);
-      if (points === undefined) return null;
-      const bend = points.findIndex((p, i) => i > 0 && i < points.length - 1 && distance(p, at) <= reach);
-      if (bend > 0) return { points, index: bend };
-      const segment = nearestSegment(points, at);
-      return {
-        points: [...points.slice(0, segment + 1), at, ...points.slice(segment + 1)],
-        index: segment + 1,
-      };
-    }
-    default:
-      return null;
+function reshape(ctx: ToolContext, id: string, shape: Shape): void {
+  // Somebody else may have removed it while it was being shaped.
+  if (ctx.doc().get(id)?.kind !== shape.of) {
+    ctx.say('That is not on the plan any more.');
+    return;
   }
-}
-
-function nearestSegment(points: readonly Point[], at: Point): number {
-  let best = 0;
-  let least = Number.POSITIVE_INFINITY;
-  for (let i = 0; i + 1 < points.length; i++) {
-    const d = nearestOn([points[i]!, points[i + 1]!], at)?.distance ?? Number.POSITIVE_INFINITY;
-    if (d < least) {
-      best = i;
-      least = d;
-    }
-  }
-  return best;
-}
-
-function replaced(points: readonly Point[], index: number, at: Point): Point[] {
-  return points.map((p, i) => (i === index ? { x: at.x, y: at.y } : p));
-}
-
-function reshape(ctx: ToolContext, id: string, points: readonly Point[]): void {
-  const keep = (): void => {};
-  switch (ctx.doc().get(id)?.kind) {
-    case 'cable':
-      settle(
-        ctx,
-        'Bend cable',
-        () => setFields(ctx.doc(), [id], 'cable', { via: points.slice(1, -1) }),
-        keep,
-      );
-      return;
-    case 'area':
-      settle(ctx, 'Reshape area', () => setFields(ctx.doc(), [id], 'area', { points: [...points] }), keep);
-      return;
-    case 'measurement':
-      settle(
-        ctx,
-        'Move measuring point',
-        () => setFields(ctx.doc(), [id], 'measurement', { points: [...points] }),
-        keep,
-      );
-      return;
-    default:
-      // Somebody else removed it while it was being shaped.
-      ctx.say('That is not on the plan any more.');
-  }
+  settle(
+    ctx,
+    shapeLabel(shape),
+    () => setShape(ctx, id, shape),
+    () => {},
+  );
 }

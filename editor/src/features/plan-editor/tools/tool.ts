@@ -1,4 +1,4 @@
-import type { Change, EditResult, ItemChoice, PlanDocument } from '@lampwright/geometry/plan';
+import type { Aim, Change, EditResult, ItemChoice, PlanDocument } from '@lampwright/geometry/plan';
 import type { SolvedScale } from '@lampwright/geometry/sheet';
 import type { Point } from '../../../plan-view/camera';
 
@@ -24,7 +24,10 @@ export const toolIds = [
   'fixture',
   'cable',
   'hub',
+  'aim',
   'area',
+  'face',
+  'tree',
   'measure',
   'note',
   'scale',
@@ -60,6 +63,22 @@ export type Preview =
     }
   | { readonly kind: 'polygon'; readonly points: readonly Point[]; readonly pending: Point | null }
   | { readonly kind: 'polyline'; readonly points: readonly Point[]; readonly pending: Point | null }
+  /** A wall face: its foot so far, and its upper edge once it is known. */
+  | {
+      readonly kind: 'face';
+      readonly foot: readonly Point[];
+      readonly top: readonly Point[] | null;
+      readonly pending: Point | null;
+    }
+  /** A tree or shrub: where it stands, and its crown so far. */
+  | {
+      readonly kind: 'tree';
+      readonly foot: Point;
+      readonly outline: readonly Point[];
+      readonly pending: Point | null;
+    }
+  /** Lights being aimed: which, and what at; null while the pointer is on nothing that can be lit. */
+  | { readonly kind: 'aim'; readonly aims: ReadonlyMap<string, Aim>; readonly at: Point }
   | { readonly kind: 'place'; readonly at: Point; readonly mark: PlaceMark; readonly snapped: boolean }
   | {
       readonly kind: 'scale';
@@ -92,6 +111,19 @@ export interface Choices {
 /** What a finished area, note or scale reference needs from the person before it becomes part of the plan. */
 export type Request =
   | { readonly kind: 'area'; readonly points: readonly Point[] }
+  | {
+      readonly kind: 'face';
+      readonly foot: readonly Point[];
+      readonly top: readonly Point[] | null;
+      /** How high the photo's camera sees it. */
+      readonly seenMeters: number | null;
+    }
+  | {
+      readonly kind: 'tree';
+      readonly foot: Point;
+      readonly outline: readonly Point[];
+      readonly seen: { readonly heightMeters: number; readonly crownBaseMeters: number } | null;
+    }
   | { readonly kind: 'note'; readonly at: Point }
   | { readonly kind: 'scale-length'; readonly a: Point; readonly b: Point }
   | { readonly kind: 'scale-rectangle'; readonly corners: readonly [Point, Point, Point, Point] }
