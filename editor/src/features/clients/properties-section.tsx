@@ -6,6 +6,7 @@ import { PlusIcon } from '../../components/icons';
 import { Section } from '../../components/page';
 import { Problem, SkeletonRows } from '../../components/states';
 import { type Property, propertiesQuery } from '../../lib/clients';
+import { placeText } from '../../lib/place';
 import { useAddProperty, useEditProperty } from './api';
 import styles from './clients.module.css';
 import { emptyProperty, PropertyForm } from './property-form';
@@ -42,6 +43,11 @@ export function PropertiesSection({ clientId, editable }: PropertiesSectionProps
               <strong>{property.name}</strong>
               {property.address !== '' && property.address !== property.name && <div>{property.address}</div>}
               {property.region !== '' && <div className="quiet">{property.region}</div>}
+              {property.latitude !== null && property.longitude !== null && (
+                <div className="quiet">
+                  {placeText({ latitude: property.latitude, longitude: property.longitude })}
+                </div>
+              )}
               {property.accessNotes !== '' && <div className={styles.notes}>{property.accessNotes}</div>}
             </div>
             {editable && (

@@ -1,15 +1,25 @@
 import { z } from 'zod';
-import { AreaField, FieldRow, Form, NumberField, TextField, useZodForm } from '../../components/form';
+import { AreaField, Form, TextField, useZodForm } from '../../components/form';
+import { PlaceFields } from '../../components/place-fields';
 import type { PropertyFields } from './api';
 
-const schema = z.object({
-  name: z.string().trim().min(1).max(120),
-  address: z.string().trim().max(400),
-  region: z.string().trim().max(80),
-  accessNotes: z.string().trim().max(4000),
-  latitude: z.number().min(-90).max(90).nullable(),
-  longitude: z.number().min(-180).max(180).nullable(),
-});
+const schema = z
+  .object({
+    name: z.string().trim().min(1).max(120),
+    address: z.string().trim().max(400),
+    region: z.string().trim().max(80),
+    accessNotes: z.string().trim().max(4000),
+    latitude: z.number().min(-90).max(90).nullable(),
+    longitude: z.number().min(-180).max(180).nullable(),
+  })
+  .superRefine(({ latitude, longitude }, context) => {
+    if ((latitude === null) === (longitude === null)) return;
+    context.addIssue({
+      code: 'custom',
+      path: [latitude === null ? 'latitude' : 'longitude'],
+      message: 'A place needs both numbers. Fill this in, or clear the other.',
+    });
+  });
 
 export const emptyProperty: PropertyFields = {
   name: '',
@@ -57,10 +67,12 @@ export function PropertyForm({ start, label, submitLabel, onSubmit }: PropertyFo
         rows={2}
         optional
       />
-      <FieldRow>
-        <NumberField control={control} name="latitude" label="Latitude" unit="° north" optional />
-        <NumberField control={control} name="longitude" label="Longitude" unit="° east" optional />
-      </FieldRow>
+      <PlaceFields
+        control={control}
+        latitude="latitude"
+        longitude="longitude"
+        hint="Where the sun sets: the evenings of its plans and proposals follow it."
+      />
     </Form>
   );
 }

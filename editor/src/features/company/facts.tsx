@@ -1,4 +1,6 @@
+import { scheduleInWords } from '@lampwright/geometry/night';
 import { formatLength, meters } from '@lampwright/geometry/units';
+import { placeText } from '../../lib/place';
 import { regions } from '../../lib/regions';
 import { useUnits } from '../../lib/units';
 import type { Company } from './api';
@@ -19,6 +21,9 @@ export function CompanyFacts({ company }: { company: Company }) {
     ['Slack at each fixture', length(settings.slackAtFixtureMeters)],
     ['Slack at hubs and splices', length(settings.slackAtJunctionMeters)],
     ['Least distance from water', length(settings.waterClearanceMeters)],
+    ['Lights are usually on', scheduleInWords(settings.schedule)],
+    ['Time zone', settings.timeZone],
+    ['Where the sun sets', settings.place ? placeText(settings.place) : 'Not written down'],
   ];
   return (
     <dl className={styles.facts}>

@@ -1,3 +1,4 @@
+import { scheduleSchema } from '@lampwright/geometry/plan';
 import { z } from 'zod';
 import {
   ChoiceField,
@@ -9,9 +10,13 @@ import {
   TextField,
   useZodForm,
 } from '../../components/form';
+import { PlaceFields } from '../../components/place-fields';
+import { ScheduleField } from '../../components/schedule-field';
 import { showToast } from '../../components/toast';
+import { isTimeZone } from '../../lib/time-zones';
 import { useUnits } from '../../lib/units';
-import { type Company, type CompanySettings, useEditCompany } from './api';
+import { type Company, useEditCompany } from './api';
+import { TimeZoneField } from './time-zone-field';
 
 const length = z.number().min(0).max(100);
 const volts = z.number().positive().max(60);
@@ -20,6 +25,24 @@ const aim = z
   .refine(({ minVolts, maxVolts }) => minVolts < maxVolts, {
     error: 'The lower volts must be below the higher.',
     path: ['maxVolts'],
+  });
+
+/** Both of its numbers, or neither: then it is not known. */
+const place = z
+  .object({
+    latitude: z.number().min(-90).max(90).nullable(),
+    longitude: z.number().min(-180).max(180).nullable(),
+  })
+  .transform(({ latitude, longitude }, context) => {
+    if (latitude === null && longitude === null) return null;
+    if (latitude !== null && longitude !== null) return { latitude, longitude };
+    const missing = latitude === null ? 'latitude' : 'longitude';
+    context.addIssue({
+      code: 'custom',
+      path: [missing],
+      message: 'A place needs both numbers. Fill this in, or clear the other.',
+    });
+    return z.NEVER;
   });
 
 const schema = z.object({
@@ -32,6 +55,11 @@ const schema = z.object({
   slackAtJunctionMeters: length,
   waterClearanceMeters: length,
   transformerTargetPercent: z.number().min(1).max(100),
+  schedule: scheduleSchema,
+  timeZone: z.string().trim().refine(isTimeZone, {
+    error: 'That is no time zone; one is written as Europe/London or America/New_York.',
+  }),
+  place,
   aim: z.object({ led: aim, halogen: aim }),
 });
 
@@ -45,11 +73,17 @@ const fahrenheit = {
 /** Pointers of the server name the settings within the company. */
 const fieldOf = (name: string): string => name.replace(/^settings\./, '');
 
+const nowhere = { latitude: null, longitude: null };
+const startOf = (settings: z.output<typeof schema>): z.input<typeof schema> => ({
+  ...settings,
+  place: settings.place ?? nowhere,
+});
+
 /** What plans of this company begin with. A plan keeps its own values afterwards. */
 export function SettingsForm({ company }: { company: Company }) {
   const edit = useEditCompany();
   const imperial = useUnits() === 'imperial';
-  const start: CompanySettings = company.settings;
+  const start = startOf(company.settings);
   const form = useZodForm(schema, { defaultValues: start });
   const { control } = form;
   return (
@@ -60,7 +94,7 @@ export function SettingsForm({ company }: { company: Company }) {
       serverName={fieldOf}
       onSubmit={async (settings) => {
         await edit.mutateAsync({ settings });
-        form.reset(settings);
+        form.reset(startOf(settings));
         showToast({ message: 'Working values are saved. New plans begin with them.' });
       }}
     >
@@ -99,6 +133,21 @@ export function SettingsForm({ company }: { company: Company }) {
           <LengthField control={control} name="slackAtFixtureMeters" label="At each fixture" />
           <LengthField control={control} name="slackAtJunctionMeters" label="At hubs and splices" />
         </FieldRow>
+      </FieldGroup>
+      <FieldGroup legend="Evenings">
+        <ScheduleField
+          control={control}
+          name="schedule"
+          label="Lights are usually on"
+          hint="A plan begins with this; a transformer, a run or a zone of smart lamps may have its own."
+        />
+        <TimeZoneField control={control} name="timeZone" />
+        <PlaceFields
+          control={control}
+          latitude="place.latitude"
+          longitude="place.longitude"
+          hint="Where the sun sets for properties whose own place is not written down."
+        />
       </FieldGroup>
       <FieldGroup legend="Rules and money">
         <LengthField
