@@ -1,3 +1,4 @@
+export type { NightHere } from './night/here';
 export { EditorContext } from './page/context';
 export type { PlanEditor } from './page/editor';
 export { HistoryPanel } from './page/HistoryPanel';

@@ -30,6 +30,20 @@ export const quoteQuery = (jobId: string) =>
     staleTime: 0,
   });
 
+/** The groups that a job is offered in, and the group of each fixture that is in one. */
+export const jobGroupsQuery = (jobId: string) =>
+  queryOptions({
+    queryKey: [...jobPricingKey(jobId), 'groups'],
+    queryFn: async ({ signal }) => {
+      const { pricing } = await answer(server.GET('/api/jobs/{jobId}/pricing', { ...ofJob(jobId), signal }));
+      return {
+        groups: pricing.groups.map(({ id, name, on }) => ({ id, name, on })),
+        groupOf: new Map(Object.entries(pricing.members)),
+      };
+    },
+    staleTime: 0,
+  });
+
 export const materialsQuery = (jobId: string) =>
   queryOptions({
     queryKey: [...jobPricingKey(jobId), 'materials'],

@@ -15,6 +15,7 @@ import {
 import { type Job, jobQuery } from '../../lib/jobs';
 import { useAbilities, useMe } from '../../lib/me';
 import { useUnits } from '../../lib/units';
+import { useEvening } from './use-evening';
 import { useQuestions } from './use-questions';
 
 export default function PlanScreen() {
@@ -59,6 +60,7 @@ function Plan({ job, companyId }: { readonly job: Job; readonly companyId: strin
   const catalogue = useQuery({ queryKey: ['plan-catalogue', companyId], queryFn: readCatalogue });
   const images = useMemo(() => new Map(job.sheets.map((sheet) => [sheet.id, sheet.imageUrl])), [job.sheets]);
   const entries = useMemo(() => catalogue.data ?? [], [catalogue.data]);
+  const here = useEvening(job);
   const questions = useQuestions(job, opening.is === 'open' ? opening.editor : null);
   switch (opening.is) {
     case 'loading':
@@ -80,6 +82,7 @@ function Plan({ job, companyId }: { readonly job: Job; readonly companyId: strin
             entries={entries}
             history={<HistoryPanel jobId={job.id} />}
             questions={questions}
+            here={here}
           />
         </EditorContext>
       );

@@ -4,6 +4,7 @@ import { type KeyboardEvent, useCallback, useEffect, useMemo, useRef, useState }
 import { Layer, Shape, Stage } from 'react-konva';
 import { clearLabelWidths } from '../../../plan-view/draw/labels';
 import { chalk, fontFamily } from '../../../plan-view/palette';
+import { useNightPicture } from '../night/use-night-picture';
 import { useEditor, useSheet } from '../page/context';
 import styles from './canvas.module.css';
 import { canvasKey } from './keys';
@@ -35,13 +36,17 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
   const editor = useEditor();
   const sheet = useSheet();
   const image = useSheetImage(imageUrl);
-  const { scene, lengthText } = useScene();
+  const { scene, lengthText, aimOf } = useScene();
   const frame = useRef<HTMLDivElement>(null);
   const sheetLayer = useRef<Konva.Layer>(null);
   const layers = useRef(new Map<LayerName, Konva.Layer>());
   const painter = useMemo(() => new Painter(pixelRatio), []);
   const [size, setSize] = useState({ width: 0, height: 0 });
   const panning = usePointerInput(frame, editor);
+  const redrawSheet = useCallback(() => {
+    sheetLayer.current?.batchDraw();
+  }, []);
+  const atNight = useNightPicture(image, redrawSheet);
 
   const update = useCallback(
     (next: Parameters<Painter['update']>[0]) => {
@@ -69,7 +74,7 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
     if (width > 0) editor.camera.show({ width, height });
   }, [editor, sheet?.id, width, height]);
 
-  useEffect(() => update({ scene, lengthText }), [update, scene, lengthText]);
+  useEffect(() => update({ scene, lengthText, aimOf }), [update, scene, lengthText, aimOf]);
 
   useEffect(() => {
     const { camera, session, tools, estimate } = editor;
@@ -81,6 +86,7 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
         hoveredId: session.getState().hoveredId,
         preview: keptPreview(session.getState().request) ?? tools.state.getState().preview,
         stale: estimate.state.getState().stale,
+        night: session.getState().mode === 'night',
       });
     all();
     const undo = [
@@ -120,13 +126,13 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
       const { camera } = painter.current;
       const ctx = context._context;
       if (image.is === 'ready' && width > 0) {
-        drawSheet(ctx, camera, { width, height }, image.image, pixelRatio);
+        drawSheet(ctx, camera, { width, height }, atNight.current ?? image.image, pixelRatio);
         return;
       }
       ctx.fillStyle = chalk;
       ctx.fillRect(camera.x, camera.y, width * camera.zoom, height * camera.zoom);
     },
-    [painter, image, width, height],
+    [painter, image, atNight, width, height],
   );
 
   const onKeyDown = (event: KeyboardEvent) => {

@@ -1,8 +1,10 @@
 import { useEffect, useState } from 'react';
 
+export type SheetLevel = HTMLImageElement | HTMLCanvasElement;
+
 export interface SheetImage {
   /** The picture and halves of it, largest first: drawing far out takes a small one, which is quicker and calmer. */
-  readonly levels: readonly CanvasImageSource[];
+  readonly levels: readonly SheetLevel[];
   readonly width: number;
   readonly height: number;
 }
@@ -52,9 +54,9 @@ export function useSheetImage(url: string | null): SheetImageState {
   return state;
 }
 
-function levelsOf(image: HTMLImageElement, width: number, height: number): CanvasImageSource[] {
-  const levels: CanvasImageSource[] = [image];
-  let from: CanvasImageSource = image;
+function levelsOf(image: HTMLImageElement, width: number, height: number): SheetLevel[] {
+  const levels: SheetLevel[] = [image];
+  let from: SheetLevel = image;
   for (let w = width / 2, h = height / 2; Math.max(w, h) >= SMALLEST_LEVEL; w /= 2, h /= 2) {
     const half = document.createElement('canvas');
     half.width = Math.round(w);

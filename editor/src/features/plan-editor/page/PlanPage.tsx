@@ -3,6 +3,12 @@ import { Link } from 'react-router-dom';
 import { PlanCanvas } from '../canvas/PlanCanvas';
 import { Inspector } from '../inspector/Inspector';
 import { Ledger } from '../ledger/Ledger';
+import { NightProvider } from '../night/context';
+import { DayNight } from '../night/DayNight';
+import { EveningBar } from '../night/EveningBar';
+import type { NightHere } from '../night/here';
+import { NightSide } from '../night/NightSide';
+import nightStyles from '../night/night-page.module.css';
 import { Profile } from '../profile/Profile';
 import { ScalePanel } from '../scale/ScalePanel';
 import type { Drawer } from '../store/session';
@@ -32,6 +38,8 @@ export interface PlanPageProps {
   readonly history: ReactNode;
   /** What the client asked about the plan; null where nothing was. */
   readonly questions: AskedQuestions | null;
+  /** Where and how the evening of this job is. */
+  readonly here: NightHere;
 }
 
 export interface AskedQuestions {
@@ -45,12 +53,29 @@ export interface AskedQuestions {
 }
 
 /** The plan page: the drawing fills the window; tools, ledger and profile stand around it. */
-export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history, questions }: PlanPageProps) {
+export function PlanPage({ here, ...page }: PlanPageProps) {
+  return (
+    <NightProvider here={here}>
+      <Page {...page} />
+    </NightProvider>
+  );
+}
+
+function Page({
+  jobName,
+  jobTo,
+  jobsTo,
+  imageUrl,
+  entries,
+  history,
+  questions,
+}: Omit<PlanPageProps, 'here'>) {
   const editor = useEditor();
   const doc = useDoc();
   const sheet = useSheet();
   const faults = useFaults();
   const drawer = useSession((s) => s.drawer);
+  const night = useSession((s) => s.mode === 'night');
   const asking = useSession((s) => s.request !== null);
 
   useEffect(() => {
@@ -69,7 +94,7 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history, q
   }, [editor, entries]);
 
   return (
-    <div className={styles.page}>
+    <div className={`${styles.page} ${nightStyles.page}`} data-night={night || undefined}>
       <TopBar
         jobName={jobName}
         jobTo={jobTo}
@@ -87,23 +112,28 @@ export function PlanPage({ jobName, jobTo, jobsTo, imageUrl, entries, history, q
         {!asking && <Messages />}
         {sheet !== undefined && (
           <div className={styles.foot}>
-            <Legend />
+            {!night && <Legend />}
             <span className={styles.spring} />
+            <DayNight />
             <ZoomBar />
           </div>
         )}
         <Panels faults={faults} history={history} questions={questions?.panel ?? null} />
       </main>
-      <aside className={styles.profile} data-open={drawer === 'profile' || undefined} aria-label="Profile">
-        <Profile />
-      </aside>
+      {night ? (
+        <EveningBar />
+      ) : (
+        <aside className={styles.profile} data-open={drawer === 'profile' || undefined} aria-label="Profile">
+          <Profile />
+        </aside>
+      )}
       <aside
         className={styles.side}
-        data-open={drawer === 'ledger' || drawer === 'inspector' || undefined}
-        data-part={drawer}
-        aria-label="Ledger"
+        data-open={drawer === 'ledger' || drawer === 'light' || drawer === 'inspector' || undefined}
+        data-part={drawer === 'light' ? 'ledger' : drawer}
+        aria-label={night ? 'Light and ledger' : 'Ledger'}
       >
-        <Ledger />
+        {night ? <NightSide jobName={jobName} /> : <Ledger />}
         <Inspector entries={entries} />
       </aside>
       <Drawers faults={faults} />
@@ -198,28 +228,37 @@ function Messages() {
   );
 }
 
-const drawers: readonly { readonly id: Exclude<Drawer, 'none'>; readonly word: string }[] = [
-  { id: 'ledger', word: 'Ledger' },
-  { id: 'profile', word: 'Profile' },
-  { id: 'inspector', word: 'Chosen' },
-];
+const words: Readonly<Record<Exclude<Drawer, 'none'>, string>> = {
+  ledger: 'Ledger',
+  light: 'Light',
+  profile: 'Profile',
+  inspector: 'Chosen',
+};
+const dayDrawers = ['ledger', 'profile', 'inspector'] as const;
+const nightDrawers = ['light', 'ledger', 'inspector'] as const;
 
 /** On a phone: what slides up over the drawing. */
 function Drawers({ faults }: { readonly faults: Faults }) {
   const editor = useEditor();
   const drawer = useSession((s) => s.drawer);
   const chosen = useSession((s) => s.selection.size);
+  const night = useSession((s) => s.mode === 'night');
+  const toggle = (id: Drawer) =>
+    editor.session.setState({
+      drawer: drawer === id ? 'none' : id,
+      ...((id === 'ledger' || id === 'light') && { side: id }),
+    });
   return (
     <section className={styles.drawers} aria-label="Panels">
-      {drawers.map(({ id, word }) => (
+      {(night ? nightDrawers : dayDrawers).map((id) => (
         <button
           key={id}
           type="button"
           aria-pressed={drawer === id}
           disabled={id === 'inspector' && chosen === 0}
-          onClick={() => editor.session.setState({ drawer: drawer === id ? 'none' : id })}
+          onClick={() => toggle(id)}
         >
-          {id === 'inspector' && chosen > 0 ? `${word} ${chosen}` : word}
+          {id === 'inspector' && chosen > 0 ? `${words[id]} ${chosen}` : words[id]}
         </button>
       ))}
       <button

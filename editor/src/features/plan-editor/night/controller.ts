@@ -1,0 +1,364 @@
+import {
+  type ControlZone,
+  controlZonesOf,
+  type EveningPlace,
+  type NightNote,
+  type NightScene,
+  nightSceneOf,
+  sceneWithNotes,
+} from '@lampwright/geometry/light';
+import {
+  type Evening,
+  eveningOf,
+  type LightMap,
+  type Look,
+  lookAt,
+  sunAltitude,
+  todayAt,
+} from '@lampwright/geometry/night';
+import type { PlanDocument } from '@lampwright/geometry/plan';
+import { createStore, type StoreApi } from 'zustand/vanilla';
+import type { Preview } from '../tools/tool';
+import type { LightEngine } from './engine';
+import type { OfferedGroup } from './here';
+import { atMinutes, type EveningLine, eveningLineOf, minutesInto, type ZoneLooks } from './moments';
+import { previewed } from './previewed';
+import { type Shares, sharesAt } from './shares';
+
+/** What one picture is made from. */
+export interface NightFrame {
+  readonly light: LightMap;
+  readonly look: Look;
+  readonly whiteLux: number;
+}
+
+/** What the night view is of; whoever holds it tells it when any of this changes. */
+export interface NightInput {
+  readonly doc: PlanDocument;
+  readonly sheetId: string;
+  /** As last reckoned, by fixture. */
+  readonly volts: ReadonlyMap<string, number>;
+  readonly groups: readonly OfferedGroup[];
+  readonly groupOf: ReadonlyMap<string, string>;
+  readonly where: EveningPlace;
+  /** What the hand at work is about to change. */
+  readonly preview: Preview | null;
+}
+
+export type NightWork =
+  /** Nothing is asked for: it is day, or the picture is as it should be. */
+  { readonly is: 'rest' } | { readonly is: 'working' } | { readonly is: 'failed'; readonly message: string };
+
+export interface NightState {
+  readonly open: boolean;
+  readonly evening: Evening;
+  readonly line: EveningLine;
+  readonly at: Date;
+  readonly playing: boolean;
+  readonly zones: readonly ControlZone[];
+  /** What can and can't be switched apart, as sentences. */
+  readonly together: readonly string[];
+  readonly looks: ZoneLooks;
+  readonly groupsOff: ReadonlySet<string>;
+  /** The plan as it is, without what the hand is about to change; null: the sheet has no scale. */
+  readonly scene: NightScene | null;
+  /** What to know of its lamps. */
+  readonly notes: readonly NightNote[];
+  readonly frame: NightFrame | null;
+  readonly work: NightWork;
+  /** Figures of light are shown on the ground. */
+  readonly luxOnGround: boolean;
+}
+
+export interface NightDeps {
+  readonly engine: LightEngine;
+  readonly now: () => Date;
+  /** Calls back before the next picture is shown. */
+  readonly nextFrame: (call: () => void) => void;
+}
+
+/** Pixels of the longer side of the map: light is soft, and the photo brings its own detail. */
+export const MAP_LONG_EDGE = 960;
+/** The whole evening is played in so many seconds. */
+export const PLAY_SECONDS = 24;
+
+/**
+ * The night view of a plan without any canvas: which evening it is, what shines, and how much light is where.
+ * Light is worked out elsewhere, one question at a time; while it is, newer ones wait and only the newest is asked.
+ */
+export class NightController {
+  readonly state: StoreApi<NightState>;
+  private asked: { readonly scene: NightScene; readonly shares: Shares } | null = null;
+  private running = false;
+  private waiting = false;
+  private closed = false;
+  private playedAt = 0;
+  /** Lux on white while its slider is being moved. */
+  private whiteLux: number | null = null;
+  private idle: (() => void)[] = [];
+  /** What the scene in hand was made from. */
+  private sceneFrom: readonly unknown[] = [];
+
+  constructor(
+    private input: NightInput,
+    private readonly deps: NightDeps,
+  ) {
+    const { zones, together } = controlZonesOf(input.doc);
+    const evening = eveningOf(input.where, todayAt(input.where.timeZone, deps.now()));
+    const line = eveningLineOf(evening, zones);
+    this.state = createStore<NightState>(() => ({
+      open: false,
+      evening,
+      line,
+      at: line.first,
+      playing: false,
+      zones,
+      together,
+      looks: new Map(),
+      groupsOff: new Set(input.groups.filter(({ on }) => !on).map(({ id }) => id)),
+      scene: null,
+      notes: [],
+      frame: null,
+      work: { is: 'rest' },
+      luxOnGround: false,
+    }));
+  }
+
+  /** Something of what the picture is made from has changed. */
+  follow(next: Partial<NightInput>): void {
+    const before = this.input;
+    const input = { ...before, ...next };
+    this.input = input;
+    if (input.groups !== before.groups) this.followGroups(before.groups);
+    if (input.doc !== before.doc) {
+      const { zones, together } = controlZonesOf(input.doc);
+      this.state.setState({ zones, together });
+    }
+    if (input.doc !== before.doc || input.where !== before.where) this.setEvening();
+    if (input.sheetId !== before.sheetId) this.state.setState({ frame: null });
+    this.refresh();
+  }
+
+  open(): void {
+    if (this.state.getState().open) return;
+    // The day may have changed while the page stood open.
+    this.setEvening();
+    this.state.setState({ open: true });
+    this.refresh();
+  }
+
+  shut(): void {
+    this.state.setState({ open: false, playing: false });
+  }
+
+  /** Moves to a moment of the evening, in minutes from the start of its line. */
+  seek(minutes: number): void {
+    const { line } = this.state.getState();
+    this.state.setState({
+      at: atMinutes(line, Math.min(Math.max(minutes, 0), line.minutes)),
+      playing: false,
+    });
+    this.refresh();
+  }
+
+  play(): void {
+    const { line, at } = this.state.getState();
+    const over = at.getTime() >= line.end.getTime();
+    this.state.setState({ playing: true, ...(over && { at: line.start }) });
+    this.playedAt = this.deps.now().getTime();
+    this.deps.nextFrame(() => this.step());
+  }
+
+  pause(): void {
+    this.state.setState({ playing: false });
+  }
+
+  /** Looks at a zone switched on or off; null: as its schedule says. */
+  lookAtZone(zoneId: string, look: 'on' | 'off' | null): void {
+    const looks = new Map(this.state.getState().looks);
+    if (look === null) looks.delete(zoneId);
+    else looks.set(zoneId, look);
+    this.state.setState({ looks });
+    this.refresh();
+  }
+
+  takeGroup(groupId: string, taken: boolean): void {
+    const groupsOff = new Set(this.state.getState().groupsOff);
+    if (taken) groupsOff.delete(groupId);
+    else groupsOff.add(groupId);
+    this.state.setState({ groupsOff });
+    this.refresh();
+  }
+
+  /** Shows another brightest spot while it is being chosen; null: the sheet's own. */
+  tryWhite(lux: number | null): void {
+    this.whiteLux = lux;
+    this.reframe();
+  }
+
+  showLux(luxOnGround: boolean): void {
+    this.state.setState({ luxOnGround });
+  }
+
+  /** Asks again after a failure. */
+  retry(): void {
+    this.asked = null;
+    this.refresh();
+  }
+
+  /** The picture of a moment as far as its light is known; null while it is not. */
+  frame(at: Date): NightFrame | null {
+    const { evening, frame, scene } = this.state.getState();
+    if (frame === null || scene === null) return null;
+    return { ...frame, look: lookAt(sunAltitude(evening, at)), whiteLux: this.whiteLux ?? scene.whiteLux };
+  }
+
+  /** The scene with what is switched off for looking left dark, whatever the hour: what figures are of. */
+  lit(): NightScene | null {
+    const { scene, looks, groupsOff } = this.state.getState();
+    if (scene === null) return null;
+    const shares = sharesAt(scene, null, { looks, groupsOff });
+    return { ...scene, sources: scene.sources.filter(({ id }) => (shares[id] ?? 0) > 0) };
+  }
+
+  /** Resolves when no light is being worked out. */
+  settled(): Promise<void> {
+    if (!this.running && !this.waiting) return Promise.resolve();
+    return new Promise((resolve) => this.idle.push(resolve));
+  }
+
+  close(): void {
+    this.closed = true;
+    this.deps.engine.close();
+    this.wake();
+  }
+
+  private followGroups(before: readonly OfferedGroup[]): void {
+    // What a person has switched here stays; a group that is new begins as it is offered.
+    const known = new Set(before.map(({ id }) => id));
+    const { groupsOff } = this.state.getState();
+    const off = this.input.groups.filter(({ id, on }) => (known.has(id) ? groupsOff.has(id) : !on));
+    this.state.setState({ groupsOff: new Set(off.map(({ id }) => id)) });
+  }
+
+  private setEvening(): void {
+    const { zones, at, line: before } = this.state.getState();
+    const { where } = this.input;
+    const evening = eveningOf(where, todayAt(where.timeZone, this.deps.now()));
+    const line = eveningLineOf(evening, zones);
+    const stays = at !== before.first && minutesInto(line, at) >= 0 && at.getTime() <= line.end.getTime();
+    this.state.setState({ evening, line, at: stays ? at : line.first });
+  }
+
+  private step(): void {
+    const { playing, line, at } = this.state.getState();
+    if (!playing || this.closed) return;
+    const now = this.deps.now().getTime();
+    const share = (now - this.playedAt) / 1000 / PLAY_SECONDS;
+    this.playedAt = now;
+    const span = line.end.getTime() - line.start.getTime();
+    const next = new Date(Math.min(at.getTime() + share * span, line.end.getTime()));
+    this.state.setState({ at: next, playing: next.getTime() < line.end.getTime() });
+    this.refresh();
+    this.deps.nextFrame(() => this.step());
+  }
+
+  /** Takes over what changed at most once a picture. */
+  private refresh(): void {
+    if (!this.state.getState().open || this.waiting || this.closed) return;
+    this.waiting = true;
+    this.deps.nextFrame(() => {
+      this.waiting = false;
+      if (this.closed || !this.state.getState().open) this.wake();
+      else this.update();
+    });
+  }
+
+  private update(): void {
+    const { doc, preview, sheetId, volts, groupOf } = this.input;
+    const shownDoc = previewed(doc, preview);
+    this.updateScene();
+    const { scene: still, evening, at, looks, groupsOff } = this.state.getState();
+    const scene =
+      shownDoc === doc || still === null ? still : nightSceneOf(shownDoc, sheetId, volts, groupOf);
+    if (scene === null) {
+      this.asked = null;
+      this.state.setState({ frame: null, work: { is: 'rest' } });
+      this.wake();
+      return;
+    }
+    // What is being moved lights up what stands still: surfaces are worked out anew when the hand lets go.
+    const drawn = scene === still || still === null ? scene : { ...still, sources: scene.sources };
+    const shares = sharesAt(drawn, { evening, at }, { looks, groupsOff });
+    this.ask(drawn, shares);
+    this.reframe();
+  }
+
+  private updateScene(): void {
+    const { doc, sheetId, volts, groupOf } = this.input;
+    const from = [doc, sheetId, volts, groupOf];
+    if (from.every((part, i) => part === this.sceneFrom[i])) return;
+    this.sceneFrom = from;
+    const made = sceneWithNotes(doc, sheetId, volts, groupOf);
+    this.state.setState({ scene: made?.scene ?? null, notes: made?.notes ?? [] });
+  }
+
+  private ask(scene: NightScene, shares: Shares): void {
+    const before = this.asked;
+    const { work } = this.state.getState();
+    if (work.is === 'failed' && before?.scene === scene) return;
+    if (before !== null && before.scene === scene && sameShares(before.shares, shares)) {
+      if (!this.running) this.wake();
+      return;
+    }
+    if (this.running) return;
+    this.asked = { scene, shares };
+    this.running = true;
+    this.state.setState({ work: { is: 'working' } });
+    this.deps.engine.light({ scene, shares, longEdge: MAP_LONG_EDGE }).then(
+      (light) => {
+        this.running = false;
+        if (this.closed) return;
+        const { sheetId } = this.input;
+        if (scene.sheetId === sheetId) {
+          this.state.setState({ work: { is: 'rest' } });
+          this.setFrame(light, scene);
+        }
+        this.refresh();
+        if (!this.waiting) this.wake();
+      },
+      (error: unknown) => {
+        this.running = false;
+        if (this.closed) return;
+        const message = error instanceof Error ? error.message : String(error);
+        this.state.setState({ work: { is: 'failed', message } });
+        this.wake();
+      },
+    );
+  }
+
+  private setFrame(light: LightMap, { whiteLux }: NightScene): void {
+    const { evening, at } = this.state.getState();
+    this.state.setState({
+      frame: { light, look: lookAt(sunAltitude(evening, at)), whiteLux: this.whiteLux ?? whiteLux },
+    });
+  }
+
+  /** The same light at another hour, or shown brighter or darker. */
+  private reframe(): void {
+    const { frame, at } = this.state.getState();
+    const next = frame === null ? null : this.frame(at);
+    if (next !== null) this.state.setState({ frame: next });
+  }
+
+  private wake(): void {
+    const waiters = this.idle;
+    this.idle = [];
+    for (const wake of waiters) wake();
+  }
+}
+
+function sameShares(a: Shares, b: Shares): boolean {
+  const keys = Object.keys(a);
+  return keys.length === Object.keys(b).length && keys.every((key) => a[key] === b[key]);
+}
