@@ -1,5 +1,6 @@
 export * from './aiming.js';
 export * from './beam.js';
+export * from './illuminance.js';
 export * from './night-scene.js';
 export * from './output.js';
 export * from './photometry.js';
