@@ -14,6 +14,7 @@ import { cableColour, cableWeight, type LoadBand, loadBand } from './cable-look'
 import type { Point } from './camera';
 import type { AreaShape } from './draw/areas';
 import type { CableStroke } from './draw/cable';
+import type { FaceShape, TreeShape } from './draw/uprights';
 import { type FixtureLook, fixtureLook, isFault, unwiredLook } from './fixture-look';
 import { tagOf, windowOf } from './names';
 import { dimBlue, grey, ink, overRed } from './palette';
@@ -62,10 +63,20 @@ export interface Scene {
   readonly cables: readonly SceneCable[];
   readonly nodes: readonly SceneNode[];
   readonly areas: readonly AreaShape[];
+  readonly faces: readonly FaceShape[];
+  readonly trees: readonly TreeShape[];
   readonly measurements: readonly SceneMeasurement[];
 }
 
-export const emptyScene: Scene = { fixtures: [], cables: [], nodes: [], areas: [], measurements: [] };
+export const emptyScene: Scene = {
+  fixtures: [],
+  cables: [],
+  nodes: [],
+  areas: [],
+  faces: [],
+  trees: [],
+  measurements: [],
+};
 
 /** Words that need the sheet's scale and the person's units. */
 export interface SceneWords {
@@ -92,6 +103,8 @@ export function buildScene(
   const cables: SceneCable[] = [];
   const nodes: SceneNode[] = [];
   const areas: AreaShape[] = [];
+  const faces: FaceShape[] = [];
+  const trees: TreeShape[] = [];
   const measurements: SceneMeasurement[] = [];
   for (const record of doc.values()) {
     if (!('sheetId' in record) || record.sheetId !== sheetId) continue;
@@ -176,12 +189,18 @@ export function buildScene(
           label: words.areaText(record),
         });
         break;
+      case 'face':
+        faces.push({ id: record.id, foot: record.foot, top: record.top, label: tagOf(doc, record) });
+        break;
+      case 'tree':
+        trees.push({ id: record.id, foot: record.foot, outline: record.outline, label: tagOf(doc, record) });
+        break;
       case 'measurement':
         measurements.push({ id: record.id, points: record.points, text: words.lengthText(record.points) });
         break;
     }
   }
-  return { fixtures, cables, nodes, areas, measurements };
+  return { fixtures, cables, nodes, areas, faces, trees, measurements };
 }
 
 /** Of each run the fixture with the least room between its volts and the edge of its window. */

@@ -181,7 +181,7 @@ export function placeArea(
 /** Marks an upright surface: along its foot, with its upper edge on a photo. */
 export function placeFace(
   doc: PlanDocument,
-  face: Pick<FaceRecord, 'sheetId' | 'foot' | 'top' | 'heightMeters'>,
+  face: Pick<FaceRecord, 'sheetId' | 'foot' | 'top' | 'heightMeters'> & { readonly name?: string },
   ids: IdSource = newId,
 ): EditResult {
   const draft = new Draft(doc, ids);
@@ -195,7 +195,9 @@ export function placeFace(
 /** Marks a tree or shrub by its foot and its crown. */
 export function placeTree(
   doc: PlanDocument,
-  tree: Pick<TreeRecord, 'sheetId' | 'foot' | 'outline' | 'heightMeters' | 'crownBaseMeters'>,
+  tree: Pick<TreeRecord, 'sheetId' | 'foot' | 'outline' | 'heightMeters' | 'crownBaseMeters'> & {
+    readonly name?: string;
+  },
   ids: IdSource = newId,
 ): EditResult {
   const draft = new Draft(doc, ids);

@@ -1,5 +1,7 @@
+import type { Aim } from '@lampwright/geometry/plan';
 import type { Camera, Point, Size } from '../../../plan-view/camera';
 import type { Scene } from '../../../plan-view/scene';
+import type { DrawnAim } from '../tools/light-pose';
 import type { Preview } from '../tools/tool';
 
 /** All that the painted layers depend on. */
@@ -15,4 +17,6 @@ export interface PaintState {
   /** Over a picture of the night marks step back. */
   readonly night: boolean;
   readonly lengthText: (points: readonly Point[]) => string;
+  /** Where a fixture's light goes, or would with another aim; null for what gives none. */
+  readonly aimOf: (fixtureId: string, aim?: Aim | null) => DrawnAim | null;
 }

@@ -10,9 +10,11 @@ import {
   drawNodes,
 } from '../../../plan-view/draw/scene';
 import { MarkSprites } from '../../../plan-view/draw/sprites';
+import { drawFace, drawTree } from '../../../plan-view/draw/uprights';
 import { emptyScene, type Scene, type SceneCable } from '../../../plan-view/scene';
 import { atNight, drawNightCables, drawNightFixtures, drawNightNodes } from '../night/marks';
 import type { Preview } from '../tools/tool';
+import { drawAims } from './aims';
 import type { PaintState } from './paint-state';
 import { drawPreview } from './preview';
 
@@ -50,6 +52,7 @@ export class Painter {
       stale: false,
       night: false,
       lengthText: () => '',
+      aimOf: () => null,
     };
   }
 
@@ -84,7 +87,12 @@ export class Painter {
       if (state.night) dirty.add('ground');
     }
     if (isBusy(state.preview) !== isBusy(before.preview)) dirty.add('fixtures');
-    if (state.preview !== before.preview || state.lengthText !== before.lengthText) dirty.add('overlay');
+    if (
+      state.preview !== before.preview ||
+      state.lengthText !== before.lengthText ||
+      state.aimOf !== before.aimOf
+    )
+      dirty.add('overlay');
     return dirty;
   }
 
@@ -111,6 +119,8 @@ export class Painter {
   private paintGround(ctx: CanvasRenderingContext2D, scene: Scene): void {
     const { camera, selection } = this.state;
     for (const area of scene.areas) drawArea(ctx, camera, area, selection.has(area.id));
+    for (const face of scene.faces) drawFace(ctx, camera, face, selection.has(face.id));
+    for (const tree of scene.trees) drawTree(ctx, camera, tree, selection.has(tree.id));
   }
 
   private paintCables(ctx: CanvasRenderingContext2D, scene: Scene): void {
@@ -152,6 +162,7 @@ export class Painter {
       this.paintMoving(ctx, this.split.moving, preview.dx, preview.dy);
       return;
     }
+    if (preview === null || preview.kind === 'aim') drawAims(ctx, this.state);
     this.paintChoices(ctx, camera, scene);
     if (preview !== null) drawPreview(ctx, this.state, preview, this.sprites);
   }
@@ -178,6 +189,8 @@ export class Painter {
       moving.cables.map((cable) => stretched(cable, ids, dx, dy)),
     );
     for (const area of moving.areas) drawArea(ctx, shifted, area, true);
+    for (const face of moving.faces) drawFace(ctx, shifted, face, true);
+    for (const tree of moving.trees) drawTree(ctx, shifted, tree, true);
     drawMeasurements(ctx, shifted, moving.measurements, () => true);
     this.paintNodesAndFixtures(ctx, shifted, moving);
     this.paintChoices(ctx, shifted, moving);
@@ -237,6 +250,8 @@ function splitScene(scene: Scene, ids: ReadonlySet<string>): Split {
       fixtures: scene.fixtures.filter(hasNot),
       nodes: scene.nodes.filter(hasNot),
       areas: scene.areas.filter(hasNot),
+      faces: scene.faces.filter(hasNot),
+      trees: scene.trees.filter(hasNot),
       measurements: scene.measurements.filter(hasNot),
       cables: scene.cables.filter((c) => !touches(c)),
     },
@@ -244,6 +259,8 @@ function splitScene(scene: Scene, ids: ReadonlySet<string>): Split {
       fixtures: scene.fixtures.filter(has),
       nodes: scene.nodes.filter(has),
       areas: scene.areas.filter(has),
+      faces: scene.faces.filter(has),
+      trees: scene.trees.filter(has),
       measurements: scene.measurements.filter(has),
       cables: scene.cables.filter(touches),
     },

@@ -1,8 +1,10 @@
 import { markRadius, type Point, toWindow } from '../../../plan-view/camera';
+import { drawAimCross } from '../../../plan-view/draw/aim';
 import { drawCables, trace } from '../../../plan-view/draw/cable';
 import { drawHub, drawNote, drawSplice, drawTransformer } from '../../../plan-view/draw/nodes';
 import { drawMeasurement, workingLabelAt } from '../../../plan-view/draw/scene';
 import type { MarkSprites } from '../../../plan-view/draw/sprites';
+import { drawFace, drawTree } from '../../../plan-view/draw/uprights';
 import { ink, lamp, paper } from '../../../plan-view/palette';
 import type { PlaceMark, Preview } from '../tools/tool';
 import type { PaintState } from './paint-state';
@@ -56,6 +58,20 @@ export function drawPreview(
       if (points.length > 0) drawMeasurement(ctx, camera, points, state.lengthText(points), true);
       return;
     }
+    case 'face': {
+      const foot = preview.pending === null ? preview.foot : [...preview.foot, preview.pending];
+      drawFace(ctx, camera, { foot, top: preview.top }, true);
+      segmentLabel(ctx, state, foot);
+      return;
+    }
+    case 'tree': {
+      const outline = preview.pending === null ? preview.outline : [...preview.outline, preview.pending];
+      drawTree(ctx, camera, { foot: preview.foot, outline }, true);
+      return;
+    }
+    case 'aim':
+      drawAimCross(ctx, toWindow(camera, preview.at));
+      return;
     case 'place':
       ctx.globalAlpha = 0.85;
       placeMark(ctx, toWindow(camera, preview.at), markRadius(camera), preview.mark, sprites);

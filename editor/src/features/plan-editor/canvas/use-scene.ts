@@ -1,3 +1,4 @@
+import type { Aim } from '@lampwright/geometry/plan';
 import { useCallback, useMemo } from 'react';
 import type { Point } from '../../../plan-view/camera';
 import { buildScene, emptyScene } from '../../../plan-view/scene';
@@ -13,6 +14,7 @@ import {
 } from '../page/context';
 import { areaText, lengthText as lengthOf, plainLength } from '../page/lengths';
 import { referenceLines } from '../scale/reference-lines';
+import { type DrawnAim, drawnAim } from '../tools/light-pose';
 
 /** The open sheet as drawable data; built anew only when the plan, its volts or its scale change. */
 export function useScene() {
@@ -51,5 +53,17 @@ export function useScene() {
     const lines = referenceLines(sheet, (m) => plainLength(m, units));
     return { ...scene, measurements: [...scene.measurements, ...lines] };
   }, [scene, scaling, sheet, units]);
-  return { scene: shown, lengthText };
+  const aimOf = useMemo(() => {
+    const world = { doc: () => doc, sheetId: () => sheetId, scale: () => scale };
+    const kept = new Map<string, DrawnAim | null>();
+    return (id: string, aim?: Aim | null): DrawnAim | null => {
+      if (aim !== undefined) return drawnAim(world, id, aim);
+      const before = kept.get(id);
+      if (before !== undefined) return before;
+      const drawn = drawnAim(world, id);
+      kept.set(id, drawn);
+      return drawn;
+    };
+  }, [doc, sheetId, scale]);
+  return { scene: shown, lengthText, aimOf };
 }

@@ -10,13 +10,15 @@ import {
   setFields,
 } from '@lampwright/geometry/plan';
 import { parseLength } from '@lampwright/geometry/units';
-import { type FormEvent, useEffect, useRef, useState } from 'react';
+import { type FormEvent, useState } from 'react';
 import { Button } from '../../../components/button';
 import type { Request } from '../tools/tool';
+import { AskFace, AskTree } from './AskUpright';
 import { areaMeaning, areaWord, hasHeight } from './area-words';
 import { useEditor, useScale, useSession, useSheet, useUnitSystem } from './context';
 import { areaText } from './lengths';
 import styles from './page.module.css';
+import { useFirstFocus } from './use-first-focus';
 
 /** What a finished gesture still needs from the person, asked over the drawing without locking the page. */
 export function Requests() {
@@ -50,6 +52,10 @@ function Ask({ request, done }: { readonly request: Request; readonly done: () =
       return <Confirm message={request.message} proceed={request.proceed} done={done} />;
     case 'area':
       return <AskArea points={request.points} done={done} />;
+    case 'face':
+      return <AskFace request={request} done={done} />;
+    case 'tree':
+      return <AskTree request={request} done={done} />;
     case 'note':
       return <AskNote at={request.at} done={done} />;
     case 'scale-length':
@@ -57,19 +63,6 @@ function Ask({ request, done }: { readonly request: Request; readonly done: () =
     case 'scale-rectangle':
       return <AskRectangle request={request} done={done} />;
   }
-}
-
-/** Puts the focus into what is asked and gives it back afterwards. */
-function useFirstFocus<E extends HTMLElement>() {
-  const first = useRef<E>(null);
-  useEffect(() => {
-    const before = document.activeElement;
-    first.current?.focus();
-    return () => {
-      if (before instanceof HTMLElement && before.isConnected) before.focus({ preventScroll: true });
-    };
-  }, []);
-  return first;
 }
 
 function Confirm({

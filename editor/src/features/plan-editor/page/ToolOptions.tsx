@@ -15,6 +15,7 @@ import {
   wattsOf,
 } from './items';
 import styles from './page.module.css';
+import { AimOptions, FaceOptions, TreeOptions } from './UprightOptions';
 
 /** What the tool at work puts down, and how to use it without a pointer. */
 export function ToolOptions({ entries }: { readonly entries: readonly CatalogueEntry[] }) {
@@ -55,6 +56,24 @@ export function ToolOptions({ entries }: { readonly entries: readonly CatalogueE
             Click the corners, or draw around it in one stroke. Enter or a double click closes it; Esc takes
             back a corner.
           </p>
+        </Card>
+      );
+    case 'face':
+      return (
+        <Card>
+          <FaceOptions />
+        </Card>
+      );
+    case 'tree':
+      return (
+        <Card>
+          <TreeOptions />
+        </Card>
+      );
+    case 'aim':
+      return (
+        <Card>
+          <AimOptions />
         </Card>
       );
     case 'measure':

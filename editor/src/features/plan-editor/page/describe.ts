@@ -19,6 +19,16 @@ const words: Readonly<Record<string, string>> = {
   extraOhms: 'splices',
   markedToMarked: 'marked to marked',
   heightMeters: 'height',
+  foot: 'foot',
+  top: 'upper edge',
+  outline: 'crown',
+  crownBaseMeters: 'lower edge of its crown',
+  aim: 'aim',
+  mountingHeightMeters: 'mounting height',
+  zoneId: 'zone',
+  schedule: 'times',
+  lightTarget: 'light wanted',
+  whiteLux: 'exposure at night',
   references: 'scale',
   groundMetersPerPaperMeter: 'drawing scale',
 };
@@ -67,6 +77,9 @@ export function describeName(record: PlanRecord): string {
     case 'fixture':
     case 'junction':
     case 'run':
+    case 'face':
+    case 'tree':
+    case 'zone':
       return record.name;
     default:
       return '';
