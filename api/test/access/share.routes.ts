@@ -116,6 +116,7 @@ export const routes: readonly RouteCase[] = [
     answers: 200,
     request: async (world) => ({ params: { ...(await params(world)).params, sheetId: SHEET } }),
   },
+  { route: 'GET /api/share/:linkId/night', audience: 'link', answers: 200, request: params },
   {
     route: 'GET /api/share/:linkId/papers/:paperId',
     audience: 'link',

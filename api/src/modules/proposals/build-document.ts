@@ -1,8 +1,16 @@
 import { fixtureInitial } from '@lampwright/geometry/catalogue';
 import { proposalCautions } from '@lampwright/geometry/cautions';
-import { initialOf, itemOf, type PlanDocument, recordsOf, type SheetRecord } from '@lampwright/geometry/plan';
+import type { EveningPlace } from '@lampwright/geometry/light';
+import {
+  initialOf,
+  itemOf,
+  PLAN_SCHEMA_VERSION,
+  type PlanDocument,
+  recordsOf,
+  type SheetRecord,
+} from '@lampwright/geometry/plan';
 import { type Quote, recordGroups, scheduleOf } from '@lampwright/geometry/price';
-import { regionOf, type settingsInForce, wordsOf } from '../companies/settings.js';
+import { type CompanySettings, regionOf, wordsOf } from '../companies/settings.js';
 import type { WorkedQuote } from '../pricing/quotes.js';
 import { whatItLights } from './plain-words.js';
 import type { ProposalTexts } from './proposals.dto.js';
@@ -10,11 +18,16 @@ import type { ProposalWords, RevisionDocument, ShownCombination, ShownLight } fr
 
 export interface Parties {
   readonly company: { readonly name: string; readonly region: string };
-  readonly settings: Pick<ReturnType<typeof settingsInForce>, 'units'>;
+  readonly settings: Pick<CompanySettings, 'units' | 'timeZone' | 'place'>;
   readonly texts: ProposalTexts;
   readonly words: ProposalWords;
   readonly client: { readonly name: string; readonly email: string | null; readonly phone: string | null };
-  readonly property: { readonly name: string; readonly address: string };
+  readonly property: {
+    readonly name: string;
+    readonly address: string;
+    readonly latitude: number | null;
+    readonly longitude: number | null;
+  };
   readonly job: { readonly id: string; readonly name: string };
 }
 
@@ -58,9 +71,10 @@ export function buildDocument(worked: WorkedQuote, parties: Parties, standing: S
       address: property.address,
     },
     job: { ...job, property: property.name },
-    plan: { version: worked.planVersion, records: [...plan.values()] },
+    plan: { version: worked.planVersion, schema: PLAN_SCHEMA_VERSION, records: [...plan.values()] },
     sheets: sheets.map(({ id, name, view, widthPx, heightPx }) => ({ id, name, view, widthPx, heightPx })),
     lights: lightsOf(worked),
+    evening: eveningOf(parties),
     price: {
       groups: quote.groups.map((group) =>
         group.id === null ? { ...group, name: baseName(group.fixtures) } : group,
@@ -85,6 +99,20 @@ export function buildDocument(worked: WorkedQuote, parties: Parties, standing: S
     acceptedFaults: worked.faults.flatMap(({ message, acceptance }) =>
       acceptance ? [{ message, reason: acceptance.reason, by: acceptance.by, at: acceptance.at }] : [],
     ),
+  };
+}
+
+/** Of a degree: about a kilometre. The sun sets there within seconds of the same time, and nobody is pointed at. */
+const PLACE_STEPS = 100;
+
+/** Where the sun sets: at the property, or about where the company works; its clocks are the company's. */
+function eveningOf({ property, settings }: Parties): EveningPlace {
+  const { latitude, longitude } = property;
+  const place = latitude !== null && longitude !== null ? { latitude, longitude } : settings.place;
+  const roughly = (degrees: number) => Math.round(degrees * PLACE_STEPS) / PLACE_STEPS;
+  return {
+    place: place && { latitude: roughly(place.latitude), longitude: roughly(place.longitude) },
+    timeZone: settings.timeZone,
   };
 }
 

@@ -1,5 +1,5 @@
 import { scaleOfSheet, sheetPoint } from '@lampwright/geometry/estimate';
-import { planRecordSchema, type SheetRecord } from '@lampwright/geometry/plan';
+import { frozenRecord } from './frozen-plan.js';
 import type { Differences, RevisionDocument, ShownLight, ShownLine } from './revision-document.js';
 
 /** A light that lies nearer to where it was than this was not moved on purpose. */
@@ -62,15 +62,10 @@ function movedBy(
   return meters < MOVED_METERS ? null : { meters };
 }
 
-function groundOf({ plan }: RevisionDocument, light: ShownLight) {
-  const sheet = sheetOf(plan.records, light.sheetId);
-  const solved = sheet && scaleOfSheet(sheet);
+function groundOf(document: RevisionDocument, light: ShownLight) {
+  const sheet = frozenRecord(document, light.sheetId);
+  const solved = sheet?.kind === 'sheet' ? scaleOfSheet(sheet) : null;
   return solved?.ok ? solved.scale.groundFromSheet(sheetPoint(light)) : null;
-}
-
-function sheetOf(records: RevisionDocument['plan']['records'], id: string): SheetRecord | null {
-  const parsed = planRecordSchema.safeParse(records.find((record) => record.id === id));
-  return parsed.success && parsed.data.kind === 'sheet' ? parsed.data : null;
 }
 
 /** Lines whose quantity or price is another, by what they are: groups may have been cut otherwise since. */

@@ -12,7 +12,12 @@ export class PartiesRepository {
     const [row] = await this.database.queries
       .select({
         job: { id: jobs.id, name: jobs.name },
-        property: { name: properties.name, address: properties.address },
+        property: {
+          name: properties.name,
+          address: properties.address,
+          latitude: properties.latitude,
+          longitude: properties.longitude,
+        },
         client: { name: clients.name, email: clients.email, phone: clients.phone },
       })
       .from(jobs)

@@ -8,8 +8,16 @@ type ShownSheet = RevisionDocument['sheets'][number];
 export const PICTURE = { edgePx: 1600, bytes: 250_000 } as const;
 export const LIGHT_PICTURE = { edgePx: 1000, bytes: 120_000 } as const;
 
+const besideOf = (key: string, what: string): string => key.replace(/(\.\w+)?$/, `-${what}$1`);
+
 /** Where the light one of a picture is stored. Revisions made before there were any have none. */
-export const lightKeyOf = (key: string): string => key.replace(/(\.\w+)?$/, `-${LIGHT_PICTURE.edgePx}$1`);
+export const lightKeyOf = (key: string): string => besideOf(key, String(LIGHT_PICTURE.edgePx));
+
+/**
+ * Where the same garden by night is stored: full dark, with the lights of the offered groups on. Sheets without a
+ * scale or a lit light have none, nor have revisions made before there were any.
+ */
+export const nightKeyOf = (key: string): string => besideOf(key, 'night');
 
 /**
  * The sheets that have a picture. The one to be seen first leads: the photo with the most lights, or a drawing

@@ -5,6 +5,7 @@ import { PricingStoreModule } from '../pricing/pricing-store.module.js';
 import { TimelineStoreModule } from '../timeline/timeline-store.module.js';
 import { CompanyTexts } from './company-texts.js';
 import { ProposalLinks } from './links.js';
+import { NightPictures } from './night-pictures.js';
 import { PartiesRepository } from './parties.repository.js';
 import { ProposalStore } from './proposal-store.js';
 import { ProposalTextsRepository } from './proposal-texts.repository.js';
@@ -15,6 +16,7 @@ import { RevisionViews } from './views.js';
 
 const shared = [
   CompanyTexts,
+  NightPictures,
   PartiesRepository,
   ProposalLinks,
   ProposalsRepository,

@@ -24,7 +24,9 @@ import {
   declineSchema,
   type PictureQuery,
   pictureQuerySchema,
+  type SharedNight,
   type SharedPage,
+  sharedNightSchema,
   sharedPageSchema,
 } from './share.dto.js';
 import { ShareService } from './share.service.js';
@@ -65,6 +67,13 @@ export class ShareController {
     @Res() response: Response,
   ): Promise<void> {
     await sendFile(await this.share.picture(guest, linkId, sheetId, width !== undefined), request, response);
+  }
+
+  @Get('night')
+  @Shared()
+  @ApiOkResponse({ standardSchema: sharedNightSchema })
+  night(@CurrentGuest() guest: Guest, @Param('linkId', id) linkId: string): Promise<SharedNight> {
+    return this.share.night(guest, linkId);
   }
 
   @Get('papers/:paperId')

@@ -1,3 +1,4 @@
+import { eveningPlaceSchema, nightSceneSchema } from '@lampwright/geometry/light';
 import { z } from 'zod';
 import { LIGHT_PICTURE } from '../proposals/pictures.js';
 import { questionSchema } from '../proposals/proposals.dto.js';
@@ -32,8 +33,8 @@ export const sharedPageSchema = z.strictObject({
   /** Whom the link was sent to. */
   recipient: z.string(),
   revisionId: z.uuid(),
-  /** Without the plan's records, which the page does not need. */
-  document: revisionDocumentSchema.omit({ plan: true }),
+  /** Without the plan's records, which the page does not need, and without what it asks for by itself. */
+  document: revisionDocumentSchema.omit({ plan: true, evening: true }),
   hash: z.string(),
   /** The one to be seen first leads. */
   pictures: z.array(
@@ -44,6 +45,8 @@ export const sharedPageSchema = z.strictObject({
       light: z.strictObject({ url: z.string(), media: z.string() }),
       widthPx: z.number(),
       heightPx: z.number(),
+      /** How many parts of its lights switch apart in its evening; null: it has no lights, or no scale to show them by. */
+      night: z.strictObject({ zones: z.number().int().min(1) }).nullable(),
     }),
   ),
   /** Against the approved revision; null where nothing was approved before. */
@@ -65,6 +68,13 @@ export const sharedPageSchema = z.strictObject({
   papers: z.array(sharedPaperSchema),
 });
 export type SharedPage = z.infer<typeof sharedPageSchema>;
+
+/** What the page makes its night pictures from, sheet by sheet; the one to be seen first leads. */
+export const sharedNightSchema = z.strictObject({
+  evening: eveningPlaceSchema,
+  scenes: z.array(nightSceneSchema),
+});
+export type SharedNight = z.infer<typeof sharedNightSchema>;
 
 /** `width` asks for the light picture. */
 export const pictureQuerySchema = z.strictObject({

@@ -3,6 +3,7 @@ import { QuestionsStoreModule } from '../questions/questions-store.module.js';
 import { Answers } from './answers.js';
 import { ShareController } from './share.controller.js';
 import { ShareService } from './share.service.js';
+import { ShareNights } from './share-nights.js';
 import { SharePageFacts } from './share-page-facts.js';
 import { SharePapers } from './share-papers.js';
 import { ShareQuestions } from './share-questions.js';
@@ -13,6 +14,6 @@ import { ShownProposal } from './shown-proposal.js';
 @Module({
   imports: [ShareStoreModule, QuestionsStoreModule],
   controllers: [ShareController],
-  providers: [Answers, SharePageFacts, SharePapers, ShareQuestions, ShareService, ShownProposal],
+  providers: [Answers, ShareNights, SharePageFacts, SharePapers, ShareQuestions, ShareService, ShownProposal],
 })
 export class ShareModule {}

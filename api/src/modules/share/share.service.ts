@@ -16,9 +16,10 @@ import { JobEvents } from '../timeline/job-events.repository.js';
 import { Answers } from './answers.js';
 import type { GuestCaller } from './guest-caller.js';
 import { sentencesOf } from './sentences.js';
-import type { Approve, Ask, Checkout, Decline, SharedPage } from './share.dto.js';
+import type { Approve, Ask, Checkout, Decline, SharedNight, SharedPage } from './share.dto.js';
 import { ShareRepository } from './share.repository.js';
 import { backUrl, LIGHT_PICTURE_MEDIA, lightPictureUrl, pictureUrl } from './share-addresses.js';
+import { ShareNights } from './share-nights.js';
 import { SharePapers } from './share-papers.js';
 import { ShareQuestions } from './share-questions.js';
 import { ShownProposal } from './shown-proposal.js';
@@ -36,6 +37,7 @@ export class ShareService {
     @Inject(ShareQuestions) private readonly asking: ShareQuestions,
     @Inject(Answers) private readonly answers: Answers,
     @Inject(SharePapers) private readonly papers: SharePapers,
+    @Inject(ShareNights) private readonly nights: ShareNights,
     @Inject(Dues) private readonly dues: Dues,
     @Inject(JobEvents) private readonly events: JobEvents,
   ) {}
@@ -46,7 +48,8 @@ export class ShareService {
     const shown = await this.shown.of(guest);
     const { row, document } = shown;
     const approved = await this.store.approved(companyId, proposalId);
-    const { plan: _plan, ...shownDocument } = document;
+    const nights = this.nights.shown(shown);
+    const { plan: _plan, evening: _evening, ...shownDocument } = document;
     return {
       ...(await this.shown.standingOf(shown)),
       recipient: guest.name,
@@ -59,6 +62,7 @@ export class ShareService {
         light: { url: lightPictureUrl(linkId, id), media: LIGHT_PICTURE_MEDIA },
         widthPx,
         heightPx,
+        night: nights.get(id) ?? null,
       })),
       differences: approved && differencesFrom(approved, shown),
       approval: approved && {
@@ -73,6 +77,11 @@ export class ShareService {
       dues: await this.dues.shared(companyId, proposalId),
       papers: await this.papers.list(guest, shown),
     };
+  }
+
+  async night(guest: Guest, linkId: string): Promise<SharedNight> {
+    demandOwn(guest, linkId);
+    return this.nights.of(await this.shown.of(guest));
   }
 
   /** A person looks at it: told by their gesture, since programs open links too. */

@@ -1380,6 +1380,22 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/api/share/{linkId}/night": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get: operations["Share_night"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/api/share/{linkId}/papers/{paperId}": {
         parameters: {
             query?: never;
@@ -6667,7 +6683,7 @@ export interface operations {
                         };
                         fields: {
                             /** @enum {string} */
-                            name: "id" | "category" | "name" | "note" | "kind" | "light" | "base" | "maxWatts" | "technology" | "loadKind" | "watts" | "powerFactor" | "driverVolts" | "ratedVolts" | "amps" | "minVolts" | "maxVolts" | "aimMin" | "aimMax" | "lumens" | "beam" | "cct" | "life" | "leadConductor" | "leadLength" | "height" | "wetListed" | "conductor" | "ampacity" | "directBurial" | "ratedVA" | "lineVolts" | "regulation" | "ratedAt" | "supply" | "windings" | "terminals" | "ways" | "minConductors" | "maxConductors" | "largestAwg" | "smallestAwg" | "inrush" | "use" | "cost" | "price" | "per" | "unit" | "increment" | "taxable" | "supplier" | "orderNumber";
+                            name: "id" | "category" | "name" | "note" | "kind" | "light" | "base" | "maxWatts" | "technology" | "loadKind" | "watts" | "powerFactor" | "driverVolts" | "ratedVolts" | "amps" | "minVolts" | "maxVolts" | "aimMin" | "aimMax" | "lumens" | "beam" | "cct" | "peak" | "smart" | "life" | "leadConductor" | "leadLength" | "height" | "shield" | "wetListed" | "conductor" | "ampacity" | "directBurial" | "ratedVA" | "lineVolts" | "regulation" | "ratedAt" | "supply" | "windings" | "terminals" | "ways" | "minConductors" | "maxConductors" | "largestAwg" | "smallestAwg" | "inrush" | "use" | "cost" | "price" | "per" | "unit" | "increment" | "taxable" | "supplier" | "orderNumber";
                             header: string;
                             money: boolean;
                         }[];
@@ -9046,13 +9062,6 @@ export interface operations {
                                     cctKelvin: number | null;
                                 };
                             }[];
-                            evening?: {
-                                place: {
-                                    latitude: number;
-                                    longitude: number;
-                                } | null;
-                                timeZone: string;
-                            };
                             price: {
                                 groups: {
                                     id: string | null;
@@ -9135,6 +9144,9 @@ export interface operations {
                             };
                             widthPx: number;
                             heightPx: number;
+                            night: {
+                                zones: number;
+                            } | null;
                         }[];
                         differences: {
                             added: {
@@ -9269,6 +9281,133 @@ export interface operations {
                 };
                 content: {
                     "application/json": string;
+                };
+            };
+        };
+    };
+    Share_night: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                linkId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": {
+                        evening: {
+                            place: {
+                                latitude: number;
+                                longitude: number;
+                            } | null;
+                            timeZone: string;
+                        };
+                        scenes: {
+                            sheetId: string;
+                            /** @enum {string} */
+                            view: "plan" | "photo";
+                            widthPx: number;
+                            heightPx: number;
+                            groundMatrix: number[];
+                            whiteLux: number;
+                            sources: {
+                                id: string;
+                                /** @enum {string} */
+                                kind: "path" | "up" | "down" | "flood" | "wall-wash" | "step" | "in-grade" | "bollard" | "linear" | "underwater";
+                                x: number;
+                                y: number;
+                                z: number;
+                                axis: [
+                                    number,
+                                    number,
+                                    number
+                                ];
+                                peakCandela: number;
+                                halfAngle: number | null;
+                                shield: number;
+                                quantity: number;
+                                output: number;
+                                cctKelvin: number;
+                                zoneId: string;
+                                groupId: string | null;
+                                treeId: string | null;
+                            }[];
+                            faces: {
+                                id: string;
+                                foot: {
+                                    x: number;
+                                    y: number;
+                                }[];
+                                top: {
+                                    x: number;
+                                    y: number;
+                                }[] | null;
+                                heightMeters: number;
+                            }[];
+                            trees: {
+                                id: string;
+                                foot: {
+                                    x: number;
+                                    y: number;
+                                };
+                                outline: {
+                                    x: number;
+                                    y: number;
+                                }[];
+                                heightMeters: number;
+                                crownBaseMeters: number;
+                            }[];
+                            buildings: {
+                                id: string;
+                                points: {
+                                    x: number;
+                                    y: number;
+                                }[];
+                                heightMeters: number;
+                            }[];
+                            zones: {
+                                id: string;
+                                /** @enum {string} */
+                                kind: "feed" | "run" | "smart";
+                                name: string;
+                                schedule: {
+                                    on: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                    off: {
+                                        /** @enum {string} */
+                                        kind: "sunset";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "sunrise";
+                                        minutesAfter: number;
+                                    } | {
+                                        /** @enum {string} */
+                                        kind: "clock";
+                                        at: string;
+                                    };
+                                };
+                            }[];
+                        }[];
+                    };
                 };
             };
         };
@@ -9497,13 +9636,6 @@ export interface operations {
                                     cctKelvin: number | null;
                                 };
                             }[];
-                            evening?: {
-                                place: {
-                                    latitude: number;
-                                    longitude: number;
-                                } | null;
-                                timeZone: string;
-                            };
                             price: {
                                 groups: {
                                     id: string | null;
@@ -9586,6 +9718,9 @@ export interface operations {
                             };
                             widthPx: number;
                             heightPx: number;
+                            night: {
+                                zones: number;
+                            } | null;
                         }[];
                         differences: {
                             added: {
@@ -9775,13 +9910,6 @@ export interface operations {
                                     cctKelvin: number | null;
                                 };
                             }[];
-                            evening?: {
-                                place: {
-                                    latitude: number;
-                                    longitude: number;
-                                } | null;
-                                timeZone: string;
-                            };
                             price: {
                                 groups: {
                                     id: string | null;
@@ -9864,6 +9992,9 @@ export interface operations {
                             };
                             widthPx: number;
                             heightPx: number;
+                            night: {
+                                zones: number;
+                            } | null;
                         }[];
                         differences: {
                             added: {

@@ -1,0 +1,106 @@
+import { buffer } from 'node:stream/consumers';
+import type { LightSource, NightScene } from '@lampwright/geometry/light';
+import { renderNight } from '@lampwright/geometry/night';
+import { Inject, Injectable, Logger } from '@nestjs/common';
+import sharp from 'sharp';
+import type { NightPicture } from '../../paper/night-picture.js';
+import { ObjectStorage } from '../../ports/storage/storage.js';
+import { nightScenesOf } from './night.js';
+import { nightKeyOf } from './pictures.js';
+import { picturesOf, type ShownRevision } from './proposal-store.js';
+
+/** Degrees: from here down there is no daylight left (the end of astronomical twilight). */
+const FULL_NIGHT = -18;
+/** Of the longer side: a page's width at 200 dots per inch. */
+const LONGEST_PX = 2000;
+const QUALITY = 82;
+
+type Pictures = ReadonlyMap<string, Buffer>;
+type Taken = ReadonlySet<string>;
+
+/**
+ * The garden of a revision by night, sheet by sheet, for paper. A picture takes seconds and some hundred megabytes,
+ * so that only the worker makes any; one that can't be made is left out and logged: the proposal goes without it.
+ */
+@Injectable()
+export class NightPictures {
+  private readonly logger = new Logger('proposals');
+
+  constructor(@Inject(ObjectStorage) private readonly storage: ObjectStorage) {}
+
+  /** As the revision is offered; each is stored beside the day picture that it is made from. */
+  async keep(shown: ShownRevision, pictures: Pictures): Promise<NightPicture[]> {
+    const keys = picturesOf(shown.row);
+    return this.each(shown, offered(shown), async (scene, taken) => {
+      const [key, day] = [keys.get(scene.sheetId), pictures.get(scene.sheetId)];
+      if (key === undefined || !day) return null;
+      const picture = await nightPicture(day, scene, taken);
+      await this.storage.put(nightKeyOf(key), picture, 'image/jpeg');
+      return picture;
+    });
+  }
+
+  /**
+   * As the revision was approved: the stored ones, or others where other groups were taken. Of a sheet that was
+   * offered without one there is none.
+   */
+  async asApproved(
+    shown: ShownRevision,
+    pictures: Pictures,
+    groups: readonly string[],
+  ): Promise<NightPicture[]> {
+    const keys = picturesOf(shown.row);
+    const asOffered = isSame(offered(shown), new Set(groups));
+    return this.each(shown, new Set(groups), async (scene, taken) => {
+      const [key, day] = [keys.get(scene.sheetId), pictures.get(scene.sheetId)];
+      const stored = key === undefined ? null : await this.storage.get(nightKeyOf(key));
+      if (!stored || !day) return null;
+      const kept = await buffer(stored.stream);
+      return asOffered ? kept : nightPicture(day, scene, taken);
+    });
+  }
+
+  /** One after the other, for each sheet on which a light of these groups is lit. */
+  private async each(
+    { row, document }: ShownRevision,
+    taken: Taken,
+    make: (scene: NightScene, taken: Taken) => Promise<Buffer | null>,
+  ): Promise<NightPicture[]> {
+    const nights: NightPicture[] = [];
+    for (const scene of nightScenesOf(row, document)) {
+      if (!scene.sources.some((source) => isLit(source, taken))) continue;
+      try {
+        const picture = await make(scene, taken);
+        if (picture) nights.push({ scene, picture });
+      } catch (error) {
+        const { sheetId } = scene;
+        this.logger.error({ err: error, revisionId: row.id, sheetId }, 'a night picture could not be made');
+      }
+    }
+    return nights;
+  }
+}
+
+const offered = ({ document }: ShownRevision): Taken => new Set(document.price.combinations[0]?.groups);
+
+const isSame = (a: Taken, b: Taken): boolean => a.size === b.size && [...a].every((id) => b.has(id));
+
+const isLit = ({ groupId, output }: LightSource, taken: Taken): boolean =>
+  output > 0 && (groupId === null || taken.has(groupId));
+
+/** A picture of a sheet by day (JPEG, PNG or WebP) with the lights of these groups on, in the dark, as JPEG. */
+export async function nightPicture(day: Buffer, scene: NightScene, taken: Taken): Promise<Buffer> {
+  const { data, info } = await sharp(day)
+    .resize({ width: LONGEST_PX, height: LONGEST_PX, fit: 'inside', withoutEnlargement: true })
+    .toColourspace('srgb')
+    .flatten({ background: 'white' })
+    .ensureAlpha()
+    .raw()
+    .toBuffer({ resolveWithObject: true });
+  const { width, height } = info;
+  const photo = { width, height, data: new Uint8ClampedArray(data.buffer, data.byteOffset, data.length) };
+  const on = (source: LightSource) => (isLit(source, taken) ? 1 : 0);
+  const night = renderNight(photo, scene, { on, sunAltitude: FULL_NIGHT }, LONGEST_PX);
+  const raw = { width: night.width, height: night.height, channels: 4 } as const;
+  return sharp(night.data, { raw }).removeAlpha().jpeg({ quality: QUALITY, mozjpeg: true }).toBuffer();
+}
