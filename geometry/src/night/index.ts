@@ -1,2 +1,11 @@
+export { type Seen, type Viewer, viewerOf } from './camera.js';
 export * from './clock.js';
+export * from './colour.js';
+export * from './compose.js';
 export * from './evening.js';
+export * from './layers.js';
+export * from './look.js';
+export * from './render.js';
+export * from './resize.js';
+export * from './surface-map.js';
+export { SurfaceKind } from './surfaces.js';

@@ -1,0 +1,105 @@
+import { composeRows, type LightMap, type Look } from '@lampwright/geometry/night';
+import { photoPixels } from './photo-pixels';
+import type { NightPhoto, NightRenderer, PictureSize } from './renderer';
+
+/** A slice is as many rows as take about this long, so that pointers and keys are heard in between. */
+const SLICE_MS = 12;
+const FIRST_ROWS = 64;
+
+interface Wanted {
+  rgba: Float32Array;
+  light: LightMap;
+  look: Look;
+  whiteLux: number;
+}
+
+/** Composes on the processor, slice by slice; the canvas changes once the whole picture is there. */
+export class CanvasNight implements NightRenderer {
+  readonly kind = 'canvas';
+  private readonly context: CanvasRenderingContext2D;
+  private photo!: ImageData;
+  private picture!: ImageData;
+  /** What is being composed, and what comes after it. */
+  private now: Wanted | null = null;
+  private next: Wanted | null = null;
+  private row = 0;
+  private rows = FIRST_ROWS;
+  private timer: ReturnType<typeof setTimeout> | null = null;
+  private waiting: (() => void)[] = [];
+  private disposed = false;
+
+  constructor(
+    private readonly canvas: HTMLCanvasElement,
+    photo: NightPhoto,
+    size: PictureSize,
+  ) {
+    const context = canvas.getContext('2d', { alpha: false });
+    if (!context) throw new Error('This browser gives no canvas to draw on.');
+    this.context = context;
+    this.setPhoto(photo, size);
+  }
+
+  setPhoto(photo: NightPhoto, size: PictureSize): void {
+    this.canvas.width = size.width;
+    this.canvas.height = size.height;
+    this.photo = photoPixels(photo, size);
+    this.picture = this.context.createImageData(size.width, size.height);
+    this.row = 0;
+  }
+
+  draw(light: LightMap, look: Look, whiteLux: number): void {
+    if (this.disposed) return;
+    const wanted = this.next ?? { rgba: new Float32Array(light.rgba.length), light, look, whiteLux };
+    if (wanted.rgba.length !== light.rgba.length) wanted.rgba = new Float32Array(light.rgba.length);
+    wanted.rgba.set(light.rgba);
+    wanted.light = { ...light, rgba: wanted.rgba };
+    wanted.look = look;
+    wanted.whiteLux = whiteLux;
+    this.next = wanted;
+    if (this.timer === null) this.slice();
+  }
+
+  drawn(): Promise<void> {
+    if (!this.now && !this.next) return Promise.resolve();
+    return new Promise((resolve) => this.waiting.push(resolve));
+  }
+
+  dispose(): void {
+    this.disposed = true;
+    if (this.timer !== null) clearTimeout(this.timer);
+    this.timer = null;
+    this.finish();
+  }
+
+  private slice(): void {
+    this.timer = null;
+    if (!this.now) {
+      this.now = this.next;
+      this.next = null;
+      this.row = 0;
+    }
+    const { now, photo, picture } = this;
+    if (!now) return;
+    const until = Math.min(this.row + this.rows, photo.height);
+    const startedAt = performance.now();
+    composeRows(photo, now.light, now.look, now.whiteLux, picture.data, this.row, until);
+    const took = performance.now() - startedAt;
+    this.rows = Math.max(Math.round(((until - this.row) * SLICE_MS) / Math.max(took, 0.1)), 1);
+    this.row = until;
+    if (until === photo.height) {
+      this.context.putImageData(picture, 0, 0);
+      this.now = null;
+      if (!this.next) {
+        this.finish();
+        return;
+      }
+    }
+    this.timer = setTimeout(() => this.slice(), 0);
+  }
+
+  private finish(): void {
+    const waiting = this.waiting;
+    this.waiting = [];
+    for (const resolve of waiting) resolve();
+  }
+}

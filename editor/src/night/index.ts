@@ -1,0 +1,1 @@
+export { createNightRenderer, type NightPhoto, type NightRenderer, type PictureSize } from './renderer';
