@@ -2,9 +2,10 @@ import { createHash } from 'node:crypto';
 import { buffer } from 'node:stream/consumers';
 import { Inject, Injectable, Logger } from '@nestjs/common';
 import sharp from 'sharp';
+import { NightPictures } from '../modules/proposals/night-pictures.js';
 import { PartiesRepository } from '../modules/proposals/parties.repository.js';
 import { LIGHT_PICTURE, lightKeyOf, PICTURE } from '../modules/proposals/pictures.js';
-import { ProposalStore, picturesOf } from '../modules/proposals/proposal-store.js';
+import { ProposalStore, picturesOf, type ShownRevision } from '../modules/proposals/proposal-store.js';
 import { ProposalsRepository, type RevisionRow } from '../modules/proposals/proposals.repository.js';
 import type { RevisionDocument } from '../modules/proposals/revision-document.js';
 import { Sending, sendToSchema } from '../modules/proposals/sending.js';
@@ -26,6 +27,7 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
     @Inject(ProposalsRepository) private readonly repository: ProposalsRepository,
     @Inject(ProposalStore) private readonly store: ProposalStore,
     @Inject(PartiesRepository) private readonly parties: PartiesRepository,
+    @Inject(NightPictures) private readonly nights: NightPictures,
     @Inject(Sending) private readonly sending: Sending,
     @Inject(ObjectStorage) private readonly storage: ObjectStorage,
   ) {}
@@ -36,7 +38,7 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
     if (!shown) return;
     if (shown.row.status !== 'ready') {
       try {
-        await this.prepare(shown.row, shown.document);
+        await this.prepare(shown);
       } catch (error) {
         // Told as failed until another try makes it.
         await this.repository.updateRevision(companyId, revisionId, {
@@ -50,7 +52,7 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
     await this.sendIfAsked(companyId, revisionId);
   }
 
-  private async prepare(row: RevisionRow, document: RevisionDocument): Promise<void> {
+  private async prepare({ row, document }: ShownRevision): Promise<void> {
     const { companyId, id } = row;
     await this.repository.updateRevision(companyId, id, {
       status: 'preparing',
@@ -58,7 +60,16 @@ export class PrepareProposal implements JobHandler<'proposal.prepare'> {
     });
     const pictures = await this.keepPictures(row, document);
     await this.repository.updateRevision(companyId, id, { progress: 40, pictures: pictures.keys });
-    const pdf = await proposalPdf({ document, hash: row.hash, pictures: pictures.bytes, signature: null });
+    const kept = { row: { ...row, pictures: pictures.keys }, document };
+    const nights = await this.nights.keep(kept, pictures.bytes);
+    await this.repository.updateRevision(companyId, id, { progress: 70 });
+    const pdf = await proposalPdf({
+      document,
+      hash: row.hash,
+      pictures: pictures.bytes,
+      nights,
+      signature: null,
+    });
     await this.repository.updateRevision(companyId, id, { progress: 90 });
     const pdfKey = `${companyId}/proposals/${id}/proposal.pdf`;
     await this.storage.put(pdfKey, pdf, 'application/pdf');

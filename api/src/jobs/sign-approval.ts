@@ -6,6 +6,7 @@ import type { Env } from '../config/env.js';
 import { Database } from '../database/database.js';
 import { paperName } from '../modules/proposals/letters.js';
 import { ProposalLinks } from '../modules/proposals/links.js';
+import { NightPictures } from '../modules/proposals/night-pictures.js';
 import { ProposalStore, picturesOf, type ShownRevision } from '../modules/proposals/proposal-store.js';
 import { ProposalsRepository } from '../modules/proposals/proposals.repository.js';
 import { CompanyMail } from '../modules/share/company-mail.js';
@@ -32,6 +33,7 @@ export class SignApproval implements JobHandler<'approval.sign'> {
     @Inject(ProposalsRepository) private readonly proposals: ProposalsRepository,
     @Inject(ProposalLinks) private readonly links: ProposalLinks,
     @Inject(CompanyMail) private readonly companyMail: CompanyMail,
+    @Inject(NightPictures) private readonly nights: NightPictures,
     @Inject(ObjectStorage) private readonly storage: ObjectStorage,
     @Inject(Outbox) private readonly outbox: Outbox,
   ) {}
@@ -60,14 +62,17 @@ export class SignApproval implements JobHandler<'approval.sign'> {
     });
   }
 
-  private async paperOf({ row, document }: ShownRevision, approval: SignedApproval): Promise<Buffer> {
+  private async paperOf(shown: ShownRevision, approval: SignedApproval): Promise<Buffer> {
+    const { row, document } = shown;
     const pictures = new Map<string, Buffer>();
     for (const [sheetId, key] of picturesOf(row)) {
       const stored = await this.storage.get(key);
       if (!stored) throw new Error(`The picture of sheet ${sheetId} is not in object storage.`);
       pictures.set(sheetId, await buffer(stored.stream));
     }
-    return proposalPdf({ document, hash: row.hash, pictures, signature: evidenceOf(document, approval) });
+    const signature = evidenceOf(document, approval);
+    const nights = await this.nights.asApproved(shown, pictures, signature.groups);
+    return proposalPdf({ document, hash: row.hash, pictures, nights, signature });
   }
 
   private async post({ row, document }: ShownRevision, approval: SignedApproval, key: string): Promise<void> {

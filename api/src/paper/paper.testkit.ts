@@ -305,6 +305,7 @@ export function demoPaper(demo: DemoPlan, changes: Partial<ProposalPaper> = {}):
     document,
     hash: hashOf(document),
     pictures: new Map([[SHEET_ID, demoPicture(demo)]]),
+    nights: [],
     signature: null,
     ...changes,
   };

@@ -23,6 +23,11 @@ export async function pictureFor(paper: Paper, source: Buffer, view: 'plan' | 'p
     view === 'photo'
       ? await reduced.jpeg({ quality: 78, mozjpeg: true }).toBuffer()
       : await reduced.png({ palette: true, colours: 64, compressionLevel: 9, effort: 4 }).toBuffer();
+  return asItIs(paper, bytes);
+}
+
+/** A picture that was made for paper already. */
+export function asItIs(paper: Paper, bytes: Buffer): Picture {
   const { doc } = paper as unknown as { doc: { openImage(bytes: Buffer): PDFKit.Mixins.ImageSrc } };
   return { image: doc.openImage(bytes) };
 }

@@ -24,7 +24,7 @@ const textOf = (pdf: Buffer) => flat(pagesOf(pdf).join(' '));
 const money = (minor: number) => formatMoney(minor, 'USD', 'en-US');
 
 const withoutPictures = (document: RevisionDocument) =>
-  proposalPdf({ document, hash: hashOf(document), pictures: new Map(), signature: null });
+  proposalPdf({ document, hash: hashOf(document), pictures: new Map(), nights: [], signature: null });
 
 /** Every word lies between the margins of its page, the foot included. */
 function expectWithinMargins(pdf: Buffer): void {

@@ -1,11 +1,13 @@
-import { type PlanDocument, planOf, planRecordSchema } from '@lampwright/geometry/plan';
+import { frozenPlan } from '../modules/proposals/frozen-plan.js';
 import type { RevisionDocument } from '../modules/proposals/revision-document.js';
 import { planPage } from './drawing/plan-page.js';
 import { type SheetContent, sheetsOf } from './drawing/sheet-content.js';
 import { drawFoot } from './foot.js';
+import type { NightPicture } from './night-picture.js';
 import { Paper } from './paper.js';
 import { type Picture, pictureFor } from './pictures.js';
 import { cover } from './proposal/cover.js';
+import { nightPage } from './proposal/night.js';
 import { nameOf, type Writing } from './proposal/parts.js';
 import { price } from './proposal/price.js';
 import { schedule } from './proposal/schedule.js';
@@ -20,6 +22,8 @@ export interface ProposalPaper {
   readonly hash: string;
   /** The sheets' pictures (JPEG, PNG or WebP) by sheet id; a sheet may have none. */
   readonly pictures: ReadonlyMap<string, Buffer>;
+  /** Those of them that are shown by night, the one to be seen first leading. */
+  readonly nights: readonly NightPicture[];
   /** Null while nobody has signed. */
   readonly signature: SignatureEvidence | null;
 }
@@ -28,11 +32,17 @@ export interface ProposalPaper {
 const HASH_DIGITS = 12;
 
 /**
- * The proposal as a PDF: cover, plan to scale, schedule, price, words, signature. The same input gives the
+ * The proposal as a PDF: cover, the garden by night, plan to scale, schedule, price, words, signature. The same input gives the
  * same bytes.
  * @throws where the document has no combination of prices, or a picture can't be read
  */
-export async function proposalPdf({ document, hash, pictures, signature }: ProposalPaper): Promise<Buffer> {
+export async function proposalPdf({
+  document,
+  hash,
+  pictures,
+  nights,
+  signature,
+}: ProposalPaper): Promise<Buffer> {
   const totals = signature?.totals ?? document.price.combinations[0];
   if (!totals) throw new Error(`${nameOf(document)} has no price.`);
   const paper = new Paper({
@@ -43,7 +53,7 @@ export async function proposalPdf({ document, hash, pictures, signature }: Propo
     lang: 'en',
     madeAt: new Date(signature?.approvedAt ?? document.madeAt),
   });
-  const plan = readPlan(document);
+  const plan = frozenPlan(document);
   const taken = new Set(totals.groups);
   const sheets = sheetsOf(plan, document.lights, taken);
   const opened = new Map<string, Picture>();
@@ -54,6 +64,7 @@ export async function proposalPdf({ document, hash, pictures, signature }: Propo
   const say = new Say(paper, document.currency, document.locale);
   const writing: Writing = { paper, say, document, hash, plan, signature, totals, taken };
   cover(writing, brightest(sheets, opened));
+  for (const night of nights) nightPage(writing, night);
   for (const content of sheets) planPage(paper, content, document, opened.get(content.sheet.id) ?? null);
   schedule(writing);
   price(writing);
@@ -64,9 +75,6 @@ export async function proposalPdf({ document, hash, pictures, signature }: Propo
     drawFoot(paper, document.company.name, what, page, pages);
   });
 }
-
-const readPlan = (document: RevisionDocument): PlanDocument =>
-  planOf(document.plan.records.map((record) => planRecordSchema.parse(record)));
 
 /** The sheet with most lights among those that have a picture. */
 function brightest(sheets: readonly SheetContent[], pictures: ReadonlyMap<string, Picture>) {

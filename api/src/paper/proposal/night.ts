@@ -1,0 +1,141 @@
+import type { ControlZone, LightSource, NightScene } from '@lampwright/geometry/light';
+import { scheduleInWords } from '@lampwright/geometry/night';
+import { colours } from '../face.js';
+import type { NightPicture } from '../night-picture.js';
+import { leadingOf, type Orientation, type Paper, type TextStyle } from '../paper.js';
+import { asItIs } from '../pictures.js';
+import { BODY, SECTION, type Writing } from './parts.js';
+
+const LABEL: TextStyle = { size: 8, weight: 'medium', colour: colours.quiet };
+const COLUMN_GAP = 24;
+const GAP = 9;
+/** A picture that the words would leave less than this of its height is given it, and they go on overleaf. */
+const LEAST_SHARE = 0.6;
+const LUX_PER_FOOT_CANDLE = 10.764;
+
+/** What is said of one thing, under its label. */
+interface Saying {
+  readonly label: string;
+  readonly text: string;
+}
+
+/** The garden by the light of the plan, as large as a page holds it, and what it is worked out from. */
+export function nightPage(writing: Writing, { scene, picture }: NightPicture): void {
+  const { paper, document } = writing;
+  const name = document.sheets.find(({ id }) => id === scene.sheetId)?.name.trim() || 'the garden';
+  const title = paper.clean(`At night: ${name}`).replaceAll('\n', ' ');
+  const sayings = [impression(writing, scene), shown(writing, scene), hours(writing, scene)];
+  const aspect = scene.widthPx / scene.heightPx;
+  const [landscape, portrait] = [layoutFor('landscape'), layoutFor('portrait')];
+  // Words that find no room under a wide picture flow on from a page in portrait, as everything else does.
+  const layout = landscape.wordsFit && landscape.width >= portrait.width ? landscape : portrait;
+
+  paper.addPage(layout.orientation);
+  paper.bookmark(title);
+  for (const line of paper.wrap(title, paper.width, SECTION)) {
+    paper.line(line, paper.left, paper.y, SECTION);
+    paper.y += leadingOf(SECTION);
+  }
+  paper.y += GAP;
+  const left = paper.left + (paper.width - layout.width) / 2;
+  const height = layout.width / aspect;
+  paper.doc.image(asItIs(paper, picture).image, left, paper.y, { width: layout.width, height });
+  paper.y += height + GAP;
+  if (layout.wordsFit) inColumns(paper, sayings);
+  else
+    for (const { label, text } of sayings) {
+      paper.need(leadingOf(LABEL) + leadingOf(BODY));
+      paper.flow(label, LABEL);
+      paper.flow(text, BODY, { after: 6 });
+    }
+
+  function layoutFor(orientation: Orientation) {
+    const inner = paper.innerSize(orientation);
+    const head = paper.wrap(title, inner.width, SECTION).length * leadingOf(SECTION) + GAP;
+    const words = Math.max(...columnHeights(paper, sayings, inner.width)) + GAP;
+    const whole = Math.min(inner.height - head, inner.width / aspect);
+    const height = Math.min(whole, inner.height - head - words);
+    const wordsFit = height >= LEAST_SHARE * whole;
+    return { orientation, wordsFit, width: (wordsFit ? height : whole) * aspect };
+  }
+}
+
+/** The first saying on the left, the others on the right. */
+const columnsOf = (sayings: readonly Saying[]) => [sayings.slice(0, 1), sayings.slice(1)];
+const columnWidth = (width: number) => (width - COLUMN_GAP) / 2;
+
+function columnHeights(paper: Paper, sayings: readonly Saying[], width: number): number[] {
+  return columnsOf(sayings).map((column) =>
+    column.reduce(
+      (sum, { text }) =>
+        sum + leadingOf(LABEL) + paper.wrap(text, columnWidth(width), BODY).length * leadingOf(BODY) + 5,
+      0,
+    ),
+  );
+}
+
+function inColumns(paper: Paper, sayings: readonly Saying[]): void {
+  const width = columnWidth(paper.width);
+  columnsOf(sayings).forEach((column, i) => {
+    const x = paper.left + i * (width + COLUMN_GAP);
+    let y = paper.y;
+    for (const { label, text } of column) {
+      paper.line(label, x, y, LABEL);
+      y += leadingOf(LABEL);
+      for (const line of paper.wrap(text, width, BODY)) {
+        paper.line(line, x, y, BODY);
+        y += leadingOf(BODY);
+      }
+      y += 5;
+    }
+  });
+}
+
+function impression({ say, document }: Writing, { whiteLux }: NightScene): Saying {
+  const lux = say.number(Math.round(whiteLux * 10) / 10);
+  const footCandles = say.number(Math.round((whiteLux / LUX_PER_FOOT_CANDLE) * 10) / 10);
+  const white = document.units === 'imperial' ? `${footCandles} foot-candles (${lux} lux)` : `${lux} lux`;
+  return {
+    label: 'What this is',
+    text: `Artist’s impression: worked out from the planned lights, with the place, aim, beam and colour of each and the volts estimated at it. It shows a dark night without moon or street light. White in the picture is a white surface under ${white}. Plants, weather and finishes make the real garden a little different.`,
+  };
+}
+
+const isIn = (taken: ReadonlySet<string>, { groupId }: Pick<LightSource, 'groupId'>): boolean =>
+  groupId === null || taken.has(groupId);
+
+/** The parts of the offer that the lights of this picture belong to. */
+function shown({ document, taken, signature }: Writing, { sources }: NightScene): Saying {
+  const here = new Set(sources.map(({ groupId }) => groupId));
+  const named = document.price.groups.filter(({ id }) => here.has(id));
+  const names = (groups: typeof named) =>
+    list(groups.map(({ id, name }) => (id === null ? 'the lights that are always in' : `“${name}”`)));
+  const on = named.filter(({ id }) => id === null || taken.has(id));
+  const off = named.filter(({ id }) => id !== null && !taken.has(id));
+  const agreed = signature ? 'as approved' : 'as offered';
+  const without = off.length === 0 ? '' : ` Not shown, since not included: ${names(off)}.`;
+  return { label: 'Lights shown', text: `Lit ${agreed}: ${names(on)}.${without}` };
+}
+
+/** "a, b and c". */
+const list = (parts: readonly string[]): string =>
+  parts.length < 2 ? (parts[0] ?? '') : `${parts.slice(0, -1).join(', ')} and ${parts.at(-1)}`;
+
+/** When the lights of this picture are on: once for all that have the same hours. */
+function hours({ taken }: Writing, { sources, zones }: NightScene): Saying {
+  const lit = new Set(sources.filter((source) => isIn(taken, source)).map(({ zoneId }) => zoneId));
+  const byHours = new Map<string, ControlZone[]>();
+  for (const zone of zones) {
+    if (!lit.has(zone.id)) continue;
+    const words = scheduleInWords(zone.schedule);
+    byHours.set(words, [...(byHours.get(words) ?? []), zone]);
+  }
+  const all = [...byHours];
+  const lower = (words: string) => words.charAt(0).toLowerCase() + words.slice(1);
+  const [first] = all;
+  const text =
+    all.length === 1 && first
+      ? `On ${lower(first[0])}.`
+      : `${all.map(([words, its]) => `${list(its.map(({ name }) => name))}: ${lower(words)}.`).join(' ')} The picture shows them all on.`;
+  return { label: 'When they are on', text };
+}
