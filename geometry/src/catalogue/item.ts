@@ -73,7 +73,11 @@ const fixtureCommon = {
   lead: z.strictObject({ conductor: conductorSchema, lengthMeters: meters }),
   mountingHeightMeters: meters.nullable(),
   /** Share of the light outside of the beam angle that its hood, shield or louvre holds back; left out: none. */
-  shieldFactor: z.number().min(0).max(1).optional(),
+  shieldFactor: z
+    .number()
+    .min(0, { error: 'At least 0 %.' })
+    .max(1, { error: 'At most 100 %: no more light than there is.' })
+    .optional(),
   /** Listed for use in water: clearances to pools do not apply. */
   wetListed: z.boolean(),
 };

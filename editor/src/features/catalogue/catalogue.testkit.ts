@@ -18,6 +18,7 @@ export const everyForm: readonly CatalogueItem[] = [
     ...light,
     lead,
     mountingHeightMeters: 0.5,
+    shieldFactor: 0.29,
     wetListed: false,
   },
   {
@@ -57,6 +58,19 @@ export const everyForm: readonly CatalogueItem[] = [
     target: { minVolts: 10.8, maxVolts: 12 },
     ...light,
     lifeHours: 4000,
+  },
+  {
+    category: 'lamp',
+    name: 'Smart LED, measured',
+    base: 'GU5.3',
+    technology: 'led',
+    load: { kind: 'driver', watts: 5, powerFactor: 0.8, minVolts: 9 },
+    window,
+    target: aim,
+    ...light,
+    peakCandela: 950,
+    smart: true,
+    lifeHours: 25_000,
   },
   {
     category: 'lamp',

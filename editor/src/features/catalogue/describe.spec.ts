@@ -1,8 +1,9 @@
 import { expect, it } from 'vitest';
 import { everyForm } from './catalogue.testkit';
-import { describe } from './describe';
+import { describe, lightFacts } from './describe';
 
-const of = (name: string) => describe(everyForm.find((item) => item.name === name)!);
+const named = (name: string) => everyForm.find((item) => item.name === name)!;
+const of = (name: string) => describe(named(name));
 
 it('tells what an item is, its figures and what it is rated for', () => {
   expect(of('Path light')).toEqual({
@@ -25,4 +26,15 @@ it('names each tap voltage of a transformer once', () => {
     figures: '12 V · 2 commons',
     rating: '600 VA',
   });
+});
+
+it('tells of its light what the list has no room for', () => {
+  expect(of('Smart LED, measured').figures).toBe('5 W · 190 lm · 130° · 2700 K · smart');
+  expect(lightFacts(named('Smart LED, measured'))).toEqual([
+    '950 cd in the middle of its beam',
+    'Switched by itself, apart from its feed',
+  ]);
+  expect(lightFacts(named('Path light'))).toEqual(['Holds back 29 % of the light outside of its beam']);
+  expect(lightFacts(named('Halogen, 20 W'))).toEqual([]);
+  expect(lightFacts(named('12 AWG'))).toEqual([]);
 });

@@ -32,14 +32,16 @@ interface Light {
   readonly lumens: number | null;
   readonly beamDegrees: number | null;
   readonly cctKelvin: number | null;
+  readonly smart?: boolean | undefined;
 }
 
-const lightLabel = ({ load, lumens, beamDegrees, cctKelvin }: Light): string =>
+const lightLabel = ({ load, lumens, beamDegrees, cctKelvin, smart }: Light): string =>
   joined([
     loadLabel(load),
     lumens === null ? null : `${lumens} lm`,
     beamDegrees === null ? null : `${beamDegrees}°`,
     cctKelvin === null ? null : `${cctKelvin} K`,
+    smart ? 'smart' : null,
   ]);
 
 export interface Description {
@@ -103,4 +105,17 @@ export function describe(item: CatalogueItem): Description {
     case 'part':
       return { sort: partUseLabel(item.use), figures: '', rating: '' };
   }
+}
+
+/** What else is known of its light, for the item's own page. */
+export function lightFacts(item: CatalogueItem): string[] {
+  if (item.category !== 'fixture' && item.category !== 'lamp') return [];
+  const facts: string[] = [];
+  if ('load' in item) {
+    if (item.peakCandela) facts.push(`${item.peakCandela} cd in the middle of its beam`);
+    if (item.smart) facts.push('Switched by itself, apart from its feed');
+  }
+  if (item.category === 'fixture' && item.shieldFactor)
+    facts.push(`Holds back ${Math.round(item.shieldFactor * 1000) / 10} % of the light outside of its beam`);
+  return facts;
 }

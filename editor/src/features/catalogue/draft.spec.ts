@@ -54,6 +54,11 @@ describe('the form of a catalogue item', () => {
     expect(faultAt({ windowMin: 20 }, 'windowMax')).toMatch(/lowest volts/);
   });
 
+  it('says in per cent what a shield can hold back', () => {
+    const checked = check({ ...draftOf(everyForm[0]!), shieldFactor: 1.2 }, 'fixture');
+    expect(checked.ok ? null : checked.faults.get('shieldFactor')).toMatch(/100 %/);
+  });
+
   it('gives a single winding the whole rating', () => {
     const one = draftOf(everyForm.find(({ name }) => name === 'One winding')!);
     const checked = check({ ...one, ratedVA: 150 }, 'transformer');

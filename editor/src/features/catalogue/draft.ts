@@ -32,6 +32,8 @@ export interface Draft {
   lumens: number | null;
   beamDegrees: number | null;
   cctKelvin: number | null;
+  peakCandela: number | null;
+  smart: boolean;
   // fixtures and lamps
   kind: FixtureKind;
   light: 'integrated' | 'lamp';
@@ -39,6 +41,7 @@ export interface Draft {
   maxWatts: number | null;
   leadLengthMeters: number | null;
   mountingHeightMeters: number | null;
+  shieldFactor: number | null;
   wetListed: boolean;
   technology: 'led' | 'halogen' | 'incandescent';
   lifeHours: number | null;
@@ -93,12 +96,15 @@ export const emptyDraft: Draft = {
   lumens: null,
   beamDegrees: null,
   cctKelvin: null,
+  peakCandela: null,
+  smart: false,
   kind: 'path',
   light: 'integrated',
   base: '',
   maxWatts: null,
   leadLengthMeters: 0.9,
   mountingHeightMeters: null,
+  shieldFactor: null,
   wetListed: false,
   technology: 'led',
   lifeHours: null,
@@ -162,6 +168,8 @@ interface Light {
   readonly lumens: number | null;
   readonly beamDegrees: number | null;
   readonly cctKelvin: number | null;
+  readonly peakCandela?: number | null | undefined;
+  readonly smart?: boolean | undefined;
 }
 
 const lightDraft = (light: Light): Partial<Draft> => ({
@@ -174,6 +182,8 @@ const lightDraft = (light: Light): Partial<Draft> => ({
   lumens: light.lumens,
   beamDegrees: light.beamDegrees,
   cctKelvin: light.cctKelvin,
+  peakCandela: light.peakCandela ?? null,
+  smart: light.smart ?? false,
 });
 
 const terminalDraft = (terminal: Terminal): DraftTerminal => ({
@@ -190,11 +200,12 @@ export function draftOf(item: CatalogueItem): Draft {
   const draft = { ...emptyDraft, name: item.name, note: item.note ?? '' };
   switch (item.category) {
     case 'fixture': {
-      const { kind, lead, mountingHeightMeters, wetListed } = item;
+      const { kind, lead, mountingHeightMeters, shieldFactor = null, wetListed } = item;
       const common = {
         ...draft,
         kind,
         mountingHeightMeters,
+        shieldFactor,
         wetListed,
         leadLengthMeters: lead.lengthMeters,
         ...gaugeOf(lead.conductor),

@@ -130,6 +130,12 @@ function CategoryFields({ category, form }: { category: CatalogueCategory; form:
   }
 }
 
+/** A tenth of a per cent is finer than anybody measures, and keeps 29 % at 29. */
+const percent = {
+  show: (share: number) => Math.round(share * 1000) / 10,
+  keep: (shown: number) => shown / 100,
+};
+
 function FixtureFields({ form }: { form: ItemForm }) {
   const { control } = form;
   return (
@@ -158,6 +164,15 @@ function FixtureFields({ form }: { form: ItemForm }) {
           <LengthField control={control} name="leadLengthMeters" label="Length of the lead" />
           <LengthField control={control} name="mountingHeightMeters" label="Height of the light" optional />
         </FieldRow>
+        <NumberField
+          control={control}
+          name="shieldFactor"
+          label="Held back outside of its beam"
+          hint="By a hood, shield or louvre: 0 % holds back nothing, 100 % all that would glare."
+          unit="%"
+          scale={percent}
+          optional
+        />
         <CheckField
           control={control}
           name="wetListed"

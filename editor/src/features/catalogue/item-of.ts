@@ -33,6 +33,8 @@ const light = (draft: Draft): Unchecked => ({
   lumens: draft.lumens,
   beamDegrees: draft.beamDegrees,
   cctKelvin: draft.cctKelvin,
+  ...(draft.peakCandela === null ? {} : { peakCandela: draft.peakCandela }),
+  ...(draft.smart ? { smart: true } : {}),
 });
 
 const terminals = (draft: Draft): readonly Unchecked[] =>
@@ -43,11 +45,12 @@ const terminals = (draft: Draft): readonly Unchecked[] =>
 function body(draft: Draft, category: CatalogueCategory): Unchecked {
   switch (category) {
     case 'fixture': {
-      const { kind, mountingHeightMeters, wetListed } = draft;
+      const { kind, mountingHeightMeters, shieldFactor, wetListed } = draft;
       const common = {
         kind,
         lead: { conductor: conductor(draft), lengthMeters: draft.leadLengthMeters },
         mountingHeightMeters,
+        ...(shieldFactor === null ? {} : { shieldFactor }),
         wetListed,
       };
       return draft.light === 'integrated'

@@ -1,4 +1,5 @@
 import type { CatalogueItem } from '@lampwright/geometry/catalogue';
+import { beamFromLumens } from '@lampwright/geometry/light';
 import {
   CheckField,
   FieldGroup,
@@ -19,11 +20,18 @@ const loadKinds = [
   { value: 'off', label: 'Draws nothing' },
 ] as const;
 
+/** Candela that lumens over a beam make; null where they don't yet say. */
+function peakFrom(lumens: number | null, beamDegrees: number | null): number | null {
+  if (lumens === null || beamDegrees === null || !(lumens > 0) || !(beamDegrees > 0)) return null;
+  return Math.round(beamFromLumens(lumens, Math.min(beamDegrees, 360)).peakCandela);
+}
+
 /** What a light source draws, what it stands, and the light it gives. */
 export function LightFields({ form }: { form: ItemForm }) {
   const { control } = form;
   const load = form.watch('loadKind');
   const hasAim = form.watch('hasAim');
+  const peak = peakFrom(form.watch('lumens'), form.watch('beamDegrees'));
   return (
     <>
       <FieldGroup legend="What it draws">
@@ -73,6 +81,25 @@ export function LightFields({ form }: { form: ItemForm }) {
           <NumberField control={control} name="beamDegrees" label="Beam spread" unit="°" optional />
           <NumberField control={control} name="cctKelvin" label="Colour" unit="K" optional />
         </FieldRow>
+        <NumberField
+          control={control}
+          name="peakCandela"
+          label="In the middle of the beam"
+          hint={
+            peak === null
+              ? 'As the maker measured it. Left empty, it follows from output and beam spread.'
+              : `As the maker measured it. Left empty, it follows from output and beam spread: about ${peak} cd.`
+          }
+          unit="cd"
+          placeholder={peak === null ? undefined : String(peak)}
+          optional
+        />
+        <CheckField
+          control={control}
+          name="smart"
+          label="Switched by itself (smart)"
+          hint="Can be put in a zone of its own, apart from what else hangs on its feed."
+        />
       </FieldGroup>
     </>
   );

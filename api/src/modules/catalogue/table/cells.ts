@@ -35,7 +35,7 @@ export class Cells {
   number(field: FieldName): number | null | undefined {
     const text = this.text(field);
     if (text === null) return null;
-    const bare = text.replace(/\s*(w|v|a|va|lm|k|h|hrs?|hours|°|deg|degrees|%|awg)$/i, '').trim();
+    const bare = text.replace(/\s*(w|v|a|va|lm|cd|k|h|hrs?|hours|°|deg|degrees|%|awg)$/i, '').trim();
     const plain = /^\d{1,3}(,\d{3})+(\.\d+)?$/.test(bare) ? bare.replaceAll(',', '') : bare;
     if (!/^\d+(\.\d+)?$/.test(plain)) return this.fault(field, `“${shown(text)}” is no number.`);
     return Number(plain);

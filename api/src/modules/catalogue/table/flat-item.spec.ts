@@ -1,3 +1,4 @@
+import type { CatalogueItem } from '@lampwright/geometry/catalogue';
 import { describe, expect, it } from 'vitest';
 import { starterCatalogue } from '../starter/index.js';
 import { type FlatItem, fieldNames, guessMapping, tableFields } from './fields.js';
@@ -42,6 +43,31 @@ describe('catalogue items in a table', () => {
         mountingHeightMeters: expect.closeTo(0.1524, 12),
       },
     });
+  });
+
+  it('hold what is known of the light: its peak, the shield in per cent, and whether it switches itself', () => {
+    const smart: CatalogueItem = {
+      ...starterCatalogue.find((item) => item.category === 'lamp')!,
+      peakCandela: 950,
+      smart: true,
+    } as CatalogueItem;
+    const shielded: CatalogueItem = {
+      ...starterCatalogue.find((item) => item.category === 'fixture')!,
+      shieldFactor: 0.29,
+    } as CatalogueItem;
+    expect(flatOfItem(smart)).toMatchObject({ peak: '950', smart: 'yes' });
+    expect(flatOfItem(shielded)).toMatchObject({ shield: '29' });
+    for (const item of [smart, shielded])
+      expect(itemOfFlat(flatOfItem(item), 'metric')).toEqual({ ok: true, item });
+    const row = { category: 'fixture', name: 'X', kind: 'path', watts: '3' };
+    expect(itemOfFlat({ ...row, peak: '1,200 cd', shield: '85 %', smart: 'no' }, 'metric')).toMatchObject({
+      item: { peakCandela: 1200, shieldFactor: 0.85, smart: false },
+    });
+    expect(faultsOf({ ...row, peak: '0' })).toEqual(['peak: Must be more than 0.']);
+    expect(faultsOf({ ...row, shield: '120' })).toEqual([
+      'shield: At most 100 %: no more light than there is.',
+    ]);
+    expect(faultsOf({ ...row, smart: 'perhaps' })).toEqual(['smart: “perhaps” is neither yes nor no.']);
   });
 
   it('tell every fault of a row at its field', () => {

@@ -24,6 +24,7 @@ export function flatOfItem(item: CatalogueItem): FlatItem {
         leadConductor: conductorText(item.lead.conductor),
         leadLength: `${item.lead.lengthMeters} m`,
         height: item.mountingHeightMeters === null ? '' : `${item.mountingHeightMeters} m`,
+        shield: shieldText(item.shieldFactor ?? null),
         wetListed: yesNo(item.wetListed),
         light: item.light,
         ...(item.light === 'lamp'
@@ -86,9 +87,12 @@ interface Light {
   readonly lumens: number | null;
   readonly beamDegrees: number | null;
   readonly cctKelvin: number | null;
+  readonly peakCandela?: number | null | undefined;
+  readonly smart?: boolean | undefined;
 }
 
-function flatOfLight({ load, window, target, lumens, beamDegrees, cctKelvin }: Light): FlatItem {
+function flatOfLight(light: Light): FlatItem {
+  const { load, window, target, lumens, beamDegrees, cctKelvin } = light;
   return {
     ...flatOfLoad(load),
     minVolts: numberText(window.minVolts),
@@ -98,6 +102,8 @@ function flatOfLight({ load, window, target, lumens, beamDegrees, cctKelvin }: L
     lumens: numberText(lumens),
     beam: numberText(beamDegrees),
     cct: numberText(cctKelvin),
+    peak: numberText(light.peakCandela ?? null),
+    smart: light.smart === undefined ? '' : yesNo(light.smart),
   };
 }
 
@@ -121,6 +127,9 @@ function flatOfLoad(load: Load): FlatItem {
 }
 
 const yesNo = (value: boolean): string => (value ? 'yes' : 'no');
+/** A share in per cent, without the digits that its binary form adds: 0.29 is 29. */
+const shieldText = (share: number | null): string =>
+  share === null ? '' : String(Number((share * 100).toPrecision(12)));
 const numberText = (value: number | null): string => (value === null ? '' : String(value));
 
 /** `tap 12V 12 V W1 10 A ×3`, `common C1 W1 ×3`: in their order, left to right, parted by semicolons. */
@@ -162,6 +171,8 @@ function lightOf(cells: Cells) {
   const usual = loadKind === 'filament' || loadKind === 'resistive' ? usualWindow.filament : usualWindow.led;
   const minVolts = cells.number('minVolts') ?? usual.minVolts;
   const maxVolts = cells.number('maxVolts') ?? usual.maxVolts;
+  const peak = cells.number('peak') ?? null;
+  const smart = cells.text('smart') === null ? undefined : cells.boolean('smart', false);
   const aimMin = cells.number('aimMin') ?? null;
   const aimMax = cells.number('aimMax') ?? null;
   if ((aimMin === null) !== (aimMax === null))
@@ -173,6 +184,8 @@ function lightOf(cells: Cells) {
     lumens: cells.number('lumens'),
     beamDegrees: cells.number('beam'),
     cctKelvin: cells.number('cct'),
+    ...(peak === null ? {} : { peakCandela: peak }),
+    ...(smart === undefined ? {} : { smart }),
   };
 }
 
@@ -206,6 +219,7 @@ const usualLead = { conductor: { awg: 18 } as Conductor, lengthMeters: 0.9 };
 
 const readers: Readonly<Record<CatalogueItem['category'], (cells: Cells) => Record<string, unknown>>> = {
   fixture: (cells) => {
+    const shield = cells.number('shield') ?? null;
     const light = cells.oneOf('light', ['integrated', 'lamp'], cells.text('base') ? 'lamp' : 'integrated');
     return {
       kind: cells.oneOf('kind', fixtureKinds, null),
@@ -214,6 +228,7 @@ const readers: Readonly<Record<CatalogueItem['category'], (cells: Cells) => Reco
         lengthMeters: cells.meters('leadLength') ?? usualLead.lengthMeters,
       },
       mountingHeightMeters: cells.meters('height'),
+      ...(shield === null ? {} : { shieldFactor: shield / 100 }),
       wetListed: cells.boolean('wetListed', false),
       light,
       ...(light === 'lamp'
@@ -322,9 +337,11 @@ const fieldsByKey: Readonly<Record<string, FieldName>> = {
   maxWatts: 'maxWatts',
   lead: 'leadLength',
   mountingHeightMeters: 'height',
+  shieldFactor: 'shield',
   lumens: 'lumens',
   beamDegrees: 'beam',
   cctKelvin: 'cct',
+  peakCandela: 'peak',
   lifeHours: 'life',
   ampacityAmps: 'ampacity',
   ratedVA: 'ratedVA',
