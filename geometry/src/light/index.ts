@@ -1,5 +1,7 @@
 export * from './aiming.js';
 export * from './beam.js';
+export * from './csv.js';
+export * from './grid.js';
 export * from './illuminance.js';
 export * from './night-scene.js';
 export * from './output.js';
@@ -7,5 +9,6 @@ export * from './photometry.js';
 export * from './reach.js';
 export * from './scene-of-plan.js';
 export * from './space.js';
+export * from './target.js';
 export * from './usual.js';
 export * from './zones.js';

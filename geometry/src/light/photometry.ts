@@ -1,6 +1,6 @@
 import type { FixtureItem, LampItem } from '../catalogue/index.js';
-import { type Beam, beamFromLumens, halfAngleOf } from './beam.js';
-import { GATHERED_SHARE, usualBeamDegrees, usualKelvin, usualLumens } from './usual.js';
+import { type Beam, halfAngleOf, lumensOf } from './beam.js';
+import { GATHERED_SHARE, usualBeamDegrees, usualKelvin, usualLumens, usualShield } from './usual.js';
 
 /** What gives light and takes current. */
 export type LightItem = LampItem | Extract<FixtureItem, { light: 'integrated' }>;
@@ -22,7 +22,7 @@ export function lightItemOf(item: FixtureItem, lamp: LampItem | null | undefined
 /**
  * The beam of a fixture by its item and lamp, from its peak where that is known, else from its lumens; null
  * without a lamp. A lamp that shines all around and stands in a fixture of a kind that gathers light gets that
- * kind's usual beam.
+ * kind's usual beam. A path light whose shield nobody knows has the usual hat, which goes without saying.
  */
 export function photometryOf(item: FixtureItem, lamp: LampItem | null | undefined): Photometry | null {
   const light = lightItemOf(item, lamp);
@@ -34,7 +34,9 @@ export function photometryOf(item: FixtureItem, lamp: LampItem | null | undefine
     beamDegrees = usualBeamDegrees(item.kind);
     assumed.push(`its beam as ${beamDegrees}°`);
   }
-  const shield = item.shieldFactor ?? 0;
+  const shield = item.shieldFactor ?? usualShield(item.kind);
+  // The lumens of a fixture whose shield is only assumed are those that leave it.
+  const counted = item.shieldFactor === undefined ? shield : 0;
   const cctKelvin = light.cctKelvin ?? usualKelvin(light.load);
   if (light.cctKelvin === null) assumed.push(`its colour as ${cctKelvin} K`);
   const { peakCandela } = light;
@@ -55,5 +57,11 @@ export function photometryOf(item: FixtureItem, lamp: LampItem | null | undefine
     lumens *= GATHERED_SHARE;
     assumed.push(`${GATHERED_SHARE * 100} % of its bare lamp’s light as what leaves it`);
   }
-  return { light, beam: beamFromLumens(lumens, beamDegrees, shield), cctKelvin, assumed };
+  const held = lumensOf({ peakCandela: 1, halfAngle: halfAngleOf(beamDegrees), shield: counted });
+  return {
+    light,
+    beam: { peakCandela: lumens / held, halfAngle: halfAngleOf(beamDegrees), shield },
+    cctKelvin,
+    assumed,
+  };
 }

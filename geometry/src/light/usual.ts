@@ -45,6 +45,14 @@ export function usualBeamDegrees(kind: FixtureKind): number {
   }
 }
 
+/**
+ * Share of the light outside of its beam that a fixture of the kind holds back: the hat of a path light keeps its
+ * light off the sky and out of eyes.
+ */
+export function usualShield(kind: FixtureKind): number {
+  return kind === 'path' ? 0.9 : 0;
+}
+
 /** Share of a bare lamp's light that leaves a fixture which gathers it into a beam. */
 export const GATHERED_SHARE = 0.6;
 
