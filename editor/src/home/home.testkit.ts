@@ -241,6 +241,7 @@ export const samplePage = (over: Partial<SharedPage> = {}): SharedPage => ({
       light: { url: `/api/share/${LINK}/pictures/photo?width=1000`, media: '(max-width: 719px)' },
       widthPx: 1600,
       heightPx: 1067,
+      night: { zones: 2 },
     },
   ],
   differences: null,

@@ -149,6 +149,7 @@ export function Proposal({ linkId, page, refresh, replace }: Props) {
           </div>
           <div className="stays">
             <GardenPicture
+              linkId={linkId}
               page={page}
               choice={choice}
               chosenId={chosenId}

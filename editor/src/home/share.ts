@@ -1,3 +1,4 @@
+import type { EveningPlace, NightScene } from '@lampwright/geometry/light';
 import type { paths } from '../lib/api/generated/schema';
 import { problemFrom, problemOf, unreachable } from './trouble';
 
@@ -28,6 +29,12 @@ export type Differences = NonNullable<SharedPage['differences']>;
 export type Question = SharedPage['questions'][number];
 export type Due = SharedPage['dues'][number];
 export type Paper = SharedPage['papers'][number];
+
+/** What the evening is drawn from, sheet by sheet. */
+export interface SharedNight {
+  readonly evening: EveningPlace;
+  readonly scenes: readonly NightScene[];
+}
 
 export type NewQuestion = Body<Share<'/questions'>['post']>;
 export type Approval = Body<Share<'/approve'>['post']>;
@@ -96,6 +103,8 @@ const isRefusal = (error: unknown): boolean => {
 };
 
 export const getPage = (linkId: string): Promise<SharedPage> => call(linkId, '');
+
+export const getNight = (linkId: string): Promise<SharedNight> => call(linkId, '/night');
 
 /** Somebody is looking at it. Only after a person’s own gesture: mail scanners run scripts too. */
 export const tellOpened = (linkId: string): Promise<void> => call(linkId, '/opened', { method: 'POST' });

@@ -63,6 +63,9 @@ const kinds: Readonly<Record<string, string>> = {
 /** "path light": what it is in plain words. */
 export const kindInWords = ({ kind }: Pick<Light, 'kind'>): string => kinds[kind] ?? 'light';
 
+/** "path lights". */
+export const kindsInWords = (light: Pick<Light, 'kind'>): string => `${kindInWords(light)}s`;
+
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
 /** Ends as sentences do. */

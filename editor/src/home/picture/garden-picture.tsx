@@ -2,6 +2,7 @@ import { type KeyboardEvent, useMemo, useRef, useState } from 'react';
 import { type About, aboutInWords, aboutOf } from '../about';
 import { changeSentences } from '../changes';
 import type { Choice } from '../choice';
+import { useEvening } from '../night/use-evening';
 import type { Picture, SharedPage } from '../share';
 import styles from './garden-picture.module.css';
 import { LightCard } from './light-card';
@@ -10,6 +11,7 @@ import { spotOf } from './sheet-box';
 import { type Place, type ShownPin, Stage } from './stage';
 
 interface Props {
+  readonly linkId: string;
   readonly page: SharedPage;
   readonly choice: Choice;
   readonly chosenId: string | null;
@@ -31,7 +33,7 @@ interface Tab {
 
 /** Their garden, sheet by sheet, with the planned lights. */
 export function GardenPicture(props: Props) {
-  const { page, choice, chosenId, pending } = props;
+  const { linkId, page, choice, chosenId, pending } = props;
   const { document } = page;
   const tabs = useMemo(() => tabsOf(page), [page]);
   const marks = useMemo(() => marksOf(page, choice), [page, choice]);
@@ -40,6 +42,7 @@ export function GardenPicture(props: Props) {
   const tab = tabs.find(({ id }) => id === sheetId) ?? tabs[0];
   const chosen = marks.find(({ light }) => light.recordId === chosenId);
   const root = useRef<HTMLElement>(null);
+  const evening = useEvening(linkId, page, tab?.picture, choice);
   if (!tab) return null;
 
   const onSheet = (id: string): ShownMark[] =>
@@ -79,6 +82,7 @@ export function GardenPicture(props: Props) {
         <Stage
           key={tab.id}
           picture={tab.picture}
+          evening={evening}
           name={tab.name}
           marks={here}
           pins={pinsOf(page, tab.id)}
@@ -111,7 +115,7 @@ export function GardenPicture(props: Props) {
         </p>
         {!props.placing && (
           <>
-            <p className={styles.caption}>{captionOf(here, photo)}</p>
+            <p className={styles.caption}>{captionOf(here, photo, evening.offered)}</p>
             <Legend marks={here} />
           </>
         )}
@@ -163,8 +167,12 @@ const pinsOf = ({ questions, document }: SharedPage, sheetId: string): ShownPin[
     return [{ questionId: question.id, label, x: about.x, y: about.y }];
   });
 
-function captionOf(marks: readonly ShownMark[], photo: boolean): string {
+function captionOf(marks: readonly ShownMark[], photo: boolean, evening: boolean): string {
   if (marks.length === 0) return 'No lights are planned in this picture.';
+  if (evening) {
+    const seen = photo ? '' : ', seen from above';
+    return `Artist’s impression from the planned lights and their beams${seen}. Tap a light to see what it is.`;
+  }
   const what = photo ? 'Artist’s impression: the' : 'Seen from above. The';
   return `${what} marks show where lights will stand. Tap one to see what it is and what it lights.`;
 }

@@ -73,6 +73,15 @@ export function LightMark({
       onClick={onPress}
       onFocus={onFocus}
     >
+      <svg className={styles.ring} viewBox="-20 -20 40 40" aria-hidden="true" focusable="false">
+        <circle r="6" stroke="var(--ink)" strokeOpacity="0.6" strokeWidth="3.4" />
+        <circle
+          r="6"
+          stroke="var(--paper)"
+          strokeWidth="1.6"
+          strokeDasharray={taken ? undefined : '2.800 1.910'}
+        />
+      </svg>
       <svg className={styles.picture} viewBox="-20 -20 40 40" aria-hidden="true" focusable="false">
         {chosen && <circle r="17" fill="none" stroke="var(--paper)" strokeWidth="5" />}
         {chosen && <circle r="17" fill="none" stroke="var(--ink)" strokeWidth="2" />}

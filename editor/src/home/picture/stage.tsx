@@ -1,4 +1,5 @@
 import {
+  type CSSProperties,
   type KeyboardEvent,
   type MouseEvent,
   type ReactNode,
@@ -7,6 +8,7 @@ import {
   useRef,
   useState,
 } from 'react';
+import type { Evening } from '../night/use-evening';
 import type { Picture } from '../share';
 import { Crosshair } from './crosshair';
 import { at, LightMark, Pin, QuestionPin, type ShownMark } from './mark';
@@ -33,6 +35,7 @@ export interface ShownPin extends Place {
 
 interface Props {
   readonly picture: Picture;
+  readonly evening: Evening;
   readonly name: string;
   readonly marks: readonly ShownMark[];
   readonly pins: readonly ShownPin[];
@@ -51,7 +54,7 @@ interface Props {
 
 /** The picture with its marks, in a frame in which it can be moved and zoomed. */
 export function Stage(props: Props) {
-  const { picture, marks, pins, pending, placing } = props;
+  const { picture, evening, marks, pins, pending, placing } = props;
   const frame = useRef<HTMLDivElement>(null);
   const [view, setView] = useState<View>(whole);
   useGestures(frame, view, setView);
@@ -78,19 +81,24 @@ export function Stage(props: Props) {
     setView(next);
   };
 
+  const shape = {
+    ['--shape' as string]: frameOf(picture),
+    ['--evening' as string]: `${evening.heightPx}px`,
+  };
+
   return (
-    <>
+    <div className={styles.stage} style={shape}>
       {/* biome-ignore lint/a11y/useSemanticElements: a fieldset would be taken for a form */}
       <div
         ref={frame}
         className={styles.frame}
-        style={{ ['--shape' as string]: frameOf(picture) }}
         role="group"
         aria-label={`${props.name}: picture with ${marks.length} lights. Plus and minus zoom, arrow keys move it.`}
         // biome-ignore lint/a11y/noNoninteractiveTabindex: it can be moved and zoomed by keyboard
         tabIndex={0}
         data-zoomed={view.zoom > 1 || undefined}
         data-placing={placing || undefined}
+        data-dark={evening.dark || undefined}
         onKeyDown={keys}
         onClick={pressBeside}
       >
@@ -101,7 +109,8 @@ export function Stage(props: Props) {
             transform: `translate(${view.x * 100}%, ${view.y * 100}%) scale(${view.zoom})`,
           }}
         >
-          <SheetImage picture={picture} closeUp={view.zoom > 1} />
+          <SheetImage picture={picture} closeUp={view.zoom > 1} onLoaded={evening.onPhoto} />
+          {evening.over(imageStyle(picture))}
           {marks.map((mark) => (
             <LightMark
               key={mark.light.recordId}
@@ -129,9 +138,21 @@ export function Stage(props: Props) {
           />
         )}
       </div>
+      {evening.line}
       <div className={styles.below}>
         {props.children}
         <div className={styles.tools}>
+          {evening.offered && (
+            <Tool
+              label="By daylight"
+              pressed={evening.byDay}
+              off={evening.toggle === null}
+              onPress={() => evening.toggle?.()}
+            >
+              <circle cx="10" cy="10" r="3.400" />
+              <path d="M10 1.800v1.700M10 16.500v1.700M1.800 10h1.700M16.500 10h1.700M4.200 4.200l1.200 1.200M14.600 14.600l1.200 1.200M15.800 4.200l-1.200 1.200M5.400 14.600l-1.200 1.200" />
+            </Tool>
+          )}
           <Tool label="Zoom in" onPress={() => setView(zoomed(view, ZOOM_STEP))}>
             <path d="M10 4.500v11M4.500 10h11" />
           </Tool>
@@ -143,7 +164,7 @@ export function Stage(props: Props) {
           </Tool>
         </div>
       </div>
-    </>
+    </div>
   );
 }
 
@@ -196,12 +217,29 @@ function nearest(
   return found;
 }
 
+/** Where the photo, and what is drawn over it, lie in the frame. */
+function imageStyle(picture: Picture): CSSProperties {
+  const box = boxOf(picture);
+  return {
+    ...at({ x: box.left, y: box.top }),
+    width: `${box.width * 100}%`,
+    height: `${box.height * 100}%`,
+  };
+}
+
 /** The light one first where it is enough; from the first close look on the whole one, once it has come. */
-function SheetImage({ picture, closeUp }: { readonly picture: Picture; readonly closeUp: boolean }) {
+function SheetImage({
+  picture,
+  closeUp,
+  onLoaded,
+}: {
+  readonly picture: Picture;
+  readonly closeUp: boolean;
+  readonly onLoaded: (image: HTMLImageElement) => void;
+}) {
   const [attempt, setAttempt] = useState(0);
   const [failed, setFailed] = useState(false);
   const whole = useLoaded(closeUp ? picture.url : null);
-  const box = boxOf(picture);
   // Another picture in the same place begins anew.
   // biome-ignore lint/correctness/useExhaustiveDependencies: the address is what is new
   useLayoutEffect(() => setFailed(false), [picture.url]);
@@ -227,11 +265,7 @@ function SheetImage({ picture, closeUp }: { readonly picture: Picture; readonly 
       <img
         key={attempt}
         className={styles.image}
-        style={{
-          ...at({ x: box.left, y: box.top }),
-          width: `${box.width * 100}%`,
-          height: `${box.height * 100}%`,
-        }}
+        style={imageStyle(picture)}
         src={picture.url}
         width={picture.widthPx}
         height={picture.heightPx}
@@ -239,6 +273,7 @@ function SheetImage({ picture, closeUp }: { readonly picture: Picture; readonly 
         fetchPriority="high"
         decoding="async"
         draggable={false}
+        onLoad={(event) => onLoaded(event.currentTarget)}
         onError={() => setFailed(true)}
       />
     </picture>
@@ -262,11 +297,13 @@ function useLoaded(url: string | null): boolean {
 
 function Tool({
   label,
+  pressed,
   off = false,
   onPress,
   children,
 }: {
   readonly label: string;
+  readonly pressed?: boolean;
   readonly off?: boolean;
   readonly onPress: () => void;
   readonly children: ReactNode;
@@ -279,6 +316,7 @@ function Tool({
       title={label}
       // Kept in the tab order: one that vanishes at its own press loses the focus.
       aria-disabled={off}
+      aria-pressed={pressed}
       onClick={() => !off && onPress()}
     >
       <svg viewBox="0 0 20 20" aria-hidden="true" focusable="false">
