@@ -3,6 +3,7 @@ export * from './beam.js';
 export * from './csv.js';
 export * from './grid.js';
 export * from './illuminance.js';
+export * from './neighbours.js';
 export * from './night-scene.js';
 export * from './output.js';
 export * from './photometry.js';
