@@ -22,6 +22,9 @@ export const useNightController = (): NightController => useNightContext().night
 export const useNightHere = (): NightHere => useNightContext().here;
 export const useNight = <T,>(pick: (s: NightState) => T): T => useStore(useNightController().state, pick);
 
+/** Light is soft, and the photo brings its own detail: more pixels than this are not seen. */
+const MAP_LONG_EDGE = 960;
+
 const noVolts: ReadonlyMap<string, number> = new Map();
 
 /** Gives the page its night view, which follows plan, volts and hand for as long as it is open. */
@@ -60,6 +63,7 @@ export function NightProvider({
         nextFrame: (call) => {
           requestAnimationFrame(call);
         },
+        longEdge: MAP_LONG_EDGE,
       },
     );
     const follow = () => {

@@ -75,10 +75,10 @@ export interface NightDeps {
   readonly now: () => Date;
   /** Calls back before the next picture is shown. */
   readonly nextFrame: (call: () => void) => void;
+  /** Pixels of the longer side of the light's map. */
+  readonly longEdge: number;
 }
 
-/** Pixels of the longer side of the map: light is soft, and the photo brings its own detail. */
-export const MAP_LONG_EDGE = 960;
 /** The whole evening is played in so many seconds. */
 export const PLAY_SECONDS = 24;
 
@@ -96,8 +96,8 @@ export class NightController {
   /** Lux on white while its slider is being moved. */
   private whiteLux: number | null = null;
   private idle: (() => void)[] = [];
-  /** What the scene in hand was made from. */
-  private sceneFrom: readonly unknown[] = [];
+  private readonly made = new LastMade<ReturnType<typeof sceneWithNotes>>();
+  private readonly drawn = new LastMade<NightScene>();
 
   constructor(
     private input: NightInput,
@@ -275,32 +275,36 @@ export class NightController {
   }
 
   private update(): void {
-    const { doc, preview, sheetId, volts, groupOf } = this.input;
-    const shownDoc = previewed(doc, preview);
-    this.updateScene();
-    const { scene: still, evening, at, looks, groupsOff } = this.state.getState();
-    const scene =
-      shownDoc === doc || still === null ? still : nightSceneOf(shownDoc, sheetId, volts, groupOf);
-    if (scene === null) {
+    const { doc, sheetId, volts, groupOf, preview } = this.input;
+    const made = this.made.of(
+      () => sceneWithNotes(doc, sheetId, volts, groupOf),
+      doc,
+      sheetId,
+      volts,
+      groupOf,
+    );
+    const still = made?.scene ?? null;
+    if (still !== this.state.getState().scene)
+      this.state.setState({ scene: still, notes: made?.notes ?? [] });
+    if (still === null) {
       this.asked = null;
       this.state.setState({ frame: null, work: { is: 'rest' } });
       this.wake();
       return;
     }
-    // What is being moved lights up what stands still: surfaces are worked out anew when the hand lets go.
-    const drawn = scene === still || still === null ? scene : { ...still, sources: scene.sources };
-    const shares = sharesAt(drawn, { evening, at }, { looks, groupsOff });
-    this.ask(drawn, shares);
+    const scene = this.drawn.of(() => this.underHand(still), still, preview);
+    const { evening, at, looks, groupsOff } = this.state.getState();
+    this.ask(scene, sharesAt(scene, { evening, at }, { looks, groupsOff }));
     this.reframe();
   }
 
-  private updateScene(): void {
-    const { doc, sheetId, volts, groupOf } = this.input;
-    const from = [doc, sheetId, volts, groupOf];
-    if (from.every((part, i) => part === this.sceneFrom[i])) return;
-    this.sceneFrom = from;
-    const made = sceneWithNotes(doc, sheetId, volts, groupOf);
-    this.state.setState({ scene: made?.scene ?? null, notes: made?.notes ?? [] });
+  /** The scene with lamps as the hand is about to leave them. Surfaces are worked out anew only when it lets go. */
+  private underHand(still: NightScene): NightScene {
+    const { doc, sheetId, volts, groupOf, preview } = this.input;
+    const shown = previewed(doc, preview);
+    if (shown === doc) return still;
+    const scene = nightSceneOf(shown, sheetId, volts, groupOf);
+    return scene === null ? still : { ...still, sources: scene.sources };
   }
 
   private ask(scene: NightScene, shares: Shares): void {
@@ -315,7 +319,7 @@ export class NightController {
     this.asked = { scene, shares };
     this.running = true;
     this.state.setState({ work: { is: 'working' } });
-    this.deps.engine.light({ scene, shares, longEdge: MAP_LONG_EDGE }).then(
+    this.deps.engine.light({ scene, shares, longEdge: this.deps.longEdge }).then(
       (light) => {
         this.running = false;
         if (this.closed) return;
@@ -355,6 +359,17 @@ export class NightController {
     const waiters = this.idle;
     this.idle = [];
     for (const wake of waiters) wake();
+  }
+}
+
+/** What was made last, for as long as it would be made from the same. */
+class LastMade<T> {
+  private last: { readonly from: readonly unknown[]; readonly value: T } | null = null;
+
+  of(make: () => T, ...from: readonly unknown[]): T {
+    if (this.last === null || from.some((part, i) => part !== this.last?.from[i]))
+      this.last = { from, value: make() };
+    return this.last.value;
   }
 }
 
