@@ -5,6 +5,7 @@ import { useEditor, useScale, useUnitSystem } from '../page/context';
 import { CommitField, LengthField, SelectField } from '../page/controls';
 import { areaText, groundOf, plainLength } from '../page/lengths';
 import styles from './inspector.module.css';
+import { LightTargetFields } from './LightTargetFields';
 import { common, idsOf } from './shared';
 
 /** More edges than this are a freehand outline: then only their sum is told. */
@@ -73,6 +74,15 @@ export function AreaSection({ areas }: { readonly areas: readonly AreaRecord[] }
           disabled={locked}
           commit={(heightMeters) =>
             editor.edit('Change height', (d) => setFields(d, ids, 'area', { heightMeters }))
+          }
+        />
+      )}
+      {use !== 'lot-line' && use !== 'building' && (
+        <LightTargetFields
+          target={areas[0]?.lightTarget ?? null}
+          mixed={common(areas, (a) => JSON.stringify(a.lightTarget)) === undefined}
+          commit={(lightTarget) =>
+            editor.edit('Change light wanted', (d) => setFields(d, ids, 'area', { lightTarget }))
           }
         />
       )}

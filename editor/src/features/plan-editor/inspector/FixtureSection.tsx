@@ -7,8 +7,10 @@ import { gaugeText } from '../ledger/outline';
 import { useDoc, useEditor, useEstimate } from '../page/context';
 import { CommitField, LengthField, SelectField } from '../page/controls';
 import { type CatalogueEntry, lampsFor, pickItems } from '../page/items';
+import { AimFields } from './AimFields';
 import styles from './inspector.module.css';
 import { common, idsOf } from './shared';
+import { ZoneFields } from './ZoneFields';
 
 interface Props {
   readonly fixtures: readonly FixtureRecord[];
@@ -138,6 +140,8 @@ export function FixtureSection({ fixtures, entries }: Props) {
           />
         </>
       )}
+      <AimFields fixtures={fixtures} />
+      <ZoneFields fixtures={fixtures} />
       {one !== null && (
         <CommitField
           label="Note"

@@ -10,8 +10,10 @@ import { FixtureSection } from './FixtureSection';
 import styles from './inspector.module.css';
 import { JunctionSection, MeasurementSection, NoteSection } from './OtherSections';
 import { RunSection } from './RunSection';
+import { TimesSection, ZoneSection } from './SwitchSections';
 import { ofKind } from './shared';
 import { TransformerSection } from './TransformerSection';
+import { FaceSection, TreeSection } from './UprightSections';
 import { WireTo } from './WireTo';
 
 /** What is chosen, in figures and fields; several of a kind are changed together. */
@@ -30,6 +32,9 @@ export function Inspector({ entries }: { readonly entries: readonly CatalogueEnt
   const runs = ofKind(records, 'run');
   const junctions = ofKind(records, 'junction');
   const areas = ofKind(records, 'area');
+  const faces = ofKind(records, 'face');
+  const trees = ofKind(records, 'tree');
+  const zones = ofKind(records, 'zone');
   const notes = ofKind(records, 'note');
   const measurements = ofKind(records, 'measurement');
   const [only] = records;
@@ -42,13 +47,17 @@ export function Inspector({ entries }: { readonly entries: readonly CatalogueEnt
       {runs.length > 0 && <RunSection runs={runs} />}
       {junctions.length > 0 && <JunctionSection junctions={junctions} />}
       {areas.length > 0 && <AreaSection areas={areas} />}
+      {faces.length > 0 && <FaceSection faces={faces} />}
+      {trees.length > 0 && <TreeSection trees={trees} />}
+      {zones.length === 1 && <ZoneSection key={zones[0]!.id} zone={zones[0]!} />}
+      {records.some((r) => r.kind === 'settings') && <TimesSection />}
       {measurements.length === 1 && <MeasurementSection measurement={measurements[0]!} />}
       {notes.length === 1 && <NoteSection note={notes[0]!} />}
-      {editor.canEdit && (
+      {editor.canEdit && !records.every((r) => r.kind === 'settings') && (
         <>
           {records.length === 1 && isNode(only) && <WireTo key={only.id} node={only} entries={entries} />}
           <div className={styles.actions}>
-            {runs.length < records.length && (
+            {runs.length + zones.length < records.length && (
               <Button onClick={() => editor.duplicateSelection()}>Duplicate</Button>
             )}
             <Button onClick={() => editor.deleteSelection()}>Delete</Button>

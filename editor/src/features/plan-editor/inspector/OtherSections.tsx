@@ -9,6 +9,7 @@ import { useEditor, useScale, useUnitSystem } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
 import { lengthText } from '../page/lengths';
 import styles from './inspector.module.css';
+import { LightTargetFields } from './LightTargetFields';
 import { common, idsOf } from './shared';
 
 export function JunctionSection({ junctions }: { readonly junctions: readonly JunctionRecord[] }) {
@@ -56,6 +57,7 @@ export function JunctionSection({ junctions }: { readonly junctions: readonly Ju
 }
 
 export function MeasurementSection({ measurement }: { readonly measurement: MeasurementRecord }) {
+  const editor = useEditor();
   const scale = useScale();
   const system = useUnitSystem();
   return (
@@ -64,6 +66,14 @@ export function MeasurementSection({ measurement }: { readonly measurement: Meas
       <p className={styles.facts}>
         {lengthText(scale, measurement.points, system) || 'Its length waits for the sheet’s scale.'}
       </p>
+      <LightTargetFields
+        target={measurement.lightTarget}
+        commit={(lightTarget) =>
+          editor.edit('Change light wanted', (d) =>
+            setFields(d, [measurement.id], 'measurement', { lightTarget }),
+          )
+        }
+      />
     </>
   );
 }

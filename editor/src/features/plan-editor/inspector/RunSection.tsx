@@ -17,6 +17,7 @@ import { useDoc, useEditor, useEstimate, useUnitSystem } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
 import { plainLength } from '../page/lengths';
 import styles from './inspector.module.css';
+import { RunSwitch } from './SwitchSections';
 
 export function RunSection({ runs }: { readonly runs: readonly RunRecord[] }) {
   const [one] = runs;
@@ -104,6 +105,7 @@ function OneRun({ run }: { readonly run: RunRecord }) {
           }
         />
       )}
+      <RunSwitch run={run} />
     </>
   );
 }

@@ -6,6 +6,7 @@ import { useDoc, useEditor, useEstimate } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
 import { type CatalogueEntry, transformerPicks } from '../page/items';
 import styles from './inspector.module.css';
+import { TransformerTimes } from './SwitchSections';
 import { common, idsOf } from './shared';
 
 interface Props {
@@ -93,6 +94,7 @@ export function TransformerSection({ transformers, entries }: Props) {
           return null;
         }}
       />
+      <TransformerTimes transformers={transformers} />
       {one !== null && (
         <CommitField
           label="Note"

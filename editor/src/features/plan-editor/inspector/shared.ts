@@ -14,3 +14,11 @@ export function ofKind<K extends RecordKind>(records: readonly PlanRecord[], kin
 }
 
 export const idsOf = (records: readonly { readonly id: string }[]): string[] => records.map((r) => r.id);
+
+/** Nothing that is marked on a plan is higher. */
+const HIGHEST_METERS = 100;
+
+/** Why a height can't be taken, or null. */
+export function tooHigh(meters: number): string | null {
+  return meters > HIGHEST_METERS ? `A height of at most ${HIGHEST_METERS} m.` : null;
+}

@@ -1,5 +1,13 @@
 import { cableLengths, estimateRequestOf } from '@lampwright/geometry/estimate';
-import { apply, setFields } from '@lampwright/geometry/plan';
+import {
+  addZone,
+  apply,
+  type EditResult,
+  placeFace,
+  placeTree,
+  setFields,
+  usualSchedule,
+} from '@lampwright/geometry/plan';
 import { describe, expect, it } from 'vitest';
 import { type Driver, yardWith } from '../tools/driver.testkit';
 import { nodesInOrder, outlineOf } from './outline';
@@ -32,6 +40,8 @@ describe('the ledger', () => {
       '        P3 to P2',
       '        P2 to P1',
       '        P1 to T1',
+      'Times and zones',
+      '  The plan’s lights',
     ]);
   });
 
@@ -70,13 +80,46 @@ describe('the ledger', () => {
     d.use('cable').click(900, 600).click(1100, 900).key('Enter');
     const listed = new Set(outline(d).map((r) => r.recordId));
     for (const record of d.doc.values()) {
-      if (['sheet', 'item', 'settings'].includes(record.kind)) continue;
+      if (['sheet', 'item'].includes(record.kind)) continue;
       // A bare splice is part of its cable: it goes and comes with it.
       if (record.kind === 'junction' && record.style === 'splice') continue;
       expect(listed, record.kind).toContain(record.id);
     }
     const keys = outline(d).map((r) => r.key);
     expect(new Set(keys).size).toBe(keys.length);
+  });
+
+  it('lists walls and trees with their heights, and zones with what is in them', () => {
+    const d = yardWith(2);
+    const made = (result: EditResult) => {
+      if (result.kind !== 'change') throw new Error('it was refused');
+      d.doc = apply(d.doc, result.change);
+    };
+    const points = [
+      { x: 0, y: 0 },
+      { x: 300, y: 0 },
+      { x: 300, y: 200 },
+    ];
+    made(
+      placeTree(d.doc, {
+        sheetId: 'sheet',
+        foot: points[0]!,
+        outline: points,
+        heightMeters: 6,
+        crownBaseMeters: 0,
+      }),
+    );
+    made(placeFace(d.doc, { sheetId: 'sheet', name: 'House', foot: points, top: null, heightMeters: 2.75 }));
+    made(addZone(d.doc, { name: 'Pond', schedule: usualSchedule }, [d.all('fixture')[0]!.id]));
+    const lines = outline(d).map((r) => [r.title, r.detail, r.figure].filter(Boolean).join(' | '));
+    expect(lines.slice(lines.indexOf('Walls and trees'))).toEqual([
+      'Walls and trees',
+      'House | 2.75 m',
+      'Tree | 6.00 m',
+      'Times and zones',
+      'The plan’s lights | From sunset until 23:00',
+      'Pond | From sunset until 23:00 | 1 light',
+    ]);
   });
 
   it('walks each branch to its end before the next', () => {

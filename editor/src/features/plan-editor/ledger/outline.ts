@@ -1,11 +1,14 @@
 import type { CableLength } from '@lampwright/geometry/estimate';
+import { scheduleInWords } from '@lampwright/geometry/night';
 import {
   type CableRecord,
   commonsOf,
   itemOf,
   type PlanDocument,
   type RunRecord,
+  recordOf,
   recordsOf,
+  SETTINGS_ID,
 } from '@lampwright/geometry/plan';
 import { type FixtureLook, fixtureLook, unwiredLook } from '../../../plan-view/fixture-look';
 import { tagOf, windowOf } from '../../../plan-view/names';
@@ -207,8 +210,46 @@ export function outlineOf(
     1,
     null,
   );
+  uprights(doc, rows, words);
   rest(doc, rows, shown, words);
+  if (rows.length > 0) times(doc, rows);
   return counted(rows);
+}
+
+/** What stops and catches light: walls, then trees. */
+function uprights(doc: PlanDocument, rows: Draft[], words: OutlineWords): void {
+  const marks = [...recordsOf(doc, 'face'), ...recordsOf(doc, 'tree')];
+  if (marks.length === 0) return;
+  rows.push(plain(null, 'group', 1, null, 'Walls and trees', 'uprights'));
+  for (const record of marks)
+    rows.push({
+      ...plain(record.id, 'other', 2, 'uprights', tagOf(doc, record)),
+      figure: words.length(record.heightMeters),
+    });
+}
+
+/** When the lights are on, and the zones of those that switch themselves. */
+function times(doc: PlanDocument, rows: Draft[]): void {
+  const settings = recordOf(doc, SETTINGS_ID, 'settings');
+  const zones = [...recordsOf(doc, 'zone')];
+  if (settings === undefined && zones.length === 0) return;
+  rows.push(plain(null, 'group', 1, null, 'Times and zones', 'times'));
+  if (settings !== undefined)
+    rows.push({
+      ...plain(settings.id, 'other', 2, 'times', 'The plan’s lights'),
+      detail: scheduleInWords(settings.schedule),
+    });
+  const members = new Map<string, number>();
+  for (const { zoneId } of recordsOf(doc, 'fixture'))
+    if (zoneId !== null) members.set(zoneId, (members.get(zoneId) ?? 0) + 1);
+  for (const zone of zones) {
+    const count = members.get(zone.id) ?? 0;
+    rows.push({
+      ...plain(zone.id, 'other', 2, 'times', zone.name),
+      detail: scheduleInWords(zone.schedule),
+      figure: count === 1 ? '1 light' : `${count} lights`,
+    });
+  }
 }
 
 function rest(doc: PlanDocument, rows: Draft[], shown: ReadonlySet<string>, words: OutlineWords): void {
@@ -225,10 +266,6 @@ function rest(doc: PlanDocument, rows: Draft[], shown: ReadonlySet<string>, word
       case 'area':
         others.push(plain(record.id, 'other', 2, 'rest', record.name || words.area(record.use)));
         break;
-      case 'face':
-      case 'tree':
-        others.push(plain(record.id, 'other', 2, 'rest', tagOf(doc, record)));
-        break;
       case 'measurement':
         others.push(plain(record.id, 'other', 2, 'rest', 'Measurement'));
         break;
@@ -241,6 +278,8 @@ function rest(doc: PlanDocument, rows: Draft[], shown: ReadonlySet<string>, word
       case 'fixture':
       case 'run':
       case 'cable':
+      case 'face':
+      case 'tree':
       case 'zone':
       case 'item':
       case 'settings':

@@ -94,6 +94,8 @@ interface LengthProps {
   readonly mixed?: boolean;
   readonly disabled?: boolean;
   readonly hint?: ReactNode;
+  /** The sentence that says why a length can't be taken, or null. */
+  readonly check?: (meters: number) => string | null;
   readonly commit: (meters: number | null) => void;
 }
 
@@ -106,6 +108,7 @@ export function LengthField({
   mixed,
   disabled,
   hint,
+  check,
   commit,
 }: LengthProps) {
   const system = useUnitSystem();
@@ -125,6 +128,8 @@ export function LengthField({
         }
         const parsed = parseLength(text, { preferred: system });
         if (!parsed.ok) return parsed.message;
+        const fault = check?.(parsed.meters) ?? null;
+        if (fault !== null) return fault;
         commit(parsed.meters);
         return null;
       }}

@@ -15,6 +15,7 @@ import {
   recordsOf,
   type SheetRecord,
 } from '@lampwright/geometry/plan';
+import type { SolvedScale } from '@lampwright/geometry/sheet';
 import type { Point } from '../../../plan-view/camera';
 import { ToolHost } from './host';
 import type { Choices, Preview, Request, ToolId } from './tool';
@@ -102,10 +103,7 @@ export class Driver {
     this.host = new ToolHost({
       doc: () => this.doc,
       sheetId: () => 'sheet',
-      scale: () => {
-        const result = scaleOfSheet(recordOf(this.doc, 'sheet', 'sheet')!);
-        return result.ok ? result.scale : null;
-      },
+      scale: () => this.scale,
       zoom: () => this.zoom,
       markRadius: () => 13,
       choices: () => this.choices,
@@ -120,6 +118,11 @@ export class Driver {
       request: (request) => this.requests.push(request),
       say: (message) => this.said.push(message),
     });
+  }
+
+  get scale(): SolvedScale | null {
+    const result = scaleOfSheet(recordOf(this.doc, 'sheet', 'sheet')!);
+    return result.ok ? result.scale : null;
   }
 
   use(tool: ToolId): this {

@@ -43,9 +43,11 @@ export function createFaceTool(ctx: ToolContext): Tool {
     return upperEdge(ctx, of, pointer);
   };
 
-  const reset = (to: readonly Point[] | null): true => {
-    foot = to;
+  const reset = (): true => {
+    foot = null;
     pressed = false;
+    // Where the pointer was when the foot ended is long past.
+    path.handle({ type: 'leave' });
     ctx.changed();
     return true;
   };
@@ -56,7 +58,7 @@ export function createFaceTool(ctx: ToolContext): Tool {
       ctx.say('Click on the upper edge, above the first point of the foot.');
       return;
     }
-    reset(null);
+    reset();
     ctx.request({ kind: 'face', foot: of, top: found.top, seenMeters: found.heightMeters });
   };
 
@@ -80,7 +82,7 @@ export function createFaceTool(ctx: ToolContext): Tool {
           pressed = false;
           return true;
         case 'key':
-          if (event.key === 'Escape' || event.key === 'Backspace') return reset(null);
+          if (event.key === 'Escape' || event.key === 'Backspace') return reset();
           return false;
         case 'cancel':
         case 'leave':
