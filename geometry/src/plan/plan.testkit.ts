@@ -2,22 +2,26 @@ import type { CableItem, CatalogueItem, FixtureItem, LampItem, TransformerItem }
 import { defaultSettings, type IdSource } from './build.js';
 import { type Change, planOf } from './change.js';
 import {
+  addZone,
   deleteRecords,
   drawCable,
   duplicate,
   type EditResult,
   moveRecords,
   placeArea,
+  placeFace,
   placeFixture,
   placeJunction,
   placeNote,
   placeTransformer,
+  placeTree,
   setFields,
   setRunTerminals,
   splitCable,
   tapsOf,
 } from './edits/index.js';
 import type { PlanDocument, PlanRecord, RecordKind, SheetRecord } from './records.js';
+import { usualSchedule } from './schedule.js';
 
 /** Ids counted up, so that a test reads the same every time. */
 export function countedIds(prefix = 'id'): IdSource {
@@ -188,6 +192,20 @@ export function randomEdit(doc: PlanDocument, random: () => number, ids: IdSourc
     () => placeJunction(doc, { sheetId, at: at(), style: 'hub', item: null }, ids),
     () => placeNote(doc, { sheetId, at: at(), text: `note ${Math.floor(random() * 100)}` }, ids),
     () => placeArea(doc, { sheetId, use: 'lawn', points: [at(), at(), at()] }, ids),
+    () => placeFace(doc, { sheetId, foot: [at(), at()], top: null, heightMeters: 3 }, ids),
+    () =>
+      placeTree(
+        doc,
+        { sheetId, foot: at(), outline: [at(), at(), at()], heightMeters: 6, crownBaseMeters: 2 },
+        ids,
+      ),
+    () =>
+      addZone(
+        doc,
+        { name: 'Zone', schedule: usualSchedule },
+        nodes.flatMap((r) => (r.kind === 'fixture' && random() < 0.3 ? [r.id] : [])),
+        ids,
+      ),
     () =>
       drawCable(
         doc,
