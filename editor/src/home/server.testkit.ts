@@ -1,4 +1,5 @@
 import { vi } from 'vitest';
+import { sampleNight } from './night/night.testkit';
 import type { SharedPage } from './share';
 
 export interface Sent {
@@ -15,9 +16,14 @@ export function fakeServer(page: SharedPage) {
   const answers = new Map<string, Answer[]>();
   const server = {
     page,
+    night: sampleNight(),
     posts,
+    /** Addresses that were asked for. */
+    gets: [] as string[],
     /** What the page itself is answered with in place of it, once. */
     pageAnswers: [] as Answer[],
+    /** The same of its night. */
+    nightAnswers: [] as Answer[],
     /** The next answer to a POST whose path ends so. */
     willAnswer(path: string, ...next: Answer[]) {
       answers.set(path, [...(answers.get(path) ?? []), ...next]);
@@ -31,7 +37,12 @@ export function fakeServer(page: SharedPage) {
   vi.stubGlobal(
     'fetch',
     vi.fn(async (address: string, init: RequestInit = {}) => {
-      if (init.method !== 'POST') return respond(server.pageAnswers.shift() ?? { body: server.page });
+      if (init.method !== 'POST') {
+        server.gets.push(address);
+        return address.endsWith('/night')
+          ? respond(server.nightAnswers.shift() ?? { body: server.night })
+          : respond(server.pageAnswers.shift() ?? { body: server.page });
+      }
       const path = address.split('/').slice(4).join('/');
       const body: unknown = typeof init.body === 'string' ? JSON.parse(init.body) : null;
       posts.push({ path, body, key: new Headers(init.headers).get('Idempotency-Key') });
