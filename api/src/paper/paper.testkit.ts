@@ -10,6 +10,7 @@ import {
   initialOf,
   itemOf,
   labelOf,
+  PLAN_SCHEMA_VERSION,
   type PlanDocument,
   planOf,
   recordsOf,
@@ -27,8 +28,11 @@ import { PlanBuilder } from '../demo/plan-builder.js';
 import { drawHarrowBank, HARROW_BANK_SHEET } from '../demo/plans/harrow-bank.js';
 import { drawSandpiperRow, SANDPIPER_ROW_SHEET } from '../demo/plans/sandpiper-row.js';
 import { starterCatalogue } from '../modules/catalogue/starter/index.js';
+import { nightScenesOf } from '../modules/proposals/night.js';
+import { nightPicture } from '../modules/proposals/night-pictures.js';
 import type { RevisionDocument } from '../modules/proposals/revision-document.js';
 import type { MoneyDocument } from './money-document.js';
+import type { NightPicture } from './night-picture.js';
 import type { ProposalPaper } from './proposal-pdf.js';
 import type { SignatureEvidence } from './signature.js';
 
@@ -207,7 +211,7 @@ export function documentOf(
       address: '4 Harrow Bank, Marlow Bend',
     },
     job: { id: '5b0b8f6e-7f3f-4a36-9d5b-1a0c8f1f7a10', name: `${name}, garden lighting`, property: name },
-    plan: { version: 41, records: [...plan.values()] },
+    plan: { version: 41, schema: PLAN_SCHEMA_VERSION, records: [...plan.values()] },
     sheets: [...recordsOf(plan, 'sheet')].map(({ id, name: sheetName, view, widthPx, heightPx }) => ({
       id,
       name: sheetName,
@@ -237,6 +241,7 @@ export function documentOf(
         },
       };
     }),
+    evening: { place: { latitude: 40.1, longitude: -74.9 }, timeZone: 'America/New_York' },
     price: {
       groups: quote.groups,
       lines: quote.lines.map(({ key, groupId, section, kind, name: line, quantity, unit, priceMinor }) => ({
@@ -296,6 +301,14 @@ export function demoPicture(demo: DemoPlan): Buffer {
     return readFileSync(`${drawn}.png`);
   });
   return plotPlan;
+}
+
+/** The demo plan's sheet by night, with the groups as offered. */
+export async function demoNight(demo: DemoPlan, document: RevisionDocument): Promise<NightPicture> {
+  const [scene] = nightScenesOf({ pictures: { [SHEET_ID]: 'kept.jpg' } }, document);
+  if (!scene) throw new Error(`${demo.name} has no scale.`);
+  const taken = new Set(document.price.combinations[0]?.groups);
+  return { scene, picture: await nightPicture(demoPicture(demo), scene, taken) };
 }
 
 /** What `proposalPdf` takes, of a demo plan with its picture. */
@@ -383,6 +396,21 @@ function poppler(program: string, pdf: Buffer, before: string[] = [], after: str
 /** The text of a PDF, a string a page. */
 export const pagesOf = (pdf: Buffer): string[] =>
   poppler('pdftotext', pdf, ['-layout'], ['-']).split('\f').slice(0, -1);
+
+/** The text of one page, from 1, as it was written: column after column. */
+export const toldOn = (pdf: Buffer, page: number): string =>
+  poppler('pdftotext', pdf, ['-raw', '-f', String(page), '-l', String(page)], ['-']).replace(/\s+/g, ' ');
+
+/** The pictures of a PDF, page by page, and how fine they are printed. */
+export const imagesOf = (pdf: Buffer): { readonly page: number; readonly dotsPerInch: number }[] =>
+  poppler('pdfimages', pdf, ['-list'])
+    .split('\n')
+    .slice(2)
+    .filter((line) => line.trim() !== '')
+    .map((line) => {
+      const cells = line.trim().split(/\s+/);
+      return { page: Number(cells[0]), dotsPerInch: Number(cells[12]) };
+    });
 
 /** What pdfinfo tells, by its labels. */
 export const infoOf = (pdf: Buffer): Map<string, string> =>

@@ -1,10 +1,15 @@
 import { inflateSync } from 'node:zlib';
+import type { NightScene } from '@lampwright/geometry/light';
 import { labelOf, type PlanDocument, planOf, recordsOf } from '@lampwright/geometry/plan';
 import { formatMoney } from '@lampwright/geometry/price';
+import sharp from 'sharp';
 import { beforeAll, describe, expect, it } from 'vitest';
+import { nightScenesOf } from '../modules/proposals/night.js';
 import { type RevisionDocument, revisionDocumentSchema } from '../modules/proposals/revision-document.js';
+import type { NightPicture } from './night-picture.js';
 import {
   demoDocument,
+  demoNight,
   demoPaper,
   documentOf,
   drawDemo,
@@ -12,9 +17,11 @@ import {
   fontsOf,
   harrowBank,
   hashOf,
+  imagesOf,
   infoOf,
   pagesOf,
   sandpiperRow,
+  toldOn,
   wordsOf,
 } from './paper.testkit.js';
 import { proposalPdf } from './proposal-pdf.js';
@@ -60,12 +67,14 @@ describe.each([
   let pdf: Buffer;
   let pages: string[];
   let document: RevisionDocument;
+  let night: NightPicture;
   beforeAll(async () => {
     document = demoDocument(demo);
     expect(revisionDocumentSchema.safeParse(document).error).toBeUndefined();
-    pdf = await proposalPdf(demoPaper(demo, { document }));
+    night = await demoNight(demo, document);
+    pdf = await proposalPdf(demoPaper(demo, { document, nights: [night] }));
     pages = pagesOf(pdf);
-  }, 60_000);
+  }, 120_000);
 
   it('tells on every page what it is and which page of how many', () => {
     expect(infoOf(pdf).get('Pages')).toBe(String(pages.length));
@@ -126,8 +135,25 @@ describe.each([
     expect(text.toLowerCase()).not.toMatch(/margin|markup|overhead/);
   });
 
+  it('shows the garden by night behind the cover, and says what it is worked out from', () => {
+    const page = toldOn(pdf, 2);
+    for (const said of [
+      `At night: ${document.sheets[0]!.name}`,
+      'Artist’s impression: worked out from',
+      'estimated volts of each planned light',
+      `foot-candles (${night.scene.whiteLux} lux)`,
+      'Lit as offered: the lights that are always in and “The old tree”.',
+      'Not shown, since not included: “Along the bed”.',
+    ])
+      expect(page).toContain(said);
+    expect(page).toMatch(/(On|:) from sunset until 23:00\./);
+    const [picture] = imagesOf(pdf).filter(({ page: number }) => number === 2);
+    expect(picture?.dotsPerInch).toBeGreaterThan(150);
+  });
+
   it('is the same for the same input', async () => {
-    const again = await proposalPdf(demoPaper(demo, { document: structuredClone(document) }));
+    const nights = [{ scene: structuredClone(night.scene), picture: Buffer.from(night.picture) }];
+    const again = await proposalPdf(demoPaper(demo, { document: structuredClone(document), nights }));
     expect(again.equals(pdf)).toBe(true);
   }, 60_000);
 
@@ -237,6 +263,82 @@ describe('a signed proposal', () => {
       `Changes the approved revision 1, which came to ${money(changes.totalMinor)}: $123.45 less.`,
     );
   }, 60_000);
+});
+
+describe('the page of the night', () => {
+  const document = demoDocument(harrowBank);
+  const [lit] = nightScenesOf({ pictures: { sheet: 'kept.jpg' } }, document);
+  const [zone] = lit!.zones;
+  const clock = (on: string) =>
+    ({ on: { kind: 'clock', at: on }, off: { kind: 'sunrise', minutesAfter: -30 } }) as const;
+  /** A picture of that shape, and a scene with the lights in so many zones. */
+  const night = async (zones: NightScene['zones'], edit: Partial<NightScene> = {}): Promise<NightPicture> => {
+    const scene = {
+      ...lit!,
+      zones,
+      sources: lit!.sources.map((source, i) => ({ ...source, zoneId: zones[i % zones.length]!.id })),
+      ...edit,
+    };
+    const { widthPx: width, heightPx: height } = scene;
+    const create = { width, height, channels: 3, background: '#101828' } as const;
+    return { scene, picture: await sharp({ create }).jpeg().toBuffer() };
+  };
+
+  it('tells the hours zone by zone where they differ, and once where they don’t', async () => {
+    const zones = [
+      { ...zone!, id: 'a', name: 'Patio wall' },
+      { ...zone!, id: 'b', name: 'Front walk', schedule: clock('19:30') },
+      { ...zone!, id: 'c', name: 'Shed' },
+    ];
+    const pdf = await proposalPdf(demoPaper(harrowBank, { document, nights: [await night(zones)] }));
+    expect(toldOn(pdf, 2)).toContain(
+      'Patio wall and Shed: from sunset until 23:00. Front walk: from 19:30 until 30 minutes before sunrise. The picture shows them all on.',
+    );
+  }, 60_000);
+
+  it('tells lux alone where the company works in metres', async () => {
+    const metric = { ...document, units: 'metric', region: 'eu' } as const;
+    const nights = [await night([zone!], { whiteLux: 62.25 })];
+    const page = toldOn(await proposalPdf(demoPaper(harrowBank, { document: metric, nights })), 2);
+    expect(page).toContain('under 62.3 lux');
+    expect(page).not.toContain('foot-candles');
+  }, 60_000);
+
+  it('tells what was approved of a signed one', async () => {
+    const signature = evidenceFor(document, ['tree', 'bed']);
+    const nights = [await night([zone!])];
+    const page = toldOn(await proposalPdf(demoPaper(harrowBank, { document, signature, nights })), 2);
+    expect(page).toContain(
+      'Lit as approved: the lights that are always in, “The old tree” and “Along the bed”.',
+    );
+    expect(page).not.toContain('Not shown');
+  }, 60_000);
+
+  it.each([
+    ['wide', 4000, 500],
+    ['high', 500, 4000],
+    ['square', 900, 900],
+  ])(
+    'holds a %s picture and the words of many zones within its margins',
+    async (_shape, widthPx, heightPx) => {
+      const many = Array.from({ length: 60 }, (_, i) => ({
+        ...zone!,
+        id: `z${i}`,
+        name: `Zone ${i} ${'along the drive '.repeat(6)}`,
+        schedule: clock(`${String(i % 24).padStart(2, '0')}:15`),
+      }));
+      const sources = many.map(({ id }, i) => ({ ...lit!.sources[i % lit!.sources.length]!, zoneId: id }));
+      const nights = [await night(many, { widthPx, heightPx, sources })];
+      const pdf = await proposalPdf(demoPaper(harrowBank, { document, nights }));
+      const text = textOf(pdf);
+      for (const { id, groupId } of sources.map(({ groupId }, i) => ({ id: i, groupId })))
+        if (groupId !== 'bed') expect(text).toContain(`Zone ${id} along`);
+      expect(flat(pagesOf(pdf)[1]!)).toContain('At night: Rear garden');
+      expectWithinMargins(pdf);
+      expectApart(pdf);
+    },
+    60_000,
+  );
 });
 
 describe('what nobody would write on purpose', () => {

@@ -30,12 +30,10 @@ export class NightPictures {
 
   /** As the revision is offered; each is stored beside the day picture that it is made from. */
   async keep(shown: ShownRevision, pictures: Pictures): Promise<NightPicture[]> {
-    const keys = picturesOf(shown.row);
-    return this.each(shown, offered(shown), async (scene, taken) => {
-      const [key, day] = [keys.get(scene.sheetId), pictures.get(scene.sheetId)];
-      if (key === undefined || !day) return null;
-      const picture = await nightPicture(day, scene, taken);
-      await this.storage.put(nightKeyOf(key), picture, 'image/jpeg');
+    const taken = offered(shown);
+    return this.each(shown, pictures, taken, async (scene, key, day) => {
+      const picture = await this.rendered(shown, scene, day, taken);
+      if (picture) await this.storage.put(key, picture, 'image/jpeg');
       return picture;
     });
   }
@@ -49,35 +47,59 @@ export class NightPictures {
     pictures: Pictures,
     groups: readonly string[],
   ): Promise<NightPicture[]> {
-    const keys = picturesOf(shown.row);
-    const asOffered = isSame(offered(shown), new Set(groups));
-    return this.each(shown, new Set(groups), async (scene, taken) => {
-      const [key, day] = [keys.get(scene.sheetId), pictures.get(scene.sheetId)];
-      const stored = key === undefined ? null : await this.storage.get(nightKeyOf(key));
-      if (!stored || !day) return null;
+    const taken = new Set(groups);
+    const asOffered = isSame(offered(shown), taken);
+    return this.each(shown, pictures, taken, async (scene, key, day) => {
+      const stored = await this.storage.get(key);
+      if (!stored) return null;
       const kept = await buffer(stored.stream);
-      return asOffered ? kept : nightPicture(day, scene, taken);
+      return asOffered ? kept : this.rendered(shown, scene, day, taken);
     });
   }
 
   /** One after the other, for each sheet on which a light of these groups is lit. */
   private async each(
-    { row, document }: ShownRevision,
+    shown: ShownRevision,
+    pictures: Pictures,
     taken: Taken,
-    make: (scene: NightScene, taken: Taken) => Promise<Buffer | null>,
+    make: (scene: NightScene, key: string, day: Buffer) => Promise<Buffer | null>,
   ): Promise<NightPicture[]> {
+    const keys = picturesOf(shown.row);
     const nights: NightPicture[] = [];
-    for (const scene of nightScenesOf(row, document)) {
-      if (!scene.sources.some((source) => isLit(source, taken))) continue;
-      try {
-        const picture = await make(scene, taken);
-        if (picture) nights.push({ scene, picture });
-      } catch (error) {
-        const { sheetId } = scene;
-        this.logger.error({ err: error, revisionId: row.id, sheetId }, 'a night picture could not be made');
-      }
+    for (const scene of this.scenesOf(shown)) {
+      const [key, day] = [keys.get(scene.sheetId), pictures.get(scene.sheetId)];
+      if (key === undefined || !day || !scene.sources.some((source) => isLit(source, taken))) continue;
+      const picture = await make(scene, nightKeyOf(key), day);
+      if (picture) nights.push({ scene, picture });
     }
     return nights;
+  }
+
+  private scenesOf({ row, document }: ShownRevision): NightScene[] {
+    try {
+      return nightScenesOf(row, document);
+    } catch (error) {
+      this.logger.error(
+        { err: error, revisionId: row.id },
+        'the night of a proposal could not be worked out',
+      );
+      return [];
+    }
+  }
+
+  private async rendered(
+    { row }: ShownRevision,
+    scene: NightScene,
+    day: Buffer,
+    taken: Taken,
+  ): Promise<Buffer | null> {
+    try {
+      return await nightPicture(day, scene, taken);
+    } catch (error) {
+      const { sheetId } = scene;
+      this.logger.error({ err: error, revisionId: row.id, sheetId }, 'a night picture could not be made');
+      return null;
+    }
   }
 }
 

@@ -7,7 +7,9 @@ import { asItIs } from '../pictures.js';
 import { BODY, SECTION, type Writing } from './parts.js';
 
 const LABEL: TextStyle = { size: 8, weight: 'medium', colour: colours.quiet };
-const COLUMN_GAP = 24;
+/** Shares of the width. */
+const COLUMNS = [0.46, 0.32, 0.22] as const;
+const COLUMN_GAP = 22;
 const GAP = 9;
 /** A picture that the words would leave less than this of its height is given it, and they go on overleaf. */
 const LEAST_SHARE = 0.6;
@@ -28,7 +30,8 @@ export function nightPage(writing: Writing, { scene, picture }: NightPicture): v
   const aspect = scene.widthPx / scene.heightPx;
   const [landscape, portrait] = [layoutFor('landscape'), layoutFor('portrait')];
   // Words that find no room under a wide picture flow on from a page in portrait, as everything else does.
-  const layout = landscape.wordsFit && landscape.width >= portrait.width ? landscape : portrait;
+  const isBetter = landscape.wordsFit && !(portrait.wordsFit && portrait.width > landscape.width);
+  const layout = isBetter ? landscape : portrait;
 
   paper.addPage(layout.orientation);
   paper.bookmark(title);
@@ -52,7 +55,7 @@ export function nightPage(writing: Writing, { scene, picture }: NightPicture): v
   function layoutFor(orientation: Orientation) {
     const inner = paper.innerSize(orientation);
     const head = paper.wrap(title, inner.width, SECTION).length * leadingOf(SECTION) + GAP;
-    const words = Math.max(...columnHeights(paper, sayings, inner.width)) + GAP;
+    const words = heightInColumns(paper, sayings, inner.width) + GAP;
     const whole = Math.min(inner.height - head, inner.width / aspect);
     const height = Math.min(whole, inner.height - head - words);
     const wordsFit = height >= LEAST_SHARE * whole;
@@ -60,35 +63,25 @@ export function nightPage(writing: Writing, { scene, picture }: NightPicture): v
   }
 }
 
-/** The first saying on the left, the others on the right. */
-const columnsOf = (sayings: readonly Saying[]) => [sayings.slice(0, 1), sayings.slice(1)];
-const columnWidth = (width: number) => (width - COLUMN_GAP) / 2;
+/** Widths of the columns under a picture, for what is said in three. */
+const columnWidths = (width: number): number[] =>
+  COLUMNS.map((share) => (width - (COLUMNS.length - 1) * COLUMN_GAP) * share);
 
-function columnHeights(paper: Paper, sayings: readonly Saying[], width: number): number[] {
-  return columnsOf(sayings).map((column) =>
-    column.reduce(
-      (sum, { text }) =>
-        sum + leadingOf(LABEL) + paper.wrap(text, columnWidth(width), BODY).length * leadingOf(BODY) + 5,
-      0,
-    ),
-  );
+function heightInColumns(paper: Paper, sayings: readonly Saying[], width: number): number {
+  const widths = columnWidths(width);
+  const lines = sayings.map(({ text }, i) => paper.wrap(text, widths[i]!, BODY).length);
+  return leadingOf(LABEL) + Math.max(...lines) * leadingOf(BODY);
 }
 
 function inColumns(paper: Paper, sayings: readonly Saying[]): void {
-  const width = columnWidth(paper.width);
-  columnsOf(sayings).forEach((column, i) => {
-    const x = paper.left + i * (width + COLUMN_GAP);
-    let y = paper.y;
-    for (const { label, text } of column) {
-      paper.line(label, x, y, LABEL);
-      y += leadingOf(LABEL);
-      for (const line of paper.wrap(text, width, BODY)) {
-        paper.line(line, x, y, BODY);
-        y += leadingOf(BODY);
-      }
-      y += 5;
-    }
-  });
+  const widths = columnWidths(paper.width);
+  let x = paper.left;
+  for (const [i, { label, text }] of sayings.entries()) {
+    paper.line(label, x, paper.y, LABEL);
+    for (const [row, line] of paper.wrap(text, widths[i]!, BODY).entries())
+      paper.line(line, x, paper.y + leadingOf(LABEL) + row * leadingOf(BODY), BODY);
+    x += widths[i]! + COLUMN_GAP;
+  }
 }
 
 function impression({ say, document }: Writing, { whiteLux }: NightScene): Saying {
@@ -96,8 +89,8 @@ function impression({ say, document }: Writing, { whiteLux }: NightScene): Sayin
   const footCandles = say.number(Math.round((whiteLux / LUX_PER_FOOT_CANDLE) * 10) / 10);
   const white = document.units === 'imperial' ? `${footCandles} foot-candles (${lux} lux)` : `${lux} lux`;
   return {
-    label: 'What this is',
-    text: `Artist’s impression: worked out from the planned lights, with the place, aim, beam and colour of each and the volts estimated at it. It shows a dark night without moon or street light. White in the picture is a white surface under ${white}. Plants, weather and finishes make the real garden a little different.`,
+    label: 'What this shows',
+    text: `Artist’s impression: worked out from the place, aim, beam, colour and estimated volts of each planned light, on a dark night without moon or street light. White stands for a white surface under ${white}. The real garden will look a little different.`,
   };
 }
 
