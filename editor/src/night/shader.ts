@@ -1,4 +1,4 @@
-import { DITHER_EDGE, GLOW_TINT, LUMA } from '@lampwright/geometry/night';
+import { DITHER_EDGE, GAP_BLUE, GLOW_TINT, LUMA } from '@lampwright/geometry/night';
 
 export const VERTEX = `#version 300 es
 in vec2 corner;
@@ -14,9 +14,11 @@ precision highp float;
 precision highp int;
 uniform sampler2D photo;
 uniform sampler2D light;
+uniform sampler2D leaves;
 uniform vec2 size;
 uniform vec3 ambient;
 uniform float saturation;
+uniform float litSaturation;
 uniform float knee;
 uniform float gain;
 uniform float glowGain;
@@ -41,9 +43,13 @@ uint hashOf(uvec2 p) {
 }
 void main() {
   ivec2 at = ivec2(gl_FragCoord.x, size.y - gl_FragCoord.y);
-  vec4 lux = texture(light, (vec2(at) + 0.5) / size);
+  vec2 where = (vec2(at) + 0.5) / size;
+  vec4 lux = texture(light, where);
   vec3 surface = linearOf(texelFetch(photo, at, 0).rgb);
-  vec3 seen = mix(vec3(dot(LUMA, surface)), surface, saturation) * ambient + surface * lux.rgb * gain;
+  vec3 grey = vec3(dot(LUMA, surface));
+  float gap = smoothstep(${number(GAP_BLUE[0])}, ${number(GAP_BLUE[1])}, surface.b) * texture(leaves, where).r;
+  vec3 seen = mix(grey, surface, saturation) * ambient;
+  seen += mix(grey, surface, litSaturation) * lux.rgb * gain * (1.0 - gap);
   vec3 tint = lux.rgb + tintFloor * GLOW_TINT;
   seen += tint * (glowGain * lux.a / dot(LUMA, tint));
   float room = max(1.0 - knee, 1e-6);

@@ -6,9 +6,11 @@ import { FRAGMENT, VERTEX } from './shader';
 type Uniform =
   | 'photo'
   | 'light'
+  | 'leaves'
   | 'size'
   | 'ambient'
   | 'saturation'
+  | 'litSaturation'
   | 'knee'
   | 'gain'
   | 'glowGain'
@@ -17,7 +19,6 @@ type Uniform =
 /** What lives in the graphics context, and is lost with it. */
 interface Parts {
   readonly uniforms: ReadonlyMap<Uniform, WebGLUniformLocation | null>;
-  readonly light: WebGLTexture;
 }
 
 /** Composes by WebGL 2: photo and light are textures, the light half floats that are read between its pixels. */
@@ -26,7 +27,7 @@ export class WebglNight implements NightRenderer {
   private photo!: ImageData;
   private parts: Parts | null = null;
   /** The light map that the texture was last filled from. */
-  private filled: { rgba: Float32Array; version: number; width: number; height: number } | null = null;
+  private filled: LightMap | null = null;
   private last: { light: LightMap; look: Look; whiteLux: number } | null = null;
 
   /** Null where there is no WebGL 2, or none that draws this. */
@@ -71,6 +72,7 @@ export class WebglNight implements NightRenderer {
     gl.uniform2f(at('size'), photo.width, photo.height);
     gl.uniform3f(at('ambient'), ...grade.ambient);
     gl.uniform1f(at('saturation'), grade.saturation);
+    gl.uniform1f(at('litSaturation'), grade.litSaturation);
     gl.uniform1f(at('knee'), grade.knee);
     gl.uniform1f(at('gain'), grade.lamps / whiteLux);
     gl.uniform1f(at('glowGain'), grade.lamps);
@@ -111,14 +113,19 @@ export class WebglNight implements NightRenderer {
 
   private fillLight(light: LightMap): void {
     const { gl, filled } = this;
-    const { width, height, rgba, version } = light;
+    const { width, height, rgba, leaves, version } = light;
+    const isNewSize = !filled || filled.width !== width || filled.height !== height;
+    if (isNewSize || filled.leaves !== leaves) {
+      gl.activeTexture(gl.TEXTURE2);
+      gl.texImage2D(gl.TEXTURE_2D, 0, gl.R8, width, height, 0, gl.RED, gl.UNSIGNED_BYTE, leaves);
+    }
     gl.activeTexture(gl.TEXTURE1);
-    if (!filled || filled.width !== width || filled.height !== height) {
+    if (isNewSize) {
       gl.texImage2D(gl.TEXTURE_2D, 0, gl.RGBA16F, width, height, 0, gl.RGBA, gl.FLOAT, rgba);
     } else if (filled.rgba !== rgba || filled.version !== version) {
       gl.texSubImage2D(gl.TEXTURE_2D, 0, 0, 0, width, height, gl.RGBA, gl.FLOAT, rgba);
-    } else return;
-    this.filled = { rgba, version, width, height };
+    }
+    this.filled = light;
   }
 }
 
@@ -150,13 +157,17 @@ function partsOf(gl: WebGL2RenderingContext): Parts {
   gl.disable(gl.DITHER);
   gl.pixelStorei(gl.UNPACK_COLORSPACE_CONVERSION_WEBGL, gl.NONE);
   texture(gl, gl.TEXTURE0, gl.NEAREST);
-  const light = texture(gl, gl.TEXTURE1, gl.LINEAR);
+  texture(gl, gl.TEXTURE1, gl.LINEAR);
+  texture(gl, gl.TEXTURE2, gl.LINEAR);
+  gl.pixelStorei(gl.UNPACK_ALIGNMENT, 1);
   const names: Uniform[] = [
     'photo',
     'light',
+    'leaves',
     'size',
     'ambient',
     'saturation',
+    'litSaturation',
     'knee',
     'gain',
     'glowGain',
@@ -165,7 +176,8 @@ function partsOf(gl: WebGL2RenderingContext): Parts {
   const uniforms = new Map(names.map((name) => [name, gl.getUniformLocation(program, name)]));
   gl.uniform1i(uniforms.get('photo') ?? null, 0);
   gl.uniform1i(uniforms.get('light') ?? null, 1);
-  return { uniforms, light };
+  gl.uniform1i(uniforms.get('leaves') ?? null, 2);
+  return { uniforms };
 }
 
 function texture(gl: WebGL2RenderingContext, unit: number, filter: number): WebGLTexture {

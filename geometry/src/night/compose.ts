@@ -1,4 +1,5 @@
-import { encodedOf, LUMA, linearOf } from './colour.js';
+import { codeOf } from './code.js';
+import { LUMA, linearOf } from './colour.js';
 import type { LightMap } from './layers.js';
 import type { Look } from './look.js';
 
@@ -14,11 +15,13 @@ export const GLOW_TINT = [1.28, 0.96, 0.5] as const;
 /** So much of {@link GLOW_TINT}, as a share of white, is mixed into the light on a pixel to find its glow's colour. */
 export const GLOW_TINT_SHARE = 0.01;
 
-const LINEAR = Float32Array.from({ length: 256 }, (_, code) => linearOf(code / 255));
-/** sRGB codes 0 to 255 over the square root of linear light, which spreads the dark. */
-const CODE_STEPS = 4096;
-const CODES = Float32Array.from({ length: CODE_STEPS + 2 }, (_, i) => 255 * encodedOf((i / CODE_STEPS) ** 2));
+/**
+ * Between these values of linear blue what is seen in a crown is ever more sky and less leaf: leaves throw back
+ * next to no blue, and light that goes through a gap of theirs is gone.
+ */
+export const GAP_BLUE = [0.15, 0.45] as const;
 
+const LINEAR = Float32Array.from({ length: 256 }, (_, code) => linearOf(code / 255));
 /**
  * The night picture of a daylight photo of the same size as it: each pixel, taken as how much the surface
  * reflects, times what is left of daylight plus the lamps' light, with a soft shoulder towards white. In linear
@@ -47,10 +50,10 @@ export function composeRows(
   to: number,
 ): void {
   const { width, height, data } = photo;
-  const { rgba } = light;
+  const { rgba, leaves } = light;
   const grade = look[light.view];
   const [ar, ag, ab] = grade.ambient;
-  const { saturation, knee } = grade;
+  const { saturation, litSaturation, knee } = grade;
   const gain = grade.lamps / whiteLux;
   const glowGain = grade.lamps;
   const tintFloor = GLOW_TINT_SHARE * whiteLux;
@@ -83,10 +86,24 @@ export function composeRows(
       const r = LINEAR[data[i]!]!;
       const g = LINEAR[data[i + 1]!]!;
       const bl = LINEAR[data[i + 2]!]!;
-      const grey = (1 - saturation) * (LUMA[0] * r + LUMA[1] * g + LUMA[2] * bl);
-      let red = (grey + saturation * r) * ar + r * lr * gain;
-      let green = (grey + saturation * g) * ag + g * lg * gain;
-      let blue = (grey + saturation * bl) * ab + bl * lb * gain;
+      const luma = LUMA[0] * r + LUMA[1] * g + LUMA[2] * bl;
+      const grey = (1 - saturation) * luma;
+      let red = (grey + saturation * r) * ar;
+      let green = (grey + saturation * g) * ag;
+      let blue = (grey + saturation * bl) * ab;
+      if (lr > 0) {
+        let lit = gain;
+        if (bl > GAP_BLUE[0]) {
+          const leaf =
+            leaves[a >> 2]! * wa + leaves[b >> 2]! * wb + leaves[c >> 2]! * wc + leaves[d >> 2]! * wd;
+          const t = Math.min((bl - GAP_BLUE[0]) / (GAP_BLUE[1] - GAP_BLUE[0]), 1);
+          lit *= 1 - (leaf / 255) * t * t * (3 - 2 * t);
+        }
+        const plain = (1 - litSaturation) * luma;
+        red += (plain + litSaturation * r) * lr * lit;
+        green += (plain + litSaturation * g) * lg * lit;
+        blue += (plain + litSaturation * bl) * lb * lit;
+      }
       if (glow > 0) {
         const tr = lr + tintFloor * GLOW_TINT[0];
         const tg = lg + tintFloor * GLOW_TINT[1];
@@ -108,11 +125,8 @@ export function composeRows(
 /** A byte whose mean over many pixels is the light's exact sRGB value; `noise` from 0 to 1023. */
 function byteOf(light: number, knee: number, noise: number): number {
   const room = 1 - knee;
-  const x =
-    light <= knee || room <= 0 ? Math.min(light, 1) : knee + room * (1 - Math.exp((knee - light) / room));
-  const at = Math.sqrt(Math.max(x, 0)) * CODE_STEPS;
-  const low = Math.floor(at);
-  const code = CODES[low]! + (CODES[low + 1]! - CODES[low]!) * (at - low);
+  const x = light <= knee || room <= 0 ? light : knee + room * (1 - Math.exp((knee - light) / room));
+  const code = codeOf(x);
   // A whole code, as it comes of an untouched photo by day, stays what it is.
   return Math.floor(code + DITHER_EDGE + (noise / 1024) * (1 - 2 * DITHER_EDGE));
 }

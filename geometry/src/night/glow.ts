@@ -1,3 +1,4 @@
+import type { FixtureKind } from '../catalogue/item.js';
 import { intensityAt } from '../light/beam.js';
 import type { LightSource } from '../light/night-scene.js';
 import type { SurfaceMap } from './surface-map.js';
@@ -18,9 +19,24 @@ export interface Glow {
 }
 
 /** Share of its peak that a lamp throws aside on its hood and lens, seen from anywhere. */
-const THROWN_ASIDE = 0.004;
+function thrownAside(kind: FixtureKind): number {
+  switch (kind) {
+    case 'path':
+    case 'bollard':
+    case 'step':
+    case 'linear':
+      return 0.03;
+    case 'up':
+    case 'down':
+    case 'flood':
+    case 'wall-wash':
+    case 'in-grade':
+    case 'underwater':
+      return 0.0004;
+  }
+}
 /** Candela towards the viewer at which a core is as good as white. */
-const WHITE_CANDELA = 6;
+const WHITE_CANDELA = 12;
 /** Of the core and of the bloom, in thousandths of the map's long edge. */
 const CORE_PER_MILLE = 1.1;
 const BLOOM_PER_MILLE = 7;
@@ -65,7 +81,7 @@ export function glowOf(map: SurfaceMap, source: LightSource): Glow | null {
 /** Candela of one light towards the viewer. */
 function towardsViewer(
   map: SurfaceMap,
-  { x, y, z, axis, peakCandela, halfAngle, shield }: LightSource,
+  { kind, x, y, z, axis, peakCandela, halfAngle, shield }: LightSource,
 ): number {
   const { eye } = map.viewer;
   const to = eye ? [eye.x - x, eye.y - y, eye.z - z] : [0, 0, 1];
@@ -73,5 +89,5 @@ function towardsViewer(
   const cosine = (to[0]! * axis[0] + to[1]! * axis[1] + to[2]! * axis[2]) / length;
   const angle = Math.acos(Math.min(Math.max(cosine, -1), 1));
   const beam = { peakCandela, halfAngle: halfAngle ?? Number.POSITIVE_INFINITY, shield };
-  return Math.max(intensityAt(beam, angle), THROWN_ASIDE * peakCandela);
+  return Math.max(intensityAt(beam, angle), thrownAside(kind) * peakCandela);
 }

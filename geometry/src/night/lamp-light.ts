@@ -45,25 +45,25 @@ export function lampLightOn(
 ): LampLight {
   const bare = beamOf(source);
   const beam: Beam = { ...bare, peakCandela: bare.peakCandela * source.quantity * source.output };
+  if (!(beam.peakCandela > 0 && Number.isFinite(beam.peakCandela))) return NO_LIGHT;
   const least = whiteLux * LEAST_SHARE_OF_WHITE;
+  const shade = shadeOf(source, space);
   const blocks: number[] = [];
-  const lit: Float32Array[] = [];
-  if (beam.peakCandela > 0 && Number.isFinite(beam.peakCandela)) {
-    const shade = shadeOf(source, space);
-    for (let b = 0; b < map.blockIsGround.length; b++) {
-      if (map.blockStart[b] === map.blockStart[b + 1]) continue;
-      if (!(mostIn(map, b, source, beam) > least)) continue;
-      const lux = blockLux(map, b, source, beam, least, shade);
-      if (lux) {
-        blocks.push(b);
-        lit.push(lux);
-      }
+  let lux = new Float32Array(64 * BLOCK_PIXELS);
+  for (let b = 0; b < map.blockIsGround.length; b++) {
+    if (map.blockStart[b] === map.blockStart[b + 1] || !(mostIn(map, b, source, beam) > least)) continue;
+    const at = blocks.length * BLOCK_PIXELS;
+    if (at === lux.length) {
+      const longer = new Float32Array(2 * lux.length);
+      longer.set(lux);
+      lux = longer;
     }
+    if (lightBlock(map, b, source, beam, least, shade, lux, at)) blocks.push(b);
   }
-  const all = new Float32Array(blocks.length * BLOCK_PIXELS);
-  for (const [i, lux] of lit.entries()) all.set(lux, i * BLOCK_PIXELS);
-  return { blocks: Uint32Array.from(blocks), lux: all };
+  return { blocks: Uint32Array.from(blocks), lux: lux.slice(0, blocks.length * BLOCK_PIXELS) };
 }
+
+const NO_LIGHT: LampLight = { blocks: new Uint32Array(0), lux: new Float32Array(0) };
 
 /** No point of the block gets more lux than this. */
 function mostIn(map: SurfaceMap, b: number, { x, y, z, axis }: LightSource, beam: Beam): number {
@@ -82,41 +82,43 @@ function mostIn(map: SurfaceMap, b: number, { x, y, z, axis }: LightSource, beam
   return map.blockIsGround[b] ? most * Math.min(Math.max(z, 0) / nearest, 1) : most;
 }
 
-const scratch = new Float32Array(BLOCK_PIXELS);
-
-function blockLux(
+/** Writes a block's lux to `lux` from `at` on, where there are zeros; false where there is no light in it. */
+function lightBlock(
   map: SurfaceMap,
   b: number,
   { x, y, z, axis }: LightSource,
   beam: Beam,
   least: number,
   shade: Shade,
-): Float32Array | null {
+  lux: Float32Array,
+  at: number,
+): boolean {
+  const [ax, ay, az] = axis;
+  const { peakCandela } = beam;
   let any = false;
-  scratch.fill(0);
-  for (let s = map.blockStart[b]!; s < map.blockStart[b + 1]!; s++) {
+  for (let s = map.blockStart[b]!, end = map.blockStart[b + 1]!; s < end; s++) {
     const dx = map.x[s]! - x;
     const dy = map.y[s]! - y;
     const dz = map.z[s]! - z;
-    const distance = Math.max(Math.hypot(dx, dy, dz), LAMP_METERS);
+    const square = Math.max(dx * dx + dy * dy + dz * dz, LAMP_METERS * LAMP_METERS);
+    const distance = Math.sqrt(square);
     const facing = -(dx * map.nx[s]! + dy * map.ny[s]! + dz * map.nz[s]!) / distance;
     const catching = map.kind[s] === SurfaceKind.crown ? 0.5 * (1 + facing) : facing;
-    if (!(catching > 0)) continue;
-    const cosine = (dx * axis[0] + dy * axis[1] + dz * axis[2]) / distance;
+    if (!(catching > 0) || peakCandela * catching < least * square) continue;
+    const cosine = (dx * ax + dy * ay + dz * az) / distance;
     const angle = Math.acos(Math.min(Math.max(cosine, -1), 1));
-    let lux = (intensityAt(beam, angle) * catching) / (distance * distance);
-    if (!(lux > least)) continue;
-    if (lux < FADED_IN * least) {
-      const t = (lux / least - 1) / (FADED_IN - 1);
-      lux *= t * t * (3 - 2 * t);
+    let here = (intensityAt(beam, angle) * catching) / square;
+    if (!(here > least)) continue;
+    if (here < FADED_IN * least) {
+      const t = (here / least - 1) / (FADED_IN - 1);
+      here *= t * t * (3 - 2 * t);
     }
-    lux *= shade(map, s);
-    if (lux > 0) {
-      scratch[map.slot[s]!]! += Math.min(lux, MOST_LUX) * map.share[s]!;
-      any = true;
-    }
+    here *= shade(map, s);
+    if (!(here > 0)) continue;
+    lux[at + map.slot[s]!]! += Math.min(here, MOST_LUX) * map.share[s]!;
+    any = true;
   }
-  return any ? scratch.slice() : null;
+  return any;
 }
 
 /** The share of a lamp's light that comes to a sample, 0 to 1. */
@@ -129,6 +131,8 @@ function shadeOf(source: LightSource, space: LightSpace): Shade {
   if (solid.walls.length === 0 && solid.roofs.length === 0 && crowns.length === 0) return () => 1;
   const at = { x: 0, y: 0, z: 0 };
   const normal = { x: 0, y: 0, z: 0 };
+  const screens = crowns.map((crown) => screenOf(crown, source));
+  const { x, y, z } = source;
   return (map, s) => {
     at.x = map.x[s]!;
     at.y = map.y[s]!;
@@ -140,30 +144,50 @@ function shadeOf(source: LightSource, space: LightSpace): Shade {
       to = before(at, normal);
     }
     if (isStopped(source, to, solid)) return 0;
-    const own = map.crownIds.get(map.owner[s]!);
-    let through = 1;
-    for (const crown of crowns) if (crown.id !== own) through *= throughCrown(crown, source, to);
-    return through;
+    const own = map.crownIds[map.owner[s]!];
+    let share = 1;
+    for (const screen of screens)
+      if (screen.id !== own) share *= through(screen, to.x - x, to.y - y, to.z - z);
+    return share;
   };
 }
 
 /** From this share of a crown's radius outwards it is thin, and lets more and more light through. */
-const DENSE_SHARE = 0.8;
+const DENSE_SHARE = 0.45;
 
-/** What a crown lets through between two points: all beside it, nothing through its middle, some at its edge. */
-function throughCrown(crown: Crown, from: Point3, to: Point3): number {
-  const { radiusMeters: r, halfHeightMeters: h } = crown;
-  const ox = (from.x - crown.x) / r;
-  const oy = (from.y - crown.y) / r;
-  const oz = (from.z - crown.z) / h;
-  const dx = (to.x - from.x) / r;
-  const dy = (to.y - from.y) / r;
-  const dz = (to.z - from.z) / h;
-  const a = dx * dx + dy * dy + dz * dz;
-  if (a === 0) return 1;
-  const t = Math.min(Math.max(-(ox * dx + oy * dy + oz * dz) / a, 0), 1);
-  const nearest = Math.hypot(ox + t * dx, oy + t * dy, oz + t * dz);
+/** A crown as a lamp sees it: in units of its own radii, in which it is a ball about the origin. */
+interface Screen {
+  readonly id: string;
+  readonly perRadius: number;
+  readonly perHalfHeight: number;
+  /** The lamp. */
+  readonly x: number;
+  readonly y: number;
+  readonly z: number;
+  /** Squared distance of the lamp from the middle. */
+  readonly square: number;
+}
+
+function screenOf(crown: Crown, lamp: Point3): Screen {
+  const perRadius = 1 / crown.radiusMeters;
+  const perHalfHeight = 1 / crown.halfHeightMeters;
+  const x = (lamp.x - crown.x) * perRadius;
+  const y = (lamp.y - crown.y) * perRadius;
+  const z = (lamp.z - crown.z) * perHalfHeight;
+  return { id: crown.id, perRadius, perHalfHeight, x, y, z, square: x * x + y * y + z * z };
+}
+
+/** What a crown lets through of light that goes so far: all beside it, nothing near its middle. */
+function through(screen: Screen, dx: number, dy: number, dz: number): number {
+  const x = dx * screen.perRadius;
+  const y = dy * screen.perRadius;
+  const z = dz * screen.perHalfHeight;
+  const towards = -(screen.x * x + screen.y * y + screen.z * z);
+  if (towards <= 0) return 1;
+  const length = x * x + y * y + z * z;
+  const t = Math.min(towards / length, 1);
+  const nearest = screen.square - 2 * t * towards + t * t * length;
   if (nearest >= 1) return 1;
-  const s = Math.max((nearest - DENSE_SHARE) / (1 - DENSE_SHARE), 0);
-  return s * s * (3 - 2 * s);
+  const s = (Math.sqrt(Math.max(nearest, 0)) - DENSE_SHARE) / (1 - DENSE_SHARE);
+  return s > 0 ? s * s * (3 - 2 * s) : 0;
 }

@@ -14,6 +14,8 @@ export interface LightMap {
   readonly height: number;
   /** Lux on the surface seen, as linear sRGB of the camera's white; and the glow of lamps seen, 1 for white. */
   readonly rgba: Float32Array;
+  /** How much of each pixel is crown, 0 to 255. */
+  readonly leaves: Uint8Array;
   /** Another number whenever anything in it changed. */
   readonly version: number;
 }
@@ -98,8 +100,8 @@ export class NightLight {
       this.version++;
       this.addUp();
     }
-    const { view, width, height } = this.surfaces;
-    return { view, width, height, rgba: this.rgba, version: this.version };
+    const { view, width, height, leaves } = this.surfaces;
+    return { view, width, height, leaves, rgba: this.rgba, version: this.version };
   }
 
   private touch(layer: Layer): void {

@@ -7,6 +7,8 @@ export interface Grade {
   readonly ambient: Rgb;
   /** Colourfulness of that light: 1 by day; at night the eye sees little colour. */
   readonly saturation: number;
+  /** The same of what lamps light: pictures taken in the sun are more colourful than anything is by lamplight. */
+  readonly litSaturation: number;
   /** Factor on the lamps' light; 1 at night, next to nothing in the sun. */
   readonly lamps: number;
   /** Up to here light is shown as it is; above, ever less of it, towards white. 1: no shoulder. */
@@ -67,7 +69,8 @@ const PLAN_TINT: readonly (readonly [number, Rgb])[] = [
 /** Share of the daylight picture that is left in the dark. */
 const PHOTO_NIGHT = 0.03;
 const PLAN_NIGHT = 0.045;
-const NIGHT_SATURATION = 0.5;
+const NIGHT_SATURATION = 0.4;
+const LIT_SATURATION = 0.55;
 const NIGHT_KNEE = 0.6;
 /** White paper throws back several times as much light as a garden does. */
 const PLAN_LAMPS = 0.4;
@@ -94,6 +97,7 @@ function gradeAt(light: number, night: number, tint: Rgb, lampsAtNight: number):
   return {
     ambient: [tint[0] * share, tint[1] * share, tint[2] * share],
     saturation: 1 - (1 - NIGHT_SATURATION) * smooth(1 - light),
+    litSaturation: LIT_SATURATION,
     // A camera set for so much daylight shows so much less of the lamps.
     lamps: lampsAtNight * (1 - light) ** 1.5,
     knee: NIGHT_KNEE + (1 - NIGHT_KNEE) * smooth(light),

@@ -1,4 +1,5 @@
-import { encodedOf, linearOf } from './colour.js';
+import { codeOf } from './code.js';
+import { linearOf } from './colour.js';
 import type { Picture } from './compose.js';
 
 const LINEAR = Float32Array.from({ length: 256 }, (_, code) => linearOf(code / 255));
@@ -12,56 +13,68 @@ export function resized(picture: Picture, longEdge: number): Picture {
   if (!(scale < 1)) return picture;
   const width = Math.max(Math.round(picture.width * scale), 1);
   const height = Math.max(Math.round(picture.height * scale), 1);
-  const across = squeezed(picture, width);
   const data = new Uint8ClampedArray(width * height * 4);
-  const perRow = picture.height / height;
+  const columns = partsOf(picture.width, width);
+  const rows = partsOf(picture.height, height);
+  const row = new Float32Array(width * 3);
+  const sum = new Float32Array(width * 3);
   for (let y = 0; y < height; y++) {
-    const from = y * perRow;
-    const to = Math.min(from + perRow, picture.height);
-    for (let x = 0; x < width; x++) {
-      let r = 0;
-      let g = 0;
-      let b = 0;
-      for (let j = Math.floor(from); j < to; j++) {
-        const part = Math.min(j + 1, to) - Math.max(j, from);
-        const i = (j * width + x) * 3;
-        r += across[i]! * part;
-        g += across[i + 1]! * part;
-        b += across[i + 2]! * part;
-      }
-      const i = (y * width + x) * 4;
-      data[i] = 255 * encodedOf(r / (to - from));
-      data[i + 1] = 255 * encodedOf(g / (to - from));
-      data[i + 2] = 255 * encodedOf(b / (to - from));
+    sum.fill(0);
+    for (let k = rows.start[y]!; k < rows.start[y + 1]!; k++) {
+      squeeze(picture, rows.at[k]!, columns, row);
+      const part = rows.share[k]!;
+      for (let i = 0; i < sum.length; i++) sum[i]! += row[i]! * part;
+    }
+    for (let x = 0, i = y * width * 4; x < width; x++, i += 4) {
+      data[i] = codeOf(sum[x * 3]!);
+      data[i + 1] = codeOf(sum[x * 3 + 1]!);
+      data[i + 2] = codeOf(sum[x * 3 + 2]!);
       data[i + 3] = 255;
     }
   }
   return { width, height, data };
 }
 
-/** Linear light, each row brought down to so many pixels. */
-function squeezed({ width: was, height, data }: Picture, width: number): Float32Array {
-  const across = new Float32Array(width * height * 3);
-  const perColumn = was / width;
-  for (let x = 0; x < width; x++) {
-    const from = x * perColumn;
-    const to = Math.min(from + perColumn, was);
-    for (let y = 0; y < height; y++) {
-      let r = 0;
-      let g = 0;
-      let b = 0;
-      for (let k = Math.floor(from); k < to; k++) {
-        const part = Math.min(k + 1, to) - Math.max(k, from);
-        const i = (y * was + k) * 4;
-        r += LINEAR[data[i]!]! * part;
-        g += LINEAR[data[i + 1]!]! * part;
-        b += LINEAR[data[i + 2]!]! * part;
-      }
-      const i = (y * width + x) * 3;
-      across[i] = r / (to - from);
-      across[i + 1] = g / (to - from);
-      across[i + 2] = b / (to - from);
+/** Of each pixel along one side: which pixels of the larger picture it covers, and how much of it each is. */
+interface Parts {
+  readonly start: Uint32Array;
+  readonly at: Uint32Array;
+  readonly share: Float32Array;
+}
+
+function partsOf(from: number, to: number): Parts {
+  const start = new Uint32Array(to + 1);
+  const at: number[] = [];
+  const share: number[] = [];
+  const per = from / to;
+  for (let x = 0; x < to; x++) {
+    start[x] = at.length;
+    const low = x * per;
+    const high = Math.min(low + per, from);
+    for (let k = Math.floor(low); k < high; k++) {
+      at.push(k);
+      share.push((Math.min(k + 1, high) - Math.max(k, low)) / (high - low));
     }
   }
-  return across;
+  start[to] = at.length;
+  return { start, at: Uint32Array.from(at), share: Float32Array.from(share) };
+}
+
+/** One row of linear light, brought down in width. */
+function squeeze({ width, data }: Picture, y: number, { start, at, share }: Parts, row: Float32Array): void {
+  for (let x = 0; x + 1 < start.length; x++) {
+    let r = 0;
+    let g = 0;
+    let b = 0;
+    for (let k = start[x]!; k < start[x + 1]!; k++) {
+      const i = (y * width + at[k]!) * 4;
+      const part = share[k]!;
+      r += LINEAR[data[i]!]! * part;
+      g += LINEAR[data[i + 1]!]! * part;
+      b += LINEAR[data[i + 2]!]! * part;
+    }
+    row[x * 3] = r;
+    row[x * 3 + 1] = g;
+    row[x * 3 + 2] = b;
+  }
 }

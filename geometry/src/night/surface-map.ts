@@ -42,8 +42,10 @@ export interface SurfaceMap {
   readonly nz: Float32Array;
   /** Of each map pixel, row by row: how far what is seen there is from the camera; Infinity for sky. */
   readonly depth: Float32Array;
-  /** The tree whose crown or trunk samples of an owner are, by owner. */
-  readonly crownIds: ReadonlyMap<number, string>;
+  /** Of each map pixel: how much of it is crown, 0 to 255. */
+  readonly leaves: Uint8Array;
+  /** By owner: the tree whose crown or trunk it is. */
+  readonly crownIds: readonly (string | null)[];
 }
 
 /** Where a pixel shows an edge it is sampled at these places, in pixels. */
@@ -73,13 +75,10 @@ export function surfaceMapOf(scene: NightScene, longEdge: number): SurfaceMap {
   const blocksDown = Math.ceil(height / BLOCK);
   const blockStart = new Uint32Array(blocksAcross * blocksDown + 1);
   const samples = new Samples(width * height);
-  const crownIds = new Map<number, string>();
   let slot = 0;
   let share = 1;
   const keep = (point: SurfacePoint) => {
     samples.add(point, slot, share);
-    const id = surfaces.crownOf(point.owner);
-    if (id !== null) crownIds.set(point.owner, id);
   };
   for (let b = 0; b < blocksAcross * blocksDown; b++) {
     blockStart[b] = samples.count;
@@ -121,7 +120,8 @@ export function surfaceMapOf(scene: NightScene, longEdge: number): SurfaceMap {
     ny: samples.ny.subarray(0, samples.count),
     nz: samples.nz.subarray(0, samples.count),
     depth,
-    crownIds,
+    leaves: leavesOf(samples, blockStart, width, height, blocksAcross),
+    crownIds: surfaces.crownIds,
   };
 }
 
@@ -134,6 +134,28 @@ function isEdge(marks: Int32Array, width: number, height: number, i: number, j: 
     (j > 0 && marks[at - width] !== mark) ||
     (j < height - 1 && marks[at + width] !== mark)
   );
+}
+
+function leavesOf(
+  samples: Samples,
+  blockStart: Uint32Array,
+  width: number,
+  height: number,
+  blocksAcross: number,
+): Uint8Array {
+  const leaves = new Float32Array(width * height);
+  for (let b = 0; b + 1 < blockStart.length; b++) {
+    const left = (b % blocksAcross) * BLOCK;
+    const top = Math.floor(b / blocksAcross) * BLOCK;
+    for (let s = blockStart[b]!; s < blockStart[b + 1]!; s++) {
+      if (samples.kind[s] !== SurfaceKind.crown) continue;
+      const slot = samples.slot[s]!;
+      leaves[(top + Math.floor(slot / BLOCK)) * width + left + (slot % BLOCK)]! += samples.share[s]!;
+    }
+  }
+  const bytes = new Uint8Array(leaves.length);
+  for (let i = 0; i < leaves.length; i++) bytes[i] = Math.round(255 * leaves[i]!);
+  return bytes;
 }
 
 function blockBounds(samples: Samples, blockStart: Uint32Array) {

@@ -1,8 +1,8 @@
 import type { NightScene } from '../light/night-scene.js';
 import { type Crown, groundUnder, type Point3, spaceOf } from '../light/space.js';
 import type { Matrix3, PlanePoint } from '../sheet/matrix3.js';
-import { rectangleIn } from './quad.js';
 import { pixelsAcross, type Viewer, viewerOf } from './camera.js';
+import { rectangleIn } from './quad.js';
 
 /** What a point of the sheet shows. */
 export const SurfaceKind = { none: 0, ground: 1, face: 2, crown: 3 } as const;
@@ -22,13 +22,16 @@ export interface SurfacePoint {
   /** Distance from the viewer, in the camera's unit. */
   depth: number;
   share: number;
+  /** Of crowns: from the surface that is seen to the middle of the crown behind it, in metres on the ground. */
+  inX: number;
+  inY: number;
 }
 
 /** What the marks of a sheet are seen as; asked point by point. */
 export interface Surfaces {
   readonly viewer: Viewer;
-  /** The crown that points of this owner belong to; null for all else. */
-  crownOf(owner: number): string | null;
+  /** By owner: the tree whose crown or trunk it is; null for all else. */
+  readonly crownIds: readonly (string | null)[];
   /** Calls `take` with each thing seen at a sheet pixel; the object is used again for the next. */
   at(u: number, v: number, take: (point: SurfacePoint) => void): void;
 }
@@ -58,7 +61,14 @@ export const surfacePoint = (): SurfacePoint => ({
   nz: 1,
   depth: Number.POSITIVE_INFINITY,
   share: 1,
+  inX: 0,
+  inY: 0,
 });
+
+/** Of what is seen of a crown so much is its outermost leaves; the rest are seen between them, further in. */
+const LEAVES_BEFORE = 0.6;
+/** Those are so far in, from the surface to the middle of the crown; light comes to them from all around. */
+const INSIDE_SHARE = 0.7;
 
 /** On a photo the nearest mark is seen, before the ground; above the horizon there is nothing. */
 function onPhoto(scene: NightScene): Surfaces {
@@ -72,14 +82,16 @@ function onPhoto(scene: NightScene): Surfaces {
     const crown = crowns.find(({ id }) => id === tree.id);
     if (!crown) continue;
     patches.push(crownPatch(viewer, stand, tree, crown, ++owner));
-    patches.push(...trunkPatch(viewer, stand, tree, crown, ++owner));
+    patches.push(...trunkPatch(scene, viewer, stand, tree, crown, ++owner));
   }
   const m = scene.groundMatrix as unknown as Matrix3;
+  const crownIds: (string | null)[] = new Array(owner + 1).fill(null);
+  for (const patch of patches) crownIds[patch.owner] = patch.crownId;
   let near = surfacePoint();
   let other = surfacePoint();
   return {
     viewer,
-    crownOf: (asked) => patches.find((patch) => patch.owner === asked)?.crownId ?? null,
+    crownIds,
     at(u, v, take) {
       let seen = onGround(m, viewer, u, v, near);
       // What stands on the ground hides it, however the ground runs on behind.
@@ -90,7 +102,21 @@ function onPhoto(scene: NightScene): Surfaces {
         seen = true;
         [near, other] = [other, near];
       }
-      if (seen) take(near);
+      if (!seen) return;
+      if (near.kind !== SurfaceKind.crown) {
+        take(near);
+        return;
+      }
+      near.share = LEAVES_BEFORE;
+      take(near);
+      near.x += near.inX * INSIDE_SHARE;
+      near.y += near.inY * INSIDE_SHARE;
+      near.nx = 0;
+      near.ny = 0;
+      near.nz = 0;
+      near.share = 1 - LEAVES_BEFORE;
+      take(near);
+      near.share = 1;
     },
   };
 }
@@ -211,6 +237,8 @@ function roundAt(
   const h = (z - crown.z) / crown.halfHeightMeters;
   const out = Math.sqrt(Math.max(1 - s * s - h * h, 0));
   into.kind = SurfaceKind.crown;
+  into.inX = -tx * out * crown.radiusMeters;
+  into.inY = -ty * out * crown.radiusMeters;
   into.x = crown.x + across.x * aside + tx * out * crown.radiusMeters;
   into.y = crown.y + across.y * aside + ty * out * crown.radiusMeters;
   into.z = z;
@@ -224,24 +252,29 @@ function roundAt(
 }
 
 /** Trunks are about this share of the tree's height thick, from the middle to the bark. */
-const TRUNK_RADIUS_SHARE = 0.019;
+const TRUNK_RADIUS_SHARE = 0.024;
 /** Below a crown that hangs lower than this no trunk is seen. */
 const LEAST_TRUNK_METERS = 0.6;
 
 /** The trunk between foot and crown, which the plan does not say but light climbs first of all. */
-function trunkPatch(viewer: Viewer, stand: PlanePoint, tree: Tree, crown: Crown, owner: number): Patch[] {
+function trunkPatch(
+  scene: NightScene,
+  viewer: Viewer,
+  stand: PlanePoint,
+  tree: Tree,
+  crown: Crown,
+  owner: number,
+): Patch[] {
   if (tree.crownBaseMeters < LEAST_TRUNK_METERS) return [];
   const box = boxOf(tree.outline);
   const foot = tree.foot;
   if (!(foot.y > box.bottom)) return [];
+  const stands = groundUnder(scene, foot);
   // Up to well inside of the crown, which hides the rest.
-  const head = pixelOf(viewer, { x: crown.x, y: crown.y, z: crown.z }) ?? {
-    x: (box.left + box.right) / 2,
-    y: box.top,
-  };
-  if (!(foot.y > head.y)) return [];
+  const head = stands && pixelOf(viewer, { ...stands, z: crown.z });
+  if (!head || !(foot.y > head.y)) return [];
   const radius = Math.min(Math.max(TRUNK_RADIUS_SHARE * tree.heightMeters, 0.04), 0.4);
-  const perMeter = pixelsAcrossAt(viewer, crown);
+  const perMeter = pixelsAcrossAt(viewer, stands);
   const half = radius * perMeter;
   const { x: tx, y: ty } = towards(crown, stand);
   const across = rightOf(viewer, crown, { x: -ty, y: tx });
@@ -266,8 +299,8 @@ function trunkPatch(viewer: Viewer, stand: PlanePoint, tree: Tree, crown: Crown,
         into.nx = across.x * s + tx * out;
         into.ny = across.y * s + ty * out;
         into.nz = 0;
-        into.x = crown.x + into.nx * radius;
-        into.y = crown.y + into.ny * radius;
+        into.x = stands.x + into.nx * radius;
+        into.y = stands.y + into.ny * radius;
         into.z = Math.min((foot.y - v) * metersUp, crown.z);
         into.depth = viewer.depthOf(into.x, into.y, into.z);
         return true;
@@ -338,7 +371,7 @@ function onPlan(scene: NightScene): Surfaces {
   const point = surfacePoint();
   return {
     viewer,
-    crownOf: (owner) => crowns[owner - 1]?.tree.id ?? null,
+    crownIds: [null, ...crowns.map(({ tree }) => tree.id), ...space.walls.map(() => null)],
     at(u, v, take) {
       if (!onGround(m, viewer, u, v, point)) return;
       const { x, y } = point;
