@@ -1,6 +1,7 @@
 import type { CatalogueItem } from '@lampwright/geometry/catalogue';
 import {
   type AreaUse,
+  addZone,
   apply,
   type CableStop,
   type Change,
@@ -9,17 +10,21 @@ import {
   type Fields,
   type IdSource,
   type ItemChoice,
+  type LightTarget,
   type PlanDocument,
   type PlanPoint,
   placeArea,
+  placeFace,
   placeFixture,
   placeJunction,
   placeMeasurement,
   placeNote,
   placeTransformer,
+  placeTree,
   type RecordKind,
   type ReferenceRecord,
   recordOf,
+  type Schedule,
   setFields,
   setRunTerminals,
 } from '@lampwright/geometry/plan';
@@ -29,6 +34,16 @@ const pointOf = ([x, y]: Point): PlanPoint => ({ x, y });
 
 /** A catalogue entry by its name: the company's own entry, so that the plan's copy knows where it came from. */
 export type Catalogue = (name: string) => { readonly sourceId: string | null; readonly item: CatalogueItem };
+
+export interface DrawnTree {
+  readonly foot: Point;
+  /** Its crown: on a photo the silhouette, on a drawing from above its edge. */
+  readonly outline: readonly Point[];
+  /** Of its top above the ground. */
+  readonly heightMeters: number;
+  /** Of the lower edge of the crown; a shrub's is the ground. */
+  readonly crownBaseMeters?: number;
+}
 
 /** Draws a plan on one sheet by the same edits as the editor's tools, one change each. */
 export class PlanBuilder {
@@ -56,12 +71,44 @@ export class PlanBuilder {
     this.set([this.sheetId], 'sheet', { references, groundMetersPerPaperMeter });
   }
 
-  area(use: AreaUse, name: string, points: readonly Point[], heightMeters: number | null = null): void {
+  area(use: AreaUse, name: string, points: readonly Point[], heightMeters: number | null = null): string {
     const { sheetId } = this;
     const ids = this.make(
       placeArea(this.doc, { sheetId, use, points: points.map(pointOf), heightMeters }, this.ids),
     );
     this.set(ids, 'area', { name });
+    return one(ids);
+  }
+
+  /** An upright surface of a photo, along its foot, with its upper edge as seen there. */
+  face(name: string, foot: readonly Point[], top: readonly Point[], heightMeters: number): string {
+    const { sheetId } = this;
+    const edges = { foot: foot.map(pointOf), top: top.map(pointOf) };
+    return one(this.make(placeFace(this.doc, { sheetId, name, ...edges, heightMeters }, this.ids)));
+  }
+
+  tree(name: string, { foot, outline, heightMeters, crownBaseMeters = 0 }: DrawnTree): string {
+    const { sheetId } = this;
+    const tree = { sheetId, name, foot: pointOf(foot), outline: outline.map(pointOf) };
+    return one(this.make(placeTree(this.doc, { ...tree, heightMeters, crownBaseMeters }, this.ids)));
+  }
+
+  /** Points lights at a place on the sheet, so high above the ground there. */
+  aim(ids: readonly string[], at: Point, heightMeters: number): void {
+    this.set(ids, 'fixture', { aim: { kind: 'point', at: pointOf(at), heightMeters } });
+  }
+
+  zone(name: string, schedule: Schedule, fixtureIds: readonly string[]): void {
+    this.make(addZone(this.doc, { name, schedule }, fixtureIds, this.ids));
+  }
+
+  lightTarget(areaId: string, lightTarget: LightTarget): void {
+    this.set([areaId], 'area', { lightTarget });
+  }
+
+  /** Gives the run of a cable a switch of its own. */
+  switchRun(cableId: string, schedule: Schedule): void {
+    this.set([this.runOf(cableId)], 'run', { schedule });
   }
 
   transformer(item: string, at: Point, name: string): string {
@@ -101,8 +148,7 @@ export class PlanBuilder {
 
   /** Lands the run of a cable on a tap and a common, and names it. */
   land(cableId: string, name: string, tapId: string, commonId: string): void {
-    const runId = recordOf(this.doc, cableId, 'cable')?.runId;
-    if (!runId) throw new Error(`Cable ${cableId} belongs to no run.`);
+    const runId = this.runOf(cableId);
     this.make(setRunTerminals(this.doc, runId, { tapId, commonId }, this.ids));
     this.set([runId], 'run', { name });
   }
@@ -119,6 +165,12 @@ export class PlanBuilder {
 
   set<K extends RecordKind>(ids: Iterable<string>, kind: K, fields: Fields<K>): void {
     this.make(setFields(this.doc, ids, kind, fields, this.ids));
+  }
+
+  private runOf(cableId: string): string {
+    const runId = recordOf(this.doc, cableId, 'cable')?.runId;
+    if (!runId) throw new Error(`Cable ${cableId} belongs to no run.`);
+    return runId;
   }
 
   private item(name: string): ItemChoice {

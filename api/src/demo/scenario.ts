@@ -12,7 +12,15 @@ const id = (n: number): string => `fe4110ca-0000-4000-8000-${String(n).padStart(
 
 export const DEMO_PASSWORD = 'fernhollow-demo';
 
-export const demoCompany = { id: id(1), name: 'Fernhollow Outdoor Lighting', region: 'us' };
+/** Where the invented town is taken to lie, for its sunsets. */
+const marlowBend = { latitude: 40.2, longitude: -75 };
+
+export const demoCompany = {
+  id: id(1),
+  name: 'Fernhollow Outdoor Lighting',
+  region: 'us',
+  settings: { place: marlowBend },
+};
 
 export const demoPeople = [
   { id: id(11), name: 'Linnea Marsh', email: 'owner@fernhollow.example', role: 'owner' },
@@ -37,6 +45,8 @@ export const demoProperties = [
     name: 'Harrow Bank',
     address: '7 Harrow Bank, Marlow Bend',
     region: 'Marlow Bend',
+    latitude: 40.2071,
+    longitude: -75.0124,
     accessNotes: 'Side gate on the right, not locked. A friendly dog is indoors by nine.',
   },
   {
@@ -45,6 +55,8 @@ export const demoProperties = [
     name: 'Sandpiper Row',
     address: 'Lot 14, Sandpiper Row, Marlow Bend',
     region: 'Marlow Bend',
+    latitude: 40.1938,
+    longitude: -74.9877,
     accessNotes: 'Park on the drive. The pool cover stays on until May.',
   },
   {
@@ -53,6 +65,8 @@ export const demoProperties = [
     name: 'Weir Cottage',
     address: '2 Weir Lane, Marlow Bend',
     region: 'Marlow Bend',
+    latitude: 40.2016,
+    longitude: -75.0203,
     accessNotes: '',
   },
 ];

@@ -72,6 +72,8 @@ export const demoItemPrices: ReadonlyMap<string, ItemPrice> = new Map([
   each('LED lamp GU5.3, 4 W, 36°', 1150, 'L-5304'),
   each('LED lamp GU5.3, 5 W, 60°', 1240, 'L-5305'),
   each('LED lamp GU5.3, 7 W, 24°', 1390, 'L-5307'),
+  each('Smart LED lamp GU5.3, 4 W, 36°', 2350, 'L-9304'),
+  each('Smart LED lamp G4, 2 W', 1980, 'L-9402'),
   each('Halogen lamp G4, 10 W', 240, 'L-8410'),
   each('Halogen lamp G4, 20 W', 260, 'L-8420'),
   each('Halogen lamp GU5.3, 20 W, 36°', 410, 'L-8520'),

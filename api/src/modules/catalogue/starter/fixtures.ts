@@ -42,6 +42,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: WARM,
     lead: lead(1.2),
     mountingHeightMeters: 0.1,
+    shieldFactor: 0.5,
     wetListed: false,
   },
   {
@@ -55,6 +56,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: WARM,
     lead: lead(1.2),
     mountingHeightMeters: 0.1,
+    shieldFactor: 0.6,
     wetListed: false,
   },
   {
@@ -68,6 +70,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: NEUTRAL,
     lead: lead(7.6, { awg: 16 }),
     mountingHeightMeters: 6,
+    shieldFactor: 0.7,
     wetListed: false,
   },
   {
@@ -81,6 +84,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: NEUTRAL,
     lead: lead(1.2),
     mountingHeightMeters: 0.3,
+    shieldFactor: 0.3,
     wetListed: false,
   },
   {
@@ -94,6 +98,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: WARM,
     lead: lead(0.9),
     mountingHeightMeters: 0.15,
+    shieldFactor: 0.4,
     wetListed: false,
   },
   {
@@ -107,6 +112,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: WARM,
     lead: lead(0.6),
     mountingHeightMeters: 0.12,
+    shieldFactor: 0.9,
     wetListed: false,
   },
   {
@@ -120,6 +126,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: WARM,
     lead: lead(0.9),
     mountingHeightMeters: 0.5,
+    shieldFactor: 0.8,
     wetListed: false,
   },
   {
@@ -133,6 +140,7 @@ const integrated: FixtureItem[] = [
     cctKelvin: NEUTRAL,
     lead: lead(1.2),
     mountingHeightMeters: 0,
+    shieldFactor: 0.3,
     wetListed: false,
   },
   {
@@ -185,6 +193,7 @@ const lamped: FixtureItem[] = [
     maxWatts: 50,
     lead: lead(0.9),
     mountingHeightMeters: 0.1,
+    shieldFactor: 0.6,
     wetListed: false,
   },
   {
@@ -196,6 +205,7 @@ const lamped: FixtureItem[] = [
     maxWatts: 35,
     lead: lead(3, { awg: 16 }),
     mountingHeightMeters: 3,
+    shieldFactor: 0.7,
     wetListed: false,
   },
   {
@@ -207,6 +217,7 @@ const lamped: FixtureItem[] = [
     maxWatts: 20,
     lead: lead(0.9),
     mountingHeightMeters: 0.15,
+    shieldFactor: 0.4,
     wetListed: false,
   },
   {
@@ -218,6 +229,7 @@ const lamped: FixtureItem[] = [
     maxWatts: 35,
     lead: lead(1.2),
     mountingHeightMeters: 0,
+    shieldFactor: 0.3,
     wetListed: false,
   },
   {
