@@ -192,20 +192,7 @@ export function randomEdit(doc: PlanDocument, random: () => number, ids: IdSourc
     () => placeJunction(doc, { sheetId, at: at(), style: 'hub', item: null }, ids),
     () => placeNote(doc, { sheetId, at: at(), text: `note ${Math.floor(random() * 100)}` }, ids),
     () => placeArea(doc, { sheetId, use: 'lawn', points: [at(), at(), at()] }, ids),
-    () => placeFace(doc, { sheetId, foot: [at(), at()], top: null, heightMeters: 3 }, ids),
-    () =>
-      placeTree(
-        doc,
-        { sheetId, foot: at(), outline: [at(), at(), at()], heightMeters: 6, crownBaseMeters: 2 },
-        ids,
-      ),
-    () =>
-      addZone(
-        doc,
-        { name: 'Zone', schedule: usualSchedule },
-        nodes.flatMap((r) => (r.kind === 'fixture' && random() < 0.3 ? [r.id] : [])),
-        ids,
-      ),
+    () => randomMark(doc, at, random, nodes, ids),
     () =>
       drawCable(
         doc,
@@ -264,4 +251,23 @@ export function randomEdit(doc: PlanDocument, random: () => number, ids: IdSourc
   ];
   const result = pick(edits)?.();
   return result?.kind === 'change' ? result.change : null;
+}
+
+/** One of the marks of light, at random: they share one face of the die, so that edits of old records stay as likely. */
+function randomMark(
+  doc: PlanDocument,
+  at: () => { x: number; y: number },
+  random: () => number,
+  nodes: readonly PlanRecord[],
+  ids: IdSource,
+): EditResult {
+  const sheetId = 'sheet1';
+  const dice = random();
+  if (dice < 1 / 3) return placeFace(doc, { sheetId, foot: [at(), at()], top: null, heightMeters: 3 }, ids);
+  if (dice < 2 / 3) {
+    const tree = { sheetId, foot: at(), outline: [at(), at(), at()], heightMeters: 6, crownBaseMeters: 2 };
+    return placeTree(doc, tree, ids);
+  }
+  const lights = nodes.filter((r) => r.kind === 'fixture' && random() < 0.3).map(({ id }) => id);
+  return addZone(doc, { name: 'Zone', schedule: usualSchedule }, lights, ids);
 }

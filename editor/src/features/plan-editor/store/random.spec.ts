@@ -13,7 +13,7 @@ describe('everything at once', () => {
     const made: string[] = [];
     let window = open();
     await window.store.start();
-    for (let i = 0; i < 200; i += 1) {
+    for (let i = 0; i < 300; i += 1) {
       const dice = random();
       const { store } = window;
       if (store.document.getState().status === 'ready' && dice < 0.6) {
@@ -72,7 +72,7 @@ describe('everything at once', () => {
           await rest();
         }
     };
-    for (let i = 0; i < 150; i += 1) {
+    for (let i = 0; i < 300; i += 1) {
       const { store } = people[random() < 0.5 ? 0 : 1]!;
       const change = randomEdit(store.present(), random, ids);
       if (change) store.make(change, `step ${i}`);
