@@ -1,7 +1,6 @@
-import type { PlanPoint } from '@lampwright/geometry/plan';
 import { colours } from '../face.js';
 import { leadingOf, type Paper } from '../paper.js';
-import { boxOfPoints } from './projection.js';
+import { boxOfPoints, type OnPage } from './projection.js';
 import { type Box, boxAround, type PlacedMark, type Pt, Room, type Wire } from './room.js';
 import type { DrawnLight, SheetContent } from './sheet-content.js';
 import {
@@ -18,9 +17,7 @@ import {
   drawTransformer,
   tagSize,
 } from './symbols.js';
-
-/** From sheet pixels to points on the page; null where nothing of it can be seen. */
-export type OnPage = (point: PlanPoint) => Pt | null;
+import { drawTree, drawWall, treeOnPage, wallOnPage } from './uprights.js';
 
 /** Where more than this share of the usual tags finds no room on its place, small ones are tried. */
 const CROWDED = 0.2;
@@ -72,7 +69,7 @@ export function markPicture(
 }
 
 export interface DrawingOptions {
-  /** A picture lies under it: areas only outlined, without names. */
+  /** A picture lies under it, which shows areas, walls and trees itself. */
   readonly overPicture: boolean;
 }
 
@@ -100,7 +97,17 @@ export function drawSheet(
   areas.sort((a, b) => sizeOf(b.points) - sizeOf(a.points));
   doc.save();
   doc.rect(frame.left, frame.top, frame.right - frame.left, frame.bottom - frame.top).clip();
-  if (!overPicture) for (const { area, points } of areas) drawArea(paper, area.use, points, false);
+  if (!overPicture) {
+    for (const { area, points } of areas) drawArea(paper, area.use, points, false);
+    for (const tree of content.trees) {
+      const drawn = treeOnPage(tree, content.sheet, onPage);
+      if (drawn) drawTree(paper, drawn);
+    }
+    for (const wall of content.walls) {
+      const foot = wallOnPage(wall, onPage);
+      if (foot) drawWall(paper, foot);
+    }
+  }
   for (const { line, weight } of [...lines].sort((a, b) => b.weight - a.weight))
     if (line.length > 1) drawCable(paper, line, weight);
   const nodes = content.nodes.flatMap((node) => {

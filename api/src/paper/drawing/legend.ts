@@ -14,6 +14,7 @@ import {
   drawTransformer,
   tagSize,
 } from './symbols.js';
+import { drawTree, drawWall } from './uprights.js';
 
 export interface LegendEntry {
   readonly text: string;
@@ -28,7 +29,7 @@ const LEAST = 19;
 /** What is on a sheet, and only that. */
 export function legendOf(
   paper: Paper,
-  { lights, cables, nodes, areas }: SheetContent,
+  { lights, cables, nodes, areas, walls, trees }: SheetContent,
   document: RevisionDocument,
   overPicture: boolean,
 ): LegendEntry[] {
@@ -75,9 +76,24 @@ export function legendOf(
           weight,
         ),
     });
-  if (!overPicture)
+  if (!overPicture) {
     for (const use of areaUses)
       if (areas.some((area) => area.use === use)) entries.push(areaEntry(paper, use));
+    if (walls.length > 0)
+      entries.push({
+        text: 'Wall that catches light',
+        draw: ({ x, y }) =>
+          drawWall(paper, [
+            { x: x - 11, y },
+            { x: x + 11, y },
+          ]),
+      });
+    if (trees.length > 0)
+      entries.push({
+        text: 'Tree or shrub',
+        draw: (foot) => drawTree(paper, { foot, crown: { radius: 7 } }),
+      });
+  }
   return entries;
 }
 

@@ -2,9 +2,9 @@ import type { RevisionDocument } from '../../modules/proposals/revision-document
 import { colours } from '../face.js';
 import { leadingOf, type Orientation, type Paper, type TextStyle } from '../paper.js';
 import type { Picture } from '../pictures.js';
-import { drawSheet, type OnPage } from './draw-sheet.js';
+import { drawSheet } from './draw-sheet.js';
 import { drawEntry, entryHeight, type LegendEntry, legendOf } from './legend.js';
-import { boxOfPoints, groundOf, type ToGround } from './projection.js';
+import { boxOfPoints, groundOf, type OnPage, type ToGround } from './projection.js';
 import type { Box, Pt } from './room.js';
 import { type DrawingScale, POINTS_PER_METER, scaleBarFor, scaleThatFits } from './scales.js';
 import type { SheetContent } from './sheet-content.js';

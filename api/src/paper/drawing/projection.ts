@@ -3,6 +3,9 @@ import type { PlanPoint, SheetRecord } from '@lampwright/geometry/plan';
 import type { SolvedScale } from '@lampwright/geometry/sheet';
 import type { Box, Pt } from './room.js';
 
+/** From sheet pixels to points on the page; null where nothing of it can be seen. */
+export type OnPage = (point: PlanPoint) => Pt | null;
+
 /** From sheet pixels to metres on paper-wise ground: x to the right, y downwards. Null where there is no ground. */
 export type ToGround = (point: PlanPoint) => Pt | null;
 

@@ -1,6 +1,7 @@
 import {
   type AreaRecord,
   cablePoints,
+  type FaceRecord,
   itemOf,
   type PlanDocument,
   type PlanPoint,
@@ -8,6 +9,7 @@ import {
   recordOf,
   recordsOf,
   type SheetRecord,
+  type TreeRecord,
 } from '@lampwright/geometry/plan';
 import type { RevisionDocument, ShownLight } from '../../modules/proposals/revision-document.js';
 import { cableWeight } from './symbols.js';
@@ -42,6 +44,8 @@ export interface SheetContent {
   readonly cables: readonly DrawnCable[];
   readonly nodes: readonly DrawnNode[];
   readonly areas: readonly AreaRecord[];
+  readonly walls: readonly FaceRecord[];
+  readonly trees: readonly TreeRecord[];
 }
 
 /** A name that somebody gave may be too long for a plan: then the letter and number stand on it. */
@@ -98,6 +102,8 @@ function contentOf(
       ...[...recordsOf(plan, 'junction')].filter(here).map((junction) => junctionNode(plan, junction)),
     ],
     areas: [...recordsOf(plan, 'area')].filter(here),
+    walls: [...recordsOf(plan, 'face')].filter(here),
+    trees: [...recordsOf(plan, 'tree')].filter(here),
   };
 }
 
