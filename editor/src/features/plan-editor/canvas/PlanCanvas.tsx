@@ -4,6 +4,8 @@ import { type KeyboardEvent, useCallback, useEffect, useMemo, useRef, useState }
 import { Layer, Shape, Stage } from 'react-konva';
 import { clearLabelWidths } from '../../../plan-view/draw/labels';
 import { chalk, fontFamily } from '../../../plan-view/palette';
+import nightStyles from '../night/night-page.module.css';
+import { useGroundFigures } from '../night/use-ground-figures';
 import { useNightPicture } from '../night/use-night-picture';
 import { useEditor, useSheet } from '../page/context';
 import styles from './canvas.module.css';
@@ -47,6 +49,7 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
     sheetLayer.current?.batchDraw();
   }, []);
   const atNight = useNightPicture(image, redrawSheet);
+  const groundFigures = useGroundFigures();
 
   const update = useCallback(
     (next: Parameters<Painter['update']>[0]) => {
@@ -75,6 +78,7 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
   }, [editor, sheet?.id, width, height]);
 
   useEffect(() => update({ scene, lengthText, aimOf }), [update, scene, lengthText, aimOf]);
+  useEffect(() => update({ groundFigures }), [update, groundFigures]);
 
   useEffect(() => {
     const { camera, session, tools, estimate } = editor;
@@ -142,7 +146,7 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
   return (
     <section
       ref={frame}
-      className={styles.frame}
+      className={`${styles.frame} ${nightStyles.frame}`}
       data-panning={panning || undefined}
       data-testid="plan-canvas"
       aria-label="Drawing. Arrow keys move the view, plus and minus zoom, 0 fits it. Everything on it is in the ledger too."

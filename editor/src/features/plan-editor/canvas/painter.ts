@@ -1,5 +1,5 @@
 import { type Camera, markRadius, type Point, toWindow } from '../../../plan-view/camera';
-import { drawArea } from '../../../plan-view/draw/areas';
+import { drawArea, middle } from '../../../plan-view/draw/areas';
 import { type CableStroke, drawCables, drawChosenCable } from '../../../plan-view/draw/cable';
 import { drawChoice } from '../../../plan-view/draw/fixture';
 import {
@@ -12,9 +12,10 @@ import {
 import { MarkSprites } from '../../../plan-view/draw/sprites';
 import { drawFace, drawTree } from '../../../plan-view/draw/uprights';
 import { emptyScene, type Scene, type SceneCable } from '../../../plan-view/scene';
+import { drawGroundFigures } from '../night/ground-figures';
 import { atNight, drawNightCables, drawNightFixtures, drawNightNodes } from '../night/marks';
 import type { Preview } from '../tools/tool';
-import { drawAims } from './aims';
+import { aimCrosses, drawAims } from './aims';
 import type { PaintState } from './paint-state';
 import { drawPreview } from './preview';
 
@@ -51,6 +52,7 @@ export class Painter {
       preview: null,
       stale: false,
       night: false,
+      groundFigures: [],
       lengthText: () => '',
       aimOf: () => null,
     };
@@ -86,6 +88,7 @@ export class Painter {
       dirty.add('overlay');
       if (state.night) dirty.add('ground');
     }
+    if (state.groundFigures !== before.groundFigures) dirty.add('ground');
     if (isBusy(state.preview) !== isBusy(before.preview)) dirty.add('fixtures');
     if (
       state.preview !== before.preview ||
@@ -117,7 +120,15 @@ export class Painter {
   }
 
   private paintGround(ctx: CanvasRenderingContext2D, scene: Scene): void {
-    const { camera, selection } = this.state;
+    const { camera, size, selection, groundFigures } = this.state;
+    if (groundFigures.length > 0)
+      drawGroundFigures(
+        ctx,
+        camera,
+        size,
+        groundFigures,
+        scene.fixtures.map(({ at }) => at),
+      );
     for (const area of scene.areas) drawArea(ctx, camera, area, selection.has(area.id));
     for (const face of scene.faces) drawFace(ctx, camera, face, selection.has(face.id));
     for (const tree of scene.trees) drawTree(ctx, camera, tree, selection.has(tree.id));
@@ -141,6 +152,7 @@ export class Painter {
       hoveredId: isBusy(this.state.preview) ? null : hoveredId,
       chosen: selection,
       asides: this.asides(scene),
+      keepOff: isBusy(this.state.preview) ? [] : aimCrosses(this.state),
       alpha: stale ? STALE_ALPHA : 1,
     });
   }
@@ -167,12 +179,18 @@ export class Painter {
     if (preview !== null) drawPreview(ctx, this.state, preview, this.sprites);
   }
 
-  /** Figures beside places: of each measurement, and of the cable under the pointer. */
+  /** Figures beside places: of each measurement, and of the cable, wall or tree under the pointer. */
   private asides(scene: Scene): Aside[] {
     const { hoveredId, preview } = this.state;
     const asides: Aside[] = [];
     for (const { id, points, text } of scene.measurements)
       if (text !== '') asides.push({ id, at: halfway(points), text });
+    if (!isBusy(preview)) {
+      for (const { id, top, foot, label } of scene.faces)
+        if (id === hoveredId) asides.push({ id, at: halfway(top ?? foot), text: label });
+      for (const { id, outline, label } of scene.trees)
+        if (id === hoveredId) asides.push({ id, at: middle(outline), text: label });
+    }
     const cable = isBusy(preview) ? undefined : scene.cables.find((c) => c.id === hoveredId);
     if (cable !== undefined && cable.text !== '')
       asides.push({ id: cable.id, at: halfway(cable.points), text: cable.text });

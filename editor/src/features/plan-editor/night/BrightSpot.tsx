@@ -1,9 +1,9 @@
+import { luxText } from '@lampwright/geometry/light';
 import { setFields } from '@lampwright/geometry/plan';
 import { useEffect, useId, useRef, useState } from 'react';
-import { useEditor, useSheet, useUnitSystem } from '../page/context';
-import { useNight, useNightController } from './context';
+import { useEditor, useSheet } from '../page/context';
+import { useLuxUnit, useNight, useNightController } from './context';
 import styles from './light-panel.module.css';
-import { luxText } from './lux-words';
 import { Part } from './Part';
 
 /** The steps of the slider in lux: each about a quarter more than the one before, as eyes count light. */
@@ -23,7 +23,7 @@ export function BrightSpot() {
   const editor = useEditor();
   const night = useNightController();
   const sheet = useSheet();
-  const units = useUnitSystem();
+  const unit = useLuxUnit();
   const own = useNight((s) => s.scene?.whiteLux);
   const id = useId();
   const [tried, setTried] = useState<number | null>(null);
@@ -41,7 +41,7 @@ export function BrightSpot() {
     night.tryWhite(null);
   };
   return (
-    <Part title="Bright spot" aside={<output htmlFor={id}>{luxText(shown, units)} shows as white</output>}>
+    <Part title="Bright spot" aside={<output htmlFor={id}>{luxText(shown, unit)} shows as white</output>}>
       <input
         id={id}
         type="range"
@@ -53,7 +53,7 @@ export function BrightSpot() {
         value={STEPS.length - 1 - stepOf(shown)}
         disabled={!editor.canEdit}
         aria-label="How bright the picture is shown"
-        aria-valuetext={`${luxText(shown, units)} shows as white`}
+        aria-valuetext={`${luxText(shown, unit)} shows as white`}
         onChange={(event) => {
           const lux = STEPS[STEPS.length - 1 - Number(event.target.value)]!;
           setTried(lux);

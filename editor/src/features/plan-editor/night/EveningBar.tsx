@@ -1,4 +1,4 @@
-import { clockText } from '@lampwright/geometry/night';
+import { clockText, type Evening } from '@lampwright/geometry/night';
 import { type KeyboardEvent, useLayoutEffect, useMemo, useRef, useState, useSyncExternalStore } from 'react';
 import { Link } from 'react-router-dom';
 import { useNight, useNightController, useNightHere } from './context';
@@ -91,7 +91,7 @@ export function EveningBar() {
       <p className={styles.now}>
         <strong>{clock}</strong>
         <span>
-          {phase} · {lights}
+          {dayOf(evening)} · {phase} · {lights}
         </span>
       </p>
       <div className={styles.line}>
@@ -143,6 +143,12 @@ export function EveningBar() {
       <PlaceNote />
     </section>
   );
+}
+
+/** "Dec 1": sunset is of a day of the year. */
+function dayOf({ date: { year, month, day } }: Evening): string {
+  const format = new Intl.DateTimeFormat(undefined, { day: 'numeric', month: 'short', timeZone: 'UTC' });
+  return format.format(new Date(Date.UTC(year, month - 1, day)));
 }
 
 function stepOf(key: string): number {

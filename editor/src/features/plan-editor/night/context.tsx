@@ -1,7 +1,9 @@
+import type { LuxUnit } from '@lampwright/geometry/light';
 import { createContext, type ReactNode, useContext, useEffect, useLayoutEffect, useState } from 'react';
 import { useStore } from 'zustand';
-import { useEditor } from '../page/context';
+import { useEditor, useUnitSystem } from '../page/context';
 import { NightController, type NightState } from './controller';
+import type { FiguresState } from './figures-desk';
 import type { NightHere } from './here';
 import { engineInWorker } from './worker-engine';
 
@@ -20,6 +22,12 @@ function useNightContext(): NightContextValue {
 
 export const useNightController = (): NightController => useNightContext().night;
 export const useNightHere = (): NightHere => useNightContext().here;
+export const useFigures = <T,>(pick: (s: FiguresState) => T): T =>
+  useStore(useNightController().figures.state, pick);
+
+/** The unit that this person reads light in. */
+export const useLuxUnit = (): LuxUnit => (useUnitSystem() === 'imperial' ? 'foot-candle' : 'lux');
+
 export const useNight = <T,>(pick: (s: NightState) => T): T => useStore(useNightController().state, pick);
 
 /** Light is soft, and the photo brings its own detail: more pixels than this are not seen. */
@@ -36,6 +44,7 @@ export function NightProvider({
   readonly children: ReactNode;
 }) {
   const editor = useEditor();
+  const unit = useLuxUnit();
   const [night, setNight] = useState<NightController | null>(null);
   // Before anything is painted, so that the page never stands without it.
   // biome-ignore lint/correctness/useExhaustiveDependencies: what is here now is followed below.
@@ -52,11 +61,12 @@ export function NightProvider({
         doc: plan.state.getState().doc,
         sheetId: session.getState().sheetId,
         volts,
+        selection: session.getState().selection,
         preview: tools.state.getState().preview,
       };
     };
     const controller = new NightController(
-      { ...read(), groups: here.groups, groupOf: here.groupOf, where: here.where },
+      { ...read(), groups: here.groups, groupOf: here.groupOf, where: here.where, unit },
       {
         engine: engineInWorker(),
         now: () => new Date(),
@@ -64,6 +74,10 @@ export function NightProvider({
           requestAnimationFrame(call);
         },
         longEdge: MAP_LONG_EDGE,
+        later: (ms, call) => {
+          const timer = setTimeout(call, ms);
+          return () => clearTimeout(timer);
+        },
       },
     );
     const follow = () => {
@@ -80,8 +94,8 @@ export function NightProvider({
     };
   }, [editor]);
   useEffect(() => {
-    night?.follow({ groups: here.groups, groupOf: here.groupOf, where: here.where });
-  }, [night, here]);
+    night?.follow({ groups: here.groups, groupOf: here.groupOf, where: here.where, unit });
+  }, [night, here, unit]);
   if (night === null) return null;
   return <NightContext value={{ night, here }}>{children}</NightContext>;
 }

@@ -3,6 +3,7 @@ import { apply, setFields } from '@lampwright/geometry/plan';
 import { describe, expect, it } from 'vitest';
 import { PLAY_SECONDS } from './controller';
 import type { LightEngine } from './engine';
+import { figuresOf } from './figures';
 import type { LightAsk } from './light-work';
 import { minutesInto } from './moments';
 import { nightOfYard } from './night.testkit';
@@ -24,11 +25,19 @@ function engineByHand() {
       asks.push(ask);
       return new Promise((resolve, reject) => waiting.push({ resolve, reject }));
     },
+    figures: async (ask) => figuresOf(ask),
     close: () => {},
   };
   const answer = async () => {
     version++;
-    waiting.shift()?.resolve({ view: 'plan', width: 1, height: 1, rgba: new Float32Array(4), version });
+    waiting.shift()?.resolve({
+      view: 'plan',
+      width: 1,
+      height: 1,
+      rgba: new Float32Array(4),
+      leaves: new Uint8Array(1),
+      version,
+    });
     await Promise.resolve();
   };
   const fail = async (message: string) => {

@@ -1,7 +1,9 @@
+import { scaleOfSheet } from '@lampwright/geometry/estimate';
 import {
   type ControlZone,
   controlZonesOf,
   type EveningPlace,
+  type LuxUnit,
   type NightNote,
   type NightScene,
   nightSceneOf,
@@ -16,11 +18,14 @@ import {
   sunAltitude,
   todayAt,
 } from '@lampwright/geometry/night';
-import type { PlanDocument } from '@lampwright/geometry/plan';
+import { type PlanDocument, recordOf, recordsOf } from '@lampwright/geometry/plan';
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Preview } from '../tools/tool';
 import type { LightEngine } from './engine';
+import type { FiguresAsk, Subject } from './figures';
+import { FiguresDesk } from './figures-desk';
 import type { OfferedGroup } from './here';
+import { type LatticePlace, latticeOf } from './lattice';
 import { atMinutes, type EveningLine, eveningLineOf, minutesInto, type ZoneLooks } from './moments';
 import { previewed } from './previewed';
 import { type Shares, sharesAt } from './shares';
@@ -41,6 +46,9 @@ export interface NightInput {
   readonly groups: readonly OfferedGroup[];
   readonly groupOf: ReadonlyMap<string, string>;
   readonly where: EveningPlace;
+  /** The unit that light is told in. */
+  readonly unit: LuxUnit;
+  readonly selection: ReadonlySet<string>;
   /** What the hand at work is about to change. */
   readonly preview: Preview | null;
 }
@@ -68,6 +76,8 @@ export interface NightState {
   readonly work: NightWork;
   /** Figures of light are shown on the ground. */
   readonly luxOnGround: boolean;
+  /** Where; none while they are not. */
+  readonly lattice: readonly LatticePlace[];
 }
 
 export interface NightDeps {
@@ -77,6 +87,8 @@ export interface NightDeps {
   readonly nextFrame: (call: () => void) => void;
   /** Pixels of the longer side of the light's map. */
   readonly longEdge: number;
+  /** Calls back after so long; gives what takes it back. */
+  readonly later: (ms: number, call: () => void) => () => void;
 }
 
 /** The whole evening is played in so many seconds. */
@@ -88,6 +100,7 @@ export const PLAY_SECONDS = 24;
  */
 export class NightController {
   readonly state: StoreApi<NightState>;
+  readonly figures: FiguresDesk;
   private asked: { readonly scene: NightScene; readonly shares: Shares } | null = null;
   private running = false;
   private waiting = false;
@@ -98,6 +111,10 @@ export class NightController {
   private idle: (() => void)[] = [];
   private readonly made = new LastMade<ReturnType<typeof sceneWithNotes>>();
   private readonly drawn = new LastMade<NightScene>();
+  private readonly litScene = new LastMade<NightScene>();
+  private readonly lattice = new LastMade<readonly LatticePlace[]>();
+  private readonly subjects = new LastMade<readonly Subject[]>();
+  private readonly figuresAsk = new LastMade<FiguresAsk>();
 
   constructor(
     private input: NightInput,
@@ -121,7 +138,9 @@ export class NightController {
       frame: null,
       work: { is: 'rest' },
       luxOnGround: false,
+      lattice: [],
     }));
+    this.figures = new FiguresDesk(deps);
   }
 
   /** Something of what the picture is made from has changed. */
@@ -198,6 +217,7 @@ export class NightController {
 
   showLux(luxOnGround: boolean): void {
     this.state.setState({ luxOnGround });
+    this.refresh();
   }
 
   /** Asks again after a failure. */
@@ -217,8 +237,15 @@ export class NightController {
   lit(): NightScene | null {
     const { scene, looks, groupsOff } = this.state.getState();
     if (scene === null) return null;
-    const shares = sharesAt(scene, null, { looks, groupsOff });
-    return { ...scene, sources: scene.sources.filter(({ id }) => (shares[id] ?? 0) > 0) };
+    return this.litScene.of(
+      () => {
+        const shares = sharesAt(scene, null, { looks, groupsOff });
+        return { ...scene, sources: scene.sources.filter(({ id }) => (shares[id] ?? 0) > 0) };
+      },
+      scene,
+      looks,
+      groupsOff,
+    );
   }
 
   /** Resolves when no light is being worked out. */
@@ -229,6 +256,7 @@ export class NightController {
 
   close(): void {
     this.closed = true;
+    this.figures.close();
     this.deps.engine.close();
     this.wake();
   }
@@ -288,14 +316,39 @@ export class NightController {
       this.state.setState({ scene: still, notes: made?.notes ?? [] });
     if (still === null) {
       this.asked = null;
-      this.state.setState({ frame: null, work: { is: 'rest' } });
+      this.state.setState({ frame: null, work: { is: 'rest' }, lattice: [] });
+      this.figures.want(null);
       this.wake();
       return;
     }
+    // While the hand is at work the picture comes first.
+    if (preview?.kind !== 'move' && preview?.kind !== 'aim') this.wantFigures(still);
     const scene = this.drawn.of(() => this.underHand(still), still, preview);
     const { evening, at, looks, groupsOff } = this.state.getState();
     this.ask(scene, sharesAt(scene, { evening, at }, { looks, groupsOff }));
     this.reframe();
+  }
+
+  private wantFigures(still: NightScene): void {
+    const { doc, sheetId, selection, unit } = this.input;
+    const { luxOnGround } = this.state.getState();
+    const lattice = this.lattice.of(
+      () => {
+        const sheet = recordOf(doc, sheetId, 'sheet');
+        const scale = sheet === undefined ? null : scaleOfSheet(sheet);
+        return luxOnGround && scale?.ok ? latticeOf(still, scale.scale) : [];
+      },
+      still,
+      luxOnGround,
+    );
+    if (lattice !== this.state.getState().lattice) this.state.setState({ lattice });
+    const subjects = this.subjects.of(() => subjectsOf(doc, sheetId, selection), doc, sheetId, selection);
+    const scene = this.lit()!;
+    const ask = this.figuresAsk.of(
+      () => ({ scene, doc, unit, subjects, places: lattice.map(({ ground }) => ground) }),
+      ...[scene, doc, unit, subjects, lattice],
+    );
+    this.figures.want(ask);
   }
 
   /** The scene with lamps as the hand is about to leave them. Surfaces are worked out anew only when it lets go. */
@@ -360,6 +413,18 @@ export class NightController {
     this.idle = [];
     for (const wake of waiters) wake();
   }
+}
+
+/** What of a sheet has its light told: what has a target, and what is chosen. */
+function subjectsOf(doc: PlanDocument, sheetId: string, chosen: ReadonlySet<string>): Subject[] {
+  const told = (record: { id: string; sheetId: string; lightTarget: unknown }): boolean =>
+    record.sheetId === sheetId && (record.lightTarget !== null || chosen.has(record.id));
+  const subjects: Subject[] = [];
+  for (const { id, points, ...record } of recordsOf(doc, 'measurement'))
+    if (told({ id, ...record })) subjects.push({ id, kind: 'path', points });
+  for (const { id, points, ...record } of recordsOf(doc, 'area'))
+    if (told({ id, ...record })) subjects.push({ id, kind: 'area', points });
+  return subjects;
 }
 
 /** What was made last, for as long as it would be made from the same. */

@@ -1,9 +1,10 @@
-import { type LightAsk, LightWork } from './light-work';
-import type { WorkerAnswer } from './worker-engine';
+import { figuresOf } from './figures';
+import { LightWork } from './light-work';
+import type { WorkerAnswer, WorkerAsk } from './worker-engine';
 
 /** What a dedicated worker has of its own; the rest of the editor is typed for windows. */
 interface WorkerPort {
-  onmessage: ((event: MessageEvent<LightAsk>) => void) | null;
+  onmessage: ((event: MessageEvent<WorkerAsk>) => void) | null;
   postMessage(answer: WorkerAnswer, transfer: Transferable[]): void;
 }
 
@@ -12,11 +13,24 @@ const work = new LightWork();
 
 port.onmessage = ({ data }) => {
   try {
-    const light = work.light(data);
-    // What was summed stays here for the next sum; the page gets a copy that is its own.
-    const rgba = light.rgba.slice();
-    port.postMessage({ is: 'light', light: { ...light, rgba } }, [rgba.buffer]);
+    answer(data);
   } catch (error) {
-    port.postMessage({ is: 'failed', message: error instanceof Error ? error.message : String(error) }, []);
+    const message = error instanceof Error ? error.message : String(error);
+    port.postMessage({ is: 'failed', of: data.is, message }, []);
   }
 };
+
+function answer(question: WorkerAsk): void {
+  switch (question.is) {
+    case 'light': {
+      const light = work.light(question.ask);
+      // What was summed stays here for the next sum; the page gets a copy that is its own.
+      const rgba = light.rgba.slice();
+      port.postMessage({ is: 'light', light: { ...light, rgba } }, [rgba.buffer]);
+      return;
+    }
+    case 'figures':
+      port.postMessage({ is: 'figures', answer: figuresOf(question.ask) }, []);
+      return;
+  }
+}

@@ -20,6 +20,8 @@ export function atNight(scene: Scene, chosen: ReadonlySet<string>, hoveredId: st
       fixture.standing === 'fault' ? fixture : { ...fixture, standing: null },
     ),
     areas: scene.areas.filter(asked),
+    faces: scene.faces.filter(asked),
+    trees: scene.trees.filter(asked),
     measurements: scene.measurements.filter(asked),
   };
 }

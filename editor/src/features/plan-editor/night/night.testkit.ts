@@ -30,7 +30,17 @@ export class HandFrames {
   private calls: (() => void)[] = [];
 
   get deps(): Omit<NightDeps, 'engine'> {
-    return { now: () => this.now, nextFrame: (call) => this.calls.push(call), longEdge: 120 };
+    return {
+      now: () => this.now,
+      nextFrame: (call) => this.calls.push(call),
+      longEdge: 120,
+      later: (_, call) => {
+        this.calls.push(call);
+        return () => {
+          this.calls = this.calls.filter((waiting) => waiting !== call);
+        };
+      },
+    };
   }
 
   /** Shows one picture. */
@@ -62,6 +72,8 @@ export function nightOfYard(engine: LightEngine = engineHere()) {
     groups: [],
     groupOf: new Map(),
     where: london,
+    unit: 'lux',
+    selection: new Set(),
     preview: null,
   };
   const night = new NightController(input, { engine, ...frames.deps });
