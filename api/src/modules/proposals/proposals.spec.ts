@@ -1,4 +1,5 @@
 import { createHash, randomUUID } from 'node:crypto';
+import { PLAN_SCHEMA_VERSION } from '@lampwright/geometry/plan';
 import { emptyPricing } from '@lampwright/geometry/price';
 import type { INestApplicationContext } from '@nestjs/common';
 import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
@@ -131,6 +132,35 @@ describe('freezing', () => {
     expect(stored?.document).not.toMatch(/"\w*(cost|margin|markup|supplier)\w*":/i);
     expect((await detail(id)).document).toEqual(document);
     expect(await kindsOf(job)).toContain('proposal-frozen');
+  });
+
+  it('keeps the form of the plan, and where its evenings are: about the property, or where the company is', async () => {
+    const own = await addPricedCompany(test);
+    const elsewhere = await addReadyJob(test, own);
+    const place = { latitude: 51.5074, longitude: -0.1278 };
+    await own.owner.agent
+      .patch('/api/company')
+      .send({ settings: { timeZone: 'Europe/London', place } })
+      .expect(200);
+    const evenings = async () => {
+      await freeze(own.designer.agent, elsewhere.jobId);
+      return (await storedRevisions(elsewhere)).map(({ document }) => {
+        const { evening, plan } = revisionDocumentSchema.parse(JSON.parse(document));
+        expect(plan.schema).toBe(PLAN_SCHEMA_VERSION);
+        return evening;
+      });
+    };
+    const timeZone = 'Europe/London';
+    const company = { place: { latitude: 51.51, longitude: -0.13 }, timeZone };
+    expect(await evenings()).toEqual([company]);
+    await test.database.executeSql(
+      `UPDATE properties SET latitude = 40.71277, longitude = -74.00597
+        WHERE id = (SELECT property_id FROM jobs WHERE id = $1)`,
+      [elsewhere.jobId],
+    );
+    const property = { place: { latitude: 40.71, longitude: -74.01 }, timeZone };
+    // What was frozen before stays.
+    expect(await evenings()).toEqual([company, property]);
   });
 
   it('happens once for a key, and anew for another', async () => {

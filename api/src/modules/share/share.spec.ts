@@ -5,6 +5,8 @@ import type { TestApp } from '../../../test/harness.js';
 import { ObjectStorage } from '../../ports/storage/storage.js';
 import { addPricedCompany, type PricedCompany } from '../pricing/pricing.testkit.js';
 import { post, proposalPath, type ReadyJob, sendTo } from '../proposals/proposals.testkit.js';
+import type { RevisionDocument } from '../proposals/revision-document.js';
+import { type SharedNight, sharedNightSchema } from './share.dto.js';
 import {
   addLink,
   copyProposal,
@@ -170,7 +172,7 @@ describe('the address of a link', () => {
     expect((await pageOf({ ...b.home, agent: a.home.agent })).revisionId).toBe(b.proposal.revisionId);
     expect((await pageOf(a.home)).revisionId).toBe(a.proposal.revisionId);
     const forced = linkCookie(test, a.home.linkId);
-    for (const rest of ['', '/papers/proposal', `/pictures/${job.sheetId}`])
+    for (const rest of ['', '/night', '/papers/proposal', `/pictures/${job.sheetId}`])
       await test.agent().get(sharePath(b.home.linkId, rest)).set('Cookie', forced).expect(404);
     await test.agent().post(sharePath(b.home.linkId, '/opened')).set('Cookie', forced).expect(404);
     await test.agent().get(sharePath(b.home.linkId)).expect(404);
@@ -240,9 +242,11 @@ describe('the page', () => {
     await post(home.agent, sharePath(home.linkId, '/approve'), yesTo(page)).expect(200);
     const before = await digests();
     expect(Object.keys(before).length).toBeGreaterThan(20);
+    expect((await nightOf(home)).scenes).toHaveLength(1);
     for (let round = 0; round < 2; round += 1) {
       const anew = await open(test, home.token);
       const { pictures, papers } = await pageOf(anew);
+      await nightOf(anew);
       expect(pictures).toHaveLength(1);
       for (const { url } of pictures) await anew.agent.get(url).expect(200);
       for (const { url } of papers) if (url !== null) await anew.agent.get(url).expect(200);
@@ -345,6 +349,92 @@ describe('the page', () => {
   });
 });
 
+describe('the night', () => {
+  const place = { latitude: 40.71, longitude: -74.01 };
+  const freeze = async (edit: (document: RevisionDocument) => object) => {
+    const [row] = await rows<{ document: string }>(
+      'SELECT document FROM proposal_revisions WHERE id = $1',
+      base,
+    );
+    const document = JSON.parse(row!.document) as RevisionDocument;
+    return { document: JSON.stringify({ ...document, ...edit(document) }) };
+  };
+
+  it('is made from the frozen plan: lamps with their groups, hours and place, and nothing of the company’s', async () => {
+    const secret = 'The spare key is under the pot';
+    const evening = { place, timeZone: 'America/New_York' };
+    const { home } = await fresh(
+      await freeze(({ plan }) => ({
+        evening,
+        plan: {
+          ...plan,
+          records: plan.records.map((record) => ('note' in record ? { ...record, note: secret } : record)),
+        },
+      })),
+    );
+    const answer = await home.agent.get(sharePath(home.linkId, '/night')).expect(200);
+    expect(answer.headers['cache-control']).toBe('no-store');
+    const night = sharedNightSchema.parse(answer.body);
+    expect(night.evening).toEqual(evening);
+    const { document } = await pageOf(home);
+    expect(document).not.toHaveProperty('evening');
+    const [scene] = night.scenes;
+    expect(scene).toMatchObject({ sheetId: job.sheetId, view: 'plan', widthPx: 2400, heightPx: 1800 });
+    expect(scene!.sources.map(({ id, groupId }) => [id, groupId])).toEqual([
+      [job.lights[0], null],
+      [job.lights[1], null],
+      [job.lights[2], 'more'],
+    ]);
+    expect(scene!.zones.map(({ schedule }) => schedule.off)).toEqual([{ kind: 'clock', at: '23:00' }]);
+    const [light] = document.lights;
+    for (const word of [String(COST), secret, light!.name, document.client.name, '"records"', '"item'])
+      expect(answer.text).not.toContain(word);
+    expect(answer.text).not.toMatch(/"\w*(cost|margin|price|minor|volts|note)\w*"/i);
+  });
+
+  it('of a revision from before evenings were frozen has no place, and the clocks of the company', async () => {
+    const { home } = await fresh(
+      await freeze(({ evening: _evening, plan: { schema: _schema, ...plan }, ...rest }) => ({
+        ...rest,
+        evening: undefined,
+        plan: { ...plan, records: plan.records.map(inFirstForm) },
+      })),
+    );
+    const settings = { timeZone: 'America/Denver', place };
+    await company.owner.agent.patch('/api/company').send({ settings }).expect(200);
+    const night = await nightOf(home);
+    expect(night.evening).toEqual({ place: null, timeZone: 'America/Denver' });
+    expect(night.scenes[0]?.sources).toHaveLength(3);
+  });
+
+  it('is that of the newest revision that was sent; of one that is over it is still to be seen', async () => {
+    const timeZone = 'Europe/London';
+    const { home, proposal } = await fresh();
+    const later = await sendCopy(test, company.companyId, proposal.revisionId, { sentAt: null });
+    const document = await freeze(() => ({ revision: 2, evening: { place: null, timeZone } }));
+    await test.database.executeSql('UPDATE proposal_revisions SET document = $1 WHERE id = $2', [
+      document.document,
+      later,
+    ]);
+    expect((await nightOf(home)).evening.timeZone).not.toBe(timeZone);
+    await test.database.executeSql('UPDATE proposal_revisions SET sent_at = now() WHERE id = $1', [later]);
+    expect((await nightOf(home)).evening.timeZone).toBe(timeZone);
+    await test.database.executeSql(
+      'UPDATE proposal_revisions SET withdrawn_at = now() WHERE proposal_id = $1',
+      [proposal.proposalId],
+    );
+    expect((await pageOf(home)).state).toBe('withdrawn');
+    expect((await nightOf(home)).scenes).toHaveLength(1);
+    const expired = await fresh({ validUntil: new Date('2020-01-01T00:00:00Z') });
+    expect((await nightOf(expired.home)).scenes).toHaveLength(1);
+  });
+
+  it('has no scene where no sheet has a picture', async () => {
+    const { home } = await fresh({ pictures: {} });
+    expect((await nightOf(home)).scenes).toEqual([]);
+  });
+});
+
 describe('questions', () => {
   const about = { recordId: null, point: null };
 
@@ -421,6 +511,15 @@ describe('questions', () => {
     await reply(b.home).expect(404);
   });
 });
+
+const nightOf = async ({ agent, linkId }: Homeowner): Promise<SharedNight> =>
+  (await agent.get(sharePath(linkId, '/night')).expect(200)).body;
+
+/** A record as plans had it before they knew where fixtures point and when they are on. */
+function inFirstForm<T extends object>(record: T): T {
+  const later = ['whiteLux', 'schedule', 'aim', 'mountingHeightMeters', 'zoneId', 'lightTarget'];
+  return Object.fromEntries(Object.entries(record).filter(([key]) => !later.includes(key))) as T;
+}
 
 async function proposalIdOf(revisionId: string): Promise<string> {
   const [row] = await rows<{ proposal_id: string }>(
