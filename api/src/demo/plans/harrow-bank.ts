@@ -95,7 +95,8 @@ export function drawHarrowBank(plan: PlanBuilder): void {
   ]);
   const [toTree] = plan.cable(CABLE, [transformer, wall, ...shrubs, ...tree]);
   plan.land(toTree!, 'Wall and tree', '15V', 'C2');
-  plan.aim([wall], [1512, 721], 1.3);
+  // Past the shrub that it stands beside.
+  plan.aim([wall], [1462, 720], 1.4);
   const [betweenShrubs, atLastShrub] = shrubs.map((id) => [id]);
   plan.aim(betweenShrubs!, [1614, 722], 1.5);
   plan.aim(atLastShrub!, [1794, 738], 0.9);

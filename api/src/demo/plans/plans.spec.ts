@@ -1,17 +1,8 @@
-import {
-  type EstimateAnswer,
-  estimateRequestOf,
-  normalizeEstimateRequest,
-  type PlanFault,
-  planFaults,
-  scaleOfSheet,
-  sheetPoint,
-} from '@lampwright/geometry/estimate';
+import { type PlanFault, scaleOfSheet, sheetPoint } from '@lampwright/geometry/estimate';
 import { distanceToPolygon } from '@lampwright/geometry/measure';
 import {
   cablePoints,
   changeProblems,
-  defaultSettings,
   itemOf,
   labelOf,
   type PlanDocument,
@@ -23,53 +14,11 @@ import {
   recordsOf,
 } from '@lampwright/geometry/plan';
 import { beforeAll, describe, expect, it } from 'vitest';
-import { solveEstimate } from '../../circuit/index.js';
-import { starterCatalogue } from '../../modules/catalogue/starter/index.js';
-import { PlanBuilder } from '../plan-builder.js';
 import { drawHarrowBank, HARROW_BANK_SHEET } from './harrow-bank.js';
+import { type Drawn, drawn } from './plans.testkit.js';
 import { drawSandpiperRow, SANDPIPER_ROW_SHEET } from './sandpiper-row.js';
 
 const FEET = 0.3048;
-
-const catalogue = (name: string) => {
-  const item = starterCatalogue.find((entry) => entry.name === name);
-  if (!item) throw new Error(`The starter catalogue has no "${name}".`);
-  return { sourceId: null, item };
-};
-
-interface Drawn {
-  readonly plan: PlanDocument;
-  readonly builder: PlanBuilder;
-  readonly answer: EstimateAnswer;
-  readonly faults: PlanFault[];
-}
-
-function drawn(
-  draw: (plan: PlanBuilder) => void,
-  sheet: typeof HARROW_BANK_SHEET | typeof SANDPIPER_ROW_SHEET,
-): Drawn {
-  const start = planOf([
-    defaultSettings('us'),
-    {
-      kind: 'sheet',
-      id: 'sheet',
-      name: 'Sheet',
-      order: 0,
-      ...sheet,
-      pixelsPerPaperMeter: sheet.view === 'plan' ? 200 / 0.0254 : null,
-      references: [],
-      groundMetersPerPaperMeter: null,
-      whiteLux: null,
-    },
-  ]);
-  const builder = new PlanBuilder(start, 'sheet', catalogue, 'demo');
-  draw(builder);
-  const { plan } = builder;
-  const estimate = estimateRequestOf(plan);
-  if (!estimate.request) throw new Error('There is nothing to estimate.');
-  const answer = solveEstimate(normalizeEstimateRequest(estimate.request));
-  return { plan, builder, answer, faults: planFaults(plan, answer, { estimate }) };
-}
 
 /** Labels of the fixtures with that fault, as they stand on the plan. */
 const labelsWith = ({ plan, faults }: Drawn, code: PlanFault['code']) =>

@@ -109,7 +109,7 @@ function drawWestBed(plan: PlanBuilder, transformer: string): void {
   const beds = [south!, middle!, north!, far!];
   for (const [i, tree] of westTrees.entries()) plan.aim([beds[i]!], tree.at, tree.aimMeters);
   plan.zone(
-    'West bed trees',
+    'West side',
     { on: { kind: 'sunset', minutesAfter: 30 }, off: { kind: 'clock', at: '22:00' } },
     beds,
   );
