@@ -119,7 +119,7 @@ const answer: EstimateAnswer = {
   transformers: [],
   warnings: [],
 };
-const words = { lengthText: () => '', areaText: () => '', cableLength: () => '3.00 m' };
+const words = { lengthText: () => '', areaText: () => '', heightText: () => '', cableLength: () => '3.00 m' };
 const scene = buildScene(doc, 's', { answers: indexAnswer(answer), unwired: new Set(['f4']) }, words);
 const byId = new Map(scene.fixtures.map((f) => [f.id, f]));
 

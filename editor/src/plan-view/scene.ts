@@ -2,12 +2,14 @@ import type { CableAnswer } from '@lampwright/geometry/estimate';
 import {
   type AreaRecord,
   cablePoints,
+  type FaceRecord,
   initialOf,
   itemOf,
   type NoteRecord,
   type PlanDocument,
   type PlanPoint,
   recordOf,
+  type TreeRecord,
 } from '@lampwright/geometry/plan';
 import type { Answers } from './answers';
 import { cableColour, cableWeight, type LoadBand, loadBand } from './cable-look';
@@ -82,6 +84,7 @@ export const emptyScene: Scene = {
 export interface SceneWords {
   readonly areaText: (area: AreaRecord) => string;
   readonly lengthText: (points: readonly PlanPoint[]) => string;
+  readonly heightText: (heightMeters: number) => string;
   /** The length of a cable as the estimate counts it; empty while it has none. */
   readonly cableLength: (cableId: string) => string;
 }
@@ -190,10 +193,20 @@ export function buildScene(
         });
         break;
       case 'face':
-        faces.push({ id: record.id, foot: record.foot, top: record.top, label: tagOf(doc, record) });
+        faces.push({
+          id: record.id,
+          foot: record.foot,
+          top: record.top,
+          label: uprightText(doc, record, words),
+        });
         break;
       case 'tree':
-        trees.push({ id: record.id, foot: record.foot, outline: record.outline, label: tagOf(doc, record) });
+        trees.push({
+          id: record.id,
+          foot: record.foot,
+          outline: record.outline,
+          label: uprightText(doc, record, words),
+        });
         break;
       case 'measurement':
         measurements.push({ id: record.id, points: record.points, text: words.lengthText(record.points) });
@@ -253,6 +266,10 @@ function cableText(length: string, reading: CableAnswer | undefined): string {
   if (reading === undefined) return length;
   const lost = `${Math.abs(reading.dropVolts).toFixed(2)} V lost`;
   return [length, ampsText(reading.amps), lost].filter(Boolean).join(' · ');
+}
+
+function uprightText(doc: PlanDocument, record: FaceRecord | TreeRecord, words: SceneWords): string {
+  return [tagOf(doc, record), words.heightText(record.heightMeters)].filter(Boolean).join(' · ');
 }
 
 function firstLine(note: NoteRecord): string {

@@ -57,8 +57,10 @@ describe('the edge of a beam', () => {
   ])('%d m above the ground, %d° wide, is a circle of 2·d·tan(β/2)', (d, degrees) => {
     const down = pose(1, 1, d, [0, 0, -1]);
     const half = (degrees * Math.PI) / 360;
-    const edge = beamEdge(down, half, reachOf(down, nothing), nothing);
-    for (const p of edge) {
+    const [edge, ...others] = beamEdge(down, half, reachOf(down, nothing), nothing);
+    expect(others).toEqual([]);
+    expect(edge!.at(-1)).toEqual(edge![0]);
+    for (const p of edge!) {
       expect(p.z).toBeCloseTo(0, 12);
       expect(2 * Math.hypot(p.x - 1, p.y - 1)).toBeCloseTo(2 * d * Math.tan(half), 9);
     }
@@ -67,24 +69,41 @@ describe('the edge of a beam', () => {
   it('is an ellipse where the beam falls slanting, from the angles of its near and far edge', () => {
     const light = pose(0, 0, 3, slanted(40));
     const half = (15 * Math.PI) / 180;
-    const ys = beamEdge(light, half, reachOf(light, nothing), nothing).map((p) => p.y);
+    const ys = beamEdge(light, half, reachOf(light, nothing), nothing)
+      .flat()
+      .map((p) => p.y);
     expect(Math.min(...ys)).toBeCloseTo(3 * Math.tan((25 * Math.PI) / 180), 3);
     expect(Math.max(...ys)).toBeCloseTo(3 * Math.tan((55 * Math.PI) / 180), 3);
   });
 
-  it('climbs the wall that it meets, and goes on where there is nothing', () => {
+  it('climbs the wall that it meets, and is left open where it passes over', () => {
     const light = pose(0, 2, 0.15, [0, Math.SQRT1_2, Math.SQRT1_2]);
-    const half = Math.PI / 5;
     const reach = reachOf(light, { walls: [wall], crowns: [] });
     expect(reach.on).toBe('face');
-    const edge = beamEdge(light, half, reach, { walls: [wall] });
-    expect(edge.filter((p) => Math.abs(p.y - 3) < 1e-9).length).toBeGreaterThan(20);
-    for (const p of edge) expect(p.y).toBeLessThan(3 + 1e-9);
-    const up = pose(0, 0, 0, [0, 0, 1]);
-    for (const p of beamEdge(up, half, reachOf(up, nothing), nothing)) {
-      expect(p.z).toBeCloseTo(4, 9);
-      expect(Math.hypot(p.x, p.y)).toBeCloseTo(4 * Math.tan(half), 9);
+    const edge = beamEdge(light, Math.PI / 5, reach, { walls: [wall] });
+    expect(edge).toHaveLength(1);
+    expect(edge[0]!.length).toBeGreaterThan(20);
+    expect(edge[0]!.at(-1)).not.toEqual(edge[0]![0]);
+    for (const p of edge[0]!) {
+      expect(p.y).toBeLessThan(3 + 1e-9);
+      expect(p.z).toBeLessThanOrEqual(3);
     }
+  });
+
+  it('is a circle across the beam where it goes into the air', () => {
+    const up = pose(0, 0, 0, [0, 0, 1]);
+    const [edge] = beamEdge(up, Math.PI / 5, reachOf(up, nothing), nothing);
+    for (const p of edge!) {
+      expect(p.z).toBeCloseTo(4, 9);
+      expect(Math.hypot(p.x, p.y)).toBeCloseTo(4 * Math.tan(Math.PI / 5), 9);
+    }
+  });
+
+  it('is only as much of a level beam as falls on the ground near by', () => {
+    const light = pose(0, 0, 0.2, slanted(88));
+    const edge = beamEdge(light, Math.PI / 10, reachOf(light, nothing), nothing).flat();
+    expect(edge.length).toBeGreaterThan(10);
+    for (const p of edge) expect(p.z).toBeCloseTo(0, 9);
   });
 
   it('is nowhere for light that goes all around', () => {

@@ -37,16 +37,17 @@ export function reachOf(pose: LightPose, { walls, crowns }: Pick<LightSpace, 'wa
 }
 
 /**
- * The edge of a beam, where it has half of its peak, as a loop of points in order: on the ground and the walls
- * that it meets, else on the circle across the beam at the distance that its middle reaches, 2·d·tan(β/2) wide.
- * Empty where it has no edge: for light that goes all around, or a half angle of 90° and more.
+ * The edge of a beam, where it has half of its peak, as lines in space. Of a beam that meets ground or a wall: its
+ * edge there, as far as it meets anything. Of one that goes into a crown or the air: the circle across it at the
+ * distance that its middle reaches, 2·d·tan(β/2) wide. A line that closes ends with its first point. None where
+ * a beam has no edge: for light that goes all around, or a half angle of 90° and more.
  */
 export function beamEdge(
   pose: LightPose,
   halfAngle: number,
   reach: Reach,
   { walls }: Pick<LightSpace, 'walls'>,
-): readonly Point3[] {
+): readonly (readonly Point3[])[] {
   if (!(halfAngle < Math.PI / 2)) return [];
   const { axis } = pose;
   // Whatever is not along the axis gives two directions that are square to it.
@@ -55,12 +56,30 @@ export function beamEdge(
   const slant = reach.meters / Math.cos(halfAngle);
   const part = (k: 0 | 1 | 2, turn: number): number =>
     axis[k] * Math.cos(halfAngle) + (u[k] * Math.cos(turn) + v[k] * Math.sin(turn)) * Math.sin(halfAngle);
-  return Array.from({ length: EDGE_STEPS }, (_, i) => {
+  const onSurface = reach.on === 'ground' || reach.on === 'face';
+  const edge = Array.from({ length: EDGE_STEPS }, (_, i) => {
     const turn = (i / EDGE_STEPS) * 2 * Math.PI;
     const direction: Axis = [part(0, turn), part(1, turn), part(2, turn)];
-    const met = firstMet(pose, direction, walls, [], slant * FARTHEST);
-    return met?.point ?? along(pose, direction, slant);
+    if (!onSurface) return along(pose, direction, slant);
+    return firstMet(pose, direction, walls, [], slant * FARTHEST)?.point ?? null;
   });
+  return linesOf(edge);
+}
+
+/** A loop with gaps as the lines between them. */
+function linesOf(loop: readonly (Point3 | null)[]): Point3[][] {
+  const gap = loop.indexOf(null);
+  if (gap < 0) return [[...(loop as Point3[]), loop[0]!]];
+  const lines: Point3[][] = [];
+  let line: Point3[] = [];
+  for (const p of [...loop.slice(gap), ...loop.slice(0, gap), null]) {
+    if (p !== null) line.push(p);
+    else if (line.length > 0) {
+      lines.push(line);
+      line = [];
+    }
+  }
+  return lines.filter(({ length }) => length > 1);
 }
 
 function firstMet(

@@ -7,7 +7,7 @@ export interface AimShape {
   readonly mark: Point;
   readonly from: Point;
   readonly to: Point;
-  readonly edge: readonly Point[];
+  readonly edge: readonly (readonly Point[])[];
 }
 
 /** A lamp that is this far above its mark, in window pixels, is joined to it by a plumb line. */
@@ -15,13 +15,12 @@ const PLUMB_FROM = 7;
 const ARM = 6.5;
 
 /** Where a beam has half of its peak: a dashed line in the lamp's own colour, cased so that it reads over any ground. */
-export function drawBeamEdge(ctx: CanvasRenderingContext2D, camera: Camera, edge: readonly Point[]): void {
+export function drawBeamEdge(ctx: CanvasRenderingContext2D, camera: Camera, edge: AimShape['edge']): void {
   if (edge.length === 0) return;
   ctx.lineJoin = 'round';
   ctx.lineCap = 'butt';
   ctx.beginPath();
-  trace(ctx, camera, edge);
-  ctx.closePath();
+  for (const line of edge) trace(ctx, camera, line);
   ctx.strokeStyle = 'rgba(22, 32, 46, 0.7)';
   ctx.lineWidth = 3.5;
   ctx.stroke();

@@ -121,6 +121,8 @@ export interface LabelDemand {
   readonly chosen: ReadonlySet<string>;
   /** Figures that stand beside a place rather than a mark: of the hovered cable, of measurements. */
   readonly asides: readonly Aside[];
+  /** Places of the window that labels keep off as they do off marks. */
+  readonly keepOff: readonly Point[];
   /** How plainly fixtures' figures are shown: 1, or less while they are of an older plan. */
   readonly alpha: number;
 }
@@ -131,6 +133,8 @@ const RANK_FAULT = 3;
 const RANK_WORST = 2;
 const RANK_UNWIRED = 1;
 const RANK_AREA = 0;
+/** Half the width of a place that labels keep off. */
+const KEPT_OFF = 9;
 /** Marks seen from so far away are small; then only faults and what is asked for keep their labels. */
 const FAR_RADIUS = 6.5;
 
@@ -185,6 +189,7 @@ export function drawLabels(
     const mark = around(toWindow(camera, node.at), r * 1.3);
     if (overlap(mark, view)) marks.push(mark);
   }
+  for (const p of demand.keepOff) marks.push(around(p, KEPT_OFF));
   const asides = new Map(demand.asides.map((aside) => [aside.id, aside]));
   for (const { id, at, text } of demand.asides) {
     const asked = id === demand.hoveredId || demand.chosen.has(id);

@@ -1,4 +1,4 @@
-import { markRadius, toWindow } from '../../../plan-view/camera';
+import { markRadius, type Point, toWindow } from '../../../plan-view/camera';
 import { drawAimCross, drawAimLine, drawBeamEdge } from '../../../plan-view/draw/aim';
 import { handlePlace } from '../tools/aiming';
 import type { PaintState } from './paint-state';
@@ -10,6 +10,14 @@ export function drawAims(ctx: CanvasRenderingContext2D, state: PaintState): void
   const aims = [...selection].flatMap((id) => aimOf(id, inHand?.get(id)) ?? []);
   for (const { edge } of aims) drawBeamEdge(ctx, camera, edge);
   for (const aim of aims) drawAimLine(ctx, camera, aim);
+  if (inHand === null) for (const p of aimCrosses(state)) drawAimCross(ctx, p);
+}
+
+/** Where the crosses of the chosen lights are in the window. */
+export function aimCrosses({ camera, selection, aimOf }: PaintState): Point[] {
   const view = { zoom: () => camera.zoom, markRadius: () => markRadius(camera) };
-  if (inHand === null) for (const aim of aims) drawAimCross(ctx, toWindow(camera, handlePlace(view, aim)));
+  return [...selection].flatMap((id) => {
+    const aim = aimOf(id);
+    return aim === null ? [] : [toWindow(camera, handlePlace(view, aim))];
+  });
 }

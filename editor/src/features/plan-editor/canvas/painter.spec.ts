@@ -10,7 +10,7 @@ function painted() {
     d.doc,
     'sheet',
     { answers: null, unwired: new Set() },
-    { lengthText: () => '', areaText: () => '', cableLength: () => '' },
+    { lengthText: () => '', areaText: () => '', heightText: () => '', cableLength: () => '' },
   );
   const painter = new Painter(1);
   const ids = new Set([d.all('fixture')[0]!.id]);

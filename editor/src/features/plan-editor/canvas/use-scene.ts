@@ -37,6 +37,7 @@ export function useScene() {
       { answers, unwired },
       {
         lengthText,
+        heightText: (m) => `${plainLength(m, units)} high`,
         cableLength: (id) => {
           const total = lengths.get(id)?.totalMeters ?? null;
           return total === null ? '' : plainLength(total, units);

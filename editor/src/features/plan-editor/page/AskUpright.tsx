@@ -153,7 +153,7 @@ export function AskTree({ request, done }: AskProps<'tree'>) {
         <strong>Tree or shrub</strong>
       </p>
       <label className={styles.row}>
-        <span>Height of its top</span>
+        <span>Top</span>
         <input
           ref={first}
           value={height}
@@ -164,7 +164,7 @@ export function AskTree({ request, done }: AskProps<'tree'>) {
         />
       </label>
       <label className={styles.row}>
-        <span>Crown begins at</span>
+        <span>Crown from</span>
         <input value={base} placeholder="0: a shrub" onChange={(e) => setBase(e.target.value)} />
       </label>
       {seen !== null && (

@@ -23,9 +23,14 @@ export function Legend() {
     }
     return found;
   }, [doc, sheetId, answers, unwired]);
-  if (counts.size === 0) return null;
+  const uprights = useMemo(() => {
+    const on = (kind: 'face' | 'tree') =>
+      [...recordsOf(doc, kind)].filter((record) => record.sheetId === sheetId).length;
+    return { faces: on('face'), trees: on('tree') };
+  }, [doc, sheetId]);
+  if (counts.size === 0 && uprights.faces + uprights.trees === 0) return null;
   return (
-    <ul className={styles.legend} aria-label="Fixtures on this sheet">
+    <ul className={styles.legend} aria-label="What is on this sheet">
       {lookOrder
         .filter((kind) => counts.has(kind))
         .map((kind) => (
@@ -34,6 +39,45 @@ export function Legend() {
             {lookWord(kind)} {counts.get(kind)}
           </li>
         ))}
+      {uprights.faces > 0 && (
+        <li>
+          <FaceGlyph />
+          {uprights.faces === 1 ? 'Wall face' : `Wall faces ${uprights.faces}`}
+        </li>
+      )}
+      {uprights.trees > 0 && (
+        <li>
+          <TreeGlyph />
+          {uprights.trees === 1 ? 'Tree' : `Trees ${uprights.trees}`}
+        </li>
+      )}
     </ul>
+  );
+}
+
+function FaceGlyph() {
+  return (
+    <svg width="18" height="16" viewBox="0 0 18 16" aria-hidden="true" focusable="false">
+      <path
+        d="M1 3h16v10H1zM4.2 3v3M7.4 3v3M10.6 3v3M13.8 3v3"
+        fill="none"
+        stroke="currentColor"
+        strokeWidth="1.2"
+      />
+    </svg>
+  );
+}
+
+function TreeGlyph() {
+  return (
+    <svg width="14" height="16" viewBox="0 0 14 16" aria-hidden="true" focusable="false">
+      <path
+        d="M7 9v5M2 5.5a5 4.5 0 0 1 10 0 5 4 0 0 1-10 0z"
+        fill="none"
+        stroke="currentColor"
+        strokeWidth="1.2"
+      />
+      <circle cx="7" cy="14" r="1.6" fill="currentColor" />
+    </svg>
   );
 }

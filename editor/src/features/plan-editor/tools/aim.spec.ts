@@ -172,7 +172,7 @@ describe('the cross of a chosen light', () => {
   it('shows a beam on the ground 2·d·tan(β/2) wide', () => {
     const d = lights();
     const { edge } = drawnAim(world(d), d.all('fixture')[0]!.id)!;
-    const xs = edge.map((p) => p.x);
+    const xs = edge.flat().map((p) => p.x);
     // 120° from 0.5 m: the usual beam and height of a path light; 100 pixels a metre.
     expect(Math.max(...xs) - Math.min(...xs)).toBeCloseTo(100 * 2 * 0.5 * Math.tan(Math.PI / 3), 0);
   });

@@ -16,7 +16,7 @@ export function handlePlace(view: View, drawn: DrawnAim): Point {
   const clear = (view.markRadius() + HANDLE_CLEAR) / view.zoom();
   const away = distance(drawn.mark, drawn.to);
   if (away >= clear) return drawn.to;
-  if (away < 1e-6) return { x: drawn.mark.x + clear, y: drawn.mark.y };
+  if (away < 1e-6) return { x: drawn.mark.x + clear * Math.SQRT1_2, y: drawn.mark.y + clear * Math.SQRT1_2 };
   const k = clear / away;
   return {
     x: drawn.mark.x + (drawn.to.x - drawn.mark.x) * k,

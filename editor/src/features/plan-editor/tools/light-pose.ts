@@ -85,14 +85,15 @@ export function poseOf(world: World, fixtureId: string, aim?: Aim | null): Posed
   };
 }
 
-/** A beam aimed at a place in the air reaches to that place where nothing stands in its way. */
+/** A beam aimed at a place in the air or in a crown reaches to that place, unless ground or a wall is in its way. */
 function aimedReach(pose: LightPose, { scene, space }: Lit, aim: Aim | null): Reach {
   const reach = reachOf(pose, space);
-  if (reach.on !== 'nothing' || aim?.kind !== 'point') return reach;
+  if (reach.on === 'ground' || reach.on === 'face' || aim?.kind !== 'point') return reach;
   const ground = groundUnder(scene, aim.at);
   if (ground === null) return reach;
   const point = { ...ground, z: aim.heightMeters };
-  return { on: 'nothing', point, meters: Math.hypot(point.x - pose.x, point.y - pose.y, point.z - pose.z) };
+  const away = Math.hypot(point.x - pose.x, point.y - pose.y, point.z - pose.z);
+  return { on: reach.on, point, meters: away };
 }
 
 /** What is drawn of a light's aim, in sheet pixels. */
@@ -104,8 +105,8 @@ export interface DrawnAim {
   /** What the middle of its beam meets. */
   readonly to: Point;
   readonly on: Reach['on'];
-  /** The edge of the beam at half of its peak; empty where it has none. */
-  readonly edge: readonly Point[];
+  /** The edge of the beam at half of its peak, as lines; none where it has no edge. */
+  readonly edge: readonly (readonly Point[])[];
 }
 
 export function drawnAim(world: World, fixtureId: string, aim?: Aim | null): DrawnAim | null {
@@ -117,13 +118,15 @@ export function drawnAim(world: World, fixtureId: string, aim?: Aim | null): Dra
   const from = see(posed.pose);
   const to = see(posed.reach.point);
   if (from === null || to === null) return null;
-  const edge = beamEdge(posed.pose, posed.halfAngle, posed.reach, posed.space).map(see);
+  const edge = beamEdge(posed.pose, posed.halfAngle, posed.reach, posed.space).map((line) =>
+    line.flatMap((p) => see(p) ?? []),
+  );
   return {
     mark: fixture.at,
     from,
     to,
     on: posed.reach.on,
-    edge: edge.every((p) => p !== null) ? edge : [],
+    edge,
   };
 }
 
