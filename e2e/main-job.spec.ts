@@ -119,7 +119,7 @@ test('from a yard photo to eight lamps in their window', async ({ page, browser 
     expect(Math.abs(figure - byHand.get('U8')!)).toBeLessThanOrEqual(0.1);
 
     await expect(plan.faultsButton).toHaveText(/^\d+ faults before sharing$/);
-    await expect(theirs.getByRole('list', { name: 'Fixtures on this sheet' })).toContainText(/Dim \d/);
+    await expect(theirs.getByRole('list', { name: 'What is on this sheet' })).toContainText(/Dim \d/);
     await plan.tool('Select');
     await plan.line(/^U8/).click();
     await expect(
@@ -151,7 +151,7 @@ test('from a yard photo to eight lamps in their window', async ({ page, browser 
     expect(await plan.selection()).toEqual([homeRun!.id]);
     await plan.inspector.getByLabel('Gauge').selectOption({ label: '8 AWG landscape cable, 2-core' });
     await expect(plan.faultsButton).toHaveText(/^No faults/);
-    await expect(theirs.getByRole('list', { name: 'Fixtures on this sheet' })).toHaveText('In window 8');
+    await expect(theirs.getByRole('list', { name: 'What is on this sheet' })).toHaveText('In window 8');
     const byHand = voltsByHand(supply, runByHand(8), lamp);
     const volts = await plan.volts();
     for (const [tag, expected] of byHand) expect(volts[idOf(tag)], tag).toBeCloseTo(expected, 1);
