@@ -8,7 +8,7 @@ import { BODY, SECTION, type Writing } from './parts.js';
 
 const LABEL: TextStyle = { size: 8, weight: 'medium', colour: colours.quiet };
 /** Shares of the width. */
-const COLUMNS = [0.46, 0.32, 0.22] as const;
+const COLUMNS = [0.42, 0.3, 0.28] as const;
 const COLUMN_GAP = 22;
 const GAP = 9;
 /** A picture that the words would leave less than this of its height is given it, and they go on overleaf. */
