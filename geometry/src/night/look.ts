@@ -71,9 +71,9 @@ const PHOTO_NIGHT = 0.03;
 const PLAN_NIGHT = 0.045;
 const NIGHT_SATURATION = 0.4;
 const LIT_SATURATION = 0.55;
-const NIGHT_KNEE = 0.6;
+const NIGHT_KNEE = 0.5;
 /** White paper throws back several times as much light as a garden does. */
-const PLAN_LAMPS = 0.4;
+const PLAN_LAMPS = 0.25;
 
 /**
  * The look at an altitude of the sun. The ten thousandfold fall of daylight through dusk is drawn over the thirtyfold

@@ -120,7 +120,11 @@ export function surfaceMapOf(scene: NightScene, longEdge: number): SurfaceMap {
     ny: samples.ny.subarray(0, samples.count),
     nz: samples.nz.subarray(0, samples.count),
     depth,
-    leaves: leavesOf(samples, blockStart, width, height, blocksAcross),
+    // A drawing is no leaves but paper.
+    leaves:
+      scene.view === 'plan'
+        ? new Uint8Array(width * height)
+        : leavesOf(samples, blockStart, width, height, blocksAcross),
     crownIds: surfaces.crownIds,
   };
 }

@@ -66,9 +66,11 @@ export const surfacePoint = (): SurfacePoint => ({
 });
 
 /** Of what is seen of a crown so much is its outermost leaves; the rest are seen between them, further in. */
-const LEAVES_BEFORE = 0.6;
-/** Those are so far in, from the surface to the middle of the crown; light comes to them from all around. */
-const INSIDE_SHARE = 0.7;
+const LEAVES_BEFORE = 0.7;
+/** Those are so far in, from the surface to the middle of the crown; light comes to them from more sides. */
+const INSIDE_SHARE = 0.5;
+/** How much of the way that the bulge faces is left in there. */
+const INSIDE_FACING = 0.4;
 
 /** On a photo the nearest mark is seen, before the ground; above the horizon there is nothing. */
 function onPhoto(scene: NightScene): Surfaces {
@@ -107,14 +109,15 @@ function onPhoto(scene: NightScene): Surfaces {
         take(near);
         return;
       }
-      near.share = LEAVES_BEFORE;
+      const rim = near.share;
+      near.share = rim * LEAVES_BEFORE;
       take(near);
       near.x += near.inX * INSIDE_SHARE;
       near.y += near.inY * INSIDE_SHARE;
-      near.nx = 0;
-      near.ny = 0;
-      near.nz = 0;
-      near.share = 1 - LEAVES_BEFORE;
+      near.nx *= INSIDE_FACING;
+      near.ny *= INSIDE_FACING;
+      near.nz *= INSIDE_FACING;
+      near.share = rim * (1 - LEAVES_BEFORE);
       take(near);
       near.share = 1;
     },
@@ -223,6 +226,11 @@ function crownPatch(viewer: Viewer, stand: PlanePoint, tree: Tree, crown: Crown,
   };
 }
 
+/** Between these shares of its radius a crown grows thinner, by so much: outlines go around its outermost leaves. */
+const RIM_FROM = 0.8;
+const RIM_TO = 1.05;
+const RIM_THIN = 0.6;
+
 /** The point of a crown's ellipsoid that faces the viewer, so far aside and so high. */
 function roundAt(
   crown: Crown,
@@ -242,6 +250,8 @@ function roundAt(
   into.x = crown.x + across.x * aside + tx * out * crown.radiusMeters;
   into.y = crown.y + across.y * aside + ty * out * crown.radiusMeters;
   into.z = z;
+  const rim = Math.min(Math.max((Math.sqrt(s * s + h * h) - RIM_FROM) / (RIM_TO - RIM_FROM), 0), 1);
+  into.share = 1 - RIM_THIN * rim * rim * (3 - 2 * rim);
   const sx = (across.x * s + tx * out) / crown.radiusMeters;
   const sy = (across.y * s + ty * out) / crown.radiusMeters;
   const sz = h / crown.halfHeightMeters;
@@ -348,6 +358,8 @@ const BAND_HEIGHT_SHARE = 0.4;
 const BAND_MOST_HEIGHT = 1.2;
 /** Of what is seen from above under a tree, its crown is so much; the rest is the ground between its leaves. */
 const CROWN_SHARE = 0.6;
+/** Heights in a crown at which its light is taken: from its base at −1 to its top at 1. */
+const CROWN_LEVELS = [-0.6, 0, 0.6] as const;
 
 /**
  * A drawing from above: the ground, the crowns that light shines up into, and walls as a band of light at their
@@ -379,20 +391,14 @@ function onPlan(scene: NightScene): Surfaces {
       let left = 1;
       for (const [i, { tree, crown, box }] of crowns.entries()) {
         if (!isInBox(box, u, v) || !isInside(tree.outline, u, v)) continue;
-        // Light from all around soaks into the crown: taken halfway up, facing the sky.
-        Object.assign(point, {
-          kind: SurfaceKind.crown,
-          owner: i + 1,
-          x,
-          y,
-          z: crown.z,
-          nx: 0,
-          ny: 0,
-          nz: 0,
-        });
-        point.share = left * CROWN_SHARE;
-        left -= point.share;
-        take(point);
+        // Seen from above are leaves at all heights, lit from all around.
+        Object.assign(point, { kind: SurfaceKind.crown, owner: i + 1, x, y, nx: 0, ny: 0, nz: 0 });
+        point.share = (left * CROWN_SHARE) / CROWN_LEVELS.length;
+        for (const level of CROWN_LEVELS) {
+          point.z = crown.z + level * crown.halfHeightMeters;
+          take(point);
+        }
+        left *= 1 - CROWN_SHARE;
       }
       for (const [i, wall] of space.walls.entries()) {
         const dx = wall.bx - wall.ax;
