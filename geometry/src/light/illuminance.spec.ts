@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { seeded } from '../plan/plan.testkit.js';
-import { crownSurface, groundLux, luxAt } from './illuminance.js';
+import { crownSurface, groundLux, leavesLux, luxAt } from './illuminance.js';
 import { building, crown, down, lamp, randomAxis, spaceWith, towards, up, wall } from './light.testkit.js';
 import type { LightSpace } from './space.js';
 
@@ -176,6 +176,22 @@ describe('what stops light', () => {
     expect(luxAt(space, lit.point, lit.normal)).toBeCloseTo(800 / 1.5 ** 2, 6);
     const far = crownSurface(tree, 0, 0.3);
     expect(luxAt(space, far.point, far.normal)).toBe(0);
+  });
+
+  it('falls on leaves most on the side towards the lamp, by half on the edge of it, and not on the far side', () => {
+    const tree = crown([3, 0, 2.5], 1.5, 1.5);
+    const far = lamp([-97, 0, 2.5], { candela: 800 });
+    const space = spaceWith({ sources: [far], crowns: [tree] });
+    const on = (azimuth: number) => {
+      const { point, normal } = crownSurface(tree, azimuth, 0);
+      return leavesLux(space, point, normal);
+    };
+    expect(on(Math.PI)).toBeCloseTo(800 / 98.5 ** 2, 9);
+    expect(on(Math.PI / 2) / on(Math.PI)).toBeCloseTo(0.5, 1);
+    expect(on(0)).toBeLessThan(1e-9);
+    const walled = spaceWith({ ...space, walls: [wall([0, -9], [0, 9], 6)] });
+    const { point, normal } = crownSurface(tree, Math.PI, 0);
+    expect(leavesLux(walled, point, normal)).toBe(0);
   });
 
   it('is not the crown that the lamp hangs in', () => {

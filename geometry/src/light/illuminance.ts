@@ -72,6 +72,25 @@ export function groundLux(space: LightSpace, x: number, y: number): number {
   return luxAt(space, { x, y, z: 0 }, UP);
 }
 
+/**
+ * Lux of all lamps on the leaves at a point of a crown's surface. Leaves stand at all angles, so that of the light
+ * which comes they take half of (1 + cosine of its angle to the bulge): all on the side towards the lamp, none on
+ * the side away.
+ */
+export function leavesLux(space: LightSpace, point: Point3, normal: Point3): number {
+  let sum = 0;
+  for (const lamp of lampsOf(space)) {
+    const { x, y, z } = lamp.source;
+    const [dx, dy, dz] = [x - point.x, y - point.y, z - point.z];
+    const distance = Math.hypot(dx, dy, dz);
+    if (distance === 0) continue;
+    const towards = { x: dx / distance, y: dy / distance, z: dz / distance };
+    const cosine = towards.x * normal.x + towards.y * normal.y + towards.z * normal.z;
+    sum += 0.5 * (1 + cosine) * luxOf(lamp, point, towards);
+  }
+  return sum;
+}
+
 /** A point of a crown's surface, where light is caught, and the way that it faces; angles in radians from its middle. */
 export function crownSurface(
   crown: Crown,

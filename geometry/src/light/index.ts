@@ -7,6 +7,7 @@ export * from './neighbours.js';
 export * from './night-scene.js';
 export * from './output.js';
 export * from './photometry.js';
+export * from './placing/index.js';
 export * from './reach.js';
 export * from './scene-of-plan.js';
 export * from './space.js';
