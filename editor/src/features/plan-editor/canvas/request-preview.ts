@@ -6,7 +6,7 @@ export function requestPreview(request: Request | null): Preview | null {
     case 'area':
       return { kind: 'polygon', points: [...request.points, request.points[0]!], pending: null };
     case 'face':
-      return { kind: 'face', foot: request.foot, top: request.top, pending: null };
+      return { kind: 'face', foot: request.foot, top: request.top, pending: null, waitsForTop: false };
     case 'tree':
       return { kind: 'tree', foot: request.foot, outline: request.outline, pending: null };
     case 'note':

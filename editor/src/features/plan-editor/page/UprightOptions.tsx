@@ -13,7 +13,7 @@ export function FaceOptions() {
   const preview = useTools((s) => s.preview);
   const asked = useSession((s) => s.request !== null);
   const started = preview?.kind === 'face' && preview.foot.length > 0;
-  const footDone = started && preview.pending === null && photo && !asked;
+  const footDone = started && preview.waitsForTop && !asked;
   return (
     <>
       <p>

@@ -9,6 +9,8 @@ type World = Pick<ToolContext, 'doc' | 'sheetId' | 'scale'>;
 
 /** How far off a place is marked that only says a direction. */
 const DIRECTION_METERS = 1;
+/** Nearer than this is right under the light. */
+const LEAST_METERS = 0.005;
 
 /** An aim in figures, as a person types it. */
 export interface AimFigures {
@@ -77,7 +79,9 @@ export function aimWith(
         : { kind: 'tilt', toward, degreesFromDown: rounded(next.degreesFromDown, 1) };
     }
     case 'point': {
-      const place = at(next.distanceMeters);
+      // Straight under the light there is no direction to keep: a new one needs some way to go.
+      const turned = change.direction !== undefined && next.distanceMeters < LEAST_METERS;
+      const place = at(turned ? DIRECTION_METERS : next.distanceMeters);
       return place === null
         ? undefined
         : { kind: 'point', at: place, heightMeters: rounded(next.heightMeters, 4) };

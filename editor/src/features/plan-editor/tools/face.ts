@@ -34,7 +34,13 @@ export function createFaceTool(ctx: ToolContext): Tool {
       }
       ctx.request({ kind: 'face', foot: points, top: null, seenMeters: null });
     },
-    preview: (points, pending) => ({ kind: 'face', foot: points, top: null, pending }),
+    preview: (points, pending) => ({
+      kind: 'face',
+      foot: points,
+      top: null,
+      pending,
+      waitsForTop: false,
+    }),
   });
 
   const edge = (of: readonly Point[]): UpperEdge | null => {
@@ -97,7 +103,7 @@ export function createFaceTool(ctx: ToolContext): Tool {
     },
     preview() {
       if (foot === null) return path.preview();
-      return { kind: 'face', foot, top: edge(foot)?.top ?? null, pending: null };
+      return { kind: 'face', foot, top: edge(foot)?.top ?? null, pending: null, waitsForTop: true };
     },
     exit() {
       foot = null;

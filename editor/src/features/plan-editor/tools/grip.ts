@@ -75,7 +75,7 @@ export function shapePreview(id: string, shape: Shape): Preview {
     case 'measurement':
       return { kind: 'shape', id, points: shape.points };
     case 'face':
-      return { kind: 'face', foot: shape.foot, top: shape.top, pending: null };
+      return { kind: 'face', foot: shape.foot, top: shape.top, pending: null, waitsForTop: false };
     case 'tree':
       return { kind: 'tree', foot: shape.foot, outline: shape.outline, pending: null };
   }

@@ -69,6 +69,8 @@ export type Preview =
       readonly foot: readonly Point[];
       readonly top: readonly Point[] | null;
       readonly pending: Point | null;
+      /** The foot is whole, and the click on the upper edge is waited for. */
+      readonly waitsForTop: boolean;
     }
   /** A tree or shrub: where it stands, and its crown so far. */
   | {

@@ -36,7 +36,12 @@ const scaleless = () => new Driver([{ ...photo, references: [] }, defaultSetting
 describe('wall face tool', () => {
   it('on a photo, takes the foot, then the upper edge, and asks with the height that the camera tells', () => {
     const d = onPhoto().use('face');
-    d.click(wallRight.x, wallRight.y).click(wallLeft.x, wallLeft.y).key('Enter');
+    d.click(wallRight.x, wallRight.y).click(wallLeft.x, wallLeft.y);
+    // A lifted finger leaves no pointer behind: the foot is not whole for that.
+    d.host.handle({ type: 'leave' });
+    expect(d.preview).toMatchObject({ kind: 'face', pending: null, waitsForTop: false });
+    d.key('Enter');
+    expect(d.preview).toMatchObject({ kind: 'face', waitsForTop: true });
     expect(d.requests).toEqual([]);
     d.move(overRight.x, overRight.y);
     expect(d.preview).toMatchObject({ kind: 'face', foot: [wallRight, wallLeft] });
