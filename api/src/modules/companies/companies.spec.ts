@@ -73,6 +73,41 @@ describe('the company', () => {
     expect(pointers.some((pointer) => pointer.startsWith('/settings/aim/led'))).toBe(true);
   });
 
+  it('has an evening: a schedule, a time zone of the region and, once it is told, a place', async () => {
+    const { settings } = companySchema.parse((await owner.get('/api/company')).body);
+    expect(settings).toMatchObject({
+      schedule: { on: { kind: 'sunset', minutesAfter: 0 }, off: { kind: 'clock', at: '23:00' } },
+      timeZone: 'America/New_York',
+      place: null,
+    });
+    const schedule = {
+      on: { kind: 'sunset', minutesAfter: 20 },
+      off: { kind: 'sunrise', minutesAfter: -30 },
+    };
+    const place = { latitude: 40.2, longitude: -75 };
+    const told = await edit({ settings: { schedule, place, timeZone: 'Asia/Kolkata' } });
+    expect(told.settings).toMatchObject({ schedule, place, timeZone: 'Asia/Kolkata' });
+    expect((await edit({ settings: { place: null } })).settings.place).toBeNull();
+    await edit({ settings: settings });
+  });
+
+  it('refuses an evening that makes no sense, by field', async () => {
+    const refused = async (evening: object) => {
+      const { body } = await owner.patch('/api/company').send({ settings: evening }).expect(400);
+      return body.errors.map(({ pointer }: { pointer: string }) => pointer);
+    };
+    const off = { kind: 'clock', at: '23:00' };
+    expect(await refused({ timeZone: 'Nowhere/Marlow_Bend' })).toEqual(['/settings/timeZone']);
+    expect(await refused({ place: { latitude: 91, longitude: 0 } })).toEqual(['/settings/place/latitude']);
+    expect(await refused({ place: { latitude: 40 } })).toEqual(['/settings/place/longitude']);
+    expect(await refused({ schedule: { on: { kind: 'clock', at: '25:00' }, off } })).toEqual([
+      '/settings/schedule/on/at',
+    ]);
+    expect(await refused({ schedule: { on: { kind: 'sunset', minutesAfter: 0.5 }, off } })).toEqual([
+      '/settings/schedule/on/minutesAfter',
+    ]);
+  });
+
   it('loses no edit of two at once', async () => {
     await Promise.all([
       edit({ settings: { transformerTargetPercent: 70 } }),

@@ -48,7 +48,9 @@ export function ScheduleControl({ label, hint, disabled = false, value, commit }
   // A schedule that did not come from here (undo, another person) replaces what was typed.
   const schedule = JSON.stringify(draft.of) === JSON.stringify(value) ? draft.schedule : value;
   const settle = (next: Schedule) => {
-    if (isSchedule(next) && JSON.stringify(next) !== JSON.stringify(value)) commit(next);
+    if (!isSchedule(next) || JSON.stringify(next) === JSON.stringify(value)) return;
+    setDraft({ schedule: next, of: next });
+    commit(next);
   };
   return (
     <fieldset className={styles.schedule}>
