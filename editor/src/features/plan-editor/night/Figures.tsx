@@ -138,22 +138,18 @@ function One({ told: { id, name, figures, target } }: { readonly told: Told }) {
         <p className={styles.small}>It is not all on the ground, so its light can’t be told.</p>
       ) : (
         <dl className={styles.figures}>
-          <div>
-            <dt>Least</dt>
-            <dd>{figure(figures.least.lux)}</dd>
-          </div>
-          <div>
-            <dt>Mean</dt>
-            <dd>{figure(figures.meanLux)}</dd>
-          </div>
-          <div>
-            <dt>Most</dt>
-            <dd>{figure(figures.most.lux)}</dd>
-          </div>
-          <div>
-            <dt>Unit</dt>
-            <dd>{luxUnitText(unit)}</dd>
-          </div>
+          {[
+            { word: 'Least', lux: figures.least.lux },
+            { word: 'Mean', lux: figures.meanLux },
+            { word: 'Most', lux: figures.most.lux },
+          ].map(({ word, lux }) => (
+            <div key={word}>
+              <dt>
+                {word}, {luxUnitText(unit)}
+              </dt>
+              <dd>{figure(lux)}</dd>
+            </div>
+          ))}
           <div>
             <dt>Evenness</dt>
             <dd>{figures.uniformity.toFixed(2)}</dd>

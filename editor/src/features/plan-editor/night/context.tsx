@@ -5,6 +5,7 @@ import { useEditor, useUnitSystem } from '../page/context';
 import { NightController, type NightState } from './controller';
 import type { FiguresState } from './figures-desk';
 import type { NightHere } from './here';
+import { exposeNightHandle } from './test-handle';
 import { engineInWorker } from './worker-engine';
 
 interface NightContextValue {
@@ -88,7 +89,9 @@ export function NightProvider({
     follow();
     const stops = [plan.state, session, estimate.state, tools.state].map((store) => store.subscribe(follow));
     setNight(controller);
+    const hide = exposeNightHandle(controller);
     return () => {
+      hide();
       for (const stop of stops) stop();
       controller.close();
     };

@@ -98,11 +98,15 @@ describe('labels under the line', () => {
   const texts = (width: number) => tickLabels(evening, line, 3, width, 'en-GB').map(({ text }) => text);
 
   it('name who switches where not all do', () => {
-    expect(texts(1400)).toEqual(['Sunset 15:55', 'B off 22:00', '2 off 23:00']);
+    expect(texts(1400)).toEqual(['Sunset 15:55', 'B off 22:00', 'Off 23:00']);
   });
 
   it('leave out what does not fit, the sunset and the last lights-out never', () => {
-    expect(texts(230)).toEqual(['Sunset 15:55', '2 off 23:00']);
+    expect(texts(190)).toEqual(['Sunset 15:55', 'Off 23:00']);
+  });
+
+  it('step aside of a neighbour rather than go', () => {
+    expect(texts(560)).toEqual(['Sunset 15:55', 'B off 22:00', 'Off 23:00']);
   });
 
   it('stay within the line', () => {
