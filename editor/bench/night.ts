@@ -29,7 +29,7 @@ declare global {
     /** The picture after its graphics context was lost and given back, beside the one before. */
     loseNight: () => Promise<NightDifference>;
     /** Longest run of one value, and number of values, along a row of a dark ramp. */
-    rampNight: (kind: NightRenderer['kind']) => Promise<{ longestRun: number; smoothest: number }>;
+    rampNight: (kind: NightRenderer['kind']) => Promise<{ longestRun: number; largestStep: number }>;
   }
 }
 
@@ -235,7 +235,7 @@ window.rampNight = async (kind) => {
 };
 
 /** Over columns of a ramp: the longest run of equal values in a row, and the largest step between neighbouring means. */
-function smoothness(data: Uint8ClampedArray): { longestRun: number; smoothest: number } {
+function smoothness(data: Uint8ClampedArray): { longestRun: number; largestStep: number } {
   let longestRun = 0;
   let run = 0;
   for (let x = 1; x < PHOTO.width; x++) {
@@ -249,8 +249,8 @@ function smoothness(data: Uint8ClampedArray): { longestRun: number; smoothest: n
       for (let k = 0; k < 8; k++) sum += data[(y * PHOTO.width + x + k) * 4]!;
     return sum / (PHOTO.height * 8);
   };
-  let smoothest = 0;
+  let largestStep = 0;
   for (let x = 8; x < PHOTO.width - 8; x += 8)
-    smoothest = Math.max(smoothest, Math.abs(mean(x) - mean(x - 8)));
-  return { longestRun, smoothest };
+    largestStep = Math.max(largestStep, Math.abs(mean(x) - mean(x - 8)));
+  return { longestRun, largestStep };
 }
