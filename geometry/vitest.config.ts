@@ -11,5 +11,7 @@ export default defineConfig({
     testTimeout: 30_000,
     hookTimeout: 60_000,
     retry: 0,
+    // Pure functions keep nothing between files: loading them anew for each would take most of the time.
+    isolate: false,
   },
 });

@@ -1,6 +1,6 @@
 import { get } from 'node:http';
 import { apply, placeNote } from '@lampwright/geometry/plan';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { countedIds, must } from '../../../../geometry/src/plan/plan.testkit.js';
 import { startTestApp, type TestApp } from '../../../test/harness.js';
 import { addCompany, addPerson, type TestPerson } from '../../../test/people.js';
@@ -72,10 +72,13 @@ describe('the stream of plan versions', () => {
     await addSheet(test, designer, jobId);
     const stream = listen(test, crew, jobId);
     await stream.until((await getPlan(crew.agent, jobId)).version);
-    const { rows } = await test.database.executeSql(
-      "SELECT pg_terminate_backend(pid) FROM pg_stat_activity WHERE application_name = 'lampwright-listen' AND datname = current_database()",
-    );
-    expect(rows).toHaveLength(1);
+    // The present version is told before the connection is there.
+    await vi.waitFor(async () => {
+      const { rows } = await test.database.executeSql(
+        "SELECT pg_terminate_backend(pid) FROM pg_stat_activity WHERE application_name = 'lampwright-listen' AND datname = current_database()",
+      );
+      expect(rows).toHaveLength(1);
+    }, 10_000);
     await stream.until(await write(jobId));
     stream.close();
     await stream.ended.catch(() => undefined);
