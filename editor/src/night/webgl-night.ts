@@ -21,6 +21,33 @@ interface Parts {
   readonly uniforms: ReadonlyMap<Uniform, WebGLUniformLocation | null>;
 }
 
+/** Whether WebGL draws here; known once it was tried. */
+let works: boolean | null = null;
+
+/** Tries it on a canvas that is thrown away: one that has had a WebGL context can't have another kind. */
+function draws(): boolean {
+  const gl = contextOf(document.createElement('canvas'));
+  if (!gl) return false;
+  try {
+    partsOf(gl);
+    return !gl.isContextLost() && gl.getError() === gl.NO_ERROR;
+  } catch {
+    return false;
+  } finally {
+    gl.getExtension('WEBGL_lose_context')?.loseContext();
+  }
+}
+
+function contextOf(canvas: HTMLCanvasElement): WebGL2RenderingContext | null {
+  return canvas.getContext('webgl2', {
+    alpha: false,
+    antialias: false,
+    depth: false,
+    powerPreference: 'low-power',
+    preserveDrawingBuffer: true,
+  });
+}
+
 /** Composes by WebGL 2: photo and light are textures, the light half floats that are read between its pixels. */
 export class WebglNight implements NightRenderer {
   readonly kind = 'webgl';
@@ -32,13 +59,8 @@ export class WebglNight implements NightRenderer {
 
   /** Null where there is no WebGL 2, or none that draws this. */
   static on(canvas: HTMLCanvasElement, photo: NightPhoto, size: PictureSize): WebglNight | null {
-    const gl = canvas.getContext('webgl2', {
-      alpha: false,
-      antialias: false,
-      depth: false,
-      powerPreference: 'low-power',
-      preserveDrawingBuffer: true,
-    });
+    works ??= draws();
+    const gl = works ? contextOf(canvas) : null;
     if (!gl) return null;
     const night = new WebglNight(canvas, gl);
     night.setPhoto(photo, size);
