@@ -166,6 +166,16 @@ describe('the night view', () => {
     expect(hand.asks).toHaveLength(1);
   });
 
+  it('makes no other frame while nothing of the picture changes', async () => {
+    const { night, frames, fixtures } = nightOfYard();
+    night.open();
+    await frames.settle();
+    const { frame } = night.state.getState();
+    night.follow({ selection: new Set([fixtures[0]!.id]) });
+    await frames.settle();
+    expect(night.state.getState().frame).toBe(frame);
+  });
+
   it('says what failed, and tries again when asked', async () => {
     const hand = engineByHand();
     const { night, frames } = nightOfYard(hand.engine);

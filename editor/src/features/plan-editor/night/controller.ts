@@ -112,6 +112,7 @@ export class NightController {
   private readonly made = new LastMade<ReturnType<typeof sceneWithNotes>>();
   private readonly drawn = new LastMade<NightScene>();
   private readonly litScene = new LastMade<NightScene>();
+  private readonly look = new LastMade<Look>();
   private readonly lattice = new LastMade<readonly LatticePlace[]>();
   private readonly subjects = new LastMade<readonly Subject[]>();
   private readonly figuresAsk = new LastMade<FiguresAsk>();
@@ -230,7 +231,7 @@ export class NightController {
   frame(at: Date): NightFrame | null {
     const { evening, frame, scene } = this.state.getState();
     if (frame === null || scene === null) return null;
-    return { ...frame, look: lookAt(sunAltitude(evening, at)), whiteLux: this.whiteLux ?? scene.whiteLux };
+    return { ...frame, look: this.lookOf(evening, at), whiteLux: this.whiteLux ?? scene.whiteLux };
   }
 
   /** The scene with what is switched off for looking left dark, whatever the hour: what figures are of. */
@@ -397,15 +398,22 @@ export class NightController {
   private setFrame(light: LightMap, { whiteLux }: NightScene): void {
     const { evening, at } = this.state.getState();
     this.state.setState({
-      frame: { light, look: lookAt(sunAltitude(evening, at)), whiteLux: this.whiteLux ?? whiteLux },
+      frame: { light, look: this.lookOf(evening, at), whiteLux: this.whiteLux ?? whiteLux },
     });
   }
 
   /** The same light at another hour, or shown brighter or darker. */
   private reframe(): void {
-    const { frame, at } = this.state.getState();
-    const next = frame === null ? null : this.frame(at);
-    if (next !== null) this.state.setState({ frame: next });
+    const { frame: before, at } = this.state.getState();
+    const next = before === null ? null : this.frame(at);
+    if (next === null || before === null) return;
+    // Whoever draws it draws it anew for every frame, so one that is the same is not made.
+    if (next.whiteLux === before.whiteLux && next.look === before.look) return;
+    this.state.setState({ frame: next });
+  }
+
+  private lookOf(evening: Evening, at: Date): Look {
+    return this.look.of(() => lookAt(sunAltitude(evening, at)), evening, at);
   }
 
   private wake(): void {
