@@ -1,5 +1,5 @@
-// The homeowner's page on a phone with a slow connection: how much script it takes, and when its largest
-// part is painted.
+// The homeowner's page on a phone with a slow connection: how much script it takes, when its largest part is
+// painted, and when its evening is drawn.
 import { randomUUID } from 'node:crypto';
 import { cpus, loadavg } from 'node:os';
 import { setTimeout as sleep } from 'node:timers/promises';
@@ -34,7 +34,7 @@ const JOB = 'Harrow Bank';
 const DESIGNER = { email: 'designer@fernhollow.example', password: 'fernhollow-demo' };
 
 /**
- * @typedef {{ paintMs: number, painted: string, shift: number, bytes: Record<string, number>, pictures: string[] }} Seen
+ * @typedef {{ paintMs: number, painted: string, shift: number, eveningMs: number, bytes: Record<string, number>, pictures: string[] }} Seen
  */
 
 /**
@@ -44,9 +44,10 @@ const DESIGNER = { email: 'designer@fernhollow.example', password: 'fernhollow-d
  */
 export async function run(print, context) {
   const link = await sentProposal(await context.baseUrl(), context.signal);
-  const zipped = await gzippedScripts(link);
+  const { first, later } = await gzippedScripts(link);
+  const size = sum(first) + sum(later);
   print(
-    `Script of the first view, gzipped: ${kilo(zipped.bytes)} in ${zipped.files} files (aim ${kilo(AIM_SCRIPT_BYTES)}).`,
+    `Script, gzipped: ${kilo(sum(first))} in ${first.length} files for the first view, then ${kilo(sum(later))} in ${later.length} for the evening; together ${kilo(size)} (aim ${kilo(AIM_SCRIPT_BYTES)}).`,
   );
   const browser = await chromium.launch({ executablePath: '/usr/bin/chromium', args: CHROMIUM_ARGS });
   try {
@@ -63,6 +64,10 @@ export async function run(print, context) {
     print(
       `Largest paint over 1.6 Mbit/s, 150 ms, ${CPU_SLOWDOWN} × slower: median ${middle.paintMs.toFixed(0)} ms of ${all} (aim ${AIM_PAINT_MS} ms); ${middle.painted}; layout shift ${middle.shift.toFixed(3)}.`,
     );
+    const evenings = seen.map(({ eveningMs }) => eveningMs).sort((a, b) => a - b);
+    print(
+      `The evening is drawn at a median of ${evenings[Math.floor(ROUNDS / 2)]?.toFixed(0)} ms of ${evenings.map((ms) => ms.toFixed(0)).join(', ')}, the same way.`,
+    );
     const sent = Object.entries(middle.bytes).map(([type, bytes]) => `${type.toLowerCase()} ${kilo(bytes)}`);
     print(`Sent to it: ${sent.join(', ')}; pictures: ${middle.pictures.join(', ')}.`);
     const load = loadavg()[0] ?? 0;
@@ -74,17 +79,39 @@ export async function run(print, context) {
 
 const kilo = (/** @type {number} */ bytes) => `${(bytes / 1000).toFixed(1)} kB`;
 
-/** What a browser that knows no newer encoding is sent. @param {string} link */
+const sum = (/** @type {number[]} */ parts) => parts.reduce((all, part) => all + part, 0);
+
+/** Names of scripts in scripts and in the page, as the build writes them. */
+const SCRIPT = /["'`](?:\.?\/)?((?:assets\/)?[\w.-]+\.js)["'`]/g;
+
+/**
+ * What a browser that knows no newer encoding is sent, file by file: what the page names itself, and what those
+ * files ask for later.
+ * @param {string} link
+ */
 async function gzippedScripts(link) {
-  const shell = await (await fetch(link)).text();
-  const paths = [...shell.matchAll(/(?:src|href)="(\/assets\/[^"]+\.js)"/g)].map(([, path]) => path ?? '');
-  let bytes = 0;
-  for (const path of paths) {
+  /** @type {Map<string, number>} */
+  const sizes = new Map();
+  /** @param {string} text @returns {Promise<number[]>} */
+  const follow = async (text) => {
+    const found = [...text.matchAll(SCRIPT)].map(([, name = '']) => `/assets/${name.replace('assets/', '')}`);
+    const fresh = [...new Set(found)].filter((path) => !sizes.has(path));
     const headers = { 'Accept-Encoding': 'gzip' };
-    const response = await fetch(new URL(path, link), { method: 'HEAD', headers });
-    bytes += Number(response.headers.get('content-length'));
-  }
-  return { bytes, files: paths.length };
+    for (const path of fresh) {
+      const response = await fetch(new URL(path, link), { method: 'HEAD', headers });
+      sizes.set(path, Number(response.headers.get('content-length')));
+    }
+    const texts = await Promise.all(fresh.map(async (path) => (await fetch(new URL(path, link))).text()));
+    scripts.push(...texts);
+    return fresh.map((path) => sizes.get(path) ?? 0);
+  };
+  /** @type {string[]} */
+  const scripts = [];
+  const first = await follow(await (await fetch(link)).text());
+  const later = [];
+  for (let text = scripts.shift(); text !== undefined; text = scripts.shift())
+    later.push(...(await follow(text)));
+  return { first, later };
 }
 
 /**
@@ -149,7 +176,7 @@ async function until(look, signal) {
 
 /** Run in the page, before its own script. */
 const WATCH = `
-  window.seen = { paintMs: 0, painted: '', shift: 0 };
+  window.seen = { paintMs: 0, painted: '', shift: 0, eveningMs: 0 };
   new PerformanceObserver((list) => {
     for (const entry of list.getEntries()) {
       window.seen.paintMs = entry.startTime;
@@ -159,6 +186,11 @@ const WATCH = `
   new PerformanceObserver((list) => {
     for (const entry of list.getEntries()) window.seen.shift += entry.value;
   }).observe({ type: 'layout-shift', buffered: true });
+  const look = () => {
+    if (document.querySelector('[data-drawn]')) window.seen.eveningMs = performance.now();
+    else requestAnimationFrame(look);
+  };
+  look();
 `;
 
 /**
@@ -192,6 +224,7 @@ async function look(browser, url) {
     await page.addInitScript(WATCH);
     await page.goto(url, { waitUntil: 'networkidle' });
     await page.getByRole('button', { name: 'Review and approve' }).waitFor();
+    await page.locator('[data-drawn]').waitFor({ timeout: 60_000 });
     // What is painted last is told a little later.
     await page.waitForTimeout(500);
     return { ...(await page.evaluate('window.seen')), bytes, pictures };

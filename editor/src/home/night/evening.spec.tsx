@@ -127,7 +127,7 @@ describe('the evening', () => {
     const end = Number(line().max);
     await move(end - 45);
     await waitFor(() => expect(device.shown?.on).toEqual(['p1', 'p2']));
-    expect(said()).toMatch(/dark, Path lights on$/);
+    expect(said()).toMatch(/dark, Path to the patio on$/);
     await move(end);
     await waitFor(() => expect(device.shown?.on).toEqual([]));
   });
@@ -145,7 +145,7 @@ describe('the evening', () => {
   it('darkens what switches apart only to look at it: the price stays', async () => {
     await showNight();
     const zones = within(screen.getByRole('group', { name: /^Look at it with .only for looking/ }));
-    const path = zones.getByRole('button', { name: /^Path lights\s*sunset to 11:00\sPM$/ });
+    const path = zones.getByRole('button', { name: /^Path to the patio\s*sunset to 11:00\sPM$/ });
     expect(path.getAttribute('aria-pressed')).toBe('true');
     await press(path);
     expect(path.getAttribute('aria-pressed')).toBe('false');

@@ -1,4 +1,4 @@
-import type { NightScene } from '@lampwright/geometry/light';
+import type { LightSource, NightScene } from '@lampwright/geometry/light';
 import { describe, expect, it } from 'vitest';
 import { hoursInWords, momentInWords } from './moment-words';
 import { oneZone, sampleNight, sampleScene } from './night.testkit';
@@ -9,8 +9,13 @@ import { lightsGradient, placeOf, skyGradient } from './track';
 const NOW = new Date('2026-12-01T20:00:00Z');
 const { evening: place } = sampleNight();
 const all = () => true;
+const groups = new Map([
+  ['path', 'Path to the patio'],
+  ['bed', 'Shrub bed'],
+  ['wall', 'Wall and tree'],
+]);
 const eveningOf = (scene: NightScene, where = place, now = NOW) =>
-  sheetEvening(scene, [scene], where, now, 'en-US');
+  sheetEvening(scene, [scene], where, now, 'en-US', groups);
 
 describe('an evening of a sheet', () => {
   const evening = eveningOf(sampleScene());
@@ -48,31 +53,50 @@ describe('an evening of a sheet', () => {
     expect(evening.begin % STEP_MINUTES).toBe(0);
   });
 
-  it('names zones by what is lit, and apart where that is alike', () => {
-    expect(evening.zones.map(({ name }) => name)).toEqual(['Path lights', 'Up-lights']);
+  it('names zones in the words of the proposal', () => {
+    const names = (
+      change: (source: LightSource) => LightSource,
+      over: Partial<NightScene> = {},
+    ): string[] => {
+      const scene = sampleScene(over);
+      return eveningOf({ ...scene, sources: scene.sources.map(change) }).zones.map(({ name }) => name);
+    };
+    const asIs = (source: LightSource): LightSource => source;
+    // One is just what is offered as a group; the kind of the other’s lights is its own.
+    expect(names(asIs)).toEqual(['Path to the patio', 'Up-lights']);
     expect(evening.zones[0]?.hours).toMatch(/^sunset to 11:00\sPM$/);
-    const scene = sampleScene();
-    const alike = { ...scene, sources: scene.sources.map((one) => ({ ...one, kind: 'up' as const })) };
-    expect(eveningOf(alike).zones.map(({ name }) => name)).toEqual(['Up-lights (T1)', 'Up-lights (T2)']);
+    // The one that has nothing of its own comes last.
+    const mixed = (source: LightSource): LightSource => ({
+      ...source,
+      kind: 'up',
+      zoneId: source.groupId === 'bed' ? 't2' : 't1',
+    });
+    expect(names(mixed)).toEqual(['Shrub bed', 'All other lights']);
+    const alike = (source: LightSource): LightSource => ({ ...source, kind: 'up', groupId: null });
+    expect(names(alike)).toEqual(['Lights of T1', 'Lights of T2']);
+    const zones = sampleScene().zones.map((zone, i) =>
+      i === 0 ? { ...zone, kind: 'smart' as const, name: 'Pergola' } : zone,
+    );
+    expect(names(asIs, { zones })).toEqual(['Pergola', 'Up-lights']);
   });
 
   it('has a line as long as on every other sheet, and switches of its own', () => {
     const scene = sampleScene();
     const part = { ...scene, zones: scene.zones.slice(1), sources: scene.sources.slice(2) };
-    const other = sheetEvening(part, [scene, part], place, NOW, 'en-US');
+    const other = sheetEvening(part, [scene, part], place, NOW, 'en-US', groups);
     expect(other.zones.map(({ id }) => id)).toEqual(['t2']);
     expect(other.minutes).toBe(evening.minutes);
     expect(other.off?.clock).toMatch(/^10:00\sPM$/);
   });
 
   it('is said in words', () => {
-    const said = (clock: string, looked = all as (id: string) => boolean): string =>
+    const said = (clock: string, looked: (id: string) => boolean = all): string =>
       momentInWords(evening, evening.at(minuteAt(clock)), looked).replace(/\s/g, ' ');
     expect(said('4:00 PM')).toBe('4:00 PM, daylight, lights off');
     expect(said('4:30 PM')).toBe('4:30 PM, dusk, lights on');
     expect(said('8:15 PM')).toBe('8:15 PM, dark, lights on');
     expect(said('8:15 PM', (id) => id === 't2')).toBe('8:15 PM, dark, Up-lights on');
-    expect(said('10:30 PM')).toBe('10:30 PM, dark, Path lights on');
+    expect(said('10:30 PM')).toBe('10:30 PM, dark, Path to the patio on');
     expect(said('11:00 PM')).toBe('11:00 PM, dark, lights off');
   });
 

@@ -59,6 +59,8 @@ export function sheetEvening(
   where: EveningPlace,
   now: Date,
   locale: string,
+  /** Names of the groups that lights are offered in. */
+  groups: ReadonlyMap<string, string>,
 ): SheetEvening {
   const evening = eveningOf(where, todayAt(where.timeZone, now));
   const span = eveningSpan(
@@ -72,7 +74,7 @@ export function sheetEvening(
   const timeAt = (minute: number): Date => new Date(startMs + minute * MINUTE_MS);
   const clock = (at: Date): string => clockText(at, evening.timeZone, locale);
 
-  const zones = zonesOf(scene, (schedule) => {
+  const zones = zonesOf(scene, groups, (schedule) => {
     const switching = switchingOf(schedule, evening, locale);
     if (!switching.on) return { stretch: null, hours: switching.reason };
     const words = (time: typeof schedule.on, at: Date): string =>

@@ -39,7 +39,7 @@ export function useEvening(
   picture: Picture | undefined,
   choice: Choice,
 ): Evening {
-  const { locale } = page.document;
+  const { locale, price } = page.document;
   const sheetId = picture?.sheetId;
   const zones = picture?.night?.zones ?? 0;
   const offered = zones > 0;
@@ -56,8 +56,9 @@ export function useEvening(
     if (night.kind !== 'ready') return null;
     const { scenes, evening: place } = night.night;
     const scene = scenes.find((one) => one.sheetId === sheetId);
-    return scene ? night.parts.sheetEvening(scene, scenes, place, now, locale) : null;
-  }, [night, sheetId, now, locale]);
+    const names = new Map(price.groups.flatMap(({ id, name }) => (id === null ? [] : [[id, name]])));
+    return scene ? night.parts.sheetEvening(scene, scenes, place, now, locale, names) : null;
+  }, [night, sheetId, now, locale, price]);
 
   const moment = useMemo(() => evening?.at(minute ?? evening.begin), [evening, minute]);
   const lit = moment ? [...moment.on].filter((id) => !darkened.has(id)).join(' ') : '';

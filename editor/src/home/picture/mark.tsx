@@ -74,12 +74,12 @@ export function LightMark({
       onFocus={onFocus}
     >
       <svg className={styles.ring} viewBox="-20 -20 40 40" aria-hidden="true" focusable="false">
-        <circle r="6" stroke="var(--ink)" strokeOpacity="0.6" strokeWidth="3.4" />
+        <circle r="4.6" stroke="var(--ink)" strokeOpacity="0.5" strokeWidth="2.800" />
         <circle
-          r="6"
+          r="4.6"
           stroke="var(--paper)"
-          strokeWidth="1.6"
-          strokeDasharray={taken ? undefined : '2.800 1.910'}
+          strokeWidth="1.4"
+          strokeDasharray={taken ? undefined : '2.400 1.730'}
         />
       </svg>
       <svg className={styles.picture} viewBox="-20 -20 40 40" aria-hidden="true" focusable="false">
