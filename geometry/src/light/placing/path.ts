@@ -22,6 +22,8 @@ export interface PathToLight {
   readonly widthMeters: number;
   readonly target: LightTarget;
   readonly arrangement: 'alternating' | 'left' | 'right';
+  /** So many, whatever light they give; without: as many as the target takes. */
+  readonly count?: number | null;
 }
 
 /** Lights stand so far from the path's edge: clear of feet and mowers, common practice. */
@@ -47,17 +49,32 @@ export function proposePath(
   const candidates = candidatesOf(offers, ['path', 'bollard']);
   if (candidates.length === 0)
     return refused('The catalogue has no path light or bollard with a lamp that fits; add one first.');
+  const fixed = path.count ?? null;
   const able = candidates.flatMap((candidate) => {
+    if (fixed !== null) return [{ candidate, count: fixed }];
     const apart = spacingFor(candidate, path);
     return apart === null ? [] : [{ candidate, count: Math.ceil(length / apart - 1e-9) }];
   });
   able.sort((a, b) => a.count - b.count || a.candidate.watts - b.candidate.watts);
-  const [best] = able;
-  if (!best)
+  const light = ({ candidate, count }: (typeof able)[number]) => ({
+    candidate,
+    ...(fixed === null
+      ? settled(candidate, count, path, length, space, units.light)
+      : tryOut(candidate, count, path, length, space, units.light)),
+  });
+  const [first] = able;
+  if (!first) {
+    const even = `even ${distance(CLOSEST_METERS, units.system)} apart. Ask for less light, or`;
     return refused(
-      `None of the ${candidates.length} path lights and bollards in the catalogue gives the light that is wanted, even ${distance(CLOSEST_METERS, units.system)} apart. Ask for less light, or add a brighter or higher one.`,
+      candidates.length === 1
+        ? `${candidates[0]!.name} doesn’t give the light that is wanted, ${even} take a brighter or higher one.`
+        : `None of the ${candidates.length} path lights and bollards in the catalogue gives the light that is wanted, ${even} add a brighter or higher one.`,
     );
-  const { lights, figures, short } = settled(best.candidate, best.count, path, length, space, units.light);
+  }
+  // Of so many as are asked for, the first that meets the target, else the one that falls short in least.
+  const best =
+    fixed === null ? light(first) : able.map(light).sort((a, b) => a.short.length - b.short.length)[0]!;
+  const { lights, figures, short } = best;
   const apart = distance(length / lights.length, units.system);
   const side = path.arrangement === 'alternating' ? 'on both sides in turn' : `on the ${path.arrangement}`;
   const places = lights.length === 1 ? 'one light' : `${lights.length} lights, ${apart} apart, ${side}`;
@@ -68,12 +85,22 @@ export function proposePath(
           `Worked out on the path: ${luxText(figures.least.lux, units.light)} at the darkest place, ${luxText(figures.meanLux, units.light)} in the mean.`,
         ]
       : []),
-    able.length > 1
-      ? `Of ${able.length} that could do it, it takes the fewest lights and watts.`
-      : 'It is the only one in the catalogue that can do it.',
+    ...(fixed === null && candidates.length > 1
+      ? [
+          able.length > 1
+            ? `Of ${able.length} that could do it, it takes the fewest lights and watts.`
+            : 'It is the only one in the catalogue that can do it.',
+        ]
+      : []),
     ...(figures?.notes ?? []),
   ];
-  return proposed(best.candidate, lights, why, short);
+  const given = figures && {
+    on: 'path' as const,
+    meanLux: figures.meanLux,
+    leastLux: figures.least.lux,
+    evenness: figures.uniformity,
+  };
+  return proposed(best.candidate, lights, given, why, short);
 }
 
 const distance = (m: number, system: UnitSystem): string => formatLength(meters(m), { system });
@@ -116,11 +143,7 @@ function settled(
   unit: LuxUnit,
 ): { lights: ProposedLight[]; figures: LuxFigures | null; short: string[] } {
   const most = Math.max(first, Math.floor(length / CLOSEST_METERS));
-  const tried = (count: number) => {
-    const lights = lightsAlong(path, count, length);
-    const figures = luxAlong(spaceOfLights(candidate, lights, space), path.line, path.widthMeters);
-    return { lights, figures, short: figures ? shortOf(figures, path.target, unit) : [] };
-  };
+  const tried = (count: number) => tryOut(candidate, count, path, length, space, unit);
   const start = tried(first);
   let now = start;
   for (let count = first; now.short.length > 0 && count < most; ) {
@@ -129,6 +152,19 @@ function settled(
   }
   // Where no number of lights does it, something shades the path: more of them would be wasted.
   return now.short.length > 0 ? start : now;
+}
+
+function tryOut(
+  candidate: Candidate,
+  count: number,
+  path: PathToLight,
+  length: number,
+  space: LightSpace,
+  unit: LuxUnit,
+): { lights: ProposedLight[]; figures: LuxFigures | null; short: string[] } {
+  const lights = lightsAlong(path, count, length);
+  const figures = luxAlong(spaceOfLights(candidate, lights, space), path.line, path.widthMeters);
+  return { lights, figures, short: figures ? shortOf(figures, path.target, unit) : [] };
 }
 
 function lightsAlong(path: PathToLight, count: number, length: number): ProposedLight[] {

@@ -138,7 +138,7 @@ describe('path lights', () => {
       proposePath({ ...asked, target: { ...park, leastLux: 200 } }, offers(path1), open, metric),
     ).toEqual({
       kind: 'refused',
-      message: expect.stringMatching(/^None of the 1 path lights .* even 0\.60 m apart\./),
+      message: expect.stringMatching(/^Path light, 1 W doesn’t give the light .* even 0\.60 m apart\./),
     });
     expect(proposePath({ ...asked, target: park }, offers(medium), open, metric)).toMatchObject({
       message: expect.stringMatching(/has no path light or bollard/),
@@ -217,7 +217,7 @@ describe('lights for a tree', () => {
     expect(proposeTree({ crown: oak, seenFrom: null }, offers(faint), space, 'lux')).toEqual({
       kind: 'refused',
       message: expect.stringMatching(
-        /^Nothing in the catalogue fits this tree: it asks for a beam of about \d+° .* Marker, 160°, has 160° and gives 0\.\d+ lx\.$/,
+        /^Marker, 160° doesn’t fit this tree: it asks for a beam of about \d+° .* Marker, 160°, has 160° and gives 0\.\d+ lx\.$/,
       ),
     });
     expect(proposeTree({ crown: oak, seenFrom: null }, offers(path3), space, 'lux').kind).toBe('refused');
@@ -273,14 +273,78 @@ describe('lights for a wall', () => {
     const faint = fixture('Marker, 20°', 'up', 5, 20, 0.1);
     expect(proposeWall(asked, offers(faint), open, metric)).toEqual({
       kind: 'refused',
-      message: expect.stringMatching(
-        /^None of the 1 wall washes, floods and up-lights .* lights this wall evenly/,
-      ),
+      message: expect.stringMatching(/^Marker, 20° doesn’t light this wall evenly/),
     });
     expect(proposeWall(asked, offers(path3), open, metric).kind).toBe('refused');
     expect(proposeWall({ ...asked, foot: [foot[0]!, foot[0]!] }, catalogue, open, metric)).toMatchObject({
       message: expect.stringMatching(/no length/),
     });
+  });
+});
+
+describe('so many lights as are asked for', () => {
+  const line = [
+    { x: 0, y: 0 },
+    { x: 20, y: 0 },
+  ];
+  const target = { leastLux: 1, meanLux: null, uniformity: null };
+
+  it('stand along the path, and say what falls short', () => {
+    const path = { line, widthMeters: 1.2, arrangement: 'left', target } as const;
+    const few = taken(proposePath({ ...path, count: 2 }, offers(path1), open, metric));
+    expect(few.lights.map(({ at }) => at.x)).toEqual([5, 15]);
+    expect(few.short[0]).toMatch(/^The darkest place.* at least 1 lx is wanted/);
+    expect(few.figures!.leastLux).toBeLessThan(1);
+    const figures = luxAlong(litBy(few), line, 1.2)!;
+    expect(few.figures).toEqual({
+      on: 'path',
+      meanLux: figures.meanLux,
+      leastLux: figures.least.lux,
+      evenness: figures.uniformity,
+    });
+    const many = taken(proposePath({ ...path, count: 30 }, offers(path1, path3), open, metric));
+    expect([many.lights.length, many.short]).toEqual([30, []]);
+  });
+
+  it('stand by a tree that asks for others, and say what does not fit', () => {
+    const tree = crown([0, 0, 4], 1.5, 2);
+    const space = spaceWith({ crowns: [tree] });
+    const faint = fixture('Marker, 160°', 'up', 5, 160, 0.1);
+    const three = taken(proposeTree({ crown: tree, seenFrom: null, count: 3 }, offers(faint), space, 'lux'));
+    expect(three.lights).toHaveLength(3);
+    expect(three.short).toEqual([
+      expect.stringMatching(/ is little for a tree: 10 lx to 250 lx is wanted\.$/),
+      'The beam is too wide for this crown: much goes past it.',
+    ]);
+  });
+
+  it('stand before a wall, whatever light they give', () => {
+    const foot = [line[0]!, { x: 9, y: 0 }];
+    const wall = { foot, heightMeters: 3, front: { x: 4, y: -5 } };
+    const one = taken(proposeWall({ ...wall, count: 1 }, offers(narrow), open, metric));
+    expect(one.lights).toHaveLength(1);
+    expect(one.short.at(-1)).toMatch(/^It is uneven/);
+  });
+
+  it('are brighter where more light is wanted on a wall or a tree', () => {
+    const wall = { foot: line, heightMeters: 3, front: { x: 4, y: -5 } };
+    const lux = [15, 60].map(
+      (wantedLux) => taken(proposeWall({ ...wall, wantedLux }, catalogue, open, metric)).figures!.meanLux,
+    );
+    expect(lux[1]).toBeGreaterThan(lux[0]!);
+    const tree = crown([0, 0, 4], 1.5, 2);
+    const onTree = [15, 120].map(
+      (wantedLux) =>
+        taken(
+          proposeTree(
+            { crown: tree, seenFrom: null, wantedLux },
+            catalogue,
+            spaceWith({ crowns: [tree] }),
+            'lux',
+          ),
+        ).figures!.meanLux,
+    );
+    expect(onTree[1]).toBeGreaterThan(onTree[0]!);
   });
 });
 

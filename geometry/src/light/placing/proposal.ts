@@ -30,12 +30,24 @@ export interface ProposedLight {
   readonly aim: { readonly at: PlanePoint; readonly heightMeters: number } | null;
 }
 
+/** What light was worked out where it is wanted. */
+export interface ProposedFigures {
+  readonly on: 'path' | 'crown' | 'wall';
+  readonly meanLux: number;
+  /** Of the darkest place; null where that says nothing, as on a crown. */
+  readonly leastLux: number | null;
+  /** Darkest place divided by the mean, 0 to 1, of a wall along its middle; null on a crown. */
+  readonly evenness: number | null;
+}
+
 /** Lights to place, all alike. Nothing of it is on the plan until somebody takes it, and all of it can be changed. */
 export interface Proposal {
   readonly kind: 'proposal';
   readonly fixture: Offer<FixtureItem>;
   readonly lamp: Offer<LampItem> | null;
   readonly lights: readonly ProposedLight[];
+  /** Null where nothing could be worked out, as for a path that is all under a roof. */
+  readonly figures: ProposedFigures | null;
   /** Why this item, so many and there, and what light was worked out. Other lights of the plan are not counted. */
   readonly why: readonly string[];
   /** What falls short of what was asked, in sentences; empty where nothing does. */
@@ -150,10 +162,11 @@ export function onSheet(
 export function proposed(
   { fixture, lamp }: Candidate,
   lights: readonly ProposedLight[],
+  figures: ProposedFigures | null,
   why: readonly string[],
   short: readonly string[] = [],
 ): Proposal {
-  return { kind: 'proposal', fixture, lamp, lights, why, short };
+  return { kind: 'proposal', fixture, lamp, lights, figures, why, short };
 }
 
 export const refused = (message: string): NoProposal => ({ kind: 'refused', message });

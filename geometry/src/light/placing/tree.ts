@@ -20,12 +20,17 @@ export interface TreeToLight {
   readonly crown: Crown;
   /** Where the tree is looked at from, in ground metres; null: from all around. */
   readonly seenFrom: PlanePoint | null;
+  /** Mean lux that is wanted on the lit side of the crown: what comes nearest is taken; without: as is usual. */
+  readonly wantedLux?: number | null;
+  /** So many, whatever light they give; without: as many as the crown takes. */
+  readonly count?: number | null;
 }
 
-// Light on a crown, in lux, and how far a beam may be from filling it: common practice, no source.
-const LEAST_LUX = 10;
-const WANTED_LUX = 40;
-const MOST_LUX = 250;
+/** Mean light on a crown, in lux: common practice, no source. */
+export const USUAL_TREE_LUX = 40;
+// How much darker or brighter than wanted still does, and how far a beam may be from filling a crown: common practice.
+const DARKEST = 1 / 4;
+const BRIGHTEST = 25 / 4;
 const NARROWEST = 0.4;
 const WIDEST = 2.2;
 /** Wider than this, in metres, a crown asks for another light. */
@@ -49,20 +54,27 @@ export function proposeTree(
   if (candidates.length === 0)
     return refused('The catalogue has no up-light or flood with a lamp that fits; add one first.');
   const { crown } = tree;
-  const usual = Math.min(Math.max(Math.ceil((2 * crown.radiusMeters) / PER_LIGHT_METERS), 1), MOST_LIGHTS);
+  const wantedLux = tree.wantedLux ?? USUAL_TREE_LUX;
+  const [least, most] = [wantedLux * DARKEST, wantedLux * BRIGHTEST];
+  const fixed = tree.count ?? null;
+  const usual =
+    fixed ?? Math.min(Math.max(Math.ceil((2 * crown.radiusMeters) / PER_LIGHT_METERS), 1), MOST_LIGHTS);
   const wanted = wantedBeam(crown, usual);
   const tried = candidates.flatMap((candidate) =>
-    [usual, usual + 1].map((count) => tryOut(candidate, count, tree, wanted, space, count - usual)),
+    (fixed === null ? [usual, usual + 1] : [fixed]).map((count) =>
+      tryOut(candidate, count, tree, { beam: wanted, lux: wantedLux }, space, count - usual),
+    ),
   );
   const fitting = tried.filter(
-    ({ lux, ratio }) => lux >= LEAST_LUX && lux <= MOST_LUX && ratio >= NARROWEST && ratio <= WIDEST,
+    ({ lux, ratio }) => lux >= least && lux <= most && ratio >= NARROWEST && ratio <= WIDEST,
   );
   const order = (a: { misfit: number }, b: { misfit: number }) => a.misfit - b.misfit;
-  const [best] = fitting.sort(order);
+  const nearest = tried.sort(order)[0]!;
+  const best = fitting.sort(order)[0] ?? (fixed === null ? undefined : nearest);
+  const asked = `it asks for a beam of about ${Math.round(wanted)}° that gives ${luxText(least, unit)} to ${luxText(most, unit)} on the crown`;
   if (!best) {
-    const nearest = tried.sort(order)[0]!;
     return refused(
-      `Nothing in the catalogue fits this tree: it asks for a beam of about ${Math.round(wanted)}° that gives ${luxText(LEAST_LUX, unit)} to ${luxText(MOST_LUX, unit)} on the crown. The nearest, ${nearest.candidate.name}, has ${Math.round(beamDegreesOf(nearest.candidate))}° and gives ${luxText(nearest.lux, unit)}.`,
+      `${candidates.length === 1 ? `${nearest.candidate.name} doesn’t fit` : 'Nothing in the catalogue fits'} this tree: ${asked}. The nearest, ${nearest.candidate.name}, has ${Math.round(beamDegreesOf(nearest.candidate))}° and gives ${luxText(nearest.lux, unit)}.`,
     );
   }
   const { candidate, lights, lux, sky } = best;
@@ -72,7 +84,22 @@ export function proposeTree(
     `The crown asks for a beam of about ${Math.round(wanted)}°; this one has ${Math.round(beamDegreesOf(candidate))}°.`,
     `Worked out on the side that is lit: ${luxText(lux, unit)} in the mean; about ${Math.round(100 * sky)} % of the light goes past the crown.`,
   ];
-  return proposed(candidate, lights, why);
+  const short = [
+    ...(lux < least || lux > most
+      ? [
+          `${luxText(lux, unit)} is ${lux < least ? 'little' : 'much'} for a tree: ${luxText(least, unit)} to ${luxText(most, unit)} is wanted.`,
+        ]
+      : []),
+    ...(best.ratio < NARROWEST ? ['The beam is too narrow for this crown: it lights a spot of it.'] : []),
+    ...(best.ratio > WIDEST ? ['The beam is too wide for this crown: much goes past it.'] : []),
+  ];
+  return proposed(
+    candidate,
+    lights,
+    { on: 'crown', meanLux: lux, leastLux: null, evenness: null },
+    why,
+    short,
+  );
 }
 
 /** The full angle, in degrees, that the crown fills as seen from one of so many lights. */
@@ -92,7 +119,7 @@ function tryOut(
   candidate: Candidate,
   count: number,
   tree: TreeToLight,
-  wanted: number,
+  wanted: { readonly beam: number; readonly lux: number },
   space: LightSpace,
   extra: number,
 ) {
@@ -103,10 +130,10 @@ function tryOut(
   const lamps = lampsOf(lit).map(lumensIntoTheSky);
   const sky =
     lamps.reduce((sum, lamp) => sum + lamp.sky, 0) / lamps.reduce((sum, lamp) => sum + lamp.total, 0);
-  const ratio = beamDegreesOf(candidate) / wanted;
+  const ratio = beamDegreesOf(candidate) / wanted.beam;
   // Twice too bright or too wide is as bad as half; light that misses, and lights more than usual, count beside it.
   const misfit =
-    Math.abs(Math.log2(Math.max(lux, 1e-3) / WANTED_LUX)) + Math.abs(Math.log2(ratio)) + 2 * sky + extra;
+    Math.abs(Math.log2(Math.max(lux, 1e-3) / wanted.lux)) + Math.abs(Math.log2(ratio)) + 2 * sky + extra;
   return { candidate, lights, lux, sky, ratio, misfit };
 }
 

@@ -22,12 +22,19 @@ export interface WallToLight {
   readonly heightMeters: number;
   /** A place on the side that is to be lit. */
   readonly front: PlanePoint;
+  /** Mean lux that is wanted on the wall; without: as is usual, and much darker does too. */
+  readonly wantedLux?: number | null;
+  /** So many, whatever light they give; without: as few as light it well. */
+  readonly count?: number | null;
 }
 
-// Light on a wall, in lux, and the least share of the mean along its middle: common practice, no source.
-const LEAST_LUX = 10;
-const WANTED_LUX = 30;
-const MOST_LUX = 150;
+/** Mean light on a wall, in lux: common practice, no source. */
+export const USUAL_WALL_LUX = 30;
+// How much darker or brighter than wanted still does, and the least share of the mean along its middle: common practice.
+const DARKEST = 1 / 3;
+/** The same where somebody asked for so much light: a quarter less is not seen. */
+const DARKEST_OF_ASKED = 3 / 4;
+const BRIGHTEST = 5;
 const LEAST_EVEN = 0.35;
 /** Lights closer together than this light a wall no better. */
 const CLOSEST_METERS = 0.8;
@@ -51,12 +58,23 @@ export function proposeWall(
   const candidates = candidatesOf(offers, ['wall-wash', 'flood', 'up']);
   if (candidates.length === 0)
     return refused('The catalogue has no wall wash, flood or up-light with a lamp that fits; add one first.');
+  const fixed = wall.count ?? null;
+  const wanted = wall.wantedLux ?? USUAL_WALL_LUX;
+  const bounds = {
+    least: wanted * (wall.wantedLux ? DARKEST_OF_ASKED : DARKEST),
+    wanted,
+    most: wanted * BRIGHTEST,
+  };
   const most = Math.max(Math.floor(length / CLOSEST_METERS), 1);
-  const fitting = candidates.flatMap((candidate) => fewest(candidate, wall, length, most, space) ?? []);
+  const fitting = candidates.flatMap((candidate) =>
+    fixed === null
+      ? (fewest(candidate, wall, length, most, space, bounds) ?? [])
+      : [tryOut(candidate, wall, length, fixed, space, bounds)],
+  );
   const [best] = fitting.sort((a, b) => a.misfit - b.misfit || a.candidate.watts - b.candidate.watts);
   if (!best)
     return refused(
-      `None of the ${candidates.length} wall washes, floods and up-lights in the catalogue lights this wall evenly with ${luxText(LEAST_LUX, units.light)} to ${luxText(MOST_LUX, units.light)}, even ${distance(CLOSEST_METERS, units.system)} apart. A wider beam, or a lamp of another strength, might.`,
+      `${candidates.length === 1 ? `${candidates[0]!.name} doesn’t light` : `None of the ${candidates.length} wall washes, floods and up-lights in the catalogue lights`} this wall evenly with ${luxText(bounds.least, units.light)} to ${luxText(bounds.most, units.light)}, even ${distance(CLOSEST_METERS, units.system)} apart. A wider beam, or a lamp of another strength, might.`,
     );
   const { candidate, lights, lux, even } = best;
   const before = distance(offOf(candidate, wall), units.system);
@@ -67,11 +85,33 @@ export function proposeWall(
   const why = [
     `${candidate.name}: ${places}.`,
     `Worked out on the wall: ${luxText(lux, units.light)} in the mean, and along its middle nowhere less than ${Math.floor(100 * even)} % of the mean there.`,
-    fitting.length > 1
-      ? `Of ${fitting.length} that could do it, it comes nearest to ${luxText(WANTED_LUX, units.light)} with few lights.`
-      : 'It is the only one in the catalogue that can do it.',
+    ...(fixed === null && candidates.length > 1
+      ? [
+          fitting.length > 1
+            ? `Of ${fitting.length} that could do it, it comes nearest to ${luxText(wanted, units.light)} with few lights.`
+            : 'It is the only one in the catalogue that can do it.',
+        ]
+      : []),
   ];
-  return proposed(candidate, lights, why);
+  const short = [
+    ...(lux < bounds.least || lux > bounds.most
+      ? [
+          `${luxText(lux, units.light)} is ${lux < bounds.least ? 'little' : 'much'} for this wall: ${luxText(bounds.least, units.light)} to ${luxText(bounds.most, units.light)} is wanted.`,
+        ]
+      : []),
+    ...(even < LEAST_EVEN
+      ? [
+          `It is uneven: the darkest place along its middle has ${Math.floor(100 * even)} % of the mean; ${Math.round(100 * LEAST_EVEN)} % is wanted.`,
+        ]
+      : []),
+  ];
+  return proposed(
+    candidate,
+    lights,
+    { on: 'wall', meanLux: lux, leastLux: best.darkest, evenness: even },
+    why,
+    short,
+  );
 }
 
 const distance = (m: number, system: UnitSystem): string => formatLength(meters(m), { system });
@@ -82,18 +122,41 @@ function offOf({ fixture }: Candidate, { heightMeters }: WallToLight): number {
 }
 
 /** The fewest of these lights that light the wall well; null where no number does. */
-function fewest(candidate: Candidate, wall: WallToLight, length: number, most: number, space: LightSpace) {
+function fewest(
+  candidate: Candidate,
+  wall: WallToLight,
+  length: number,
+  most: number,
+  space: LightSpace,
+  bounds: Bounds,
+) {
   for (let count = 1; count <= most; count++) {
-    const lights = lightsBefore(candidate, wall, length, count);
-    const { lux, even } = onWall(wall, length, spaceOfLights(candidate, lights, space));
+    const tried = tryOut(candidate, wall, length, count, space, bounds);
     // More lights only make it brighter.
-    if (lux > MOST_LUX) return null;
-    if (lux >= LEAST_LUX && even >= LEAST_EVEN) {
-      const misfit = Math.abs(Math.log2(lux / WANTED_LUX)) + count / 2;
-      return { candidate, lights, lux, even, misfit };
-    }
+    if (tried.lux > bounds.most) return null;
+    if (tried.lux >= bounds.least && tried.even >= LEAST_EVEN) return tried;
   }
   return null;
+}
+
+interface Bounds {
+  readonly least: number;
+  readonly wanted: number;
+  readonly most: number;
+}
+
+function tryOut(
+  candidate: Candidate,
+  wall: WallToLight,
+  length: number,
+  count: number,
+  space: LightSpace,
+  { wanted }: Bounds,
+) {
+  const lights = lightsBefore(candidate, wall, length, count);
+  const light = onWall(wall, length, spaceOfLights(candidate, lights, space));
+  const misfit = Math.abs(Math.log2(Math.max(light.lux, 1e-3) / wanted)) + count / 2;
+  return { candidate, lights, ...light, misfit };
 }
 
 function lightsBefore(
@@ -120,7 +183,11 @@ function facing({ foot, front }: WallToLight, along: number): ReturnType<typeof 
   return { x, y, nx: nx * side, ny: ny * side };
 }
 
-function onWall(wall: WallToLight, length: number, lit: LightSpace): { lux: number; even: number } {
+function onWall(
+  wall: WallToLight,
+  length: number,
+  lit: LightSpace,
+): { lux: number; even: number; darkest: number } {
   const columns = Math.min(Math.max(Math.ceil(length / ALONG_METERS), 4), MOST_COLUMNS);
   const rows = [0.2, 0.5, 0.8];
   const at = (column: number, row: number): number => {
@@ -131,8 +198,10 @@ function onWall(wall: WallToLight, length: number, lit: LightSpace): { lux: numb
   for (let i = 0; i < columns; i++) for (const row of rows) sum += at(i, row);
   const middle = Array.from({ length: columns }, (_, i) => at(i, 0.5));
   const mean = middle.reduce((a, b) => a + b, 0) / columns;
+  const darkest = Math.min(...middle);
   return {
     lux: sum / (columns * rows.length),
-    even: mean > 0 ? Math.min(...middle) / mean : 0,
+    even: mean > 0 ? darkest / mean : 0,
+    darkest,
   };
 }
