@@ -6,10 +6,13 @@ import {
   type Crown,
   isStopped,
   type LightSpace,
+  MARKED_TWICE_METERS,
   type Obstacles,
   obstaclesFor,
   type Point3,
+  type Wall,
 } from '../light/space.js';
+import type { PlanePoint } from '../sheet/matrix3.js';
 import { BLOCK, type SurfaceMap } from './surface-map.js';
 import { SurfaceKind } from './surfaces.js';
 
@@ -19,7 +22,7 @@ const BLOCK_PIXELS = BLOCK * BLOCK;
  * Light of one lamp under this share of the lux that is shown as white is left out; up to three times as much it
  * fades in, so that no edge shows.
  */
-export const LEAST_SHARE_OF_WHITE = 0.001;
+export const LEAST_SHARE_OF_WHITE = 0.002;
 const FADED_IN = 3;
 /** Nearer than this to a lamp, light grows no more: a lamp is no point. */
 const LAMP_METERS = 0.05;
@@ -47,7 +50,7 @@ export function lampLightOn(
   const beam: Beam = { ...bare, peakCandela: bare.peakCandela * source.quantity * source.output };
   if (!(beam.peakCandela > 0 && Number.isFinite(beam.peakCandela))) return NO_LIGHT;
   const least = whiteLux * LEAST_SHARE_OF_WHITE;
-  const shade = shadeOf(source, space);
+  const shades = shadesOf(source, space);
   const blocks: number[] = [];
   let lux = new Float32Array(64 * BLOCK_PIXELS);
   for (let b = 0; b < map.blockIsGround.length; b++) {
@@ -58,7 +61,7 @@ export function lampLightOn(
       longer.set(lux);
       lux = longer;
     }
-    if (lightBlock(map, b, source, beam, least, shade, lux, at)) blocks.push(b);
+    if (lightBlock(map, b, source, beam, least, shades(map, b), lux, at)) blocks.push(b);
   }
   return { blocks: Uint32Array.from(blocks), lux: lux.slice(0, blocks.length * BLOCK_PIXELS) };
 }
@@ -113,7 +116,7 @@ function lightBlock(
       const t = (here / least - 1) / (FADED_IN - 1);
       here *= t * t * (3 - 2 * t);
     }
-    here *= shade(map, s);
+    if (shade) here *= shade(map, s);
     if (!(here > 0)) continue;
     lux[at + map.slot[s]!]! += Math.min(here, MOST_LUX) * map.share[s]!;
     any = true;
@@ -121,18 +124,37 @@ function lightBlock(
   return any;
 }
 
-/** The share of a lamp's light that comes to a sample, 0 to 1. */
-type Shade = (map: SurfaceMap, sample: number) => number;
+/** The share of a lamp's light that comes to a sample, 0 to 1; null: all of it to all of a block. */
+type Shade = ((map: SurfaceMap, sample: number) => number) | null;
 
-function shadeOf(source: LightSource, space: LightSpace): Shade {
-  const { crowns, ...rest } = obstaclesFor(space, source);
-  // Crowns let light through at their edge, here, where it is seen.
-  const solid: Obstacles = { ...rest, crowns: [] };
-  if (solid.walls.length === 0 && solid.roofs.length === 0 && crowns.length === 0) return () => 1;
+/** What stands between a lamp and any block of the map; only what can is asked about each sample. */
+function shadesOf(source: LightSource, space: LightSpace): (map: SurfaceMap, block: number) => Shade {
+  const { walls, roofs, crowns } = obstaclesFor(space, source);
+  const screens = crowns.map((crown) => screenOf(crown, source));
+  return (map, b) => {
+    const x = map.blockBall[b * 4]!;
+    const y = map.blockBall[b * 4 + 1]!;
+    // Light to the ball around the block keeps within its radius of the way to its middle.
+    const width = map.blockBall[b * 4 + 3]! + (map.blockIsGround[b] ? 0 : MARKED_TWICE_METERS);
+    const way = { ax: source.x, ay: source.y, bx: x, by: y };
+    const near: Obstacles = {
+      walls: walls.filter((wall) => segmentsWithin(way, wall, width)),
+      roofs: roofs.filter(({ roof, overLamp }) => overLamp || isBy(roof.points, x, y, width)),
+      // Crowns let light through at their edge, here, where it is seen.
+      crowns: [],
+    };
+    const nearScreens = screens.filter(
+      (screen) => distanceTo(way, screen.middle) <= screen.radiusMeters + width,
+    );
+    if (near.walls.length === 0 && near.roofs.length === 0 && nearScreens.length === 0) return null;
+    return shadeBy(source, near, nearScreens);
+  };
+}
+
+function shadeBy(source: LightSource, solid: Obstacles, screens: readonly Screen[]): Shade {
+  const { x, y, z } = source;
   const at = { x: 0, y: 0, z: 0 };
   const normal = { x: 0, y: 0, z: 0 };
-  const screens = crowns.map((crown) => screenOf(crown, source));
-  const { x, y, z } = source;
   return (map, s) => {
     at.x = map.x[s]!;
     at.y = map.y[s]!;
@@ -152,12 +174,53 @@ function shadeOf(source: LightSource, space: LightSpace): Shade {
   };
 }
 
+type Segment = Pick<Wall, 'ax' | 'ay' | 'bx' | 'by'>;
+
+/** Whether two segments come within so many metres of one another. */
+function segmentsWithin(p: Segment, q: Segment, meters: number): boolean {
+  return (
+    cross(p, q) ||
+    distanceTo(q, { x: p.ax, y: p.ay }) <= meters ||
+    distanceTo(q, { x: p.bx, y: p.by }) <= meters ||
+    distanceTo(p, { x: q.ax, y: q.ay }) <= meters ||
+    distanceTo(p, { x: q.bx, y: q.by }) <= meters
+  );
+}
+
+function cross(p: Segment, q: Segment): boolean {
+  const side = (s: Segment, x: number, y: number) =>
+    (s.bx - s.ax) * (y - s.ay) - (s.by - s.ay) * (x - s.ax) > 0;
+  return side(p, q.ax, q.ay) !== side(p, q.bx, q.by) && side(q, p.ax, p.ay) !== side(q, p.bx, p.by);
+}
+
+function distanceTo({ ax, ay, bx, by }: Segment, p: PlanePoint): number {
+  const dx = bx - ax;
+  const dy = by - ay;
+  const square = dx * dx + dy * dy;
+  const t = square > 0 ? Math.min(Math.max(((p.x - ax) * dx + (p.y - ay) * dy) / square, 0), 1) : 0;
+  return Math.hypot(p.x - ax - t * dx, p.y - ay - t * dy);
+}
+
+/** Whether a place is so near to the box around a footprint that it may be in it. */
+function isBy(points: readonly PlanePoint[], x: number, y: number, meters: number): boolean {
+  let [left, right, low, high] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (const p of points) {
+    left = Math.min(left, p.x);
+    right = Math.max(right, p.x);
+    low = Math.min(low, p.y);
+    high = Math.max(high, p.y);
+  }
+  return x >= left - meters && x <= right + meters && y >= low - meters && y <= high + meters;
+}
+
 /** From this share of a crown's radius outwards it is thin, and lets more and more light through. */
 const DENSE_SHARE = 0.45;
 
 /** A crown as a lamp sees it: in units of its own radii, in which it is a ball about the origin. */
 interface Screen {
   readonly id: string;
+  readonly middle: PlanePoint;
+  readonly radiusMeters: number;
   readonly perRadius: number;
   readonly perHalfHeight: number;
   /** The lamp. */
@@ -174,7 +237,17 @@ function screenOf(crown: Crown, lamp: Point3): Screen {
   const x = (lamp.x - crown.x) * perRadius;
   const y = (lamp.y - crown.y) * perRadius;
   const z = (lamp.z - crown.z) * perHalfHeight;
-  return { id: crown.id, perRadius, perHalfHeight, x, y, z, square: x * x + y * y + z * z };
+  return {
+    id: crown.id,
+    middle: crown,
+    radiusMeters: crown.radiusMeters,
+    perRadius,
+    perHalfHeight,
+    x,
+    y,
+    z,
+    square: x * x + y * y + z * z,
+  };
 }
 
 /** What a crown lets through of light that goes so far: all beside it, nothing near its middle. */

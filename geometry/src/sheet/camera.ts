@@ -1,4 +1,4 @@
-import { inverse, type Matrix3, type PlanePoint } from './homography.js';
+import { inverse, type Matrix3, type PlanePoint } from './matrix3.js';
 
 /** A point over the ground of a sheet: metres, z up. */
 export interface SpacePoint {
