@@ -14,7 +14,7 @@ const folder = `/var/tmp/lampwright-dev-${folderHash(`${root} ${process.getuid?.
 async function prepare() {
   mkdirSync(folder, { recursive: true, mode: 0o755 });
   await ensurePackages(['postgresql']);
-  return openCluster(folder);
+  return openCluster(folder, { throwaway: true });
 }
 
 /** Several test runs may ask at the same moment. @template T @param {() => Promise<T>} body */

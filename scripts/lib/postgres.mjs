@@ -34,10 +34,11 @@ export const productDatabase = 'lampwright';
  * A private PostgreSQL cluster on loopback, made when it is not there yet.
  * The cluster's folder is named by its major version, since one version can't read another's.
  * @param {string} stateFolder where its passwords and port are kept, and the cluster itself if the server may enter
+ * @param {{ throwaway?: boolean }} [options] throwaway: quicker, as what is in it need not outlive a crash of the machine
  * @returns {Promise<Cluster>}
  * @throws {Trouble} when PostgreSQL is missing or the folder is another's
  */
-export async function openCluster(stateFolder) {
+export async function openCluster(stateFolder, { throwaway = false } = {}) {
   const installations = findInstallations();
   const installation =
     installations.find(({ major }) => existsSync(stateFile(stateFolder, major))) ?? installations[0];
@@ -54,7 +55,7 @@ export async function openCluster(stateFolder) {
       `The database folder ${state.folder} is gone; restore it, or remove ${stateFolder} to start anew.`,
     );
   }
-  return new Cluster(installation.bin, file, state);
+  return new Cluster(installation.bin, file, state, throwaway);
 }
 
 /** @param {string} stateFolder @param {number} major */
@@ -153,12 +154,14 @@ export class Cluster {
   #bin;
   #file;
   #state;
+  #throwaway;
 
-  /** @param {string} bin @param {string} file @param {ClusterState} state */
-  constructor(bin, file, state) {
+  /** @param {string} bin @param {string} file @param {ClusterState} state @param {boolean} throwaway */
+  constructor(bin, file, state, throwaway) {
     this.#bin = bin;
     this.#file = file;
     this.#state = state;
+    this.#throwaway = throwaway;
   }
 
   /** The folder of the server's programs (psql, pg_dump …). */
@@ -217,7 +220,7 @@ export class Cluster {
       const log = join(this.folder, 'server.log');
       const start = [`${this.#bin}/pg_ctl`, 'start', '-D', this.folder, '-l', log, '-w', '-t', '60'];
       // The server would keep a pipe open for its whole life, and with it this process: no output is taken.
-      const started = await runAsServer([...start, '-o', `-p ${port}`], { output: 'ignore' });
+      const started = await runAsServer([...start, '-o', this.#options(port)], { output: 'ignore' });
       if (started.code === 0) {
         this.#remember(port);
         return true;
@@ -225,6 +228,12 @@ export class Cluster {
       // Another program can take a free port before the server does.
       if (attempt === 3) throw new Error(`The database did not start; its last words:\n${lastLines(log)}`);
     }
+  }
+
+  /** Given at the start, not written into the cluster: opened without `throwaway`, it keeps what it promises. @param {number} port */
+  #options(port) {
+    const careless = ['fsync', 'synchronous_commit', 'full_page_writes'].map((name) => `-c ${name}=off`);
+    return [`-p ${port}`, ...(this.#throwaway ? careless : [])].join(' ');
   }
 
   /** @param {number} port */

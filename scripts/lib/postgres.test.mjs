@@ -57,6 +57,17 @@ test('a pid file that names another program does not keep it from starting', asy
   assert.equal(await cluster.start(), true);
 });
 
+test('a throwaway one saves itself the waiting for the disk, for as long as it runs', async () => {
+  await cluster.stop();
+  const careless = await openCluster(folder, { throwaway: true });
+  await careless.start();
+  for (const name of ['fsync', 'synchronous_commit', 'full_page_writes'])
+    assert.equal(await careless.sql(`show ${name}`), 'off');
+  await careless.stop();
+  await cluster.start();
+  assert.equal(await cluster.sql('show fsync'), 'on');
+});
+
 test('it moves to another port when its own is taken, and remembers that', async () => {
   await cluster.stop();
   const before = portOf(cluster);

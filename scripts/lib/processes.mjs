@@ -1,12 +1,13 @@
 import { spawn } from 'node:child_process';
 import { readFileSync } from 'node:fs';
+import { keeper } from './log.mjs';
 
 /**
  * @typedef {object} RunOptions
  * @property {string} [cwd]
  * @property {NodeJS.ProcessEnv} [env]
  * @property {string} [input] written to its standard input
- * @property {'capture' | 'show' | 'ignore'} [output] capture (default), show in the terminal, or neither
+ * @property {'capture' | 'show' | 'ignore'} [output] capture (default), show in the terminal (in its turn), or neither
  * @property {AbortSignal} [signal] ends the process with SIGTERM
  *
  * @typedef {{ code: number, stdout: string, stderr: string }} RunResult code is 128 when a signal ended it
@@ -20,7 +21,8 @@ import { readFileSync } from 'node:fs';
  * @returns {Promise<RunResult>}
  */
 export function run(command, args, { cwd, env, input, output = 'capture', signal } = {}) {
-  const stream = output === 'capture' ? 'pipe' : output === 'show' ? 'inherit' : 'ignore';
+  const keep = output === 'show' ? keeper() : null;
+  const stream = output === 'capture' || keep ? 'pipe' : output === 'show' ? 'inherit' : 'ignore';
   return new Promise((done, fail) => {
     const child = spawn(command, args, {
       cwd,
@@ -32,10 +34,12 @@ export function run(command, args, { cwd, env, input, output = 'capture', signal
     let stdout = '';
     let stderr = '';
     child.stdout?.setEncoding('utf8').on('data', (chunk) => {
-      stdout += chunk;
+      if (keep) keep('stdout', chunk);
+      else stdout += chunk;
     });
     child.stderr?.setEncoding('utf8').on('data', (chunk) => {
-      stderr += chunk;
+      if (keep) keep('stderr', chunk);
+      else stderr += chunk;
     });
     // A program that ends before reading its input is judged by its exit code, not by the broken pipe.
     child.stdin?.on('error', () => {});

@@ -23,9 +23,10 @@ const readyTimeoutMs = 60_000;
  * @param {number} options.port of the API
  * @param {string} [options.publicUrl]
  * @param {string} [options.editorFiles] another build of the editor than the product's own
+ * @param {boolean} [options.throwaway] the data need not outlive a crash of the machine
  */
-export async function startGround({ folder, supervisor, signal, port, publicUrl, editorFiles }) {
-  const cluster = await openCluster(folder);
+export async function startGround({ folder, supervisor, signal, port, publicUrl, editorFiles, throwaway }) {
+  const cluster = await openCluster(folder, { throwaway });
   supervisor.onStop('the database', () => cluster.stop());
   await cluster.start();
   signal.throwIfAborted();
@@ -86,9 +87,10 @@ async function runStep(what, script, env, signal) {
  * @param {Supervisor} options.supervisor
  * @param {AbortSignal} options.signal
  * @param {string} [options.editorFiles] another build of the editor than the product's own
+ * @param {boolean} [options.throwaway] the data need not outlive a crash of the machine
  */
-export async function startProduct({ folder, port, supervisor, signal, editorFiles }) {
-  const { cluster, env } = await startGround({ folder, supervisor, signal, port, editorFiles });
+export async function startProduct({ folder, port, supervisor, signal, editorFiles, throwaway }) {
+  const { cluster, env } = await startGround({ folder, supervisor, signal, port, editorFiles, throwaway });
   const url = `http://127.0.0.1:${port}`;
   const service = (/** @type {string} */ script) => ({
     args: [inRoot(`api/dist/${script}.js`)],

@@ -20,8 +20,13 @@ import { nodeTestCounts, oneOf, playwrightCounts, sum, vitestCounts } from './te
  * @property {string} scratch a folder for reports
  * @property {AbortSignal} signal
  * @property {() => Promise<string>} testDatabase starts the run's own database server when first asked
+ * @property {number} cores that the step may keep busy
  *
- * @typedef {{ name: string, title: string, run: (context: TestContext) => Promise<Counts> }} Step
+ * @typedef {object} Step
+ * @property {string} name
+ * @property {string} title
+ * @property {boolean} [aside] needs nothing of the others and takes long: it may run beside them
+ * @property {(context: TestContext) => Promise<Counts>} run
  */
 
 /** With CI set, `.only` is refused and snapshots are not written; it also makes some tools colour a file. */
@@ -45,19 +50,22 @@ async function lint(context) {
 }
 
 /** @param {TestContext} context */
-async function types({ signal }) {
-  const projects = ['geometry', 'api', 'editor', 'e2e', 'scripts'].filter((name) =>
+async function types({ signal, cores }) {
+  const projects = ['api', 'editor', 'geometry', 'e2e', 'scripts'].filter((name) =>
     existsSync(inRoot(name, 'tsconfig.json')),
   );
   const tsc = inRoot('node_modules/.bin/tsc');
-  const results = await Promise.all(
-    projects.map(async (project) => {
+  /** @type {Counts[]} */
+  const results = [];
+  const checkNext = async () => {
+    for (let project = projects.shift(); project !== undefined; project = projects.shift()) {
       const args = ['-p', join(project, 'tsconfig.json'), '--noEmit', '--pretty', 'false'];
       const { code, stdout, stderr } = await run(tsc, args, { cwd: root, env, signal });
       say(`${project}: ${code === 0 ? 'ok' : `\n${stdout}${stderr}`}`);
-      return oneOf(code === 0);
-    }),
-  );
+      results.push(oneOf(code === 0));
+    }
+  };
+  await Promise.all(Array.from({ length: cores }, checkNext));
   return sum(results);
 }
 
@@ -120,7 +128,8 @@ async function scripts({ scratch, signal }) {
  */
 async function vitest(workspace, context, more) {
   const file = join(context.scratch, `${workspace}.json`);
-  const args = ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${file}`];
+  const reports = ['--reporter=default', '--reporter=json', `--outputFile.json=${file}`];
+  const args = ['run', `--maxWorkers=${context.cores}`, ...reports];
   const code = await show('vitest', args, context, { cwd: inRoot(workspace), env: { ...env, ...more } });
   return vitestCounts(file, code);
 }
@@ -148,7 +157,14 @@ async function e2e(context) {
     claimDataFolder(folder, supervisor, 'npm test');
     const port = await freePort();
     const editorFiles = inRoot('e2e/dist');
-    const { url } = await startProduct({ folder, port, supervisor, signal: context.signal, editorFiles });
+    const { url } = await startProduct({
+      folder,
+      port,
+      supervisor,
+      signal: context.signal,
+      editorFiles,
+      throwaway: true,
+    });
     const file = join(context.scratch, 'e2e.json');
     const more = { LAMPWRIGHT_URL: url, PLAYWRIGHT_JSON_OUTPUT_FILE: file };
     const args = ['test', '-c', 'e2e/playwright.config.ts'];
@@ -170,7 +186,7 @@ async function e2e(context) {
   return counts;
 }
 
-/** In the order in which they run: the quick and telling ones first. @type {Step[]} */
+/** In the order in which they run and are told: the quick and telling ones first. @type {Step[]} */
 export const steps = [
   { name: 'lint', title: 'Format and lint', run: lint },
   { name: 'types', title: 'Types', run: types },
@@ -181,5 +197,5 @@ export const steps = [
   { name: 'unit', title: 'Unit tests', run: unit },
   { name: 'scripts', title: 'Tests of the commands', run: scripts },
   { name: 'api', title: 'API tests', run: api },
-  { name: 'e2e', title: 'End-to-end tests', run: e2e },
+  { name: 'e2e', title: 'End-to-end tests', aside: true, run: e2e },
 ];
