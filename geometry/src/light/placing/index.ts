@@ -7,6 +7,7 @@ export {
   onSheet,
   type Proposal,
   type ProposedLight,
+  proposedKinds,
   spaceOfLights,
 } from './proposal.js';
 export * from './tree.js';

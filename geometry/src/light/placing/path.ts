@@ -3,7 +3,7 @@ import type { PlanePoint } from '../../sheet/matrix3.js';
 import { formatLength, meters, type UnitSystem } from '../../units/index.js';
 import { type LuxFigures, lengthOf, luxAlong, placeAlong } from '../grid.js';
 import type { LightSpace } from '../space.js';
-import { type LuxUnit, luxText, shortOf } from '../target.js';
+import { type LuxUnit, shortOf } from '../target.js';
 import {
   type Candidate,
   candidatesOf,
@@ -12,6 +12,7 @@ import {
   type Proposal,
   type ProposedLight,
   proposed,
+  proposedKinds,
   refused,
   spaceOfLights,
 } from './proposal.js';
@@ -46,7 +47,7 @@ export function proposePath(
 ): Proposal | NoProposal {
   const length = lengthOf(path.line);
   if (!(length > 0)) return refused('The path has no length yet: draw it from its start to its end.');
-  const candidates = candidatesOf(offers, ['path', 'bollard']);
+  const candidates = candidatesOf(offers, proposedKinds.path);
   if (candidates.length === 0)
     return refused('The catalogue has no path light or bollard with a lamp that fits; add one first.');
   const fixed = path.count ?? null;
@@ -80,11 +81,6 @@ export function proposePath(
   const places = lights.length === 1 ? 'one light' : `${lights.length} lights, ${apart} apart, ${side}`;
   const why = [
     `${best.candidate.name}: ${places}.`,
-    ...(figures
-      ? [
-          `Worked out on the path: ${luxText(figures.least.lux, units.light)} at the darkest place, ${luxText(figures.meanLux, units.light)} in the mean.`,
-        ]
-      : []),
     ...(fixed === null && candidates.length > 1
       ? [
           able.length > 1

@@ -30,6 +30,13 @@ export interface ProposedLight {
   readonly aim: { readonly at: PlanePoint; readonly heightMeters: number } | null;
 }
 
+/** Kinds of fixtures that are proposed for each. */
+export const proposedKinds = {
+  path: ['path', 'bollard'],
+  tree: ['up', 'flood'],
+  wall: ['wall-wash', 'flood', 'up'],
+} as const satisfies Record<string, readonly FixtureKind[]>;
+
 /** What light was worked out where it is wanted. */
 export interface ProposedFigures {
   readonly on: 'path' | 'crown' | 'wall';
@@ -48,7 +55,7 @@ export interface Proposal {
   readonly lights: readonly ProposedLight[];
   /** Null where nothing could be worked out, as for a path that is all under a roof. */
   readonly figures: ProposedFigures | null;
-  /** Why this item, so many and there, and what light was worked out. Other lights of the plan are not counted. */
+  /** Why this item, so many and there. Other lights of the plan are not counted. */
   readonly why: readonly string[];
   /** What falls short of what was asked, in sentences; empty where nothing does. */
   readonly short: readonly string[];

@@ -12,6 +12,7 @@ import {
   type Proposal,
   type ProposedLight,
   proposed,
+  proposedKinds,
   refused,
   spaceOfLights,
 } from './proposal.js';
@@ -50,7 +51,7 @@ export function proposeTree(
   space: LightSpace,
   unit: LuxUnit,
 ): Proposal | NoProposal {
-  const candidates = candidatesOf(offers, ['up', 'flood']);
+  const candidates = candidatesOf(offers, proposedKinds.tree);
   if (candidates.length === 0)
     return refused('The catalogue has no up-light or flood with a lamp that fits; add one first.');
   const { crown } = tree;
@@ -82,7 +83,7 @@ export function proposeTree(
   const why = [
     `${candidate.name}: ${many}, aimed at the middle of the crown.`,
     `The crown asks for a beam of about ${Math.round(wanted)}°; this one has ${Math.round(beamDegreesOf(candidate))}°.`,
-    `Worked out on the side that is lit: ${luxText(lux, unit)} in the mean; about ${Math.round(100 * sky)} % of the light goes past the crown.`,
+    `About ${Math.round(100 * sky)} % of the light goes past the crown.`,
   ];
   const short = [
     ...(lux < least || lux > most

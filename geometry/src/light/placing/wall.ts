@@ -12,6 +12,7 @@ import {
   type Proposal,
   type ProposedLight,
   proposed,
+  proposedKinds,
   refused,
   spaceOfLights,
 } from './proposal.js';
@@ -55,7 +56,7 @@ export function proposeWall(
 ): Proposal | NoProposal {
   const length = lengthOf(wall.foot);
   if (!(length > 0)) return refused('The wall has no length yet: mark its foot from one end to the other.');
-  const candidates = candidatesOf(offers, ['wall-wash', 'flood', 'up']);
+  const candidates = candidatesOf(offers, proposedKinds.wall);
   if (candidates.length === 0)
     return refused('The catalogue has no wall wash, flood or up-light with a lamp that fits; add one first.');
   const fixed = wall.count ?? null;
@@ -84,7 +85,6 @@ export function proposeWall(
       : `${lights.length} lights, ${distance(length / lights.length, units.system)} apart and ${before} before the wall`;
   const why = [
     `${candidate.name}: ${places}.`,
-    `Worked out on the wall: ${luxText(lux, units.light)} in the mean, and along its middle nowhere less than ${Math.floor(100 * even)} % of the mean there.`,
     ...(fixed === null && candidates.length > 1
       ? [
           fitting.length > 1

@@ -88,7 +88,10 @@ export function PlanCanvas({ imageUrl }: { readonly imageUrl: string | null }) {
         ...camera.state.getState(),
         selection: session.getState().selection,
         hoveredId: session.getState().hoveredId,
-        preview: keptPreview(session.getState().request) ?? tools.state.getState().preview,
+        preview:
+          keptPreview(session.getState().request) ??
+          tools.state.getState().preview ??
+          session.getState().proposed,
         stale: estimate.state.getState().stale,
         night: session.getState().mode === 'night',
       });

@@ -249,7 +249,7 @@ function halfway(points: readonly Point[]): Point {
 }
 
 function isBusy(preview: Preview | null): boolean {
-  return preview !== null && preview.kind !== 'place';
+  return preview !== null && preview.kind !== 'place' && preview.kind !== 'proposed';
 }
 
 function movingIds(preview: Preview | null): ReadonlySet<string> | null {

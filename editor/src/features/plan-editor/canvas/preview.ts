@@ -6,6 +6,7 @@ import { drawMeasurement, workingLabelAt } from '../../../plan-view/draw/scene';
 import type { MarkSprites } from '../../../plan-view/draw/sprites';
 import { drawFace, drawTree } from '../../../plan-view/draw/uprights';
 import { ink, lamp, paper } from '../../../plan-view/palette';
+import { drawProposed } from '../placing/draw';
 import type { PlaceMark, Preview } from '../tools/tool';
 import type { PaintState } from './paint-state';
 
@@ -71,6 +72,9 @@ export function drawPreview(
     }
     case 'aim':
       drawAimCross(ctx, toWindow(camera, preview.at));
+      return;
+    case 'proposed':
+      drawProposed(ctx, camera, preview, sprites);
       return;
     case 'place':
       ctx.globalAlpha = 0.85;

@@ -8,6 +8,7 @@ import { useEffect, useId, useState } from 'react';
 import { useEditor, useScale, useUnitSystem } from '../page/context';
 import { CommitField, SelectField } from '../page/controls';
 import { lengthText } from '../page/lengths';
+import { LightThis } from '../placing/LightThis';
 import styles from './inspector.module.css';
 import { LightTargetFields } from './LightTargetFields';
 import { common, idsOf } from './shared';
@@ -74,6 +75,7 @@ export function MeasurementSection({ measurement }: { readonly measurement: Meas
           )
         }
       />
+      <LightThis record={measurement} />
     </>
   );
 }

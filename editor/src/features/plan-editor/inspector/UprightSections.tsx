@@ -2,6 +2,7 @@ import { type FaceRecord, type PlanPoint, setFields, type TreeRecord } from '@la
 import { useEditor, useScale, useUnitSystem } from '../page/context';
 import { CommitField, LengthField } from '../page/controls';
 import { lengthText, plainLength } from '../page/lengths';
+import { LightThis } from '../placing/LightThis';
 import { upperEdge } from '../tools/uprights';
 import styles from './inspector.module.css';
 import { PointsField } from './PointsField';
@@ -42,6 +43,7 @@ export function FaceSection({ faces }: { readonly faces: readonly FaceRecord[] }
             editor.edit('Change height', (d) => setFields(d, ids, 'face', { heightMeters }));
         }}
       />
+      {one !== null && <LightThis record={one} />}
       {one !== null && <FacePoints face={one} />}
     </>
   );
@@ -161,6 +163,7 @@ export function TreeSection({ trees }: { readonly trees: readonly TreeRecord[] }
             editor.edit('Change crown', (d) => setFields(d, ids, 'tree', { crownBaseMeters }));
         }}
       />
+      {one !== null && <LightThis record={one} />}
       {one !== null && (
         <>
           <PointsField

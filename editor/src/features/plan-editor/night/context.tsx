@@ -63,7 +63,7 @@ export function NightProvider({
         sheetId: session.getState().sheetId,
         volts,
         selection: session.getState().selection,
-        preview: tools.state.getState().preview,
+        preview: tools.state.getState().preview ?? session.getState().proposed,
       };
     };
     const controller = new NightController(

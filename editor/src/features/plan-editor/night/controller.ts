@@ -358,7 +358,7 @@ export class NightController {
     const shown = previewed(doc, preview);
     if (shown === doc) return still;
     const scene = nightSceneOf(shown, sheetId, volts, groupOf);
-    return scene === null ? still : { ...still, sources: scene.sources };
+    return scene === null ? still : { ...still, sources: scene.sources, zones: scene.zones };
   }
 
   private ask(scene: NightScene, shares: Shares): void {

@@ -1,4 +1,5 @@
 import { apply, moveRecords, type PlanDocument, recordOf } from '@lampwright/geometry/plan';
+import { withProposed } from '../placing/place-lights';
 import type { Preview } from '../tools/tool';
 
 /** The plan as it will be if the hand lets go now; the plan itself where that changes no light. */
@@ -16,6 +17,8 @@ export function previewed(doc: PlanDocument, preview: Preview | null): PlanDocum
       }
       return next;
     }
+    case 'proposed':
+      return withProposed(doc, preview);
     default:
       return doc;
   }

@@ -9,6 +9,7 @@ import { EveningBar } from '../night/EveningBar';
 import type { NightHere } from '../night/here';
 import { NightSide } from '../night/NightSide';
 import nightStyles from '../night/night-page.module.css';
+import { PlacingPanel } from '../placing/PlacingPanel';
 import { Profile } from '../profile/Profile';
 import { ScalePanel } from '../scale/ScalePanel';
 import type { Drawer } from '../store/session';
@@ -118,7 +119,7 @@ function Page({
             <ZoomBar />
           </div>
         )}
-        <Panels faults={faults} history={history} questions={questions?.panel ?? null} />
+        <Panels entries={entries} faults={faults} history={history} questions={questions?.panel ?? null} />
       </main>
       {night ? (
         <EveningBar />
@@ -142,12 +143,13 @@ function Page({
 }
 
 interface PanelsProps {
+  readonly entries: readonly CatalogueEntry[];
   readonly faults: Faults;
   readonly history: ReactNode;
   readonly questions: ReactNode;
 }
 
-function Panels({ faults, history, questions }: PanelsProps) {
+function Panels({ entries, faults, history, questions }: PanelsProps) {
   const panel = useSession((s) => s.panel);
   switch (panel) {
     case 'none':
@@ -162,6 +164,8 @@ function Panels({ faults, history, questions }: PanelsProps) {
       return questions;
     case 'conflicts':
       return <Conflicts />;
+    case 'placing':
+      return <PlacingPanel entries={entries} />;
   }
 }
 

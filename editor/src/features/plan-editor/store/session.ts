@@ -1,8 +1,9 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
+import type { ProposedPreview } from '../placing/place-lights';
 import type { Choices, Request } from '../tools/tool';
 
 /** Which panel stands over the drawing, if any. */
-export type Panel = 'none' | 'scale' | 'faults' | 'history' | 'conflicts' | 'questions';
+export type Panel = 'none' | 'scale' | 'faults' | 'history' | 'conflicts' | 'questions' | 'placing';
 /** On a phone, what has slid up over the drawing. */
 export type Drawer = 'none' | 'ledger' | 'light' | 'profile' | 'inspector';
 /** The sheet as drawn, or as it looks in the evening. */
@@ -24,6 +25,10 @@ export interface SessionState {
   readonly side: Side;
   /** The run whose profile is shown when the selection is of none. */
   readonly runId: string | null;
+  /** What lights are proposed for while their panel is open. */
+  readonly placingId: string | null;
+  /** Lights that are proposed, shown before they are placed. */
+  readonly proposed: ProposedPreview | null;
 }
 
 const nothing: ReadonlySet<string> = new Set();
@@ -42,5 +47,7 @@ export function createSession(sheetId: string): StoreApi<SessionState> {
     mode: 'day',
     side: 'light',
     runId: null,
+    placingId: null,
+    proposed: null,
   }));
 }

@@ -1,6 +1,7 @@
 import type { Aim, Change, EditResult, ItemChoice, PlanDocument } from '@lampwright/geometry/plan';
 import type { SolvedScale } from '@lampwright/geometry/sheet';
 import type { Point } from '../../../plan-view/camera';
+import type { ProposedPreview } from '../placing/place-lights';
 
 /**
  * A tool is a small state machine between gestures and the plan. It hears typed events in sheet pixels,
@@ -81,6 +82,7 @@ export type Preview =
     }
   /** Lights being aimed: which, and what at; null while the pointer is on nothing that can be lit. */
   | { readonly kind: 'aim'; readonly aims: ReadonlyMap<string, Aim>; readonly at: Point }
+  | ProposedPreview
   | { readonly kind: 'place'; readonly at: Point; readonly mark: PlaceMark; readonly snapped: boolean }
   | {
       readonly kind: 'scale';
