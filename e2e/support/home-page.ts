@@ -5,6 +5,10 @@ import { sumOf } from './sums.js';
 export class HomePage {
   readonly main: Locator;
   readonly picture: Locator;
+  /** The evening drawn over the photo. */
+  readonly night: Locator;
+  /** The frame in which the picture is, all of it while nobody has zoomed. */
+  readonly frame: Locator;
   readonly total: Locator;
   /** What is other than in the version that was approved. */
   readonly changes: Locator;
@@ -13,6 +17,8 @@ export class HomePage {
     this.main = page.getByRole('main');
     this.picture = page.getByRole('region', { name: 'Your garden with its lights' });
     this.changes = page.getByRole('region', { name: 'What changed since you approved' });
+    this.night = this.picture.locator('[data-drawn]');
+    this.frame = this.picture.getByRole('group', { name: /picture with \d+ lights/ });
     this.total = sumOf(this.main, /^Total$/);
   }
 

@@ -19,6 +19,8 @@ export interface PlanRecord {
   readonly via?: readonly Point[];
   readonly style?: string;
   readonly use?: string;
+  readonly heightMeters?: number;
+  readonly aim?: { readonly kind: string; readonly heightMeters?: number } | null;
   readonly measuredMeters?: number | null;
   readonly markedToMarked?: boolean;
   readonly references?: readonly { readonly kind: string }[];

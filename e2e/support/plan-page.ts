@@ -19,7 +19,10 @@ export type Tool =
   | 'Fixture'
   | 'Cable'
   | 'Hub'
+  | 'Aim'
   | 'Area'
+  | 'Wall face'
+  | 'Tree'
   | 'Measure'
   | 'Note'
   | 'Scale';
