@@ -179,7 +179,6 @@ describe('lights proposed for a tree', () => {
     const house = placeArea(bare(), {
       sheetId: 'sheet',
       use: 'building',
-      name: '',
       points: corners,
       heightMeters: 3,
     });
@@ -209,7 +208,6 @@ describe('lights proposed for a wall', () => {
     const result = placeArea(bare(), {
       sheetId: 'sheet',
       use: 'building',
-      name: '',
       points: [
         { x: 200, y: 600 },
         { x: 800, y: 600 },

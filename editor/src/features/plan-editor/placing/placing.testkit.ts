@@ -36,7 +36,7 @@ const bullet: FixtureItem = {
   category: 'fixture',
   name: 'Bullet up-light',
   kind: 'up',
-  lead: null,
+  lead: { conductor: { awg: 18 }, lengthMeters: 0.9 },
   mountingHeightMeters: null,
   wetListed: true,
   light: 'lamp',
