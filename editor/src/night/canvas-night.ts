@@ -1,6 +1,6 @@
 import { composeRows, type LightMap, type Look } from '@lampwright/geometry/night';
+import type { NightPhoto, NightRenderer, PictureSize } from './night-renderer';
 import { photoPixels } from './photo-pixels';
-import type { NightPhoto, NightRenderer, PictureSize } from './renderer';
 
 /** A slice is as many rows as take about this long, so that pointers and keys are heard in between. */
 const SLICE_MS = 12;

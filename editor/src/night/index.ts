@@ -1,1 +1,2 @@
-export { createNightRenderer, type NightPhoto, type NightRenderer, type PictureSize } from './renderer';
+export type { NightPhoto, NightRenderer, PictureSize } from './night-renderer';
+export { createNightRenderer } from './renderer';

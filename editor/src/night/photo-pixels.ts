@@ -1,4 +1,4 @@
-import type { NightPhoto, PictureSize } from './renderer';
+import type { NightPhoto, PictureSize } from './night-renderer';
 
 /** The photo at the picture's size, as both renderers read it. Throws where the photo is of another site. */
 export function photoPixels(photo: NightPhoto, { width, height }: PictureSize): ImageData {

@@ -1,6 +1,6 @@
 import { GLOW_TINT_SHARE, type LightMap, type Look } from '@lampwright/geometry/night';
+import type { NightPhoto, NightRenderer, PictureSize } from './night-renderer';
 import { photoPixels } from './photo-pixels';
-import type { NightPhoto, NightRenderer, PictureSize } from './renderer';
 import { FRAGMENT, VERTEX } from './shader';
 
 type Uniform =

@@ -57,31 +57,29 @@ export function composeRows(
   const gain = grade.lamps / whiteLux;
   const glowGain = grade.lamps;
   const tintFloor = GLOW_TINT_SHARE * whiteLux;
+  const row = rowOf(4 * light.width);
+  const leafRow = leafRowOf(light.width);
+  const perX = light.width / width;
   const lastColumn = light.width - 1;
   const lastRow = light.height - 1;
   for (let y = from; y < to; y++) {
     const fy = Math.min(Math.max(((y + 0.5) * light.height) / height - 0.5, 0), lastRow);
     const y0 = Math.floor(fy);
     const ty = fy - y0;
-    const upper = y0 * light.width;
-    const lower = Math.min(y0 + 1, lastRow) * light.width;
+    mixRows(rgba, row, 4 * light.width, y0, Math.min(y0 + 1, lastRow), ty);
+    mixRows(leaves, leafRow, light.width, y0, Math.min(y0 + 1, lastRow), ty);
     for (let x = 0; x < width; x++) {
-      const fx = Math.min(Math.max(((x + 0.5) * light.width) / width - 0.5, 0), lastColumn);
+      const fx = Math.min(Math.max((x + 0.5) * perX - 0.5, 0), lastColumn);
       const x0 = Math.floor(fx);
       const tx = fx - x0;
       const x1 = Math.min(x0 + 1, lastColumn);
-      const a = (upper + x0) * 4;
-      const b = (upper + x1) * 4;
-      const c = (lower + x0) * 4;
-      const d = (lower + x1) * 4;
-      const wa = (1 - tx) * (1 - ty);
-      const wb = tx * (1 - ty);
-      const wc = (1 - tx) * ty;
-      const wd = tx * ty;
-      const lr = rgba[a]! * wa + rgba[b]! * wb + rgba[c]! * wc + rgba[d]! * wd;
-      const lg = rgba[a + 1]! * wa + rgba[b + 1]! * wb + rgba[c + 1]! * wc + rgba[d + 1]! * wd;
-      const lb = rgba[a + 2]! * wa + rgba[b + 2]! * wb + rgba[c + 2]! * wc + rgba[d + 2]! * wd;
-      const glow = glowGain * (rgba[a + 3]! * wa + rgba[b + 3]! * wb + rgba[c + 3]! * wc + rgba[d + 3]! * wd);
+      const a = 4 * x0;
+      const b = 4 * x1;
+      const sx = 1 - tx;
+      const lr = row[a]! * sx + row[b]! * tx;
+      const lg = row[a + 1]! * sx + row[b + 1]! * tx;
+      const lb = row[a + 2]! * sx + row[b + 2]! * tx;
+      const glow = glowGain * (row[a + 3]! * sx + row[b + 3]! * tx);
       const i = (y * width + x) * 4;
       const r = LINEAR[data[i]!]!;
       const g = LINEAR[data[i + 1]!]!;
@@ -94,8 +92,7 @@ export function composeRows(
       if (lr > 0) {
         let lit = gain;
         if (bl > GAP_BLUE[0]) {
-          const leaf =
-            leaves[a >> 2]! * wa + leaves[b >> 2]! * wb + leaves[c >> 2]! * wc + leaves[d >> 2]! * wd;
+          const leaf = leafRow[x0]! * sx + leafRow[x1]! * tx;
           const t = Math.min((bl - GAP_BLUE[0]) / (GAP_BLUE[1] - GAP_BLUE[0]), 1);
           lit *= 1 - (leaf / 255) * t * t * (3 - 2 * t);
         }
@@ -120,6 +117,32 @@ export function composeRows(
       out[i + 3] = 255;
     }
   }
+}
+
+/** Rows between the map's own, kept from one picture to the next. */
+const rowOf = kept();
+const leafRowOf = kept();
+
+function kept(): (length: number) => Float32Array {
+  let row = new Float32Array(0);
+  return (length) => {
+    if (row.length !== length) row = new Float32Array(length);
+    return row;
+  };
+}
+
+/** One row between two of a map, `share` of the way from the upper to the lower. */
+function mixRows(
+  map: Float32Array | Uint8Array,
+  into: Float32Array,
+  length: number,
+  upper: number,
+  lower: number,
+  share: number,
+): void {
+  const above = upper * length;
+  const below = lower * length;
+  for (let i = 0; i < length; i++) into[i] = map[above + i]! * (1 - share) + map[below + i]! * share;
 }
 
 /** A byte whose mean over many pixels is the light's exact sRGB value; `noise` from 0 to 1023. */
