@@ -60,7 +60,12 @@ export function GardenPicture(props: Props) {
   };
 
   return (
-    <section ref={root} className={styles.picture} aria-label="Your garden with its lights">
+    <section
+      ref={root}
+      className={styles.picture}
+      data-tabs={tabs.length > 1 || undefined}
+      aria-label="Your garden with its lights"
+    >
       {tabs.length > 1 && (
         <Tabs
           tabs={tabs}
