@@ -376,8 +376,10 @@ describe('the night', () => {
     expect(answer.headers['cache-control']).toBe('no-store');
     const night = sharedNightSchema.parse(answer.body);
     expect(night.evening).toEqual(evening);
-    const { document } = await pageOf(home);
+    const { document, pictures } = await pageOf(home);
     expect(document).not.toHaveProperty('evening');
+    // The page keeps a place for the evening before it is asked for.
+    expect(pictures.map(({ night: shown }) => shown)).toEqual([{ zones: 1 }]);
     const [scene] = night.scenes;
     expect(scene).toMatchObject({ sheetId: job.sheetId, view: 'plan', widthPx: 2400, heightPx: 1800 });
     expect(scene!.sources.map(({ id, groupId }) => [id, groupId])).toEqual([
