@@ -200,7 +200,8 @@ function keyOfSurfaces({
   return JSON.stringify([view, widthPx, heightPx, groundMatrix, whiteLux, faces, trees, buildings]);
 }
 
-function isSameLight(a: LightSource, b: LightSource): boolean {
+/** Whether a lamp gives the same light as before; in which zone or group it is changes none. */
+export function isSameLight(a: LightSource, b: LightSource): boolean {
   return (
     a === b ||
     (a.x === b.x &&

@@ -1,5 +1,13 @@
 import { clockText, type Evening } from '@lampwright/geometry/night';
-import { type KeyboardEvent, useLayoutEffect, useMemo, useRef, useState, useSyncExternalStore } from 'react';
+import {
+  type KeyboardEvent,
+  useEffect,
+  useLayoutEffect,
+  useMemo,
+  useRef,
+  useState,
+  useSyncExternalStore,
+} from 'react';
 import { Link } from 'react-router-dom';
 import { useNight, useNightController, useNightHere } from './context';
 import styles from './evening-bar.module.css';
@@ -37,6 +45,24 @@ const watchMotion = (changed: () => void) => {
 const useStillness = (): boolean =>
   useSyncExternalStore(watchMotion, () => window.matchMedia(stillMotion).matches);
 
+/** Light that takes longer than this to work out, in milliseconds, is said to be on its way. */
+const LONG_WORK_MS = 500;
+
+/** Whether light has been worked out for so long that a person wants to know. */
+function useLongWork(): boolean {
+  const working = useNight((s) => s.work.is === 'working');
+  const [long, setLong] = useState(false);
+  useEffect(() => {
+    if (!working) return;
+    const timer = setTimeout(() => setLong(true), LONG_WORK_MS);
+    return () => {
+      clearTimeout(timer);
+      setLong(false);
+    };
+  }, [working]);
+  return long;
+}
+
 /** The evening under the drawing: a line from before sunset to after lights-out, to move through. */
 export function EveningBar() {
   const night = useNightController();
@@ -47,6 +73,7 @@ export function EveningBar() {
   const zones = useNight((s) => s.zones);
   const looks = useNight((s) => s.looks);
   const still = useStillness();
+  const long = useLongWork();
   const locale = navigator.language;
   const clock = clockText(at, evening.timeZone, locale);
   const phase = phaseWord(phaseAt(evening, at));
@@ -74,7 +101,7 @@ export function EveningBar() {
     night.seek(minutes + (event.shiftKey ? Math.sign(step) : step));
   };
   return (
-    <section className={styles.bar} aria-label="Evening">
+    <section className={styles.bar} aria-label="Evening" data-working={long || undefined}>
       {!still && (
         <button
           type="button"
@@ -90,9 +117,12 @@ export function EveningBar() {
       )}
       <p className={styles.now}>
         <strong>{clock}</strong>
-        <span>
-          {dayOf(evening)} · {phase} · {lights}
-        </span>
+        <span role="status">{long && 'Working out the light…'}</span>
+        {!long && (
+          <span>
+            {dayOf(evening)} · {phase} · {lights}
+          </span>
+        )}
       </p>
       <div className={styles.line}>
         <div ref={track} className={styles.track} style={{ backgroundImage: ground }}>

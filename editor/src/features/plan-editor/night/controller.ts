@@ -326,7 +326,7 @@ export class NightController {
     if (preview?.kind !== 'move' && preview?.kind !== 'aim') this.wantFigures(still);
     const scene = this.drawn.of(() => this.underHand(still), still, preview);
     const { evening, at, looks, groupsOff } = this.state.getState();
-    this.ask(scene, sharesAt(scene, { evening, at }, { looks, groupsOff }));
+    this.ask(scene, sharesAt(scene, { evening, at }, { looks, groupsOff }), scene !== still);
     this.reframe();
   }
 
@@ -361,7 +361,7 @@ export class NightController {
     return scene === null ? still : { ...still, sources: scene.sources, zones: scene.zones };
   }
 
-  private ask(scene: NightScene, shares: Shares): void {
+  private ask(scene: NightScene, shares: Shares, moving: boolean): void {
     const before = this.asked;
     const { work } = this.state.getState();
     if (work.is === 'failed' && before?.scene === scene) return;
@@ -373,7 +373,7 @@ export class NightController {
     this.asked = { scene, shares };
     this.running = true;
     this.state.setState({ work: { is: 'working' } });
-    this.deps.engine.light({ scene, shares, longEdge: this.deps.longEdge }).then(
+    this.deps.engine.light({ scene, shares, longEdge: this.deps.longEdge, moving }).then(
       (light) => {
         this.running = false;
         if (this.closed) return;

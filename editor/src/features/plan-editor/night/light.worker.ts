@@ -11,7 +11,12 @@ interface WorkerPort {
 const port = globalThis as unknown as WorkerPort;
 const work = new LightWork();
 
+/** After the page has been answered for so long, in milliseconds, there is time to get ready for what may come. */
+const LULL_MS = 150;
+let lull: ReturnType<typeof setTimeout> | undefined;
+
 port.onmessage = ({ data }) => {
+  clearTimeout(lull);
   try {
     answer(data);
   } catch (error) {
@@ -27,6 +32,7 @@ function answer(question: WorkerAsk): void {
       // What was summed stays here for the next sum; the page gets a copy that is its own.
       const rgba = light.rgba.slice();
       port.postMessage({ is: 'light', light: { ...light, rgba } }, [rgba.buffer]);
+      lull = setTimeout(() => work.prepare(), LULL_MS);
       return;
     }
     case 'figures':
