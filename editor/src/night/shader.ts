@@ -17,6 +17,7 @@ uniform sampler2D light;
 uniform sampler2D leaves;
 uniform vec2 size;
 uniform vec3 ambient;
+uniform vec3 ink;
 uniform float saturation;
 uniform float litSaturation;
 uniform float knee;
@@ -48,7 +49,7 @@ void main() {
   vec3 surface = linearOf(texelFetch(photo, at, 0).rgb);
   vec3 grey = vec3(dot(LUMA, surface));
   float gap = smoothstep(${number(GAP_BLUE[0])}, ${number(GAP_BLUE[1])}, surface.b) * texture(leaves, where).r;
-  vec3 seen = mix(grey, surface, saturation) * ambient;
+  vec3 seen = mix(grey, surface, saturation) * ambient + (1.0 - grey) * (1.0 - grey) * ink;
   seen += mix(grey, surface, litSaturation) * lux.rgb * gain * (1.0 - gap);
   vec3 tint = lux.rgb + tintFloor * GLOW_TINT;
   seen += tint * (glowGain * lux.a / dot(LUMA, tint));

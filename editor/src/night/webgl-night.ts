@@ -9,6 +9,7 @@ type Uniform =
   | 'leaves'
   | 'size'
   | 'ambient'
+  | 'ink'
   | 'saturation'
   | 'litSaturation'
   | 'knee'
@@ -93,6 +94,7 @@ export class WebglNight implements NightRenderer {
     const at = (name: Uniform) => parts.uniforms.get(name) ?? null;
     gl.uniform2f(at('size'), photo.width, photo.height);
     gl.uniform3f(at('ambient'), ...grade.ambient);
+    gl.uniform3f(at('ink'), ...grade.ink);
     gl.uniform1f(at('saturation'), grade.saturation);
     gl.uniform1f(at('litSaturation'), grade.litSaturation);
     gl.uniform1f(at('knee'), grade.knee);
@@ -188,6 +190,7 @@ function partsOf(gl: WebGL2RenderingContext): Parts {
     'leaves',
     'size',
     'ambient',
+    'ink',
     'saturation',
     'litSaturation',
     'knee',

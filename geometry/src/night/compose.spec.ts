@@ -33,8 +33,9 @@ describe('the picture', () => {
   });
 
   it('grows darker from minute to minute as the sun goes down, and never brighter', () => {
-    const photo = picture(60, 40, (x) => 4 * x);
     for (const view of ['photo', 'plan'] as const) {
+      // Of a drawing its paper: the lines on it turn pale.
+      const photo = picture(60, 40, (x) => (view === 'photo' ? 4 * x : 196 + x));
       let before = 256;
       for (let altitude = 14; altitude >= -20; altitude -= 0.5) {
         const mean = meanOf(composeNight(photo, { ...light(4, 4, () => 0), view }, lookAt(altitude), 40));
@@ -42,7 +43,21 @@ describe('the picture', () => {
         before = mean;
       }
       expect(before).toBeGreaterThan(5);
-      expect(before).toBeLessThan(45);
+      expect(before).toBeLessThan(80);
+    }
+  });
+
+  it('keeps the lines of a drawing apart from its paper through the whole evening', () => {
+    const drawing = picture(60, 40, (x) => (x % 6 === 0 ? 20 : 255));
+    for (let altitude = 14; altitude >= -20; altitude -= 0.5) {
+      const dark = { ...light(4, 4, () => 0), view: 'plan' as const };
+      const data = composeNight(drawing, dark, lookAt(altitude), 40);
+      const [line, paper] = [0, 3].map((x) =>
+        meanOf(data.subarray(4 * (60 * 20 + x), 4 * (60 * 20 + x + 1))),
+      );
+      // By day dark on light, by night light on dark; in between one passes the other.
+      if (altitude > -2) expect(paper).toBeGreaterThan(line! + 40);
+      if (altitude < -9) expect(line).toBeGreaterThan(paper! + 25);
     }
   });
 

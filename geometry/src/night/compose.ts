@@ -54,6 +54,7 @@ export function composeRows(
   const grade = look[light.view];
   const [ar, ag, ab] = grade.ambient;
   const { saturation, litSaturation, knee } = grade;
+  const [ir, ig, ib] = grade.ink;
   const gain = grade.lamps / whiteLux;
   const glowGain = grade.lamps;
   const tintFloor = GLOW_TINT_SHARE * whiteLux;
@@ -86,9 +87,10 @@ export function composeRows(
       const bl = LINEAR[data[i + 2]!]!;
       const luma = LUMA[0] * r + LUMA[1] * g + LUMA[2] * bl;
       const grey = (1 - saturation) * luma;
-      let red = (grey + saturation * r) * ar;
-      let green = (grey + saturation * g) * ag;
-      let blue = (grey + saturation * bl) * ab;
+      const dark = (1 - luma) * (1 - luma);
+      let red = (grey + saturation * r) * ar + dark * ir;
+      let green = (grey + saturation * g) * ag + dark * ig;
+      let blue = (grey + saturation * bl) * ab + dark * ib;
       if (lr > 0) {
         let lit = gain;
         if (bl > GAP_BLUE[0]) {

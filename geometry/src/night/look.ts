@@ -9,6 +9,11 @@ export interface Grade {
   readonly saturation: number;
   /** The same of what lamps light: pictures taken in the sun are more colourful than anything is by lamplight. */
   readonly litSaturation: number;
+  /**
+   * Light that black is drawn with: none on photos. On dark paper the lines of a drawing turn pale, or nobody could
+   * read them; goes with the square of how dark a place of the sheet is.
+   */
+  readonly ink: Rgb;
   /** Factor on the lamps' light; 1 at night, next to nothing in the sun. */
   readonly lamps: number;
   /** Up to here light is shown as it is; above, ever less of it, towards white. 1: no shoulder. */
@@ -72,6 +77,9 @@ const PLAN_NIGHT = 0.045;
 const NIGHT_SATURATION = 0.4;
 const LIT_SATURATION = 0.55;
 const NIGHT_KNEE = 0.5;
+/** Pale blue, a few times as bright as the paper beside it. */
+const PLAN_INK: Rgb = [0.23, 0.29, 0.4];
+const NO_INK: Rgb = [0, 0, 0];
 /** White paper throws back several times as much light as a garden does. */
 const PLAN_LAMPS = 0.25;
 
@@ -87,17 +95,20 @@ export function lookAt(sunAltitudeDegrees: number): Look {
   return {
     sunAltitudeDegrees,
     skyLux,
-    photo: gradeAt(light, PHOTO_NIGHT, between(PHOTO_TINT, sunAltitudeDegrees), 1),
-    plan: gradeAt(light, PLAN_NIGHT, between(PLAN_TINT, sunAltitudeDegrees), PLAN_LAMPS),
+    photo: gradeAt(light, PHOTO_NIGHT, between(PHOTO_TINT, sunAltitudeDegrees), 1, NO_INK),
+    plan: gradeAt(light, PLAN_NIGHT, between(PLAN_TINT, sunAltitudeDegrees), PLAN_LAMPS, PLAN_INK),
   };
 }
 
-function gradeAt(light: number, night: number, tint: Rgb, lampsAtNight: number): Grade {
+function gradeAt(light: number, night: number, tint: Rgb, lampsAtNight: number, ink: Rgb): Grade {
   const share = night ** (1 - light);
+  // Comes up as the paper goes down, late in dusk.
+  const pale = smooth(Math.max(0, 1 - 2 * light));
   return {
     ambient: [tint[0] * share, tint[1] * share, tint[2] * share],
     saturation: 1 - (1 - NIGHT_SATURATION) * smooth(1 - light),
     litSaturation: LIT_SATURATION,
+    ink: [ink[0] * pale, ink[1] * pale, ink[2] * pale],
     // A camera set for so much daylight shows so much less of the lamps.
     lamps: lampsAtNight * (1 - light) ** 1.5,
     knee: NIGHT_KNEE + (1 - NIGHT_KNEE) * smooth(light),
