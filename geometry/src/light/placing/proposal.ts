@@ -118,6 +118,12 @@ function wattsOf(load: Load): number {
   }
 }
 
+/** So many watts more are as bad as twice too bright: of two that suit alike, the thriftier is taken. */
+const WATTS_LIKE_TWICE = 20;
+
+/** What the watts of so many lights count against them. */
+export const thirst = ({ watts }: Candidate, count: number): number => (watts * count) / WATTS_LIKE_TWICE;
+
 /** The full beam angle of a candidate in degrees. */
 export function beamDegreesOf({ photometry }: Candidate): number {
   const { halfAngle } = photometry.beam;

@@ -15,6 +15,7 @@ import {
   proposedKinds,
   refused,
   spaceOfLights,
+  thirst,
 } from './proposal.js';
 
 export interface TreeToLight {
@@ -132,9 +133,13 @@ function tryOut(
   const sky =
     lamps.reduce((sum, lamp) => sum + lamp.sky, 0) / lamps.reduce((sum, lamp) => sum + lamp.total, 0);
   const ratio = beamDegreesOf(candidate) / wanted.beam;
-  // Twice too bright or too wide is as bad as half; light that misses, and lights more than usual, count beside it.
+  // Twice too bright or too wide is as bad as half; light that misses, lights more than usual and their watts count beside it.
   const misfit =
-    Math.abs(Math.log2(Math.max(lux, 1e-3) / wanted.lux)) + Math.abs(Math.log2(ratio)) + 2 * sky + extra;
+    Math.abs(Math.log2(Math.max(lux, 1e-3) / wanted.lux)) +
+    Math.abs(Math.log2(ratio)) +
+    2 * sky +
+    extra +
+    thirst(candidate, count);
   return { candidate, lights, lux, sky, ratio, misfit };
 }
 

@@ -15,6 +15,7 @@ import {
   proposedKinds,
   refused,
   spaceOfLights,
+  thirst,
 } from './proposal.js';
 
 export interface WallToLight {
@@ -155,7 +156,8 @@ function tryOut(
 ) {
   const lights = lightsBefore(candidate, wall, length, count);
   const light = onWall(wall, length, spaceOfLights(candidate, lights, space));
-  const misfit = Math.abs(Math.log2(Math.max(light.lux, 1e-3) / wanted)) + count / 2;
+  const misfit =
+    Math.abs(Math.log2(Math.max(light.lux, 1e-3) / wanted)) + count / 2 + thirst(candidate, count);
   return { candidate, lights, ...light, misfit };
 }
 

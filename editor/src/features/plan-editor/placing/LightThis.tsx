@@ -1,5 +1,6 @@
 import { Button } from '../../../components/button';
 import { useEditor } from '../page/context';
+import { bringIntoView } from './bring-into-view';
 import { kindOf, type Lightable } from './subject';
 
 /** Opens the proposal of lights for what is chosen. */
@@ -11,7 +12,8 @@ export function LightThis({ record }: { readonly record: Lightable }) {
       <Button
         onClick={() => {
           editor.use('select');
-          editor.session.setState({ placingId: record.id, panel: 'placing', drawer: 'none' });
+          const placingSide = bringIntoView(editor, record);
+          editor.session.setState({ placingId: record.id, placingSide, panel: 'placing', drawer: 'none' });
         }}
       >
         Light this {kindOf(record)}…

@@ -81,10 +81,11 @@ function Placing({ record, entries }: PlacingProps) {
   const proposed = useProposal(asking);
   const set = (fields: Partial<Wish>) => setWish({ ...wish, ...fields });
   const title = `Light this ${kindOf(record)}`;
+  const side = useSession((s) => s.placingSide);
   switch (asking.is) {
     case 'no-scale':
       return (
-        <PanelFrame title={title} side="start">
+        <PanelFrame title={title} side={side}>
           <p role="status">How much light falls where waits for this sheet’s scale.</p>
           <div>
             <Button kind="strong" onClick={() => editor.use('scale')}>
@@ -95,13 +96,13 @@ function Placing({ record, entries }: PlacingProps) {
       );
     case 'impossible':
       return (
-        <PanelFrame title={title} side="start">
+        <PanelFrame title={title} side={side}>
           <p role="status">{asking.message}</p>
         </PanelFrame>
       );
     case 'ask':
       return (
-        <PanelFrame title={title} side="start">
+        <PanelFrame title={title} side={side}>
           <Result proposed={proposed} light={light} />
           <Fields
             record={record}

@@ -27,6 +27,8 @@ export interface SessionState {
   readonly runId: string | null;
   /** What lights are proposed for while their panel is open. */
   readonly placingId: string | null;
+  /** The edge of the drawing that it stands at, so that what is to be lit is seen beside it. */
+  readonly placingSide: 'start' | 'end';
   /** Lights that are proposed, shown before they are placed. */
   readonly proposed: ProposedPreview | null;
 }
@@ -48,6 +50,7 @@ export function createSession(sheetId: string): StoreApi<SessionState> {
     side: 'light',
     runId: null,
     placingId: null,
+    placingSide: 'start',
     proposed: null,
   }));
 }
