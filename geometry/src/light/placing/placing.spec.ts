@@ -262,6 +262,15 @@ describe('lights for a wall', () => {
     expect(behind.lights.every(({ at }) => at.y > 0)).toBe(true);
   });
 
+  it('are not refused for shrubs at its foot, and say that these are not counted', () => {
+    const shrubs = [2, 4.5, 7].map((x, i) => crown([x, -0.5, 0.5], 0.5, 0.5, `shrub${i}`));
+    const bare = taken(proposeWall(asked, catalogue, spaceWith(house), metric));
+    const planted = taken(proposeWall(asked, catalogue, spaceWith({ ...house, crowns: shrubs }), metric));
+    expect(planted.figures).toEqual(bare.figures);
+    expect(planted.why.at(-1)).toMatch(/^Plants by the wall shade a part of it/);
+    expect(bare.why.join(' ')).not.toMatch(/Plants/);
+  });
+
   it('are more the longer the wall is', () => {
     const count = (length: number) =>
       taken(proposeWall({ ...asked, foot: [foot[0]!, { x: length, y: 0 }] }, catalogue, open, metric)).lights

@@ -2,7 +2,7 @@ import type { PlanePoint } from '../../sheet/matrix3.js';
 import { formatLength, meters, type UnitSystem } from '../../units/index.js';
 import { lengthOf, placeAlong } from '../grid.js';
 import { luxAt } from '../illuminance.js';
-import type { LightSpace } from '../space.js';
+import type { Crown, LightSpace } from '../space.js';
 import { type LuxUnit, luxText } from '../target.js';
 import {
   type Candidate,
@@ -68,10 +68,12 @@ export function proposeWall(
     most: wanted * BRIGHTEST,
   };
   const most = Math.max(Math.floor(length / CLOSEST_METERS), 1);
+  const planted = space.crowns.filter((crown) => isPlantedAt(wall, length, crown));
+  const free = { ...space, crowns: space.crowns.filter((crown) => !planted.includes(crown)) };
   const fitting = candidates.flatMap((candidate) =>
     fixed === null
-      ? (fewest(candidate, wall, length, most, space, bounds) ?? [])
-      : [tryOut(candidate, wall, length, fixed, space, bounds)],
+      ? (fewest(candidate, wall, length, most, free, bounds) ?? [])
+      : [tryOut(candidate, wall, length, fixed, free, bounds)],
   );
   const [best] = fitting.sort((a, b) => a.misfit - b.misfit || a.candidate.watts - b.candidate.watts);
   if (!best)
@@ -94,6 +96,8 @@ export function proposeWall(
         ]
       : []),
   ];
+  if (planted.length > 0)
+    why.push('Plants by the wall shade a part of it and are lit themselves: the figures are without them.');
   const short = [
     ...(lux < bounds.least || lux > bounds.most
       ? [
@@ -113,6 +117,16 @@ export function proposeWall(
     why,
     short,
   );
+}
+
+/** Whether a plant stands where the lights do: its shade falls on the wall wherever they are. */
+function isPlantedAt(wall: WallToLight, length: number, { x, y, radiusMeters }: Crown): boolean {
+  const pieces = Math.ceil(length / ALONG_METERS);
+  for (let i = 0; i <= pieces; i++) {
+    const at = placeAlong(wall.foot, (length * i) / pieces);
+    if (Math.hypot(at.x - x, at.y - y) < radiusMeters + WASH_METERS.most) return true;
+  }
+  return false;
 }
 
 const distance = (m: number, system: UnitSystem): string => formatLength(meters(m), { system });
