@@ -13,6 +13,7 @@ const STREAM_RATE = 60;
 const AIM_MS = 100;
 
 /** WebGL by software, or none at all: what browsers without a GPU do. */
+/** @type {[string, string[]][]} */
 const BROWSERS = [
   ['webgl', ['--disable-gpu', '--enable-unsafe-swiftshader']],
   ['canvas', ['--disable-gpu']],

@@ -2,7 +2,7 @@ import type { Aim } from '@lampwright/geometry/plan';
 import type { Camera, Point, Size } from '../../../plan-view/camera';
 import type { Scene } from '../../../plan-view/scene';
 import type { GroundFigure } from '../night/ground-figures';
-import type { DrawnAim } from '../tools/light-pose';
+import type { DrawnAim } from '../tools/proposed';
 import type { Preview } from '../tools/tool';
 
 /** All that the painted layers depend on. */

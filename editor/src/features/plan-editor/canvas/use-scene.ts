@@ -14,7 +14,8 @@ import {
 } from '../page/context';
 import { areaText, lengthText as lengthOf, plainLength } from '../page/lengths';
 import { referenceLines } from '../scale/reference-lines';
-import { type DrawnAim, drawnAim } from '../tools/light-pose';
+import { drawnAim } from '../tools/light-pose';
+import type { DrawnAim } from '../tools/proposed';
 
 /** The open sheet as drawable data; built anew only when the plan, its volts or its scale change. */
 export function useScene() {

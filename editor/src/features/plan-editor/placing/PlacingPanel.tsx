@@ -18,7 +18,8 @@ import { useDoc, useEditor, useSession, useUnitSystem } from '../page/context';
 import { CommitField, LengthField, SelectField } from '../page/controls';
 import type { CatalogueEntry } from '../page/items';
 import { PanelFrame } from '../page/PanelFrame';
-import { type LightsToPlace, placeLights } from './place-lights';
+import type { LightsToPlace } from '../tools/proposed';
+import { placeLights } from './place-lights';
 import styles from './placing.module.css';
 import {
   askingFor,

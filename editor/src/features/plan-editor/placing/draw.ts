@@ -1,7 +1,7 @@
 import { type Camera, markRadius, toWindow } from '../../../plan-view/camera';
 import { drawAimLine, drawBeamEdge } from '../../../plan-view/draw/aim';
 import type { MarkSprites } from '../../../plan-view/draw/sprites';
-import type { ProposedPreview } from './place-lights';
+import type { ProposedPreview } from '../tools/proposed';
 
 /** Proposed lights: dashed marks as of lights that nothing feeds yet, and where those point that are aimed. */
 export function drawProposed(

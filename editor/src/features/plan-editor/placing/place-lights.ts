@@ -1,36 +1,19 @@
 import { fixtureInitial } from '@lampwright/geometry/catalogue';
 import { onSheet, type Proposal } from '@lampwright/geometry/light';
 import {
-  type Aim,
   apply,
   type Change,
   compose,
   type EditResult,
   type IdSource,
-  type ItemChoice,
   newId,
   type PlanDocument,
-  type PlanPoint,
   placeFixture,
 } from '@lampwright/geometry/plan';
 import type { SolvedScale } from '@lampwright/geometry/sheet';
 import { meters } from '@lampwright/geometry/units';
-import { type DrawnAim, drawnAim } from '../tools/light-pose';
-
-/** Lights as they are about to be placed, all alike, in sheet pixels. */
-export interface LightsToPlace {
-  readonly sheetId: string;
-  readonly fixture: ItemChoice;
-  readonly lamp: ItemChoice | null;
-  readonly lights: readonly { readonly at: PlanPoint; readonly aim: Aim | null }[];
-}
-
-/** Lights that are proposed, with what is drawn of them. */
-export interface ProposedPreview extends LightsToPlace {
-  readonly kind: 'proposed';
-  readonly initial: string;
-  readonly aims: readonly DrawnAim[];
-}
+import { drawnAim } from '../tools/light-pose';
+import type { LightsToPlace, ProposedPreview } from '../tools/proposed';
 
 /** A proposal on its sheet, without those of its lights that the sheet doesn't show. */
 export function lightsOn(sheetId: string, scale: SolvedScale, proposal: Proposal): LightsToPlace {

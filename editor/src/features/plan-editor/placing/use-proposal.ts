@@ -1,7 +1,8 @@
 import type { NoProposal, Proposal } from '@lampwright/geometry/light';
 import { createContext, useContext, useEffect, useMemo, useState } from 'react';
 import { useDoc, useEditor } from '../page/context';
-import { type LightsToPlace, lightsOn, previewOf } from './place-lights';
+import type { LightsToPlace } from '../tools/proposed';
+import { lightsOn, previewOf } from './place-lights';
 import { type Proposer, proposerInWorker } from './proposer';
 import type { Asking } from './subject';
 

@@ -1,5 +1,5 @@
 import { createStore, type StoreApi } from 'zustand/vanilla';
-import type { ProposedPreview } from '../placing/place-lights';
+import type { ProposedPreview } from '../tools/proposed';
 import type { Choices, Request } from '../tools/tool';
 
 /** Which panel stands over the drawing, if any. */

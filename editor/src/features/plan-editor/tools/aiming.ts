@@ -1,6 +1,7 @@
 import { type Aim, type FixtureRecord, putRecords, recordOf } from '@lampwright/geometry/plan';
 import type { Point } from '../../../plan-view/camera';
-import { type DrawnAim, drawnAim, poseOf } from './light-pose';
+import { drawnAim, poseOf } from './light-pose';
+import type { DrawnAim } from './proposed';
 import { type AimTarget, aimTarget, groundOfTarget } from './target';
 import { distance, settle, type ToolContext } from './tool';
 

@@ -17,6 +17,7 @@ import { recordOf } from '@lampwright/geometry/plan';
 import type { SheetCamera, SolvedScale } from '@lampwright/geometry/sheet';
 import { meters } from '@lampwright/geometry/units';
 import type { Point } from '../../../plan-view/camera';
+import type { DrawnAim } from './proposed';
 import type { ToolContext } from './tool';
 import { cameraOf, sheetOf } from './uprights';
 
@@ -94,19 +95,6 @@ function aimedReach(pose: LightPose, { scene, space }: Lit, aim: Aim | null): Re
   const point = { ...ground, z: aim.heightMeters };
   const away = Math.hypot(point.x - pose.x, point.y - pose.y, point.z - pose.z);
   return { on: reach.on, point, meters: away };
-}
-
-/** What is drawn of a light's aim, in sheet pixels. */
-export interface DrawnAim {
-  /** Where the fixture is marked. */
-  readonly mark: Point;
-  /** The light itself, above its mark. */
-  readonly from: Point;
-  /** What the middle of its beam meets. */
-  readonly to: Point;
-  readonly on: Reach['on'];
-  /** The edge of the beam at half of its peak, as lines; none where it has no edge. */
-  readonly edge: readonly (readonly Point[])[];
 }
 
 export function drawnAim(world: World, fixtureId: string, aim?: Aim | null): DrawnAim | null {

@@ -1,7 +1,7 @@
 import type { Aim, Change, EditResult, ItemChoice, PlanDocument } from '@lampwright/geometry/plan';
 import type { SolvedScale } from '@lampwright/geometry/sheet';
 import type { Point } from '../../../plan-view/camera';
-import type { ProposedPreview } from '../placing/place-lights';
+import type { ProposedPreview } from './proposed';
 
 /**
  * A tool is a small state machine between gestures and the plan. It hears typed events in sheet pixels,
