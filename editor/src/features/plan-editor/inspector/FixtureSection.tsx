@@ -10,6 +10,7 @@ import { type CatalogueEntry, lampsFor, pickItems } from '../page/items';
 import { AimFields } from './AimFields';
 import styles from './inspector.module.css';
 import { common, idsOf } from './shared';
+import { WhereVoltsWent } from './WhereVoltsWent';
 import { ZoneFields } from './ZoneFields';
 
 interface Props {
@@ -44,6 +45,7 @@ export function FixtureSection({ fixtures, entries }: Props) {
   return (
     <>
       {one !== null ? <FixtureHead fixture={one} /> : <h2>{fixtures.length} fixtures</h2>}
+      {one !== null && <WhereVoltsWent fixture={one} />}
       {one !== null && (
         <CommitField
           label="Name"

@@ -1,0 +1,2 @@
+export * from './problem.js';
+export { designSite } from './site.js';

@@ -1,0 +1,2 @@
+export * from './lamps.js';
+export * from './year.js';
