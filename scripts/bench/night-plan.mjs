@@ -5,6 +5,7 @@ import { cpus, loadavg } from 'node:os';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { chromium } from '@playwright/test';
 
+/** The smaller first: the garden only grows. */
 const SIZES = [60, 200];
 const STEPS = 40;
 /** Pointer moves of a hand that doesn't wait for the picture: so many, at so many a second. */
@@ -13,7 +14,7 @@ const STREAM_RATE = 60;
 const AIM_MS = 100;
 
 /** Browsers without a GPU have WebGL by software, or none at all. */
-/** @type {[string, string[]][]} */
+/** @type {readonly { name: string, args: string[] }[]} */
 const BROWSERS = [
   { name: 'webgl', args: ['--disable-gpu', '--enable-unsafe-swiftshader'] },
   { name: 'none', args: ['--disable-gpu'] },
@@ -217,15 +218,12 @@ async function gardenOf(request, fixtures) {
   const own = records.filter(
     (/** @type {PlanRecord} */ one) => one.kind === 'fixture' && one.sheetId === sheet.id,
   );
-  /** @param {PlanRecord[]} lamps @returns {PlanRecord[]} the cables that end at them */
-  const cablesTo = (lamps) => {
-    const ids = new Set(lamps.map(({ id }) => id));
-    return records.filter((/** @type {PlanRecord} */ one) => one.kind === 'cable' && ids.has(one.toId));
-  };
-  const [wire] = cablesTo(own);
-  const surplus = own.slice(fixtures);
+  const wire = records.find(
+    (/** @type {PlanRecord} */ one) => one.kind === 'cable' && own.some(({ id }) => id === one.toId),
+  );
   const [dragged] = own;
-  if (!dragged) throw new Error('The garden has no fixture.');
+  if (!dragged || !wire || own.length > fixtures)
+    throw new Error(`The garden has ${own.length} fixtures, for a bench of ${fixtures}.`);
   const at = { x: sheet.widthPx * 0.45, y: sheet.heightPx * 0.78 };
   /** @type {Record<string, PlanRecord>} */
   const put = { [dragged.id]: { ...dragged, at } };
@@ -239,10 +237,9 @@ async function gardenOf(request, fixtures) {
     const cable = randomUUID();
     put[cable] = { ...wire, id: cable, toId: id, via: [] };
   }
-  const remove = [...cablesTo(surplus), ...surplus].map(({ id }) => id);
   await ask(`/api/jobs/${jobId}/plan/changes`, {
     baseVersion: version,
-    changes: [{ id: randomUUID(), schema: PLAN_FORM, put, remove }],
+    changes: [{ id: randomUUID(), schema: PLAN_FORM, put, remove: [] }],
   });
   return { jobId, sheet, at };
 }
