@@ -1,5 +1,5 @@
 import { formatLength, meters, parseLength } from '@lampwright/geometry/units';
-import { type KeyboardEvent, type ReactNode, useEffect, useId, useState } from 'react';
+import { type KeyboardEvent, type ReactNode, useId, useState } from 'react';
 import { useUnitSystem } from './context';
 import styles from './controls.module.css';
 
@@ -25,10 +25,13 @@ export function CommitField(props: CommitProps) {
   const id = props.inputId ?? own;
   const [text, setText] = useState(value);
   const [error, setError] = useState<string | null>(null);
-  useEffect(() => {
+  // While rendering, not in an effect: that could come after what somebody typed meanwhile, and undo it.
+  const [shown, setShown] = useState(value);
+  if (shown !== value) {
+    setShown(value);
     setText(value);
     setError(null);
-  }, [value]);
+  }
   const take = () => {
     if (text === value) {
       setError(null);
