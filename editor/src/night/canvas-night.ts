@@ -7,10 +7,10 @@ const SLICE_MS = 12;
 const FIRST_ROWS = 64;
 
 interface Wanted {
-  rgba: Float32Array;
-  light: LightMap;
-  look: Look;
-  whiteLux: number;
+  /** A copy of its own. */
+  readonly light: LightMap;
+  readonly look: Look;
+  readonly whiteLux: number;
 }
 
 /** Composes on the processor, slice by slice; the canvas changes once the whole picture is there. */
@@ -22,6 +22,8 @@ export class CanvasNight implements NightRenderer {
   /** What is being composed, and what comes after it. */
   private now: Wanted | null = null;
   private next: Wanted | null = null;
+  /** Room for a light map that is not in use: to ask for memory for each picture takes longer than to fill it. */
+  private spare: Float32Array | null = null;
   private row = 0;
   private rows = FIRST_ROWS;
   private timer: ReturnType<typeof setTimeout> | null = null;
@@ -49,13 +51,11 @@ export class CanvasNight implements NightRenderer {
 
   draw(light: LightMap, look: Look, whiteLux: number): void {
     if (this.disposed) return;
-    const wanted = this.next ?? { rgba: new Float32Array(light.rgba.length), light, look, whiteLux };
-    if (wanted.rgba.length !== light.rgba.length) wanted.rgba = new Float32Array(light.rgba.length);
-    wanted.rgba.set(light.rgba);
-    wanted.light = { ...light, rgba: wanted.rgba };
-    wanted.look = look;
-    wanted.whiteLux = whiteLux;
-    this.next = wanted;
+    const room = this.next?.light.rgba ?? this.spare;
+    if (!this.next) this.spare = null;
+    const rgba = room?.length === light.rgba.length ? room : new Float32Array(light.rgba.length);
+    rgba.set(light.rgba);
+    this.next = { light: { ...light, rgba }, look, whiteLux };
     if (this.timer === null) this.slice();
   }
 
@@ -88,6 +88,7 @@ export class CanvasNight implements NightRenderer {
     this.row = until;
     if (until === photo.height) {
       this.context.putImageData(picture, 0, 0);
+      this.spare = now.light.rgba;
       this.now = null;
       if (!this.next) {
         this.finish();

@@ -32,6 +32,22 @@ function passing(shield: number, t: number): number {
 /** Lumens of a beam: its candela over the whole sphere, Φ = 2π ∫ I(θ) sin θ dθ, by Simpson's rule. */
 export function lumensOf(beam: Beam): number {
   if (beam.halfAngle === Number.POSITIVE_INFINITY) return 4 * Math.PI * beam.peakCandela;
+  const { halfAngle, shield } = beam;
+  const key = `${halfAngle} ${shield}`;
+  let flux = fluxes.get(key);
+  if (flux === undefined) {
+    flux = fluxOfOneCandela({ peakCandela: 1, halfAngle, shield });
+    if (fluxes.size >= MOST_FLUXES) fluxes.clear();
+    fluxes.set(key, flux);
+  }
+  return beam.peakCandela * flux;
+}
+
+/** Lumens to a candela of shapes of beams: lamps of a yard have few, and are asked for all of them time and again. */
+const fluxes = new Map<string, number>();
+const MOST_FLUXES = 500;
+
+function fluxOfOneCandela(beam: Beam): number {
   // The bell is narrow beside the sphere for spots: no steps are spent where there is no light.
   const end = Math.min(Math.PI, beam.halfAngle * 7);
   const step = end / FLUX_STEPS;

@@ -50,16 +50,25 @@ const LONG_WORK_MS = 500;
 
 /** Whether light has been worked out for so long that a person wants to know. */
 function useLongWork(): boolean {
-  const working = useNight((s) => s.work.is === 'working');
+  const night = useNightController();
   const [long, setLong] = useState(false);
   useEffect(() => {
-    if (!working) return;
-    const timer = setTimeout(() => setLong(true), LONG_WORK_MS);
-    return () => {
-      clearTimeout(timer);
-      setLong(false);
+    // Beside React: work that begins and ends with every step of a drag draws nothing anew.
+    let timer: ReturnType<typeof setTimeout> | null = null;
+    const look = () => {
+      const working = night.state.getState().work.is === 'working';
+      if (working === (timer !== null)) return;
+      if (timer !== null) clearTimeout(timer);
+      timer = working ? setTimeout(() => setLong(true), LONG_WORK_MS) : null;
+      if (!working) setLong(false);
     };
-  }, [working]);
+    look();
+    const stop = night.state.subscribe(look);
+    return () => {
+      stop();
+      if (timer !== null) clearTimeout(timer);
+    };
+  }, [night]);
   return long;
 }
 
