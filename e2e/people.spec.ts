@@ -49,7 +49,7 @@ test('crew see jobs and plans, and change neither', async ({ page, browser }) =>
     await page.getByLabel(`Role of ${hand.name}`).selectOption({ label: 'Designer' });
     await expect(page.getByRole('button', { name: 'Undo' })).toBeVisible();
     await theirs.reload();
-    await expect(theirs.getByRole('toolbar', { name: 'Tools' }).getByRole('button')).toHaveCount(9);
+    await expect(theirs.getByRole('toolbar', { name: 'Tools' }).getByRole('button')).toHaveCount(12);
   });
   await context.close();
 });

@@ -8,7 +8,7 @@ import { sendProposal } from './support/proposals.js';
 import { Complaints, look } from './support/screen.js';
 
 /** Every screen on a desk and on a phone; their pictures are in test-results/screens. */
-test.describe.configure({ timeout: 120_000 });
+test.describe.configure({ timeout: 240_000 });
 
 const demo = (who: 'owner' | 'designer' | 'crew') => ({
   name: who,
@@ -224,8 +224,7 @@ test('the way from plan to yes', async ({ page }) => {
     await page.goto(link);
     await home.isOpen();
     await look(page, complaints, 'home-open');
-    // One that stands apart: crowded ones are small dots, and a press beside them takes the nearest.
-    await home.light('U1').click();
+    await home.pressLight('U1');
     await expect(home.card('U1')).toBeVisible();
     await look(page, complaints, 'home-light');
     await home.main.getByRole('button', { name: 'Decline this proposal' }).click();

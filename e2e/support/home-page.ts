@@ -36,10 +36,21 @@ export class HomePage {
 
   /** Puts a finger on the middle of a light's mark, whatever else is close to it. */
   async tapLight(tag: string): Promise<void> {
+    const { x, y } = await this.middleOf(tag);
+    await this.page.touchscreen.tap(x, y);
+  }
+
+  /** The same with a mouse. Crowded marks are small dots, and a press there takes the nearest. */
+  async pressLight(tag: string): Promise<void> {
+    const { x, y } = await this.middleOf(tag);
+    await this.page.mouse.click(x, y);
+  }
+
+  private async middleOf(tag: string): Promise<{ x: number; y: number }> {
     await this.light(tag).scrollIntoViewIfNeeded();
     const box = await this.light(tag).boundingBox();
     if (box === null) throw new Error(`${tag} is nowhere to be seen.`);
-    await this.page.touchscreen.tap(box.x + box.width / 2, box.y + box.height / 2);
+    return { x: box.x + box.width / 2, y: box.y + box.height / 2 };
   }
 
   /** What the card of a tapped light says. */

@@ -15,6 +15,8 @@ export class Complaints {
   constructor(page: Page) {
     page.on('console', (message) => {
       if (message.type() !== 'error' && message.type() !== 'warning') return;
+      // Said by drivers that draw without a graphics card, of how fast they are.
+      if (/GL Driver Message .*Performance/.test(message.text())) return;
       // Who is not signed in asks who they are, and is told so.
       if (/status of 401/.test(message.text()) && message.location().url.endsWith('/api/auth/me')) return;
       this.list.push(`console ${message.type()}: ${message.text()} ${message.location().url}`);
