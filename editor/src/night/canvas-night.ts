@@ -1,4 +1,4 @@
-import { composeRows, type LightMap, type Look } from '@lampwright/geometry/night';
+import { composeRows, type LightMap, type Look, rowsThatDiffer } from '@lampwright/geometry/night';
 import type { NightPhoto, NightRenderer, PictureSize } from './night-renderer';
 import { photoPixels } from './photo-pixels';
 
@@ -24,7 +24,11 @@ export class CanvasNight implements NightRenderer {
   private next: Wanted | null = null;
   /** Room for a light map that is not in use: to ask for memory for each picture takes longer than to fill it. */
   private spare: Float32Array | null = null;
+  /** What the picture shows. */
+  private shown: Wanted | null = null;
+  /** Rows that are still to be composed. */
   private row = 0;
+  private end = 0;
   private rows = FIRST_ROWS;
   private timer: ReturnType<typeof setTimeout> | null = null;
   private waiting: (() => void)[] = [];
@@ -46,7 +50,9 @@ export class CanvasNight implements NightRenderer {
     this.canvas.height = size.height;
     this.photo = photoPixels(photo, size);
     this.picture = this.context.createImageData(size.width, size.height);
+    this.shown = null;
     this.row = 0;
+    this.end = size.height;
   }
 
   draw(light: LightMap, look: Look, whiteLux: number): void {
@@ -76,19 +82,21 @@ export class CanvasNight implements NightRenderer {
     if (!this.now) {
       this.now = this.next;
       this.next = null;
-      this.row = 0;
+      this.begin();
     }
     const { now, photo, picture } = this;
     if (!now) return;
-    const until = Math.min(this.row + this.rows, photo.height);
+    const until = Math.min(this.row + this.rows, this.end);
     const startedAt = performance.now();
     composeRows(photo, now.light, now.look, now.whiteLux, picture.data, this.row, until);
     const took = performance.now() - startedAt;
-    this.rows = Math.max(Math.round(((until - this.row) * SLICE_MS) / Math.max(took, 0.1)), 1);
+    if (until > this.row)
+      this.rows = Math.max(Math.round(((until - this.row) * SLICE_MS) / Math.max(took, 0.1)), 1);
     this.row = until;
-    if (until === photo.height) {
+    if (until === this.end) {
       this.context.putImageData(picture, 0, 0);
-      this.spare = now.light.rgba;
+      this.spare = this.shown?.light.rgba ?? null;
+      this.shown = now;
       this.now = null;
       if (!this.next) {
         this.finish();
@@ -96,6 +104,17 @@ export class CanvasNight implements NightRenderer {
       }
     }
     this.timer = setTimeout(() => this.slice(), 0);
+  }
+
+  /** Rows whose light is as it was stay as they are: while one lamp is dragged that is many of them. */
+  private begin(): void {
+    const { shown, now, photo } = this;
+    this.row = 0;
+    this.end = photo.height;
+    if (!shown || !now || shown.look !== now.look || shown.whiteLux !== now.whiteLux) return;
+    const { from, to } = rowsThatDiffer(shown.light, now.light, photo.height);
+    this.row = from;
+    this.end = to;
   }
 
   private finish(): void {

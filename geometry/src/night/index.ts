@@ -1,4 +1,5 @@
 export { type Seen, type Viewer, viewerOf } from './camera.js';
+export * from './changed-rows.js';
 export * from './clock.js';
 export * from './colour.js';
 export * from './compose.js';
