@@ -9,8 +9,8 @@ export default defineConfig({
   test: {
     include: ['src/**/*.spec.ts', 'test/**/*.spec.ts'],
     globalSetup: ['test/global-setup.ts'],
-    testTimeout: 30_000,
-    hookTimeout: 60_000,
+    testTimeout: 90_000,
+    hookTimeout: 120_000,
     retry: 0,
     // Specs wait on the database and the disk as much as they compute: one a core keeps two cores busy.
     maxWorkers: 2,

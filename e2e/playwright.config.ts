@@ -34,7 +34,7 @@ export default defineConfig({
   fullyParallel: false,
   retries: 0,
   forbidOnly: true,
-  timeout: 60_000,
+  timeout: 120_000,
   expect: { timeout: 10_000 },
   reporter: report ? [['list'], ['json', { outputFile: report }]] : [['list']],
   use: {

@@ -141,7 +141,7 @@ describe('a plan saved while processes are killed', () => {
     await migrateDatabase(cluster.url);
     port = await freePort();
     await startApi();
-  }, 120_000);
+  }, 240_000);
   afterAll(async () => {
     await killApi();
     await cluster?.destroy();

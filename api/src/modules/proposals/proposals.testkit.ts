@@ -169,7 +169,7 @@ export function untilRevision(
       if (!found || !holds(found)) throw new Error(`not yet: ${JSON.stringify(found)}`);
       return found;
     },
-    { timeout: 45_000, interval: 250 },
+    { timeout: 80_000, interval: 250 },
   );
 }
 
