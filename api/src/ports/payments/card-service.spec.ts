@@ -146,7 +146,8 @@ describe('the card service, through its SDK, against the local stand-in', () => 
     await told(2);
     await fake.restart();
     await told(4);
-    expect(fake.undelivered()).toHaveLength(0);
+    // It knows so only once the answer has reached it.
+    await expect.poll(() => fake.undelivered()).toHaveLength(0);
   });
 
   it('gives the same page for the same key, and an error for the key with another request', async () => {
