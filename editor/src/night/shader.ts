@@ -49,7 +49,8 @@ void main() {
   vec3 surface = linearOf(texelFetch(photo, at, 0).rgb);
   vec3 grey = vec3(dot(LUMA, surface));
   float gap = smoothstep(${number(GAP_BLUE[0])}, ${number(GAP_BLUE[1])}, surface.b) * texture(leaves, where).r;
-  vec3 seen = mix(grey, surface, saturation) * ambient + (1.0 - grey) * (1.0 - grey) * ink;
+  vec3 dark2 = (1.0 - grey) * (1.0 - grey);
+  vec3 seen = mix(grey, surface, saturation) * ambient + dark2 * dark2 * dark2 * dark2 * dark2 * dark2 * ink;
   seen += mix(grey, surface, litSaturation) * lux.rgb * gain * (1.0 - gap);
   vec3 tint = lux.rgb + tintFloor * GLOW_TINT;
   seen += tint * (glowGain * lux.a / dot(LUMA, tint));

@@ -35,7 +35,7 @@ describe('the picture', () => {
   it('grows darker from minute to minute as the sun goes down, and never brighter', () => {
     for (const view of ['photo', 'plan'] as const) {
       // Of a drawing its paper: the lines on it turn pale.
-      const photo = picture(60, 40, (x) => (view === 'photo' ? 4 * x : 196 + x));
+      const photo = picture(60, 40, (x) => (view === 'photo' ? 4 * x : 225 + Math.floor(x / 2)));
       let before = 256;
       for (let altitude = 14; altitude >= -20; altitude -= 0.5) {
         const mean = meanOf(composeNight(photo, { ...light(4, 4, () => 0), view }, lookAt(altitude), 40));

@@ -87,7 +87,8 @@ export function composeRows(
       const bl = LINEAR[data[i + 2]!]!;
       const luma = LUMA[0] * r + LUMA[1] * g + LUMA[2] * bl;
       const grey = (1 - saturation) * luma;
-      const dark = (1 - luma) * (1 - luma);
+      const dark2 = (1 - luma) * (1 - luma);
+      const dark = dark2 * dark2 * dark2 * dark2 * dark2 * dark2;
       let red = (grey + saturation * r) * ar + dark * ir;
       let green = (grey + saturation * g) * ag + dark * ig;
       let blue = (grey + saturation * bl) * ab + dark * ib;

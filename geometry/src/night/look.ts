@@ -11,7 +11,8 @@ export interface Grade {
   readonly litSaturation: number;
   /**
    * Light that black is drawn with: none on photos. On dark paper the lines of a drawing turn pale, or nobody could
-   * read them; goes with the square of how dark a place of the sheet is.
+   * read them; ink alone, since it goes with the twelfth power of how dark a
+   * place of the sheet is: greys stay dark.
    */
   readonly ink: Rgb;
   /** Factor on the lamps' light; 1 at night, next to nothing in the sun. */
