@@ -33,17 +33,22 @@ describe('the picture', () => {
   });
 
   it('grows darker from minute to minute as the sun goes down, and never brighter', () => {
-    for (const view of ['photo', 'plan'] as const) {
-      // Of a drawing its paper: the lines on it turn pale.
-      const photo = picture(60, 40, (x) => (view === 'photo' ? 4 * x : 225 + Math.floor(x / 2)));
+    // Of a drawing its paper alone: the lines on it turn pale. White paper grows bluer to the last, which moves the
+    // mean of its codes by a twentieth of a step where the ambient light no longer falls.
+    const sheets = [
+      { view: 'photo', shade: (x: number) => 4 * x, slack: 0.05, most: 45 },
+      { view: 'plan', shade: (x: number) => 225 + Math.floor(x / 2), slack: 0.06, most: 60 },
+    ] as const;
+    for (const { view, shade, slack, most } of sheets) {
+      const photo = picture(60, 40, shade);
       let before = 256;
       for (let altitude = 14; altitude >= -20; altitude -= 0.5) {
         const mean = meanOf(composeNight(photo, { ...light(4, 4, () => 0), view }, lookAt(altitude), 40));
-        expect(mean).toBeLessThanOrEqual(before + 0.15);
+        expect(mean).toBeLessThanOrEqual(before + slack);
         before = mean;
       }
       expect(before).toBeGreaterThan(5);
-      expect(before).toBeLessThan(80);
+      expect(before).toBeLessThan(most);
     }
   });
 
